@@ -1,24 +1,7 @@
-import { analyseTable, type Spectrum } from './analysis/index.ts';
-import { parseDefinition, type Definition, type Report, type Warning } from './contract/index.ts';
-import { quantise, storedWords } from './quantiser/index.ts';
-import { levelCycle, synthesise } from './waveform/index.ts';
+import { parseDefinition } from './contract/index.ts';
+import { tabulate, type BuiltTable } from './tabulate.ts';
 
-/** What a definition becomes. All arrays belong to the caller. */
-export interface BuiltTable {
-  /** The definition as parsed, defaults filled in. */
-  readonly definition: Definition;
-  /** The levelled, clipped cycle `r`: one value an entry, in −1…1 (bipolar) or 0…1 (unipolar). */
-  readonly cycle: Float64Array;
-  /** What the codes stand for, `q`, in the units of `cycle` (§3.5). */
-  readonly values: Float64Array;
-  /** One code an entry, 0…2^bits − 1, before complement and coding. */
-  readonly codes: Uint16Array;
-  /** The words that are stored: complemented, coded and folded as asked (§3.6); negative in two's complement. */
-  readonly stored: Int32Array;
-  readonly report: Report;
-  readonly spectrum: Spectrum;
-  readonly warnings: readonly Warning[];
-}
+export { tabulate, type BuiltTable } from './tabulate.ts';
 
 /**
  * The straight line from a definition to its table: parse, synthesise, level, quantise, analyse.
@@ -27,23 +10,4 @@ export interface BuiltTable {
  */
 export function buildTable(input: unknown): BuiltTable {
   return tabulate(parseDefinition(input));
-}
-
-/** `buildTable` for a definition that has been parsed already. */
-export function tabulate(definition: Definition): BuiltTable {
-  const synthesis = synthesise(definition);
-  const levelled = levelCycle(synthesis, definition);
-  const quantised = quantise(levelled.cycle, definition.table);
-  const stored = storedWords(quantised.codes, definition.table);
-  const { report, spectrum, values } = analyseTable(levelled, quantised, definition.table);
-  return {
-    definition,
-    cycle: levelled.cycle,
-    values,
-    codes: quantised.codes,
-    stored,
-    report,
-    spectrum,
-    warnings: [...synthesis.warnings, ...levelled.warnings, ...quantised.warnings],
-  };
 }

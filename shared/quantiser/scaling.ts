@@ -1,0 +1,60 @@
+import type { TableSettings } from '../contract/index.ts';
+
+type Scaling = Pick<TableSettings, 'bits' | 'range' | 'scale'>;
+
+/** Levels of b bits, L = 2^b. */
+export function levelsOf(bits: number): number {
+  return 2 ** bits;
+}
+
+/** The straight line of §3.2 from a signal x to a code position: `v = gain·x + offset`. */
+export function positionLine({ bits, range, scale }: Scaling): { gain: number; offset: number } {
+  const top = levelsOf(bits) - 1;
+  if (range === 'unipolar') return { gain: top, offset: 0 };
+  if (scale === 'mid-tread') return { gain: (top + 1) / 2, offset: (top + 1) / 2 };
+  return { gain: top / 2, offset: top / 2 };
+}
+
+/** One LSB in signal units (§3.5). */
+export function lsbOf(scaling: Scaling): number {
+  return 1 / positionLine(scaling).gain;
+}
+
+/** Code positions are rounded to this share of an LSB, so that a tie is a tie on every machine. */
+export const snapSteps = 2 ** 24;
+
+/** Rounds to the nearest 2⁻²⁴. */
+export function snap(position: number): number {
+  return Math.round(position * snapSteps) / snapSteps;
+}
+
+/**
+ * Code positions v of a cycle (§3.2), snapped. Written as the specification writes them, so that the same
+ * double comes out: `(x+1)/2·(L−1)`, `x·L/2 + L/2`, `x·(L−1)`.
+ */
+export function positionsOf(cycle: Float64Array, { bits, range, scale }: Scaling): Float64Array {
+  const levels = levelsOf(bits);
+  const positions = new Float64Array(cycle.length);
+  if (range === 'unipolar') {
+    for (let k = 0; k < cycle.length; k += 1) positions[k] = snap(cycle[k] * (levels - 1));
+  } else if (scale === 'mid-tread') {
+    for (let k = 0; k < cycle.length; k += 1) positions[k] = snap((cycle[k] * levels) / 2 + levels / 2);
+  } else {
+    for (let k = 0; k < cycle.length; k += 1) positions[k] = snap(((cycle[k] + 1) / 2) * (levels - 1));
+  }
+  return positions;
+}
+
+/** Values q of codes in signal units (§3.5), for tables without measured levels. */
+export function valuesOfCodes(codes: Uint16Array, { bits, range, scale }: Scaling): Float64Array {
+  const levels = levelsOf(bits);
+  const values = new Float64Array(codes.length);
+  if (range === 'unipolar') {
+    for (let k = 0; k < codes.length; k += 1) values[k] = codes[k] / (levels - 1);
+  } else if (scale === 'mid-tread') {
+    for (let k = 0; k < codes.length; k += 1) values[k] = (codes[k] - levels / 2) / (levels / 2);
+  } else {
+    for (let k = 0; k < codes.length; k += 1) values[k] = (2 * codes[k]) / (levels - 1) - 1;
+  }
+  return values;
+}
