@@ -1,0 +1,41 @@
+import { bigint, index, json, mysqlTable, primaryKey, varchar } from 'drizzle-orm/mysql-core';
+import { exactText, moment, reference } from './columns.ts';
+import { teams } from './teams.ts';
+import { users } from './users.ts';
+
+const sequence = (name: string) => bigint(name, { mode: 'number', unsigned: true });
+
+/** Where each team's chain of events ends. Locked last in every transaction that adds to it. */
+export const auditHeads = mysqlTable('audit_heads', {
+  teamId: reference('team_id')
+    .primaryKey()
+    .references(() => teams.id, { onDelete: 'cascade' }),
+  lastSequence: sequence('last_sequence').notNull().default(0),
+  lastMac: exactText(64, 'last_mac').notNull().default(''),
+});
+
+/** Who did what, when: each row's MAC covers the row and the MAC before it. */
+export const auditEvents = mysqlTable(
+  'audit_events',
+  {
+    teamId: reference('team_id')
+      .notNull()
+      .references(() => teams.id, { onDelete: 'cascade' }),
+    sequence: sequence('sequence').notNull(),
+    at: moment('at').notNull(),
+    actorId: reference('actor_id').references(() => users.id, { onDelete: 'set null' }),
+    /** As the person was called then. */
+    actorName: varchar('actor_name', { length: 100 }).notNull(),
+    /** `table.created`, `member.role-changed`, … */
+    action: exactText(60).notNull(),
+    /** What it was done to: `table:fog-signal`, `member:17`. */
+    subject: exactText(160).notNull(),
+    details: json().notNull(),
+    /** HMAC-SHA-256 in hex, by a key outside the database. */
+    mac: exactText(64).notNull(),
+  },
+  (table) => [
+    primaryKey({ columns: [table.teamId, table.sequence] }),
+    index('audit_events_subject').on(table.teamId, table.subject, table.sequence),
+  ],
+);

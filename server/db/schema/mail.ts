@@ -1,0 +1,29 @@
+import { index, mysqlEnum, mysqlTable, text, tinyint, varchar } from 'drizzle-orm/mysql-core';
+import { createdAt, exactText, id, moment } from './columns.ts';
+
+export const mailStates = ['waiting', 'sent', 'undelivered'] as const;
+
+/** Mail on its way out, written in the transaction of its cause. */
+export const mailOutbox = mysqlTable(
+  'mail_outbox',
+  {
+    id: id(),
+    /** Fixed before the first try, so that a mail sent twice is known as one. */
+    messageId: exactText(120, 'message_id').notNull().unique(),
+    recipient: exactText(254).notNull(),
+    subject: varchar({ length: 200 }).notNull(),
+    /** Erased on delivery where it holds a link. */
+    textBody: text('text_body'),
+    htmlBody: text('html_body'),
+    state: mysqlEnum(mailStates).notNull().default('waiting'),
+    failures: tinyint({ unsigned: true }).notNull().default(0),
+    lastError: varchar('last_error', { length: 500 }),
+    /** Not before this moment. */
+    dueAt: moment('due_at').notNull(),
+    /** While this lies ahead, one worker has it in hand. */
+    claimedUntil: moment('claimed_until'),
+    createdAt: createdAt(),
+    sentAt: moment('sent_at'),
+  },
+  (table) => [index('mail_outbox_due').on(table.state, table.dueAt)],
+);

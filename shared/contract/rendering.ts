@@ -1,0 +1,48 @@
+import { z } from 'zod';
+import { reportSchema, warningSchema } from './report.ts';
+
+/** A file of an export. */
+export const generatedFileSchema = z.strictObject({
+  /** Its name, without a folder. */
+  name: z.string(),
+  /** Its content; lines end in LF. */
+  text: z.string(),
+});
+
+/** SHA-256 over the RFC 8785 canonical JSON of `{ definition, engineVersion, codes }`, in lower-case hexadecimal. */
+export const digestSchema = z.string().regex(/^[0-9a-f]{64}$/);
+
+/** What the command line and the API answer of a definition (engine specification §3, §4). */
+export const tableReportSchema = z.strictObject({
+  /** One code an entry, 0…2^bits − 1, before complement and coding. */
+  codes: z.array(z.int()),
+  /** The words that are stored (§3.6). */
+  stored: z.array(z.int()),
+  report: reportSchema,
+  /** Amplitudes A_k of what the codes stand for, bins 0…⌊N/2⌋; an amplitude-1 sine is 1. */
+  spectrum: z.array(z.number()),
+  warnings: z.array(warningSchema),
+});
+
+export const reportAnswerSchema = z.strictObject({ ...tableReportSchema.shape, digest: digestSchema });
+
+const anyObject = (error: string) => z.record(z.string(), z.unknown(), { error });
+
+export const renderRequestSchema = z.strictObject({
+  /** A definition (§1); its fields are checked by the definition's own schema. */
+  definition: z.unknown().refine((value) => value !== undefined, { error: 'a definition' }),
+  target: z.string({ error: 'the name of a target' }),
+  /** By the target's own schema; every default where left out. */
+  options: anyObject('an object of options').default({}),
+});
+
+export const renderAnswerSchema = z.strictObject({
+  files: z.array(generatedFileSchema),
+  digest: digestSchema,
+});
+
+export type GeneratedFile = z.infer<typeof generatedFileSchema>;
+export type TableReport = z.infer<typeof tableReportSchema>;
+export type ReportAnswer = z.infer<typeof reportAnswerSchema>;
+export type RenderRequest = z.infer<typeof renderRequestSchema>;
+export type RenderAnswer = z.infer<typeof renderAnswerSchema>;
