@@ -1,7 +1,6 @@
 import { bigint, index, json, mysqlTable, primaryKey, varchar } from 'drizzle-orm/mysql-core';
 import { exactText, moment, reference } from './columns.ts';
 import { teams } from './teams.ts';
-import { users } from './users.ts';
 
 const sequence = (name: string) => bigint(name, { mode: 'number', unsigned: true });
 
@@ -23,7 +22,8 @@ export const auditEvents = mysqlTable(
       .references(() => teams.id, { onDelete: 'cascade' }),
     sequence: sequence('sequence').notNull(),
     at: moment('at').notNull(),
-    actorId: reference('actor_id').references(() => users.id, { onDelete: 'set null' }),
+    /** Stays when the account goes: the MAC covers it. */
+    actorId: reference('actor_id').notNull(),
     /** As the person was called then. */
     actorName: varchar('actor_name', { length: 100 }).notNull(),
     /** `table.created`, `member.role-changed`, … */

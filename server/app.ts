@@ -1,0 +1,61 @@
+import compression from 'compression';
+import express, { type Express, type RequestHandler, type Router } from 'express';
+import { readSignIn } from './auth/sign-in-state.ts';
+import type { Feature, ServerDeps } from './feature.ts';
+import { health } from './features/health/routes.ts';
+import { errorTranslator } from './http/error-translator.ts';
+import { hostGate } from './http/host-gate.ts';
+import { jsonBody } from './http/json-body.ts';
+import { originGate } from './http/origin-gate.ts';
+import { Problem } from './http/problem.ts';
+import { requestLog } from './http/request-log.ts';
+import { noSuchRoute } from './http/routes.ts';
+import { cspNonce, securityHeaders } from './http/security-headers.ts';
+
+/** Every resource of the API. */
+const features: readonly Feature[] = [health];
+
+export interface AppDeps extends ServerDeps {
+  /** Serves the client: the built files or, in development, the development server. */
+  readonly client: RequestHandler | Router;
+  /** Off in development, whose server injects scripts of its own. */
+  readonly contentPolicy: boolean;
+}
+
+/** The routers of all features, for the API and for the tests that go through every route. */
+export const buildRouters = (deps: ServerDeps): Router[] => features.map((feature) => feature(deps));
+
+/** Puts the application together; it listens nowhere yet. */
+export function buildApp(deps: AppDeps): Express {
+  const { config, origins } = deps;
+  const app = express();
+  app.set('trust proxy', config.trustedProxies.length > 0 && [...config.trustedProxies]);
+  app.set('query parser', 'simple');
+  // Entity tags say which state of a resource is meant; only what has states gets one, by hand.
+  app.set('etag', false);
+  app.disable('x-powered-by');
+
+  app.use(requestLog(deps.logger));
+  app.use(hostGate(origins));
+  app.use(cspNonce);
+  app.use(securityHeaders({ https: origins[0].startsWith('https:'), policy: deps.contentPolicy }));
+  app.use(compression());
+
+  const routers = buildRouters(deps);
+  app.use('/api/v1', noStore, originGate(origins), readSignIn(deps), jsonBody, ...routers, noSuchRoute(routers));
+  app.use('/api', nothingHere);
+
+  app.use(deps.client);
+  app.use(nothingHere);
+  app.use(errorTranslator);
+  return app;
+}
+
+const noStore: RequestHandler = (_request, response, next) => {
+  response.set('Cache-Control', 'no-store');
+  next();
+};
+
+const nothingHere: RequestHandler = (request) => {
+  throw new Problem('not-found', { detail: `There is nothing at ${request.originalUrl}.` });
+};

@@ -1,0 +1,22 @@
+import type { RequestHandler } from 'express';
+import { Problem } from './problem.ts';
+
+const reading = new Set(['GET', 'HEAD', 'OPTIONS']);
+
+/**
+ * Lets a write through only from our own pages (`Origin`), so that no other site can use a person's cookies.
+ * A request with a bearer token carries its own proof; it must ignore cookies.
+ */
+export function originGate(origins: readonly string[]): RequestHandler {
+  const own = new Set(origins);
+  return (request, _response, next) => {
+    const byToken = /^bearer /i.test(request.headers.authorization ?? '');
+    if (reading.has(request.method) || byToken || own.has(request.headers.origin ?? '')) {
+      next();
+      return;
+    }
+    throw new Problem('foreign-origin', {
+      detail: `A change needs the header Origin: ${origins[0]}, or a bearer token.`,
+    });
+  };
+}

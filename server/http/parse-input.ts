@@ -1,0 +1,15 @@
+import type { z } from 'zod';
+import { problemsOf } from '../../shared/contract/index.ts';
+import { Problem } from './problem.ts';
+
+/**
+ * Parses what came in by its schema.
+ *
+ * @param whole what to call the input where it is at fault as a whole: `body`, `query`
+ * @throws {Problem} `validation` (422), naming each field at fault, its value and what is allowed
+ */
+export function parseInput<Schema extends z.ZodType>(schema: Schema, input: unknown, whole = 'body'): z.output<Schema> {
+  const result = schema.safeParse(input);
+  if (result.success) return result.data;
+  throw new Problem('validation', { errors: result.error.issues.flatMap((issue) => problemsOf(issue, input, whole)) });
+}

@@ -1,0 +1,4 @@
+import { jobs } from './registry.ts';
+import { serveJobs } from './serve.ts';
+
+serveJobs(jobs);
