@@ -30,7 +30,8 @@ export function analyseTable(
   const errors = momentsOf(error);
   const result = momentsOf(values);
   const exact = errors.variance <= exactPower;
-  const isConstant = wanted.peakToPeak === 0;
+  // A constant's variance is rounding noise, that of a very small signal may come out as 0.
+  const isConstant = wanted.peakToPeak === 0 || wanted.variance === 0;
   const spectrum = spectrumOf(cycle, error, lsb);
   const storedCount = table.fold === 'quarter' ? codes.length / 4 : codes.length;
 

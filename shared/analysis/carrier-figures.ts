@@ -8,6 +8,8 @@ const none: CarrierFigures = { sinadDb: null, enobBits: null, thdDb: null, thdPe
 const equalAmplitude = 1e-9;
 /** Power of "the rest" up to which a spectrum counts as a pure line. */
 const purePower = 1e-22;
+/** Amplitude of that power: below it there is no line, only rounding. */
+const leastAmplitude = Math.sqrt(2 * purePower);
 const pureThdRatio = 1e-12;
 const highestHarmonic = 10;
 
@@ -21,11 +23,9 @@ export function carrierFigures(
   { length, range }: Pick<TableSettings, 'length' | 'range'>,
 ): CarrierFigures {
   const carrier = carrierOf(amplitudes);
-  const isAtNyquist = 2 * carrier === length;
-  if (carrier === 0 || isAtNyquist) return none;
+  if (carrier === 0) return none;
 
   const carrierAmplitude = amplitudes[carrier];
-  const carrierPower = carrierAmplitude ** 2 / 2;
   let rest = 0;
   let strongestOther = 0;
   for (let k = 1; k < amplitudes.length; k += 1) {
@@ -38,14 +38,16 @@ export function carrierFigures(
   const hasThd = thdRatio > pureThdRatio;
   const thd = { thdDb: hasThd ? 20 * Math.log10(thdRatio) : null, thdPercent: hasThd ? 100 * thdRatio : null };
   if (rest <= purePower) return { ...none, ...thd };
+  const sfdrDb = 20 * Math.log10(carrierAmplitude / strongestOther);
+  if (2 * carrier === length) return { ...none, ...thd, sfdrDb };
 
-  const sinadDb = 10 * Math.log10(carrierPower / rest);
+  const sinadDb = 10 * Math.log10(carrierAmplitude ** 2 / 2 / rest);
   const fullAmplitude = range === 'bipolar' ? 1 : 0.5;
   return {
     sinadDb,
     enobBits: (sinadDb - 1.76 + 20 * Math.log10(fullAmplitude / carrierAmplitude)) / 6.02,
     ...thd,
-    sfdrDb: 20 * Math.log10(carrierAmplitude / strongestOther),
+    sfdrDb,
   };
 }
 
@@ -53,9 +55,10 @@ export function carrierFigures(
 function carrierOf(amplitudes: Float64Array): number {
   let strongest = 0;
   for (let k = 1; k < amplitudes.length; k += 1) strongest = Math.max(strongest, amplitudes[k]);
-  if (strongest ** 2 / 2 <= purePower) return 0;
+  if (strongest <= leastAmplitude) return 0;
+  const enough = Math.max(strongest - equalAmplitude, leastAmplitude);
   let carrier = 1;
-  while (amplitudes[carrier] < strongest - equalAmplitude) carrier += 1;
+  while (amplitudes[carrier] < enough) carrier += 1;
   return carrier;
 }
 

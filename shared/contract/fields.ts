@@ -4,7 +4,12 @@ import { z } from 'zod';
 
 const textField = (min: number, max: number) => {
   const error = min === 0 ? `at most ${max} characters` : `${min} to ${max} characters`;
-  return z.string({ error }).trim().min(min, { error }).max(max, { error });
+  return z
+    .string({ error })
+    .trim()
+    .min(min, { error })
+    .max(max, { error })
+    .refine((text) => !/\p{Surrogate}/u.test(text), { error: 'whole characters, no half of a surrogate pair' });
 };
 
 /** Lower case, as addresses are compared. 254 characters at most (RFC 5321 §4.5.3.1.3). */
@@ -53,7 +58,7 @@ export const tagsField = z
 export const momentField = z.iso.datetime();
 
 /** Where the next page begins; opaque, and only good for the same filters and order. */
-export const cursorField = z.string().max(500);
+export const cursorField = z.string({ error: 'a nextCursor' }).max(1_000, { error: 'a nextCursor' });
 
 export const pageOf = <Item extends z.ZodType>(item: Item) =>
   z.strictObject({ items: z.array(item), nextCursor: cursorField.nullable() });

@@ -1,22 +1,55 @@
 import { z } from 'zod';
 import type { Definition } from './definition.ts';
-import { cursorField, momentField, noteField, pageOf, slugField, tagField, tagsField, titleField } from './fields.ts';
+import {
+  cursorField,
+  momentField,
+  noteField,
+  pageOf,
+  slugField,
+  tagField,
+  tagsField,
+  titleField,
+} from './fields.ts';
+import { limits } from './limits.ts';
+import { digestSchema } from './rendering.ts';
 import { reportSchema, warningSchema } from './report.ts';
 
+const oneOf = <const Values extends readonly [string, ...string[]]>(values: Values) =>
+  z.enum(values, { error: `one of ${values.map((value) => `"${value}"`).join(', ')}` });
+
+const wholeNumber = (min: number, max: number) => {
+  const error = `a whole number from ${min} to ${max}`;
+  return z.int({ error }).min(min, { error }).max(max, { error });
+};
+
+/** The same in an address, where all is text. */
+const wholeNumberText = (min: number, max: number) => {
+  const error = `a whole number from ${min} to ${max}`;
+  return z
+    .string({ error })
+    .regex(/^\d{1,6}$/, { error })
+    .transform(Number)
+    .pipe(wholeNumber(min, max));
+};
+
 export const revisionStates = ['draft', 'in-review', 'vetted', 'returned', 'withdrawn'] as const;
-export const revisionStateField = z.enum(revisionStates);
+export const revisionStateField = oneOf(revisionStates);
 export type RevisionState = z.infer<typeof revisionStateField>;
+
+const frequencyField = z
+  .number({ error: 'a frequency above 0 Hz' })
+  .positive({ error: 'a frequency above 0 Hz' });
 
 /** How the wave was listened to; kept beside the definition, not part of it. */
 export const playbackSettingsSchema = z.strictObject({
-  mode: z.enum(['loop', 'once']),
-  by: z.enum(['tone', 'sampleRate']),
-  toneHz: z.number().positive(),
-  sampleRateHz: z.number().positive(),
+  mode: oneOf(['loop', 'once']),
+  by: oneOf(['tone', 'sampleRate']),
+  toneHz: frequencyField,
+  sampleRateHz: frequencyField,
 });
 
 /** A definition on its way in: `parseDefinition` says precisely what is wrong with it. */
-const definitionField = z.custom<Definition>((value) => typeof value === 'object' && value !== null, {
+export const definitionField = z.custom<Definition>((value) => typeof value === 'object' && value !== null, {
   error: 'a definition',
 });
 
@@ -52,14 +85,16 @@ export const sortDirections = ['asc', 'desc'] as const;
 
 /** Query of the tables list; the client's address bar holds the same names. */
 export const tablesQuerySchema = z.strictObject({
-  search: z.string().trim().max(100).optional(),
+  /** Beginnings of words of title or tags, in any order; case and accents do not count. */
+  search: z.string({ error: 'text' }).trim().max(100, { error: 'at most 100 characters' }).optional(),
   tag: tagField.optional(),
+  /** Of the newest revision. */
   state: revisionStateField.optional(),
-  archived: z.enum(['no', 'yes']).default('no'),
-  sort: z.enum(tableSorts).default('changed'),
-  direction: z.enum(sortDirections).default('desc'),
+  archived: oneOf(['no', 'yes']).default('no'),
+  sort: oneOf(tableSorts).default('changed'),
+  direction: oneOf(sortDirections).default('desc'),
   cursor: cursorField.optional(),
-  limit: z.coerce.number().int().min(1).max(100).default(50),
+  limit: wholeNumberText(1, 100).default(50),
 });
 export type TablesQuery = z.infer<typeof tablesQuerySchema>;
 export const tablesPageSchema = pageOf(tableSummarySchema);
@@ -72,13 +107,19 @@ export const revisionSummarySchema = z.strictObject({
   length: z.int(),
   snrDb: z.number().nullable(),
   tableBytes: z.int(),
-  digest: z.string(),
+  digest: digestSchema,
   engineVersion: z.string(),
   madeBy: personSchema,
   madeAt: momentField,
 });
 export type RevisionSummary = z.infer<typeof revisionSummarySchema>;
+/** Newest first. */
 export const revisionsPageSchema = pageOf(revisionSummarySchema);
+export const revisionsQuerySchema = z.strictObject({
+  cursor: cursorField.optional(),
+  limit: wholeNumberText(1, 100).default(50),
+});
+export const revisionNumberField = wholeNumberText(1, limits.revisionsPerTable);
 
 /** A whole revision; never changes but for its state. */
 export const revisionSchema = revisionSummarySchema.extend({
@@ -95,8 +136,10 @@ export const libraryTableSchema = tableSummarySchema.extend({
   createdAt: momentField,
   createdBy: personSchema,
   version: z.int(),
+  /** The newest ones, newest first. */
   revisions: z.array(revisionSummarySchema),
   moreRevisions: z.boolean(),
+  revisionsAtMost: z.int(),
 });
 export type LibraryTable = z.infer<typeof libraryTableSchema>;
 
@@ -107,7 +150,27 @@ export const createTableSchema = z.strictObject({
   playback: playbackSettingsSchema.nullable().default(null),
   note: noteField.default(''),
 });
+export type CreateTable = z.infer<typeof createTableSchema>;
 export const createRevisionSchema = createTableSchema.omit({ title: true, tags: true });
+export type CreateRevision = z.infer<typeof createRevisionSchema>;
 export const changeTableSchema = z.strictObject({ title: titleField.optional(), tags: tagsField.optional() });
-export const duplicateTableSchema = z.strictObject({ title: titleField.optional(), revision: z.int().optional() });
-export const tagsListSchema = z.strictObject({ tags: z.array(z.strictObject({ tag: z.string(), tables: z.int() })) });
+export type ChangeTable = z.infer<typeof changeTableSchema>;
+export const duplicateTableSchema = z.strictObject({
+  /** The old title with "copy" behind it, if not given. */
+  title: titleField.optional(),
+  /** The newest one, if not given. */
+  revision: wholeNumber(1, limits.revisionsPerTable).optional(),
+});
+export type DuplicateTable = z.infer<typeof duplicateTableSchema>;
+/** How many tables that are not archived have each tag. */
+export const tagsListSchema = z.strictObject({
+  tags: z.array(z.strictObject({ tag: z.string(), tables: z.int() })),
+});
+
+/** Query of an export. Every other name is an option of the target. */
+export const exportQuerySchema = z.looseObject({
+  target: z.string({ error: 'the name of a target' }),
+  /** Answer this file alone, as an attachment. */
+  file: z.string({ error: 'the name of a file of the export' }).optional(),
+});
+export type ExportQuery = z.infer<typeof exportQuerySchema>;

@@ -15,6 +15,11 @@ export const limits = {
   partialsInAll: 8_192,
   gamma: { min: 0.1, max: 10 },
   seed: { min: 0, max: 4_294_967_295 },
+  /** Most problems that one refusal lists; a form or a log has no use for more. */
+  problemsShown: 50,
+  /** Different words that one search of the library may look for. */
+  searchWords: 8,
+  revisionsPerTable: 10_000,
   /** Largest request body the server reads, in bytes. */
   requestBytes: 8 * 1024 * 1024,
 } as const;

@@ -2,7 +2,8 @@ import { z } from 'zod';
 import { definitionSchema, type Definition } from './definition.ts';
 import { limits } from './limits.ts';
 import { Refusal, showPath, showValue, type Problem } from './refusal.ts';
-import { brokenRules, mixDepthOf } from './rules.ts';
+import { problemsOfRawSource } from './raw-source.ts';
+import { brokenRules } from './rules.ts';
 
 // Zod tries `new Function` once to see whether it may; a page's security policy would report that.
 z.config({ jitless: true });
@@ -22,26 +23,39 @@ export function parseDefinition(input: unknown): Definition {
 export function checkDefinition(
   input: unknown,
 ): { definition: Definition } | { problems: [Problem, ...Problem[]] } {
-  if (typeof input === 'object' && input !== null && 'source' in input && mixDepthOf(input.source) > limits.mixDepth) {
-    return {
-      problems: [
-        { path: 'source', value: 'a deeper mix', allowed: `mixes nested at most ${limits.mixDepth} deep` },
-      ],
-    };
-  }
+  const source = typeof input === 'object' && input !== null && 'source' in input ? input.source : undefined;
+  const [hopeless, ...alike] = problemsOfRawSource(source);
+  if (hopeless !== undefined) return { problems: [hopeless, ...alike] };
   const parsed = definitionSchema.safeParse(input);
   if (!parsed.success) {
-    const [first, ...others] = parsed.error.issues.flatMap((issue) => problemsOf(issue, input));
+    const [first, ...others] = problemsIn(parsed.error.issues, input);
     return { problems: [first, ...others] };
   }
   const [first, ...others] = brokenRules(parsed.data);
   return first === undefined ? { definition: parsed.data } : { problems: [first, ...others] };
 }
 
+/**
+ * Issues of the schema library in our own words: one problem a field, the first, and not more than a reader can
+ * use, as input can hold a million faults.
+ *
+ * @param whole what to call the input where it is at fault as a whole
+ */
+export function problemsIn(issues: readonly z.core.$ZodIssue[], input: unknown, whole = 'definition'): Problem[] {
+  const byPath = new Map<string, Problem>();
+  for (const issue of issues) {
+    for (const problem of problemsOf(issue, input, whole)) {
+      if (!byPath.has(problem.path)) byPath.set(problem.path, problem);
+      if (byPath.size === limits.problemsShown) return [...byPath.values()];
+    }
+  }
+  return [...byPath.values()];
+}
+
 /** Turns an issue of the schema library into our own words. */
 export function problemsOf(issue: z.core.$ZodIssue, input: unknown, whole = 'definition'): Problem[] {
   if (issue.code === 'unrecognized_keys') {
-    return issue.keys.map((key) => ({
+    return issue.keys.slice(0, limits.problemsShown).map((key) => ({
       path: showPath([...issue.path, key], whole),
       value: showValue(valueAt(input, [...issue.path, key])),
       allowed: 'no such field',

@@ -1,20 +1,14 @@
-import type { Definition, Source } from './definition.ts';
-import { limits } from './limits.ts';
+import type { Definition } from './definition.ts';
 import { showValue, type Problem } from './refusal.ts';
 
-/** Walks a source and everything mixed into it, outermost first. */
-function* sourcesWithin(source: Source): Generator<Source> {
-  yield source;
-  if (source.kind === 'mix') for (const part of source.parts) yield* sourcesWithin(part.source);
-}
-
 /** Rules of §1 that look at two fields at once; each broken one is named with the field that should change. */
-export function brokenRules({ source, level, table }: Definition): Problem[] {
+export function brokenRules({ level, table }: Pick<Definition, 'level' | 'table'>): Problem[] {
   const problems: Problem[] = [];
   const refuse = (path: string, value: unknown, allowed: string) =>
     problems.push({ path, value: showValue(value), allowed });
 
-  if (2 * table.cycles >= table.length) {
+  // One cycle fits any table, the shortest of two entries too.
+  if (table.cycles > 1 && 2 * table.cycles >= table.length) {
     refuse('table.cycles', table.cycles, `fewer than half of table.length, which is ${table.length}`);
   }
   if (level.transfer !== 'none' && table.range !== 'unipolar') {
@@ -25,19 +19,6 @@ export function brokenRules({ source, level, table }: Definition): Problem[] {
   }
   if (table.levels !== undefined) measuredLevelRules(table, refuse);
   if (table.fold === 'quarter') quarterFoldRules(table, refuse);
-
-  let leaves = 0;
-  let partials = 0;
-  for (const part of sourcesWithin(source)) {
-    if (part.kind !== 'mix') leaves += 1;
-    if (part.kind === 'harmonics') partials += part.partials.length;
-  }
-  if (leaves > limits.leafSources) {
-    refuse('source', `${leaves} leaf sources`, `at most ${limits.leafSources} leaf sources in all`);
-  }
-  if (partials > limits.partialsInAll) {
-    refuse('source', `${partials} partials`, `at most ${limits.partialsInAll} partials in all`);
-  }
   return problems;
 }
 
@@ -47,14 +28,26 @@ function measuredLevelRules(table: Definition['table'], refuse: Refuse): void {
   const levels = table.levels ?? [];
   if (levels.length !== 2 ** table.bits) {
     refuse('table.levels', levels, `${2 ** table.bits} voltages, one for each code of ${table.bits} bits`);
-  } else if (levels.every((volts) => volts === levels[0])) {
-    refuse('table.levels', levels, 'at least two different voltages');
+  } else if (!canBeTold(levels)) {
+    refuse('table.levels', levels, 'voltages from lowest to highest that differ by 1e-200 to 1e200');
   }
   const why = 'while table.levels is given';
   if (table.dither !== 'none') refuse('table.dither', table.dither, `"none" ${why}`);
   if (table.shaping !== 0) refuse('table.shaping', table.shaping, `0 ${why}`);
   if (table.scale !== 'full-span') refuse('table.scale', table.scale, `"full-span" ${why}`);
   if (table.rounding !== 'half-up') refuse('table.rounding', table.rounding, `"half-up" ${why}`);
+}
+
+/** Whether the span of voltages is far from both ends of what a double holds, so that it can be divided by. */
+function canBeTold(levels: readonly number[]): boolean {
+  let lowest = Infinity;
+  let highest = -Infinity;
+  for (const volts of levels) {
+    lowest = Math.min(lowest, volts);
+    highest = Math.max(highest, volts);
+  }
+  const span = highest - lowest;
+  return span >= 1e-200 && span <= 1e200;
 }
 
 function quarterFoldRules(table: Definition['table'], refuse: Refuse): void {
@@ -64,25 +57,4 @@ function quarterFoldRules(table: Definition['table'], refuse: Refuse): void {
   if (table.rounding === 'down') refuse('table.rounding', table.rounding, `"half-up" or "half-even" ${why}`);
   if (table.cycles !== 1) refuse('table.cycles', table.cycles, `1 ${why}`);
   if (table.length % 4 !== 0) refuse('table.length', table.length, `a multiple of 4 ${why}`);
-}
-
-/**
- * Depth of nested mixes in input that has not been parsed. Counted with a list, not by recursion, so that
- * hostile nesting meets a refusal and not the end of the stack.
- */
-export function mixDepthOf(source: unknown): number {
-  let deepest = 0;
-  const waiting: { source: unknown; depth: number }[] = [{ source, depth: 1 }];
-  for (let next = waiting.pop(); next !== undefined; next = waiting.pop()) {
-    const { source: here, depth } = next;
-    if (typeof here !== 'object' || here === null || !('parts' in here) || !Array.isArray(here.parts)) continue;
-    deepest = Math.max(deepest, depth);
-    if (deepest > limits.mixDepth) return deepest;
-    for (const part of here.parts as unknown[]) {
-      if (typeof part === 'object' && part !== null && 'source' in part) {
-        waiting.push({ source: part.source, depth: depth + 1 });
-      }
-    }
-  }
-  return deepest;
 }

@@ -1,6 +1,6 @@
 import { z } from 'zod';
 import { limits } from './limits.ts';
-import { emailField, linkTokenField, momentField, personNameField, slugField, teamNameField } from './fields.ts';
+import { emailField, linkTokenField, momentField, pageOf, personNameField, slugField, teamNameField } from './fields.ts';
 
 /** Each role includes the ones before it. */
 export const roles = ['viewer', 'author', 'reviewer', 'admin'] as const;
@@ -12,30 +12,45 @@ export function includesRole(held: Role, needed: Role): boolean {
   return roles.indexOf(held) >= roles.indexOf(needed);
 }
 
-/** What a new table of the team begins with. */
-export const teamDefaultsSchema = z.strictObject({
+/** How much one team or person may have; told before it is hit. */
+export const teamLimits = { teamsOfAPerson: 50, members: 200, openInvitations: 100, tables: 200_000 } as const;
+
+const wholeNumber = ({ min, max }: { readonly min: number; readonly max: number }) => {
+  const error = `a whole number from ${min} to ${max}`;
+  return z.int({ error }).min(min, { error }).max(max, { error });
+};
+
+const defaultFields = {
   /** Put before array names on export; empty, or a C identifier's beginning. */
   arrayPrefix: z
-    .string()
+    .string({ error: 'text' })
     .max(32, { error: 'at most 32 characters' })
-    .regex(/^([A-Za-z][A-Za-z0-9_]*)?$/, { error: 'letters, digits and underscores, a letter first; or nothing' })
-    .default(''),
+    .regex(/^([A-Za-z][A-Za-z0-9_]*)?$/, { error: 'letters, digits and underscores, a letter first; or nothing' }),
   /** A comment line at the top of each exported file, such as an SPDX identifier. */
   licenceLine: z
-    .string()
+    .string({ error: 'text' })
     .max(200, { error: 'at most 200 characters' })
-    .regex(/^[^\p{Cc}\u2028\u2029]*$/u, { error: 'one line of text' })
-    .default(''),
-  bits: z.int().min(limits.bits.min).max(limits.bits.max).default(8),
-  length: z.int().min(limits.tableLength.min).max(limits.tableLength.max).default(256),
-  target: z.string().max(40).default('c99'),
+    .regex(/^[^\p{Cc}\u2028\u2029]*$/u, { error: 'one line of text' }),
+  bits: wholeNumber(limits.bits),
+  length: wholeNumber(limits.tableLength),
+  target: z.string({ error: 'the name of an export' }).regex(/^[a-z0-9-]{1,40}$/, { error: 'the name of an export' }),
+};
+
+/** What a new table of the team begins with. */
+export const teamDefaultsSchema = z.strictObject({
+  arrayPrefix: defaultFields.arrayPrefix.default(''),
+  licenceLine: defaultFields.licenceLine.default(''),
+  bits: defaultFields.bits.default(8),
+  length: defaultFields.length.default(256),
+  target: defaultFields.target.default('c99'),
 });
 export type TeamDefaults = z.infer<typeof teamDefaultsSchema>;
 
-export const teamSchema = z.strictObject({
-  slug: slugField,
-  name: teamNameField,
-  myRole: roleField,
+export const teamSummarySchema = z.strictObject({ slug: slugField, name: teamNameField, myRole: roleField });
+export type TeamSummary = z.infer<typeof teamSummarySchema>;
+export const teamsPageSchema = pageOf(teamSummarySchema);
+
+export const teamSchema = teamSummarySchema.extend({
   defaults: teamDefaultsSchema,
   /** Limits of size, told before they are hit. */
   usage: z.strictObject({ tables: z.int(), tablesAtMost: z.int() }),
@@ -45,9 +60,10 @@ export const teamSchema = z.strictObject({
 export type Team = z.infer<typeof teamSchema>;
 
 export const createTeamSchema = z.strictObject({ name: teamNameField, slug: slugField.optional() });
+/** What is left out stays as it is, among the defaults too. */
 export const changeTeamSchema = z.strictObject({
   name: teamNameField.optional(),
-  defaults: teamDefaultsSchema.optional(),
+  defaults: z.strictObject(defaultFields).partial().optional(),
 });
 
 export const memberSchema = z.strictObject({
@@ -58,17 +74,24 @@ export const memberSchema = z.strictObject({
   since: momentField,
 });
 export type Member = z.infer<typeof memberSchema>;
+export const membersPageSchema = pageOf(memberSchema);
 export const changeMemberSchema = z.strictObject({ role: roleField });
+
+export const deliveryStates = ['waiting', 'sent', 'undelivered'] as const;
 
 export const invitationSchema = z.strictObject({
   id: z.int(),
   email: z.string(),
   role: roleField,
-  invitedBy: z.string(),
+  /** Null where that account is gone. */
+  invitedBy: z.string().nullable(),
+  /** How far its mail has come. */
+  delivery: z.enum(deliveryStates),
   createdAt: momentField,
   expiresAt: momentField,
 });
 export type Invitation = z.infer<typeof invitationSchema>;
+export const invitationsPageSchema = pageOf(invitationSchema);
 export const inviteSchema = z.strictObject({ email: emailField, role: roleField });
 export const invitationTokenSchema = z.strictObject({ token: linkTokenField });
 /** What the holder of an invitation's link is shown before accepting it. */
@@ -78,3 +101,4 @@ export const openInvitationSchema = z.strictObject({
   role: roleField,
   email: z.string(),
 });
+export type OpenInvitation = z.infer<typeof openInvitationSchema>;

@@ -17,28 +17,46 @@ export function harmonicsCycle(
 ): Float64Array {
   const cycle = new Float64Array(table.length).fill(source.offset);
   const sines: Sine[] = [];
-  let leftOut = 0;
+  const leftOut: { harmonic: number; index: number }[] = [];
   source.partials.forEach(({ harmonic, amplitude, phaseDeg }, index) => {
-    if (fitsTable(harmonic, table)) {
-      sines.push({ harmonic, amplitude, phaseRad: ((phaseDeg % 360) * Math.PI) / 180 });
-      return;
-    }
-    leftOut += 1;
-    if (leftOut > warningsSpelledOut) return;
-    const cyclesText = table.cycles === 1 ? '' : ` with ${table.cycles} cycles`;
-    warnings.push({
-      code: 'partial-above-nyquist',
-      path: `${path}.partials[${index}].harmonic`,
-      message: `Harmonic ${harmonic} is left out: a table of ${table.length} entries${cyclesText} holds harmonics below ${table.length / (2 * table.cycles)}.`,
-    });
+    if (fitsTable(harmonic, table)) sines.push({ harmonic, amplitude, phaseRad: ((phaseDeg % 360) * Math.PI) / 180 });
+    else leftOut.push({ harmonic, index });
   });
-  if (leftOut > warningsSpelledOut) {
+  if (leftOut.length > 0) warnings.push(...warningsOf(leftOut, table, path));
+  addSines(cycle, sines, table);
+  return cycle;
+}
+
+function warningsOf(
+  leftOut: readonly { harmonic: number; index: number }[],
+  { length, cycles }: TableSettings,
+  path: string,
+): Warning[] {
+  const cyclesText = cycles === 1 ? '' : ` with ${cycles} cycles`;
+  const reason = `a table of ${length} entries${cyclesText} holds harmonics below ${length / (2 * cycles)}.`;
+  const warnings: Warning[] = leftOut.slice(0, warningsSpelledOut).map(({ harmonic, index }) => ({
+    code: 'partial-above-nyquist',
+    path: `${path}.partials[${index}].harmonic`,
+    message: `Harmonic ${harmonic} is left out: ${reason}`,
+  }));
+  const others = leftOut.slice(warningsSpelledOut).map(({ harmonic }) => harmonic);
+  if (others.length > 0) {
     warnings.push({
       code: 'partial-above-nyquist',
       path: `${path}.partials`,
-      message: `${leftOut - warningsSpelledOut} more partials are left out for the same reason.`,
+      message: `${others.length} more are left out, harmonics ${runsOf(others)}: ${reason}`,
     });
   }
-  addSines(cycle, sines, table);
-  return cycle;
+  return warnings;
+}
+
+/** Whole numbers in few words: `16–20, 22`. */
+function runsOf(numbers: readonly number[]): string {
+  const runs: { first: number; last: number }[] = [];
+  for (const number of [...numbers].sort((a, b) => a - b)) {
+    const run = runs.at(-1);
+    if (run !== undefined && number <= run.last + 1) run.last = number;
+    else runs.push({ first: number, last: number });
+  }
+  return runs.map(({ first, last }) => (first === last ? `${first}` : `${first}–${last}`)).join(', ');
 }

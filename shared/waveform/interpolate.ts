@@ -86,7 +86,8 @@ function monotoneSlopes(y: Float64Array, width: Float64Array): Float64Array {
     const h = width[i];
     const riseBefore = (y[before + 1] - y[before]) / hBefore;
     const rise = (y[i + 1] - y[i]) / h;
-    if (riseBefore * rise > 0) {
+    // By sign, not by product, which is 0 for two small rises.
+    if (Math.sign(riseBefore) === Math.sign(rise) && rise !== 0) {
       const w1 = 2 * h + hBefore;
       const w2 = h + 2 * hBefore;
       slope[i] = (w1 + w2) / (w1 / riseBefore + w2 / rise);

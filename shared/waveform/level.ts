@@ -21,9 +21,9 @@ const clipTolerance = 1e-12;
 export function levelCycle(synthesis: Synthesis, { level, table }: Definition): LevelledCycle {
   const isBipolar = table.range === 'bipolar';
   const cycle = Float64Array.from(synthesis.cycle);
-  if (!cycle.every(Number.isFinite)) refuseSignal('a signal beyond the range of a double', 'smaller amplitudes');
-
   if (level.removeMean) subtractMean(cycle);
+  // A sum beyond a double, that of the mean too, shows as an entry that is not finite.
+  if (!cycle.every(Number.isFinite)) refuseSignal('a signal beyond the range of a double', 'smaller amplitudes');
   if (level.normalise === 'peak') scaleToPeak(cycle, synthesis.largestInput);
   if (level.normalise === 'span') scaleToSpan(cycle, synthesis.largestInput, isBipolar);
   applyLevel(cycle, level, isBipolar);
