@@ -1,0 +1,18 @@
+export { Button, IconButton, type ButtonProps, type IconButtonProps } from './button.tsx';
+export { Caution } from './caution.tsx';
+export { ChoiceField, type ChoiceFieldProps } from './choice-field.tsx';
+export { Dialog, type DialogProps } from './dialog.tsx';
+export { EmptyState, type EmptyStateProps } from './empty-state.tsx';
+export { Explain, type ExplainProps } from './explain.tsx';
+export { Figure, FigureStrip, type FigureProps, type FigureTone } from './figure.tsx';
+export { Flight, Flights, type FlightProps } from './flight.tsx';
+export { icons, type Icon } from './icons.tsx';
+export { Kbd } from './kbd.tsx';
+export { keySheet, useKeyGroup, useKeyGroups, type KeyGroup } from './keys.ts';
+export { Menu, type MenuItem, type MenuProps } from './menu.tsx';
+export { NumberField, type NumberFieldProps } from './number-field.tsx';
+export { SelectField, type SelectFieldProps, type SelectOption } from './select-field.tsx';
+export { SwitchField, type SwitchFieldProps } from './switch-field.tsx';
+export { TabPanel, TabRow, type TabRowProps } from './tab-row.tsx';
+export { TextField, type TextFieldProps } from './text-field.tsx';
+export { ToastRegion, useToast, type Toast } from './toast.tsx';

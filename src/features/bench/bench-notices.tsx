@@ -1,0 +1,58 @@
+import { Button, Caution, icons } from '../../components/index.ts';
+import { saveText } from './save-text.ts';
+import { theBench, useBench } from './state/use-bench.ts';
+
+/** What there is to know about where the work is kept, and how to begin. */
+export function BenchNotices() {
+  const isUntouched = useBench((state) => state.isUntouched);
+  const isKept = useBench((state) => state.isKept);
+  const isFromOtherTab = useBench((state) => state.isFromOtherTab);
+  return (
+    <>
+      <SetAside />
+      {isUntouched && (
+        <p className="bench-welcome">
+          A fog-signal tone of five partials is on the bench. Drag its bars, choose depth and length, listen,
+          and take the C files with you: down the four flights, no account needed. What you make stays in this
+          browser.
+        </p>
+      )}
+      <div role="status">
+        {!isKept && (
+          <Caution title="Not kept">
+            This browser’s storage is full or closed to the page: what is on the bench will not survive a
+            reload. Copy its link to keep it.
+          </Caution>
+        )}
+        {isFromOtherTab && (
+          <p className="bench-welcome">
+            Another tab of this browser changed the bench. Undo brings back what was here.
+          </p>
+        )}
+      </div>
+    </>
+  );
+}
+
+function SetAside() {
+  const text = useBench((state) => state.setAside);
+  if (text === null) return null;
+  return (
+    <Caution title="Kept work could not be read">
+      What this browser had kept for the bench is damaged or from a later version. It has been set aside
+      unchanged.
+      <span className="caution-actions">
+        <Button
+          size="small"
+          icon={icons.download}
+          onPress={() => saveText('bench-set-aside.json', text, 'application/json')}
+        >
+          Download it
+        </Button>
+        <Button size="small" variant="quiet" onPress={() => theBench().letSetAsideGo()}>
+          Let it go
+        </Button>
+      </span>
+    </Caution>
+  );
+}

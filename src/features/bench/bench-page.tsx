@@ -1,0 +1,101 @@
+import './bench.css';
+import { useCallback, useEffect, useRef } from 'react';
+import { Flight, Flights, useToast } from '../../components/index.ts';
+import { BenchHead } from './bench-head.tsx';
+import { BenchNotices } from './bench-notices.tsx';
+import { BenchDrawings } from './drawings/bench-drawings.tsx';
+import { ExportFlight, ExportSummary } from './export/export-flight.tsx';
+import { OutputFlight, OutputSummary } from './output/output-flight.tsx';
+import { flightOfField } from './problems/field-names.ts';
+import { goToField } from './problems/go-to-field.ts';
+import { ProblemSummary } from './problems/problem-summary.tsx';
+import { QuantiseFlight, QuantiseSummary } from './quantise/quantise-flight.tsx';
+import { BenchShape, ShapeSummary } from './shape-on-bench.tsx';
+import { useCopyLink } from './share/use-copy-link.tsx';
+import { theBench } from './state/use-bench.ts';
+import { useBenchKeys } from './view/use-bench-keys.ts';
+import { useSteps } from './view/use-steps.ts';
+import { useIsWide } from './view/use-is-wide.ts';
+import { useOpenFlights } from './view/use-open-flights.ts';
+
+const flights = [
+  { id: 'shape', title: 'Shape', Summary: ShapeSummary, Body: BenchShape },
+  { id: 'quantise', title: 'Quantise', Summary: QuantiseSummary, Body: QuantiseFlight },
+  { id: 'output', title: 'Output', Summary: OutputSummary, Body: OutputFlight },
+  { id: 'export', title: 'Export', Summary: ExportSummary, Body: ExportFlight },
+] as const;
+
+/** The first page: flights at the left, drawings at the right; where there is no room for both, drawings first. */
+export function BenchPage() {
+  const flightState = useOpenFlights();
+  const { open, setOpen } = flightState;
+  const isWide = useIsWide();
+  const toast = useToast();
+  const { copyLink, linkDialog } = useCopyLink();
+
+  const copy = useCallback(() => {
+    const { history, table, problems } = theBench().getState();
+    if (problems.length === 0 && table !== null) {
+      copyLink({ definition: table.definition, playback: history.present.playback });
+    } else {
+      toast({
+        message: 'A link can carry only a wave that builds. Put the marked fields right first.',
+        tone: 'fault',
+      });
+    }
+  }, [copyLink, toast]);
+
+  const goTo = useGoTo(flightState);
+  useBenchKeys(setOpen, copy);
+  useSteps();
+
+  const parts = [
+    <div key="flights" className="bench-flights">
+      <Flights>
+        {flights.map(({ id, title, Summary, Body }, index) => (
+          <Flight
+            key={id}
+            id={id}
+            number={(index + 1) as 1 | 2 | 3 | 4}
+            title={title}
+            summary={<Summary />}
+            isOpen={open.includes(id)}
+            onToggle={(isOpen) => setOpen(id, isOpen)}
+          >
+            <Body isOpen={open.includes(id)} onGoTo={goTo} />
+          </Flight>
+        ))}
+      </Flights>
+    </div>,
+    <BenchDrawings key="drawings" onGoTo={goTo} />,
+  ];
+  return (
+    <div className="bench">
+      <div className="bench-top">
+        <BenchHead onCopyLink={copy} />
+        <BenchNotices />
+        <ProblemSummary onGoTo={goTo} />
+      </div>
+      {isWide ? parts : parts.toReversed()}
+      {linkDialog}
+    </div>
+  );
+}
+
+/** Opens the flight that a field stands in, and once that is there goes to the field. */
+function useGoTo({ open, setOpen }: ReturnType<typeof useOpenFlights>): (path: string) => void {
+  const wanted = useRef<string | null>(null);
+  useEffect(() => {
+    if (wanted.current !== null) goToField(wanted.current);
+    wanted.current = null;
+  }, [open]);
+  return useCallback(
+    (path) => {
+      const flight = flightOfField(path);
+      if (flight === null || open.includes(flight)) return goToField(path);
+      wanted.current = path;
+      setOpen(flight, true);
+    },
+    [open, setOpen],
+  );
+}

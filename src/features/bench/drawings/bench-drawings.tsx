@@ -1,0 +1,39 @@
+import { FigureStrips } from '../figures/figure-strips.tsx';
+import { Warnings } from '../figures/warnings.tsx';
+import { useBench } from '../state/use-bench.ts';
+import { sampleRateOf } from '../state/wave.ts';
+import { Drawings } from './drawings.tsx';
+import { usePointsOverlay } from './use-points-overlay.ts';
+
+/** Drawings and figures of the newest table. While the draft has a problem they stay, dimmed. */
+export function BenchDrawings({ onGoTo }: { onGoTo: (path: string) => void }) {
+  const table = useBench((state) => state.table);
+  const playback = useBench(({ history }) => history.present.playback);
+  const isStale = useBench(({ problems, failure }) => problems.length > 0 || failure !== null);
+  const isBuilding = useBench((state) => state.isBuilding);
+  const overlay = usePointsOverlay(table);
+  return (
+    <section
+      className="bench-drawings"
+      aria-label="Drawings and figures"
+      data-stale={isStale ? '' : undefined}
+    >
+      {table === null ? (
+        <p className="drawings-wait" role="status">
+          {isStale ? 'Nothing could be built yet.' : 'Building the first table…'}
+        </p>
+      ) : (
+        <>
+          {isBuilding && <p className="drawings-late">Building…</p>}
+          <Drawings
+            table={table}
+            sampleRateHz={sampleRateOf(playback, table.definition.table)}
+            overlay={overlay}
+          />
+          <Warnings warnings={table.warnings} onGoTo={onGoTo} />
+          <FigureStrips table={table} />
+        </>
+      )}
+    </section>
+  );
+}

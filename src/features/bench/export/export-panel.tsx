@@ -1,0 +1,92 @@
+import { useMemo, useState } from 'react';
+import { arrayNameFrom, targets } from '../../../../shared/firmware/index.ts';
+import { SelectField } from '../../../components/index.ts';
+import { theBench, useBench } from '../state/use-bench.ts';
+import { ExportedFiles } from './exported-files.tsx';
+import { ExportProblems } from './export-problems.tsx';
+import { OptionField } from './option-field.tsx';
+import { givenOptions, renderExport } from './render-export.ts';
+import { useSettled } from './use-settled.ts';
+
+export interface ExportPanelProps {
+  /** Brings the field at a path of the definition into sight. */
+  onGoTo: (path: string) => void;
+}
+
+/** A wave that is being dragged is rendered once it rests, in milliseconds. */
+const restMs = 150;
+
+const noOptions = {};
+
+export function ExportPanel({ onGoTo }: ExportPanelProps) {
+  const table = useSettled(
+    useBench((state) => state.table),
+    restMs,
+  );
+  const isStale = useBench(({ problems }) => problems.length > 0);
+  const targetId = useBench(({ history }) => history.present.exporting.target);
+  const typed = useBench(({ history }) => history.present.exporting.options[targetId]) ?? noOptions;
+  const [selected, setSelected] = useState('');
+
+  const options = useMemo(() => givenOptions(typed), [typed]);
+  const rendered = useMemo(
+    () => (table === null ? null : renderExport(table, targetId, options)),
+    [table, targetId, options],
+  );
+  if (table === null || rendered === null) return <p role="status">No table has been built yet.</p>;
+
+  const target = targets.find(({ id }) => id === targetId);
+  const problems = 'problems' in rendered ? rendered.problems : [];
+  return (
+    <div className="space-y-4">
+      <div className="field-pair">
+        <SelectField
+          label="Target"
+          value={targetId}
+          options={targets.map(({ id, title }) => ({ value: id, label: title }))}
+          onChange={setTarget}
+        />
+        {Object.entries(target?.options.shape ?? {}).map(([name, schema]) => {
+          const problem = problems.find(({ path }) => path === `options.${name}`);
+          return (
+            <OptionField
+              key={`${targetId} ${name}`}
+              name={name}
+              schema={schema}
+              value={typed[name]}
+              fallback={name === 'arrayName' ? arrayNameFrom(table.definition.name) : undefined}
+              onChange={(value) => setOption(name, value)}
+              problem={problem && `${problem.value} is not allowed. Allowed: ${problem.allowed}.`}
+            />
+          );
+        })}
+      </div>
+      <ExportProblems problems={problems} onGoTo={onGoTo} />
+      {isStale && <p className="figure-note">These are the files of the last wave that could be built.</p>}
+      {'files' in rendered && (
+        <ExportedFiles
+          {...{ table, targetId, options, selected }}
+          files={rendered.files}
+          onSelect={setSelected}
+        />
+      )}
+    </div>
+  );
+}
+
+function setTarget(target: string): void {
+  theBench().change((work) => ({ ...work, exporting: { ...work.exporting, target } }));
+}
+
+function setOption(name: string, value: string): void {
+  theBench().change(
+    ({ exporting, ...work }) => {
+      const { target, options } = exporting;
+      return {
+        ...work,
+        exporting: { target, options: { ...options, [target]: { ...options[target], [name]: value } } },
+      };
+    },
+    { coalesce: `export.${name}` },
+  );
+}

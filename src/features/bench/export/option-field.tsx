@@ -1,0 +1,65 @@
+import type { ReactNode } from 'react';
+import { z } from 'zod';
+import { SelectField, TextField } from '../../../components/index.ts';
+
+interface OptionFieldProps {
+  name: string;
+  schema: z.core.$ZodType;
+  value: unknown;
+  onChange: (value: string) => void;
+  /** What is taken where nothing is given. */
+  fallback?: string;
+  problem: ReactNode;
+}
+
+const labels: Readonly<Record<string, string>> = {
+  arrayName: 'Array name',
+  port: 'Port',
+  highPort: 'Port of bit 8 and up',
+};
+
+/** A control for one option of a target, made from the option's own schema. */
+export function OptionField({ name, schema, value, onChange, fallback, problem }: OptionFieldProps) {
+  const { inner, standard } = unwrap(schema);
+  const label = labels[name] ?? name;
+  const description = sentence(schema instanceof z.ZodType ? schema.description : undefined);
+  const typed = typeof value === 'string' ? value : '';
+  if (inner instanceof z.ZodEnum) {
+    const values = inner.options.map(String);
+    const choices = values.map((one) => ({ value: one, label: one }));
+    return (
+      <SelectField
+        label={label}
+        value={typed || (standard ?? '')}
+        options={standard === undefined ? [{ value: '', label: 'Not given' }, ...choices] : choices}
+        onChange={onChange}
+        description={description}
+        problem={problem}
+      />
+    );
+  }
+  return (
+    <TextField
+      label={label}
+      value={typed}
+      placeholder={fallback}
+      onChange={onChange}
+      description={description}
+      problem={problem}
+      isCode
+      autoComplete="off"
+    />
+  );
+}
+
+/** The schema within `optional` and `default`, and the default. */
+function unwrap(schema: z.core.$ZodType): { inner: z.core.$ZodType; standard?: string } {
+  if (schema instanceof z.ZodDefault)
+    return { ...unwrap(schema.unwrap()), standard: String(schema.def.defaultValue) };
+  if (schema instanceof z.ZodOptional) return unwrap(schema.unwrap());
+  return { inner: schema };
+}
+
+function sentence(words: string | undefined): string | undefined {
+  return words && `${words[0].toUpperCase()}${words.slice(1)}.`;
+}

@@ -1,0 +1,95 @@
+import { useCallback } from 'react';
+import { formatQuantity } from '../../../../shared/quantities/index.ts';
+import { Caution, Explain } from '../../../components/index.ts';
+import { ListenPanel, type Playback } from '../listen/index.ts';
+import { theBench, useBench, useDefinition } from '../state/use-bench.ts';
+import { sampleRateOf, toneOf } from '../state/wave.ts';
+
+/** How the wave sounds, and what will come out of the pin. */
+export function OutputFlight() {
+  const table = useBench((state) => state.table);
+  const playback = useBench(({ history }) => history.present.playback);
+  const change = useCallback(
+    (next: Playback) =>
+      theBench().change((work) => ({ ...work, playback: next }), { coalesce: changedPart(next) }),
+    [],
+  );
+  return (
+    <div className="space-y-5">
+      {table !== null && (
+        <ListenPanel
+          cycle={table.cycle}
+          values={table.values}
+          playback={playback}
+          onPlaybackChange={change}
+          range={table.definition.table.range}
+          tableCycles={table.definition.table.cycles}
+        />
+      )}
+      <AtThePin />
+    </div>
+  );
+}
+
+/** Numbers that are typed or stepped join into one step; a choice is a step of its own. */
+function changedPart(next: Playback): string | undefined {
+  const { playback } = theBench().getState().history.present;
+  return playback.mode === next.mode && playback.by === next.by ? 'playback' : undefined;
+}
+
+function AtThePin() {
+  const table = useDefinition((definition) => definition.table);
+  const playback = useBench(({ history }) => history.present.playback);
+  const isLoop = playback.mode === 'loop';
+  const sampleRateHz = sampleRateOf(playback, table);
+  const rate = hertz(sampleRateHz);
+  return (
+    <section className="space-y-2">
+      <h3 className="flex items-center gap-2">
+        At the pin
+        <Explain title="At the pin">
+          <p>
+            The pin holds each entry until the next, so the wave comes out as a staircase. Beside the wave’s
+            own lines it has their images round every multiple of the sample rate.
+          </p>
+          <p>
+            <code>tone = K·fs/N</code> with fs the sample rate, N the table length and K the cycles in the
+            table.
+          </p>
+        </Explain>
+      </h3>
+      <p>
+        {isLoop ? (
+          <>
+            {table.length} entries written over and over at {rate} give {hertz(toneOf(playback, table))}. A
+            low-pass filter takes the images round {rate} away.
+          </>
+        ) : (
+          <>
+            {table.length} entries written once at {rate} last{' '}
+            {formatQuantity(table.length / sampleRateHz, 's', { significant: 3 })}; the pin stays on the last
+            entry.
+          </>
+        )}
+      </p>
+      <Caution title="Before you connect anything">
+        A pin drives a few milliamperes at most, and all pins of a port together have a limit of their own:
+        see the data sheet of the part. A table whose mean is not in the middle puts DC through a loudspeaker;
+        couple it through a capacitor or an amplifier made for it. Warning and alarm tones can fall under a
+        standard: leave those to it and to a qualified engineer.
+      </Caution>
+    </section>
+  );
+}
+
+/** Playback in one line. */
+export function OutputSummary() {
+  const table = useDefinition((definition) => definition.table);
+  const playback = useBench(({ history }) => history.present.playback);
+  const rate = `${hertz(sampleRateOf(playback, table))} sample rate`;
+  return playback.mode === 'loop'
+    ? `Loop at ${hertz(toneOf(playback, table))} · ${rate}`
+    : `Once through · ${rate}`;
+}
+
+const hertz = (value: number) => formatQuantity(value, 'Hz', { significant: 5 });

@@ -1,0 +1,57 @@
+/** What the form calls a field, by its path in the definition. */
+const names: Readonly<Record<string, string>> = {
+  name: 'Name of the wave',
+  source: 'Shape',
+  'source.offset': 'Offset',
+  'source.partials': 'Partials',
+  'source.points': 'Points',
+  'source.interpolation': 'Interpolation',
+  level: 'Level',
+  'level.removeMean': 'Remove the mean',
+  'level.normalise': 'Normalise',
+  'level.level': 'Level',
+  'level.transfer': 'Transfer curve',
+  'level.transfer.gamma': 'Gamma',
+  'table.length': 'Table length',
+  'table.bits': 'Bit depth',
+  'table.cycles': 'Cycles in the table',
+  'table.startPhaseDeg': 'Start phase',
+  'table.sampleAt': 'Sampled at',
+  'table.range': 'Range',
+  'table.scale': 'Scale',
+  'table.rounding': 'Rounding',
+  'table.coding': 'Coding',
+  'table.complement': 'Inverted codes',
+};
+
+const partNames: Readonly<Record<string, string>> = {
+  harmonic: 'harmonic number',
+  amplitude: 'amplitude',
+  phaseDeg: 'phase',
+  x: 'place in the cycle',
+  y: 'value',
+};
+
+/** Names the field at a path in the form's words: `source.partials[2].amplitude` is `Partial 3, amplitude`. */
+export function nameOfField(path: string): string {
+  const inList = /^source\.(partials|points)\[(\d+)\](?:\.(\w+))?$/.exec(path);
+  if (inList !== null) {
+    const [, list, index, part] = inList;
+    const item = `${list === 'partials' ? 'Partial' : 'Point'} ${Number(index) + 1}`;
+    return part === undefined ? item : `${item}, ${partNames[part] ?? part}`;
+  }
+  return names[path] ?? path;
+}
+
+const flightOfPart: Readonly<Record<string, FlightId>> = {
+  source: 'shape',
+  level: 'quantise',
+  table: 'quantise',
+};
+
+export type FlightId = 'shape' | 'quantise' | 'output' | 'export';
+
+/** The flight that a field stands in; `null` where it stands above them all. */
+export function flightOfField(path: string): FlightId | null {
+  return flightOfPart[/^\w+/.exec(path)?.[0] ?? ''] ?? null;
+}

@@ -1,0 +1,21 @@
+/** Paths from the field outwards: `source.partials[3].x`, `source.partials[3]`, `source.partials`, `source`. */
+function* outwards(path: string): Generator<string> {
+  for (let here = path; here !== ''; here = here.replace(/(^|\.)\w+$|\[\d+\]$/, '')) {
+    yield here;
+    if (!/[.[]/.test(here)) return;
+  }
+}
+
+const takesFocus = 'input, select, textarea, button, [tabindex="0"]';
+
+/** Brings the field at a path, or the nearest thing that holds it, into sight and gives it the focus. */
+export function goToField(path: string): void {
+  for (const here of outwards(path)) {
+    const spot = document.querySelector<HTMLElement>(`[data-path="${CSS.escape(here)}"]`);
+    const field = spot?.matches(takesFocus) ? spot : spot?.querySelector<HTMLElement>(takesFocus);
+    if (field === undefined || field === null) continue;
+    field.scrollIntoView({ block: 'center' });
+    field.focus({ preventScroll: true });
+    return;
+  }
+}

@@ -1,0 +1,22 @@
+import { useCallback } from 'react';
+import type { Source } from '../../../shared/contract/index.ts';
+import { ShapeFlight, sayInWords } from './shape/index.ts';
+import { changeDefinition, useBench, useDefinition } from './state/use-bench.ts';
+
+/** The shape flight, tied to the definition on the bench. */
+export function BenchShape() {
+  const source = useDefinition((definition) => definition.source);
+  const { length, cycles, range } = useDefinition((definition) => definition.table);
+  const problems = useBench((state) => state.problems);
+  const change = useCallback(
+    (next: Source, how?: { coalesce?: string }) =>
+      changeDefinition((definition) => ({ ...definition, source: next }), how?.coalesce),
+    [],
+  );
+  return <ShapeFlight {...{ source, problems, cycles, range }} onChange={change} tableLength={length} />;
+}
+
+/** What the wave is made of, in one line. */
+export function ShapeSummary() {
+  return sayInWords(useDefinition((definition) => definition.source));
+}

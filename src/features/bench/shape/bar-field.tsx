@@ -1,0 +1,215 @@
+import { useId, useRef, useState, type KeyboardEvent, type PointerEvent } from 'react';
+import type { HarmonicsSource } from '../../../../shared/contract/index.ts';
+import { formatQuantity } from '../../../../shared/quantities/index.ts';
+import { IconButton } from '../../../components/index.ts';
+import { Bar } from './bar.tsx';
+import { BarEntry } from './bar-entry.tsx';
+import { actOfKey } from './bar-keys.ts';
+import { barsOf, setBar } from './bars.ts';
+import { barShare, ceilingFor, labelEvery, relativeDb, snapToGrid, type Reach } from './bar-scale.ts';
+import type { OnChange } from './change.ts';
+import { turnIcons } from './turn-icons.tsx';
+import { useBarStrokes } from './use-bar-strokes.ts';
+import { useShownCells } from './use-shown-cells.ts';
+
+export interface BarFieldProps {
+  source: HarmonicsSource;
+  onChange: OnChange<HarmonicsSource>;
+  /** Harmonics shown: 1 … this. */
+  shown: number;
+  /** Highest harmonic that the table holds; bars above it are marked as left out. */
+  highestFitting: number;
+  reach: Reach;
+}
+
+/**
+ * Harmonics as bars to draw on: a drag across sets many in one stroke, arrow keys walk and set, digits open an exact
+ * field. Only the bars in sight are in the page, so that thousands of harmonics cost no more than a few dozen.
+ */
+export function BarField({ source, onChange, shown, highestFitting, reach }: BarFieldProps) {
+  const hintId = useId();
+  const plane = useRef<HTMLDivElement>(null);
+  const [active, setActive] = useState(1);
+  const [hovered, setHovered] = useState<number | null>(null);
+  const [entry, setEntry] = useState<{ harmonic: number; start: string | number } | null>(null);
+  const cells = useShownCells(shown);
+
+  const { partials } = source;
+  const bars = barsOf(partials);
+  const amplitudeOf = (harmonic: number) => {
+    const bar = bars.get(harmonic);
+    return bar === undefined ? 0 : partials[bar.index].amplitude;
+  };
+  const strongest = partials.reduce((most, { amplitude }) => Math.max(most, Math.abs(amplitude)), 0);
+  const fitted = ceilingFor(strongest, reach);
+  // While a stroke is under way the scale stands still under the pointer.
+  const [heldCeiling, setHeldCeiling] = useState<number | null>(null);
+  const ceiling = heldCeiling ?? fitted;
+  const stop = Math.min(active, shown);
+
+  const focusBar = (harmonic: number) => {
+    setActive(harmonic);
+    cells.bringIntoSight(harmonic);
+    // The bar may come into the page only with the next paint.
+    requestAnimationFrame(() => {
+      plane.current?.querySelector<HTMLElement>(`[data-harmonic="${harmonic}"]`)?.focus({ preventScroll: true });
+    });
+  };
+
+  const placeOf = (event: PointerEvent<HTMLElement>) => {
+    const box = event.currentTarget.getBoundingClientRect();
+    const harmonic = 1 + Math.floor((event.clientX - box.left) / cells.pitch);
+    const height = (0.5 - (event.clientY - box.top) / box.height) / barShare;
+    return { harmonic: Math.min(shown, Math.max(1, harmonic)), amplitude: snapToGrid(height * ceiling, ceiling) };
+  };
+  const strokes = useBarStrokes(source, onChange, placeOf, focusBar);
+
+  const onKeyDown = (event: KeyboardEvent<HTMLElement>) => {
+    if (event.ctrlKey || event.metaKey || event.altKey) return;
+    if (event.key === 'Escape' && strokes.drop()) return setHeldCeiling(null);
+    const harmonic = Number((event.target as HTMLElement).dataset.harmonic);
+    if (!(harmonic >= 1)) return;
+    const act = actOfKey(event, { source, harmonic, amplitude: amplitudeOf(harmonic), shown });
+    if (act === null) return;
+    event.preventDefault();
+    if (act.kind === 'go') focusBar(act.harmonic);
+    else if (act.kind === 'type') setEntry({ harmonic, start: act.start });
+    else if (act.next !== source) onChange(act.next, { coalesce: `keys:bar:${harmonic}` });
+  };
+
+  const closeEntry = (harmonic: number) => {
+    setEntry(null);
+    focusBar(harmonic);
+  };
+
+  const every = labelEvery(cells.pitch);
+  const told = hovered ?? stop;
+  const cellsInSight: number[] = [];
+  for (let harmonic = cells.first; harmonic <= cells.last; harmonic += 1) cellsInSight.push(harmonic);
+  if (stop < cells.first || stop > cells.last) cellsInSight.push(stop);
+
+  return (
+    <div className="bar-field" role="group" aria-label="Harmonics as bars" aria-describedby={hintId}>
+      <div className="bar-told">
+        <span aria-hidden="true">Harmonic {told}</span>
+        <span aria-hidden="true" className="bar-told-figure">
+          {tellBar(amplitudeOf(told), strongest)}
+        </span>
+        {(cells.hasEarlier || cells.hasLater) && (
+          <span className="bar-turns">
+            <TurnButton label="Lower harmonics" direction={-1} isThere={cells.hasEarlier} onTurn={cells.turn} />
+            <TurnButton label="Higher harmonics" direction={1} isThere={cells.hasLater} onTurn={cells.turn} />
+          </span>
+        )}
+      </div>
+      <div className="bar-frame">
+        <div className="bar-scale" aria-hidden="true">
+          <span>{formatQuantity(ceiling)}</span>
+          <span>0</span>
+          <span>{formatQuantity(-ceiling)}</span>
+        </div>
+        <div ref={cells.frame} className="bar-scroll" tabIndex={-1} onScroll={cells.onScroll}>
+          <div
+            ref={plane}
+            className="bar-plane"
+            style={{ width: shown * cells.pitch }}
+            onKeyDown={onKeyDown}
+            onFocus={(event) => {
+              const harmonic = Number(event.target.dataset.harmonic);
+              if (harmonic >= 1) setActive(harmonic);
+            }}
+            onPointerDown={(event) => {
+              setHeldCeiling(fitted);
+              strokes.onPointerDown(event);
+            }}
+            onPointerMove={(event) => {
+              setHovered(placeOf(event).harmonic);
+              strokes.onPointerMove(event);
+            }}
+            onPointerUp={(event) => {
+              setHeldCeiling(null);
+              strokes.onPointerUp(event);
+            }}
+            onPointerCancel={(event) => {
+              setHeldCeiling(null);
+              strokes.onPointerCancel(event);
+            }}
+            onPointerLeave={() => setHovered(null)}
+          >
+            {highestFitting < shown && (
+              <div className="bar-beyond" style={{ left: highestFitting * cells.pitch }}>
+                <span>{(shown - highestFitting) * cells.pitch > 64 && 'left out'}</span>
+              </div>
+            )}
+            <div className="bar-zero" />
+            {cellsInSight.map((harmonic) => (
+              <Bar
+                key={harmonic}
+                harmonic={harmonic}
+                amplitude={amplitudeOf(harmonic)}
+                ceiling={ceiling}
+                left={(harmonic - 1) * cells.pitch}
+                width={cells.pitch}
+                isLeftOut={harmonic > highestFitting}
+                isStop={harmonic === stop}
+                count={bars.get(harmonic)?.count ?? 0}
+              />
+            ))}
+          </div>
+          <div className="bar-numbers" style={{ width: shown * cells.pitch }} aria-hidden="true">
+            {cellsInSight
+              .filter((harmonic) => harmonic === 1 || harmonic % every === 0)
+              .map((harmonic) => (
+                <span key={harmonic} style={{ left: (harmonic - 0.5) * cells.pitch }}>
+                  {harmonic}
+                </span>
+              ))}
+          </div>
+        </div>
+        {entry !== null && (
+          <BarEntry
+            key={entry.harmonic}
+            harmonic={entry.harmonic}
+            start={entry.start}
+            at={cells.middleInSight(entry.harmonic)}
+            onDone={(amplitude) => {
+              onChange(setBar(source, { harmonic: entry.harmonic, amplitude }));
+              closeEntry(entry.harmonic);
+            }}
+            onCancel={() => closeEntry(entry.harmonic)}
+          />
+        )}
+      </div>
+      <p id={hintId} className="field-description">
+        Drag to draw. Arrow keys walk and set a bar, with Shift in steps of 0.1; digits set it exactly; Delete takes its
+        partial away.
+      </p>
+    </div>
+  );
+}
+
+interface TurnButtonProps {
+  label: string;
+  direction: -1 | 1;
+  isThere: boolean;
+  onTurn: (direction: -1 | 1) => void;
+}
+
+/** Where a finger on the field draws, it cannot scroll it too. */
+function TurnButton({ label, direction, isThere, onTurn }: TurnButtonProps) {
+  return (
+    <IconButton
+      size="small"
+      label={label}
+      icon={direction < 0 ? turnIcons.back : turnIcons.on}
+      isDisabled={!isThere}
+      disabledReason="There are no more."
+      onPress={() => onTurn(direction)}
+    />
+  );
+}
+
+function tellBar(amplitude: number, strongest: number): string {
+  const height = formatQuantity(amplitude);
+  return amplitude === 0 ? height : `${height} · ${formatQuantity(relativeDb(amplitude, strongest), 'dB', { decimals: 1 })}`;
+}

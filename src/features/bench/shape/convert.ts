@@ -1,0 +1,51 @@
+import { linesOf } from '../../../../shared/analysis/index.ts';
+import type { HarmonicsSource, Partial, PointsSource } from '../../../../shared/contract/index.ts';
+import { closedCurve } from '../../../../shared/waveform/index.ts';
+
+/** Points that a sum of partials is taken over at, and harmonics that a curve of points is taken over by. */
+const pointsTaken = 16;
+const harmonicsTaken = 32;
+const curveSamples = 4_096;
+/** Partials weaker than this beside the strongest are left behind: −60 dB. */
+const leastKept = 1e-3;
+
+const round = (value: number, digits: number) => Number(value.toFixed(digits)) + 0;
+
+/** A spline through evenly spaced points of the wave: a start for drawing on, not the same curve. */
+export function pointsAlong({ offset, partials }: HarmonicsSource): PointsSource {
+  const points = Array.from({ length: pointsTaken }, (_, i) => {
+    const x = i / pointsTaken;
+    const y = partials.reduce(
+      (sum, { harmonic, amplitude, phaseDeg }) =>
+        sum + amplitude * Math.sin(2 * Math.PI * ((harmonic * x) % 1) + (phaseDeg * Math.PI) / 180),
+      offset,
+    );
+    return { x, y: round(y, 3) };
+  });
+  return { kind: 'points', interpolation: 'spline', points, bandlimit: false };
+}
+
+/** The lowest harmonics of a curve of points, as far as the table holds them: a start for going on with bars. */
+export function harmonicsOf(source: PointsSource, highest: number): HarmonicsSource {
+  const curve = closedCurve(source);
+  const samples = Float64Array.from({ length: curveSamples }, (_, i) => curve(i / curveSamples));
+  const { re, im } = linesOf(samples);
+  const top = Math.max(1, Math.min(harmonicsTaken, highest));
+  const all: Partial[] = [];
+  for (let n = 1; n <= top; n += 1) {
+    // X = A·N/2·e^(i(φ − 90°)) for A·sin(2πnt + φ).
+    const phaseDeg = (Math.atan2(im[n], re[n]) * 180) / Math.PI + 90;
+    all.push({
+      harmonic: n,
+      amplitude: round((2 * Math.hypot(re[n], im[n])) / curveSamples, 4),
+      phaseDeg: round(phaseDeg > 180 ? phaseDeg - 360 : phaseDeg, 2),
+    });
+  }
+  const strongest = Math.max(...all.map(({ amplitude }) => amplitude));
+  const partials = all.filter(({ amplitude }) => amplitude > strongest * leastKept);
+  return {
+    kind: 'harmonics',
+    offset: round(re[0] / curveSamples, 4),
+    partials: partials.length > 0 ? partials : [{ harmonic: 1, amplitude: 0, phaseDeg: 0 }],
+  };
+}

@@ -1,0 +1,63 @@
+import type { Problem, Source } from '../../../../shared/contract/index.ts';
+import { ChoiceField, type SelectOption } from '../../../components/index.ts';
+import { FieldProblem } from '../../../components/field-frame.tsx';
+import { highestFitting } from './bars.ts';
+import type { OnChange } from './change.ts';
+import { HarmonicsEditor } from './harmonics-editor.tsx';
+import { PointsEditor } from './points-editor.tsx';
+import { problemAt } from './problems.ts';
+import { sayInWords } from './source-words.ts';
+import { useKeptWork, type Kind } from './use-kept-work.ts';
+import './shape.css';
+
+export interface ShapeFlightProps {
+  source: Source;
+  onChange: OnChange;
+  /** What is wrong with the definition; those of paths under `source` are shown here. */
+  problems: readonly Problem[];
+  tableLength: number;
+  cycles: number;
+  range: 'bipolar' | 'unipolar';
+}
+
+const kinds: Record<Kind, SelectOption<Kind>> = {
+  harmonics: { value: 'harmonics', label: 'Harmonics', hint: 'A sum of sines: for tones, and for standard shapes that stay clean.' },
+  points: { value: 'points', label: 'Points', hint: 'A curve through points: for ramps, fades and waves drawn by hand.' },
+  samples: { value: 'samples', label: 'Samples' },
+  mix: { value: 'mix', label: 'Mix' },
+};
+
+/** The first flight: what the wave is made of. */
+export function ShapeFlight({ source, onChange, problems, tableLength, cycles, range }: ShapeFlightProps) {
+  const kept = useKeptWork(onChange);
+  const others: Kind[] = (['samples', 'mix'] as const).filter((kind) => kind === source.kind || kept.kinds.includes(kind));
+  const isSound = !problems.some(({ path }) => path.startsWith('source'));
+  const wholeProblem = problemAt(problems, 'source');
+  const change: OnChange = (next, how) => kept.change(source, next, how);
+  const frame = { problems, tableLength, cycles, range };
+
+  return (
+    <div className="shape-flight space-y-4">
+      <ChoiceField
+        label="Made of"
+        value={source.kind}
+        options={(['harmonics', 'points', ...others] as const).map((kind) => kinds[kind])}
+        onChange={(kind) => kept.goTo(source, kind, highestFitting(tableLength, cycles), isSound)}
+      />
+      <div aria-live="polite">
+        {wholeProblem && <FieldProblem id="source-problem">{wholeProblem}</FieldProblem>}
+      </div>
+      {source.kind === 'harmonics' && <HarmonicsEditor {...frame} source={source} onChange={change} />}
+      {source.kind === 'points' && <PointsEditor {...frame} source={source} onChange={change} />}
+      {(source.kind === 'samples' || source.kind === 'mix') && (
+        <div className="shape-note">
+          <p>
+            This wave is {source.kind === 'samples' ? 'one recorded cycle' : 'a mix'}: {sayInWords(source)}. It is kept, built
+            and exported as it is; its parts cannot be changed here. Going over to harmonics or points sets it aside, and
+            one press or undo brings it back.
+          </p>
+        </div>
+      )}
+    </div>
+  );
+}

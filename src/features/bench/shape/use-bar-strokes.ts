@@ -1,0 +1,80 @@
+import { useRef, type PointerEvent } from 'react';
+import type { HarmonicsSource } from '../../../../shared/contract/index.ts';
+import { drawBars, type BarPlace } from './bars.ts';
+import type { OnChange } from './change.ts';
+
+interface Stroke {
+  readonly pointerId: number;
+  /** Names the stroke in the history: the whole of it is one step. */
+  readonly key: string;
+  readonly before: HarmonicsSource;
+  now: HarmonicsSource;
+  last: BarPlace;
+}
+
+let strokesBegun = 0;
+
+export interface BarStrokes {
+  onPointerDown: (event: PointerEvent<HTMLElement>) => void;
+  onPointerMove: (event: PointerEvent<HTMLElement>) => void;
+  onPointerUp: (event: PointerEvent<HTMLElement>) => void;
+  onPointerCancel: (event: PointerEvent<HTMLElement>) => void;
+  /** Takes a stroke that is under way back. @returns whether there was one */
+  drop: () => boolean;
+}
+
+/**
+ * Drawing over the bars with a held pointer. A stroke goes on from what it has drawn itself, so that it does not wait
+ * for the bench to hand each change back.
+ */
+export function useBarStrokes(
+  source: HarmonicsSource,
+  onChange: OnChange<HarmonicsSource>,
+  placeOf: (event: PointerEvent<HTMLElement>) => BarPlace,
+  onTouch: (harmonic: number) => void,
+): BarStrokes {
+  const stroke = useRef<Stroke | null>(null);
+
+  const drawTo = (place: BarPlace) => {
+    const under = stroke.current;
+    if (under === null) return;
+    const next = drawBars(under.now, under.last, place);
+    under.last = place;
+    if (next === under.now) return;
+    under.now = next;
+    onChange(next, { coalesce: under.key });
+  };
+
+  const end = (event: PointerEvent<HTMLElement>) => {
+    if (stroke.current?.pointerId === event.pointerId) stroke.current = null;
+  };
+
+  return {
+    onPointerDown(event) {
+      if (event.button !== 0 || stroke.current !== null) return;
+      const place = placeOf(event);
+      event.preventDefault();
+      event.currentTarget.setPointerCapture(event.pointerId);
+      strokesBegun += 1;
+      const key = `draw:bars:${strokesBegun}`;
+      stroke.current = { pointerId: event.pointerId, key, before: source, now: source, last: place };
+      onTouch(place.harmonic);
+      drawTo(place);
+    },
+    onPointerMove(event) {
+      if (stroke.current?.pointerId !== event.pointerId) return;
+      const place = placeOf(event);
+      if (place.harmonic !== stroke.current.last.harmonic) onTouch(place.harmonic);
+      drawTo(place);
+    },
+    onPointerUp: end,
+    onPointerCancel: end,
+    drop() {
+      const under = stroke.current;
+      if (under === null) return false;
+      stroke.current = null;
+      onChange(under.before, { coalesce: under.key });
+      return true;
+    },
+  };
+}

@@ -1,0 +1,28 @@
+import { useEffect, useState } from 'react';
+import { sayProblem, type Definition } from '../../../../shared/contract/index.ts';
+import { createEngine } from '../../../workers/engine-client.ts';
+import type { EngineReply, TableAnswer } from '../../../workers/engine-messages.ts';
+
+type Built = { table: TableAnswer } | { fault: string };
+
+/** Builds one definition in a worker of its own; `null` until it is there. */
+export function useTable(definition: Definition): Built | null {
+  const [built, setBuilt] = useState<{ of: Definition; result: Built } | null>(null);
+  useEffect(() => {
+    const engine = createEngine((reply) => setBuilt({ of: definition, result: resultOf(reply) }));
+    engine.submit(definition);
+    return () => engine.stop();
+  }, [definition]);
+  return built?.of === definition ? built.result : null;
+}
+
+function resultOf(reply: EngineReply): Built {
+  switch (reply.kind) {
+    case 'built':
+      return { table: reply.table };
+    case 'refused':
+      return { fault: `This wave cannot be built. ${sayProblem(reply.problems[0])}.` };
+    case 'failed':
+      return { fault: reply.message };
+  }
+}

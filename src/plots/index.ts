@@ -1,0 +1,5 @@
+export { CyclePlot, type CyclePlotProps, type PlotPoint } from './cycle-plot.tsx';
+export { ErrorPlot, type ErrorPlotProps } from './error-plot.tsx';
+export { createPlotLink, PlotLinkProvider, type PlotLink } from './plot-link.ts';
+export { SpectrumPlot, type SpectrumPlotProps } from './spectrum-plot.tsx';
+export { StairDrawing, type StairDrawingProps } from './stair-drawing.tsx';

@@ -1,0 +1,304 @@
+import { formatQuantity } from '../../shared/quantities/index.ts';
+import type { Pen } from './pen.ts';
+import type { PlotArea } from './plot-area.ts';
+import type { PlotTheme } from './plot-theme.ts';
+import type { AxisSpec, ReadOut, Scene } from './scene.ts';
+import { drawColumns, drawStems, type StemStyle } from './stems.ts';
+import { decimalTicks, logTicks, tickText, wholeTicks } from './ticks.ts';
+
+export interface SpectrumData {
+  amplitudes: Float64Array;
+  intended: Float64Array;
+  added: Float64Array;
+  tableLength: number;
+  cycles: number;
+  sampleRateHz?: number;
+}
+
+export interface SpectrumScale {
+  level: 'db' | 'linear';
+  frequency: 'linear' | 'log';
+}
+
+/** Lowest level shown, and the room above full scale, in dBFS. */
+const floorDb = -120;
+const topDb = 8;
+/** CSS pixels that the title of the harmonics needs before the end of its axis. */
+const titleRoom = 28;
+/** Amplitude under the lowest level; spares logarithms. */
+const leastLine = 1e-6;
+/** Lowest level written down, where a line has no amplitude at all (engine specification §4). */
+const leastDb = -200;
+
+export function levelDb(amplitude: number): number {
+  return amplitude <= 0 ? leastDb : Math.max(leastDb, 20 * Math.log10(amplitude));
+}
+
+/** Lines of the table's loop: round heads for what was intended, diamonds for what quantising added. */
+export class SpectrumScene implements Scene {
+  readonly leastSpan = 0.25;
+  readonly axes: readonly AxisSpec[];
+  private data: SpectrumData;
+  private shown: SpectrumScale;
+  private strongestAdded = 1;
+  private strongestIntended = 1;
+  private top = 1;
+
+  constructor(data: SpectrumData, shown: SpectrumScale) {
+    this.data = data;
+    this.shown = shown;
+    this.set(data, shown);
+    this.axes = [
+      this.levelAxis(),
+      this.harmonicAxis(),
+      ...(data.sampleRateHz === undefined ? [] : [this.hertzAxis()]),
+    ];
+  }
+
+  set(data: SpectrumData, shown: SpectrumScale): void {
+    this.data = data;
+    this.shown = shown;
+    this.strongestAdded = strongest(data.added);
+    this.strongestIntended = strongest(data.intended);
+    this.top = Math.max(
+      0.01,
+      data.amplitudes[0],
+      data.intended[this.strongestIntended],
+      data.added[this.strongestAdded],
+    );
+  }
+
+  extent(): readonly [number, number] {
+    const last = this.data.added.length - 1;
+    if (this.shown.frequency === 'linear') return [-0.5, last + 0.5];
+    return [Math.log10(0.8), Math.log10(last * 1.15)];
+  }
+
+  yRange(): readonly [number, number] {
+    return this.shown.level === 'db' ? [floorDb, topDb] : [0, this.top * 1.14];
+  }
+
+  draw(pen: Pen, area: PlotArea, theme: PlotTheme): void {
+    const { intended, added } = this.data;
+    const { unit } = area;
+    const addedStyle: StemStyle = {
+      color: theme.brick,
+      width: unit,
+      head: 'diamond',
+      radius: 3.4 * unit,
+      standing: intended,
+    };
+    const intendedStyle: StemStyle = {
+      color: theme.water,
+      width: 2.4 * unit,
+      head: 'disc',
+      radius: 4 * unit,
+    };
+    const firstDense = this.firstDense(area);
+    const first = this.firstShown(area);
+    drawColumns(pen, area, this, added, firstDense, addedStyle);
+    drawColumns(pen, area, this, intended, firstDense, intendedStyle);
+    drawStems(pen, area, this, intended, first, firstDense, intendedStyle);
+    // Later, so that a diamond shows on the stem of an intended line.
+    drawStems(pen, area, this, added, first, firstDense, addedStyle);
+    this.labels(pen, area, theme);
+  }
+
+  /** Height of an amplitude on the scale that is shown. */
+  heightOf(amplitude: number): number {
+    return this.shown.level === 'db' ? levelDb(amplitude) : amplitude;
+  }
+
+  /** Place of a bin on x. */
+  placeOf(bin: number): number {
+    return this.shown.frequency === 'log' ? Math.log10(bin) : bin;
+  }
+
+  /** Bin, with fractions, at a place on x. */
+  binAt(x: number): number {
+    return this.shown.frequency === 'log' ? 10 ** x : x;
+  }
+
+  items(): readonly [number, number] {
+    return [this.shown.frequency === 'log' ? 1 : 0, this.data.added.length - 1];
+  }
+
+  itemAt(x: number): number {
+    return Math.round(this.binAt(x));
+  }
+
+  spanOf(item: number): readonly [number, number] {
+    return [this.placeOf(item - 0.5), this.placeOf(item + 0.5)];
+  }
+
+  marksAt(): readonly { x: number; y: number }[] {
+    return [];
+  }
+
+  readOut(item: number): readonly ReadOut[] {
+    const { intended, added, tableLength, sampleRateHz, cycles } = this.data;
+    const level = (amplitude: number) => formatQuantity(levelDb(amplitude), 'dBFS', { decimals: 2 });
+    const said = [
+      {
+        label: item === 0 ? 'mean, harmonic' : cycles > 1 ? 'harmonic of the loop' : 'harmonic',
+        value: String(item),
+      },
+    ];
+    if (sampleRateHz !== undefined) {
+      said.push({
+        label: 'at',
+        value: formatQuantity((item * sampleRateHz) / tableLength, 'Hz', { significant: 6 }),
+      });
+    }
+    said.push(
+      { label: 'intended', value: level(intended[item]) },
+      { label: 'added', value: level(added[item]) },
+    );
+    return said;
+  }
+
+  summary(): string {
+    const { intended, added, tableLength } = this.data;
+    const strong = [...intended.keys()]
+      .slice(1)
+      .filter((bin) => levelDb(intended[bin]) > floorDb)
+      .sort((a, b) => intended[b] - intended[a]);
+    const said = (bin: number, amplitude: number) =>
+      `harmonic ${bin} at ${formatQuantity(levelDb(amplitude), 'dBFS', { decimals: 1 })}`;
+    const lines = strong.slice(0, 5).map((bin) => said(bin, intended[bin]));
+    const worst = this.strongestAdded;
+    return (
+      `Spectrum of the table's loop, harmonics 0 to ${Math.floor(tableLength / 2)}. ` +
+      `${strong.length} intended ${strong.length === 1 ? 'line' : 'lines'} above ${floorDb} dBFS` +
+      `${lines.length > 0 ? `, the strongest: ${lines.join(', ')}` : ''}. ` +
+      `The strongest line that quantising added: ${said(worst, added[worst])}.`
+    );
+  }
+
+  csv(): string {
+    const { amplitudes, intended, added, tableLength, sampleRateHz } = this.data;
+    const hertz = sampleRateHz === undefined ? '' : ',frequency_hz';
+    const rows = [`harmonic${hertz},amplitude,level_dbfs,intended,added`];
+    for (let bin = 0; bin < added.length; bin += 1) {
+      const at = sampleRateHz === undefined ? '' : `,${(bin * sampleRateHz) / tableLength}`;
+      rows.push(`${bin}${at},${amplitudes[bin]},${levelDb(amplitudes[bin])},${intended[bin]},${added[bin]}`);
+    }
+    return `${rows.join('\n')}\n`;
+  }
+
+  private firstShown(area: PlotArea): number {
+    return Math.max(this.items()[0], Math.floor(this.binAt(area.from)));
+  }
+
+  /** From this bin on, neighbours stand too close to be drawn apart, and columns of pixels show their strongest. */
+  private firstDense(area: PlotArea): number {
+    const spacing = 3 * area.unit;
+    const perUnit = area.width / (area.to - area.from);
+    const count = this.data.added.length;
+    if (this.shown.frequency === 'linear') return perUnit >= spacing ? count : this.firstShown(area);
+    // log10((k + 1)/k)·perUnit < spacing
+    return Math.min(count, Math.max(this.firstShown(area), Math.ceil(1 / (10 ** (spacing / perUnit) - 1))));
+  }
+
+  private labels(pen: Pen, area: PlotArea, theme: PlotTheme) {
+    const { intended, added } = this.data;
+    const { unit } = area;
+    const lift = 13 * unit;
+    const [low] = this.yRange();
+    const label = (
+      bin: number,
+      amplitude: number,
+      words: string,
+      color: string,
+      width: number,
+      rise: number,
+    ) => {
+      if (bin < this.items()[0] || this.heightOf(amplitude) <= low) return;
+      const x = area.x(this.placeOf(bin));
+      if (x < area.left || x > area.right) return;
+      const y = Math.max(area.top + 9 * unit, area.y(this.heightOf(amplitude)) - rise);
+      const isLate = x + width * unit > area.right;
+      const align = isLate ? 'right' : 'left';
+      pen.text(words, x + (isLate ? -1 : 1) * 8 * unit, y, { color, align, weight: 650, halo: theme.paper });
+    };
+    const worst = this.strongestAdded;
+    const level = formatQuantity(levelDb(added[worst]), 'dBFS', { decimals: 1 });
+    const told = this.lineWithRoom(area, 70 * unit);
+    label(told, intended[told], 'intended', theme.water, 70, 0);
+    const words = area.width > 480 * unit ? `added by quantising, at most ${level}` : `added, ≤ ${level}`;
+    label(worst, added[worst], words, theme.brick, words.length * 7, lift);
+  }
+
+  /** The strongest intended line with room for a label before the next one; the strongest of all where none has. */
+  private lineWithRoom(area: PlotArea, width: number): number {
+    const { intended } = this.data;
+    const [low] = this.yRange();
+    let best = this.strongestIntended;
+    let bestAmplitude = 0;
+    let before = -1;
+    const last = Math.min(intended.length - 1, Math.floor(this.binAt(area.to)));
+    for (let bin = this.firstShown(area); bin <= last + 1; bin += 1) {
+      const isLine = bin > last || (intended[bin] > leastLine && this.heightOf(intended[bin]) > low);
+      if (!isLine) continue;
+      const hasRoom = before >= 0 && area.x(this.placeOf(bin)) - area.x(this.placeOf(before)) > width;
+      if (hasRoom && intended[before] > bestAmplitude) {
+        best = before;
+        bestAmplitude = intended[before];
+      }
+      before = bin;
+    }
+    return best;
+  }
+
+  private levelAxis(): AxisSpec {
+    const isDb = () => this.shown.level === 'db';
+    return {
+      side: 'left',
+      get title() {
+        return isDb() ? 'level in dBFS' : 'amplitude, full scale = 1';
+      },
+      ticks: (min, max, px) =>
+        isDb()
+          ? decimalTicks(min, Math.min(max, 0), Math.min(6, px / 32))
+          : decimalTicks(min, max, Math.min(5, px / 36)),
+      text: tickText,
+      hasGrid: true,
+    };
+  }
+
+  private harmonicAxis(): AxisSpec {
+    return {
+      side: 'bottom',
+      title: 'harmonic',
+      ticks: (min, max, px) =>
+        this.shown.frequency === 'log'
+          ? logTicks(min, max - ((max - min) / px) * titleRoom, px / 56)
+          : wholeTicks(Math.max(0, min), max - ((max - min) / px) * titleRoom, px / 64),
+      text: (x) => String(Math.round(this.binAt(x))),
+    };
+  }
+
+  private hertzAxis(): AxisSpec {
+    const binWidth = () => (this.data.sampleRateHz ?? 1) / this.data.tableLength;
+    return {
+      side: 'top',
+      title: '',
+      ticks: (min, max, px) => {
+        const width = binWidth();
+        if (this.shown.frequency === 'linear') {
+          return decimalTicks(Math.max(0, min) * width, max * width, px / 96).map((hertz) => hertz / width);
+        }
+        const shift = Math.log10(width);
+        return logTicks(min + shift, max + shift, px / 110).map((x) => x - shift);
+      },
+      text: (x) => formatQuantity(this.binAt(x) * binWidth(), 'Hz'),
+    };
+  }
+}
+
+/** Bin of the largest amplitude, DC left out. */
+function strongest(amplitudes: Float64Array): number {
+  let best = Math.min(1, amplitudes.length - 1);
+  for (let bin = 2; bin < amplitudes.length; bin += 1) if (amplitudes[bin] > amplitudes[best]) best = bin;
+  return best;
+}

@@ -1,0 +1,5 @@
+/** One entry of the header's navigation. */
+export interface Place {
+  label: string;
+  to: string;
+}
