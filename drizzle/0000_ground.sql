@@ -2,7 +2,7 @@ CREATE TABLE `audit_events` (
 	`team_id` bigint unsigned NOT NULL,
 	`sequence` bigint unsigned NOT NULL,
 	`at` datetime(3) NOT NULL,
-	`actor_id` bigint unsigned,
+	`actor_id` bigint unsigned NOT NULL,
 	`actor_name` varchar(100) NOT NULL,
 	`action` varchar(60) CHARACTER SET utf8mb4 COLLATE utf8mb4_bin NOT NULL,
 	`subject` varchar(160) CHARACTER SET utf8mb4 COLLATE utf8mb4_bin NOT NULL,
@@ -54,11 +54,13 @@ CREATE TABLE `revisions` (
 	CONSTRAINT `revisions_team_id` UNIQUE(`team_id`,`id`)
 );
 --> statement-breakpoint
-CREATE TABLE `table_tags` (
+CREATE TABLE `table_terms` (
 	`team_id` bigint unsigned NOT NULL,
 	`table_id` bigint unsigned NOT NULL,
-	`tag` varchar(32) CHARACTER SET utf8mb4 COLLATE utf8mb4_bin NOT NULL,
-	CONSTRAINT `table_tags_team_id_tag_table_id_pk` PRIMARY KEY(`team_id`,`tag`,`table_id`)
+	`is_archived` boolean NOT NULL DEFAULT false,
+	`term` varchar(64) CHARACTER SET utf8mb4 COLLATE utf8mb4_bin NOT NULL,
+	CONSTRAINT `table_terms_team_id_is_archived_term_table_id_pk` PRIMARY KEY(`team_id`,`is_archived`,`term`,`table_id`),
+	CONSTRAINT `table_terms_table` UNIQUE(`team_id`,`table_id`,`term`)
 );
 --> statement-breakpoint
 CREATE TABLE `wave_tables` (
@@ -66,6 +68,9 @@ CREATE TABLE `wave_tables` (
 	`team_id` bigint unsigned NOT NULL,
 	`slug` varchar(70) CHARACTER SET utf8mb4 COLLATE utf8mb4_bin NOT NULL,
 	`title` varchar(64) NOT NULL,
+	`tags` json NOT NULL,
+	`signature_low` bigint unsigned NOT NULL,
+	`signature_high` bigint unsigned NOT NULL,
 	`is_archived` boolean NOT NULL DEFAULT false,
 	`version` int unsigned NOT NULL DEFAULT 1,
 	`latest_revision` int unsigned NOT NULL,
@@ -86,7 +91,7 @@ CREATE TABLE `wave_tables` (
 --> statement-breakpoint
 CREATE TABLE `mail_outbox` (
 	`id` bigint unsigned AUTO_INCREMENT NOT NULL,
-	`message_id` varchar(120) CHARACTER SET utf8mb4 COLLATE utf8mb4_bin NOT NULL,
+	`message_id` varchar(300) CHARACTER SET utf8mb4 COLLATE utf8mb4_bin NOT NULL,
 	`recipient` varchar(254) CHARACTER SET utf8mb4 COLLATE utf8mb4_bin NOT NULL,
 	`subject` varchar(200) NOT NULL,
 	`text_body` text,
@@ -102,8 +107,21 @@ CREATE TABLE `mail_outbox` (
 	CONSTRAINT `mail_outbox_message_id_unique` UNIQUE(`message_id`)
 );
 --> statement-breakpoint
+CREATE TABLE `mailbox_messages` (
+	`id` bigint unsigned AUTO_INCREMENT NOT NULL,
+	`message_id` varchar(300) CHARACTER SET utf8mb4 COLLATE utf8mb4_bin NOT NULL,
+	`recipient` varchar(254) CHARACTER SET utf8mb4 COLLATE utf8mb4_bin NOT NULL,
+	`sender` varchar(300) NOT NULL,
+	`subject` varchar(300) NOT NULL,
+	`text_body` mediumtext NOT NULL,
+	`html_body` mediumtext NOT NULL,
+	`received_at` datetime(3) NOT NULL,
+	CONSTRAINT `mailbox_messages_id` PRIMARY KEY(`id`),
+	CONSTRAINT `mailbox_messages_message_id_unique` UNIQUE(`message_id`)
+);
+--> statement-breakpoint
 CREATE TABLE `rate_limits` (
-	`key` varchar(255) NOT NULL,
+	`key` varchar(255) CHARACTER SET utf8mb4 COLLATE utf8mb4_bin NOT NULL,
 	`points` int NOT NULL DEFAULT 0,
 	`expire` bigint unsigned,
 	CONSTRAINT `rate_limits_key` PRIMARY KEY(`key`)
@@ -117,6 +135,7 @@ CREATE TABLE `one_time_links` (
 	`user_id` bigint unsigned,
 	`team_id` bigint unsigned,
 	`role` enum('viewer','author','reviewer','admin'),
+	`mail_id` bigint unsigned,
 	`created_by` bigint unsigned,
 	`created_at` datetime(3) NOT NULL DEFAULT CURRENT_TIMESTAMP(3),
 	`expires_at` datetime(3) NOT NULL,
@@ -169,17 +188,17 @@ CREATE TABLE `users` (
 );
 --> statement-breakpoint
 ALTER TABLE `audit_events` ADD CONSTRAINT `audit_events_team_id_teams_id_fk` FOREIGN KEY (`team_id`) REFERENCES `teams`(`id`) ON DELETE cascade ON UPDATE no action;--> statement-breakpoint
-ALTER TABLE `audit_events` ADD CONSTRAINT `audit_events_actor_id_users_id_fk` FOREIGN KEY (`actor_id`) REFERENCES `users`(`id`) ON DELETE set null ON UPDATE no action;--> statement-breakpoint
 ALTER TABLE `audit_heads` ADD CONSTRAINT `audit_heads_team_id_teams_id_fk` FOREIGN KEY (`team_id`) REFERENCES `teams`(`id`) ON DELETE cascade ON UPDATE no action;--> statement-breakpoint
 ALTER TABLE `idempotency_keys` ADD CONSTRAINT `idempotency_keys_user_id_users_id_fk` FOREIGN KEY (`user_id`) REFERENCES `users`(`id`) ON DELETE cascade ON UPDATE no action;--> statement-breakpoint
 ALTER TABLE `revisions` ADD CONSTRAINT `revisions_made_by_users_id_fk` FOREIGN KEY (`made_by`) REFERENCES `users`(`id`) ON DELETE set null ON UPDATE no action;--> statement-breakpoint
 ALTER TABLE `revisions` ADD CONSTRAINT `revisions_table_fk` FOREIGN KEY (`team_id`,`table_id`) REFERENCES `wave_tables`(`team_id`,`id`) ON DELETE cascade ON UPDATE no action;--> statement-breakpoint
-ALTER TABLE `table_tags` ADD CONSTRAINT `table_tags_table_fk` FOREIGN KEY (`team_id`,`table_id`) REFERENCES `wave_tables`(`team_id`,`id`) ON DELETE cascade ON UPDATE no action;--> statement-breakpoint
+ALTER TABLE `table_terms` ADD CONSTRAINT `table_terms_table_fk` FOREIGN KEY (`team_id`,`table_id`) REFERENCES `wave_tables`(`team_id`,`id`) ON DELETE cascade ON UPDATE no action;--> statement-breakpoint
 ALTER TABLE `wave_tables` ADD CONSTRAINT `wave_tables_team_id_teams_id_fk` FOREIGN KEY (`team_id`) REFERENCES `teams`(`id`) ON DELETE cascade ON UPDATE no action;--> statement-breakpoint
 ALTER TABLE `wave_tables` ADD CONSTRAINT `wave_tables_created_by_users_id_fk` FOREIGN KEY (`created_by`) REFERENCES `users`(`id`) ON DELETE set null ON UPDATE no action;--> statement-breakpoint
 ALTER TABLE `wave_tables` ADD CONSTRAINT `wave_tables_changed_by_users_id_fk` FOREIGN KEY (`changed_by`) REFERENCES `users`(`id`) ON DELETE set null ON UPDATE no action;--> statement-breakpoint
 ALTER TABLE `one_time_links` ADD CONSTRAINT `one_time_links_user_id_users_id_fk` FOREIGN KEY (`user_id`) REFERENCES `users`(`id`) ON DELETE cascade ON UPDATE no action;--> statement-breakpoint
 ALTER TABLE `one_time_links` ADD CONSTRAINT `one_time_links_team_id_teams_id_fk` FOREIGN KEY (`team_id`) REFERENCES `teams`(`id`) ON DELETE cascade ON UPDATE no action;--> statement-breakpoint
+ALTER TABLE `one_time_links` ADD CONSTRAINT `one_time_links_mail_id_mail_outbox_id_fk` FOREIGN KEY (`mail_id`) REFERENCES `mail_outbox`(`id`) ON DELETE set null ON UPDATE no action;--> statement-breakpoint
 ALTER TABLE `one_time_links` ADD CONSTRAINT `one_time_links_created_by_users_id_fk` FOREIGN KEY (`created_by`) REFERENCES `users`(`id`) ON DELETE set null ON UPDATE no action;--> statement-breakpoint
 ALTER TABLE `sessions` ADD CONSTRAINT `sessions_user_id_users_id_fk` FOREIGN KEY (`user_id`) REFERENCES `users`(`id`) ON DELETE cascade ON UPDATE no action;--> statement-breakpoint
 ALTER TABLE `memberships` ADD CONSTRAINT `memberships_team_id_teams_id_fk` FOREIGN KEY (`team_id`) REFERENCES `teams`(`id`) ON DELETE cascade ON UPDATE no action;--> statement-breakpoint
@@ -187,13 +206,13 @@ ALTER TABLE `memberships` ADD CONSTRAINT `memberships_user_id_users_id_fk` FOREI
 CREATE INDEX `audit_events_subject` ON `audit_events` (`team_id`,`subject`,`sequence`);--> statement-breakpoint
 CREATE INDEX `idempotency_keys_age` ON `idempotency_keys` (`created_at`);--> statement-breakpoint
 CREATE INDEX `revisions_digest` ON `revisions` (`team_id`,`digest`);--> statement-breakpoint
-CREATE INDEX `table_tags_table` ON `table_tags` (`team_id`,`table_id`);--> statement-breakpoint
-CREATE INDEX `wave_tables_changed` ON `wave_tables` (`team_id`,`is_archived`,`changed_at`,`id`);--> statement-breakpoint
-CREATE INDEX `wave_tables_title` ON `wave_tables` (`team_id`,`is_archived`,`title`,`id`);--> statement-breakpoint
-CREATE INDEX `wave_tables_snr` ON `wave_tables` (`team_id`,`is_archived`,`snr_db`,`id`);--> statement-breakpoint
-CREATE INDEX `wave_tables_bytes` ON `wave_tables` (`team_id`,`is_archived`,`table_bytes`,`id`);--> statement-breakpoint
-CREATE INDEX `wave_tables_length` ON `wave_tables` (`team_id`,`is_archived`,`length`,`id`);--> statement-breakpoint
-CREATE INDEX `wave_tables_bits` ON `wave_tables` (`team_id`,`is_archived`,`bits`,`id`);--> statement-breakpoint
+CREATE INDEX `wave_tables_state` ON `wave_tables` (`team_id`,`is_archived`,`state`,`id`);--> statement-breakpoint
+CREATE INDEX `wave_tables_changed` ON `wave_tables` (`team_id`,`is_archived`,`changed_at`,`id`,`state`,`signature_low`,`signature_high`);--> statement-breakpoint
+CREATE INDEX `wave_tables_title` ON `wave_tables` (`team_id`,`is_archived`,`title`,`id`,`state`,`signature_low`,`signature_high`);--> statement-breakpoint
+CREATE INDEX `wave_tables_snr` ON `wave_tables` (`team_id`,`is_archived`,`snr_db`,`id`,`state`,`signature_low`,`signature_high`);--> statement-breakpoint
+CREATE INDEX `wave_tables_bytes` ON `wave_tables` (`team_id`,`is_archived`,`table_bytes`,`id`,`state`,`signature_low`,`signature_high`);--> statement-breakpoint
+CREATE INDEX `wave_tables_length` ON `wave_tables` (`team_id`,`is_archived`,`length`,`id`,`state`,`signature_low`,`signature_high`);--> statement-breakpoint
+CREATE INDEX `wave_tables_bits` ON `wave_tables` (`team_id`,`is_archived`,`bits`,`id`,`state`,`signature_low`,`signature_high`);--> statement-breakpoint
 CREATE INDEX `mail_outbox_due` ON `mail_outbox` (`state`,`due_at`);--> statement-breakpoint
 CREATE INDEX `rate_limits_expire` ON `rate_limits` (`expire`);--> statement-breakpoint
 CREATE INDEX `one_time_links_user` ON `one_time_links` (`user_id`,`purpose`);--> statement-breakpoint

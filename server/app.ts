@@ -1,19 +1,28 @@
 import compression from 'compression';
 import express, { type Express, type RequestHandler, type Router } from 'express';
+import { authRoutes } from './auth/auth-routes.ts';
 import { readSignIn } from './auth/sign-in-state.ts';
 import type { Feature, ServerDeps } from './feature.ts';
+import { account } from './features/account/routes.ts';
 import { health } from './features/health/routes.ts';
+import { invitations } from './features/invitations/routes.ts';
+import { mailbox } from './features/mailbox/routes.ts';
+import { rendering } from './features/rendering/routes.ts';
+import { tables } from './features/tables/routes.ts';
+import { teams } from './features/teams/routes.ts';
 import { errorTranslator } from './http/error-translator.ts';
+import { generalLimit } from './http/general-limit.ts';
 import { hostGate } from './http/host-gate.ts';
 import { jsonBody } from './http/json-body.ts';
 import { originGate } from './http/origin-gate.ts';
 import { Problem } from './http/problem.ts';
+import { rateLimiter } from './http/rate-limiter.ts';
 import { requestLog } from './http/request-log.ts';
 import { noSuchRoute } from './http/routes.ts';
 import { cspNonce, securityHeaders } from './http/security-headers.ts';
 
 /** Every resource of the API. */
-const features: readonly Feature[] = [health];
+const features: readonly Feature[] = [health, account, teams, invitations, mailbox, tables, rendering];
 
 export interface AppDeps extends ServerDeps {
   /** Serves the client: the built files or, in development, the development server. */
@@ -41,8 +50,18 @@ export function buildApp(deps: AppDeps): Express {
   app.use(securityHeaders({ https: origins[0].startsWith('https:'), policy: deps.contentPolicy }));
   app.use(compression());
 
+  app.use('/auth', noStore, ...authRoutes(deps));
   const routers = buildRouters(deps);
-  app.use('/api/v1', noStore, originGate(origins), readSignIn(deps), jsonBody, ...routers, noSuchRoute(routers));
+  app.use(
+    '/api/v1',
+    noStore,
+    originGate(origins),
+    readSignIn(deps),
+    generalLimit(rateLimiter(deps)),
+    jsonBody,
+    ...routers,
+    noSuchRoute(routers),
+  );
   app.use('/api', nothingHere);
 
   app.use(deps.client);

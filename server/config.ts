@@ -20,6 +20,8 @@ export interface Config {
   readonly local: boolean;
   /** Undefined only where `local`: mail then stays in the readable mailbox. */
   readonly smtpUrl: string | undefined;
+  /** What mail is sent from; undefined: `no-reply` at our own host. */
+  readonly mailFrom: string | undefined;
   readonly trustedProxies: readonly string[];
   readonly logLevel: string;
 }
@@ -81,6 +83,7 @@ const environment = z.object({
   AUTH_SECRET: text.refine((value) => value === undefined || value.length >= 32, 'at least 32 characters, random'),
   AUDIT_KEY: text.refine((value) => value === undefined || value.length >= 32, 'at least 32 characters, random'),
   SMTP_URL: urlWith('smtp:', 'smtps:'),
+  MAIL_FROM: text.pipe(z.email({ error: 'an e-mail address, as stepwell@tables.example' }).optional()),
   DATABASE_URL: urlWith('mysql:', 'mariadb:'),
   PRIVATE_DATABASE_URL: urlWith('mysql:'),
   TRUSTED_PROXIES: text.refine(
@@ -133,6 +136,7 @@ export function readConfig(env: Readonly<Record<string, string | undefined>>): C
     databaseUrl: value('DATABASE_URL') ?? value('PRIVATE_DATABASE_URL') ?? '',
     local,
     smtpUrl: value('SMTP_URL'),
+    mailFrom: value('MAIL_FROM'),
     trustedProxies: listOf(value('TRUSTED_PROXIES')),
     logLevel: value('LOG_LEVEL') ?? (local ? 'warn' : 'info'),
   };

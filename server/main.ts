@@ -1,24 +1,28 @@
 import { createServer, type Server } from 'node:http';
 import { join } from 'node:path';
 import type { RequestHandler } from 'express';
-import { pino } from 'pino';
 import { buildApp } from './app.ts';
 import { ConfigFaults, readConfig } from './config.ts';
 import { openDatabase } from './db/client.ts';
 import { createDatabase, migrate, requireExactSchema } from './db/migrate.ts';
 import { SchemaFault } from './db/schema-state.ts';
 import { clientFiles } from './http/client-files.ts';
-import { secretHeaders } from './http/request-log.ts';
+import { createLogger } from './http/logger.ts';
 import { createJobPool } from './jobs/pool.ts';
 import { listen, originsOf } from './listen.ts';
+import { startMail } from './mail/start-mail.ts';
 import { projectFolder } from './project-folder.ts';
 import { endInOrder } from './shutdown.ts';
+import { cleanUp } from './upkeep/clean-up.ts';
+import { repeat } from './upkeep/repeat.ts';
+
+const cleanUpEvery = 10 * 60 * 1000;
 
 const isDevelopment = process.argv.includes('--dev');
 
 async function start(): Promise<void> {
   const config = readConfig(process.env);
-  const logger = pino({ level: config.logLevel, redact: secretHeaders }, pino.destination(2));
+  const logger = createLogger(config.logLevel);
 
   if (config.local) {
     await createDatabase(config.databaseUrl);
@@ -45,7 +49,9 @@ async function start(): Promise<void> {
   // In the same turn as `listen` answers: no request can have come in yet.
   server.on('request', app);
 
-  endInOrder(server, [client.close, jobs.close, database.close]);
+  const mail = await startMail(config, origins[0], database.db, logger);
+  const upkeep = repeat(() => cleanUp(database.db), cleanUpEvery, logger);
+  endInOrder(server, [client.close, upkeep.close, mail.close, jobs.close, database.close]);
   tellAddress(origins[0]);
 }
 

@@ -5,18 +5,19 @@ const reading = new Set(['GET', 'HEAD', 'OPTIONS']);
 
 /**
  * Lets a write through only from our own pages (`Origin`), so that no other site can use a person's cookies.
- * A request with a bearer token carries its own proof; it must ignore cookies.
+ * A request with a bearer token carries its own proof, and its cookies are ignored (`readSignIn`); where they are not,
+ * `takesBearer: false` lets nothing through on its account.
  */
-export function originGate(origins: readonly string[]): RequestHandler {
+export function originGate(origins: readonly string[], { takesBearer = true } = {}): RequestHandler {
   const own = new Set(origins);
   return (request, _response, next) => {
-    const byToken = /^bearer /i.test(request.headers.authorization ?? '');
+    const byToken = takesBearer && /^bearer /i.test(request.headers.authorization ?? '');
     if (reading.has(request.method) || byToken || own.has(request.headers.origin ?? '')) {
       next();
       return;
     }
     throw new Problem('foreign-origin', {
-      detail: `A change needs the header Origin: ${origins[0]}, or a bearer token.`,
+      detail: `A change needs the header Origin: ${origins[0]}${takesBearer ? ', or a bearer token' : ''}.`,
     });
   };
 }

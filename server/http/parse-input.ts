@@ -1,5 +1,5 @@
 import type { z } from 'zod';
-import { problemsOf } from '../../shared/contract/index.ts';
+import { problemsOf, type Problem as Fault } from '../../shared/contract/index.ts';
 import { Problem } from './problem.ts';
 
 /**
@@ -11,5 +11,10 @@ import { Problem } from './problem.ts';
 export function parseInput<Schema extends z.ZodType>(schema: Schema, input: unknown, whole = 'body'): z.output<Schema> {
   const result = schema.safeParse(input);
   if (result.success) return result.data;
-  throw new Problem('validation', { errors: result.error.issues.flatMap((issue) => problemsOf(issue, input, whole)) });
+  const faults = result.error.issues.flatMap((issue) => problemsOf(issue, input, whole));
+  throw new Problem('validation', { errors: faults.map(withoutSecret) });
 }
+
+/** An answer may be shown, kept or sent on: what was typed as a secret is not in it. */
+const withoutSecret = (fault: Fault): Fault =>
+  /password|token/i.test(fault.path) ? { ...fault, value: 'what was sent' } : fault;

@@ -1,6 +1,7 @@
 import { randomUUID } from 'node:crypto';
 import type { Logger } from 'pino';
 import { pinoHttp } from 'pino-http';
+import { safeError } from './safe-error.ts';
 
 /** Logs each request, without what would let a reader of the log act as the person. */
 export const requestLog = (logger: Logger) =>
@@ -8,12 +9,5 @@ export const requestLog = (logger: Logger) =>
     logger,
     genReqId: () => randomUUID(),
     customLogLevel: (_request, response) => (response.statusCode >= 500 ? 'error' : 'info'),
+    serializers: { err: ({ raw }: { readonly raw: unknown }) => safeError(raw) },
   });
-
-/** Header paths to black out in every log line. */
-export const secretHeaders = [
-  'req.headers.cookie',
-  'req.headers.authorization',
-  'req.headers["proxy-authorization"]',
-  'res.headers["set-cookie"]',
-];

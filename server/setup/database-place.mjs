@@ -13,12 +13,14 @@ export function databasePlace(folder) {
   mkdirSync(folder, { recursive: true, mode: 0o700 });
   chmodSync(folder, 0o700);
   const real = realpathSync(folder);
-  mkdirSync(join(real, 'users'), { recursive: true });
+  for (const name of ['users', 'tmp']) mkdirSync(join(real, name), { recursive: true });
   return {
     folder: real,
     data: join(real, 'data'),
     marker: join(real, 'ready'),
     pidFile: join(real, 'pid'),
+    // Its own: a server that starts clears the temporary tables of every other one it shares the folder with.
+    tmp: join(real, 'tmp'),
     log: join(real, 'error.log'),
     users: join(real, 'users'),
     socket: socketPath(real),

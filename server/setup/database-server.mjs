@@ -58,7 +58,7 @@ async function createData(place) {
       `--auth-root-socket-user=${place.user}`,
       '--skip-test-db',
     ],
-    { output: 'collect' },
+    { output: 'collect', env: { TMPDIR: place.tmp } },
   );
   if (status !== 0) throw new SetupFault(`${text}\nMariaDB could not lay out its data folder ${place.data}.`);
   writeFileSync(place.marker, 'The data folder beside this file is complete.\n');
@@ -74,6 +74,7 @@ async function launch(place) {
       `--datadir=${place.data}`,
       `--socket=${place.socket}`,
       `--pid-file=${place.pidFile}`,
+      `--tmpdir=${place.tmp}`,
       '--skip-networking',
       '--character-set-server=utf8mb4',
       '--collation-server=utf8mb4_uca1400_ai_ci',

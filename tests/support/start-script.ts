@@ -29,7 +29,11 @@ export function startScript(dataFolder: string, env: Record<string, string> = {}
     child,
     output: () => output,
     errors: () => errors,
-    address: () => waitUntil(`an address; it said: ${errors}`, () => /http:\/\/\S+/.exec(output)?.[0], 120),
+    address: async () => {
+      const address = waitUntil('an address', () => /http:\/\/\S+/.exec(output)?.[0], 50);
+      const over = exit.then(() => Promise.reject(new Error(`It ended without an address:\n${errors}`)));
+      return Promise.race([address, over]);
+    },
     ended: () => exit,
   };
 }

@@ -1,4 +1,5 @@
 import {
+  bigint,
   boolean,
   customType,
   double,
@@ -13,6 +14,7 @@ import {
   tinyint,
   unique,
   varchar,
+  type MySqlColumn,
 } from 'drizzle-orm/mysql-core';
 import { createdAt, exactText, id, moment, reference } from './columns.ts';
 import { teams } from './teams.ts';
@@ -32,6 +34,26 @@ const figures = {
   tableBytes: int('table_bytes', { unsigned: true }).notNull(),
 };
 
+/** Which terms a row may have, as a bit pattern: read while walking an index, so that most rows need no closer look. */
+const signature = (name: string) => bigint(name, { mode: 'bigint', unsigned: true }).notNull();
+
+type Columns<Name extends string> = Record<Name, MySqlColumn>;
+
+/** An order of the list. State and signatures come along: filters then read nothing but the index. */
+const orderedBy = (
+  table: Columns<'teamId' | 'isArchived' | 'id' | 'state' | 'signatureLow' | 'signatureHigh'>,
+  column: MySqlColumn,
+) =>
+  [
+    table.teamId,
+    table.isArchived,
+    column,
+    table.id,
+    table.state,
+    table.signatureLow,
+    table.signatureHigh,
+  ] as const;
+
 /** A table of the library: a title and tags over a row of revisions. */
 export const waveTables = mysqlTable(
   'wave_tables',
@@ -42,6 +64,9 @@ export const waveTables = mysqlTable(
       .references(() => teams.id, { onDelete: 'cascade' }),
     slug: exactText(70).notNull(),
     title: varchar({ length: 64 }).notNull(),
+    tags: json().$type<string[]>().notNull(),
+    signatureLow: signature('signature_low'),
+    signatureHigh: signature('signature_high'),
     isArchived: boolean('is_archived').notNull().default(false),
     /** Raised by each change; what If-Match is compared with. */
     version: int({ unsigned: true }).notNull().default(1),
@@ -57,27 +82,31 @@ export const waveTables = mysqlTable(
   (table) => [
     unique('wave_tables_slug').on(table.teamId, table.slug),
     unique('wave_tables_team_id').on(table.teamId, table.id),
-    index('wave_tables_changed').on(table.teamId, table.isArchived, table.changedAt, table.id),
-    index('wave_tables_title').on(table.teamId, table.isArchived, table.title, table.id),
-    index('wave_tables_snr').on(table.teamId, table.isArchived, table.snrDb, table.id),
-    index('wave_tables_bytes').on(table.teamId, table.isArchived, table.tableBytes, table.id),
-    index('wave_tables_length').on(table.teamId, table.isArchived, table.length, table.id),
-    index('wave_tables_bits').on(table.teamId, table.isArchived, table.bits, table.id),
+    index('wave_tables_state').on(table.teamId, table.isArchived, table.state, table.id),
+    index('wave_tables_changed').on(...orderedBy(table, table.changedAt)),
+    index('wave_tables_title').on(...orderedBy(table, table.title)),
+    index('wave_tables_snr').on(...orderedBy(table, table.snrDb)),
+    index('wave_tables_bytes').on(...orderedBy(table, table.tableBytes)),
+    index('wave_tables_length').on(...orderedBy(table, table.length)),
+    index('wave_tables_bits').on(...orderedBy(table, table.bits)),
   ],
 );
 
-export const tableTags = mysqlTable(
-  'table_tags',
+/** What a table is found by: the words of its title and tags and, behind `#`, each tag as a whole. */
+export const tableTerms = mysqlTable(
+  'table_terms',
   {
     teamId: reference('team_id').notNull(),
     tableId: reference('table_id').notNull(),
-    tag: exactText(32).notNull(),
+    /** As the table's, so that a term is counted and read for the tables of one kind only. */
+    isArchived: boolean('is_archived').notNull().default(false),
+    term: exactText(64).notNull(),
   },
   (table) => [
-    primaryKey({ columns: [table.teamId, table.tag, table.tableId] }),
-    index('table_tags_table').on(table.teamId, table.tableId),
+    primaryKey({ columns: [table.teamId, table.isArchived, table.term, table.tableId] }),
+    unique('table_terms_table').on(table.teamId, table.tableId, table.term),
     foreignKey({
-      name: 'table_tags_table_fk',
+      name: 'table_terms_table_fk',
       columns: [table.teamId, table.tableId],
       foreignColumns: [waveTables.teamId, waveTables.id],
     }).onDelete('cascade'),
@@ -132,5 +161,8 @@ export const idempotencyKeys = mysqlTable(
     body: json(),
     createdAt: createdAt(),
   },
-  (table) => [primaryKey({ columns: [table.userId, table.key] }), index('idempotency_keys_age').on(table.createdAt)],
+  (table) => [
+    primaryKey({ columns: [table.userId, table.key] }),
+    index('idempotency_keys_age').on(table.createdAt),
+  ],
 );

@@ -1,4 +1,4 @@
-import { index, mysqlEnum, mysqlTable, text, tinyint, varchar } from 'drizzle-orm/mysql-core';
+import { index, mediumtext, mysqlEnum, mysqlTable, text, tinyint, varchar } from 'drizzle-orm/mysql-core';
 import { createdAt, exactText, id, moment } from './columns.ts';
 
 export const mailStates = ['waiting', 'sent', 'undelivered'] as const;
@@ -9,10 +9,10 @@ export const mailOutbox = mysqlTable(
   {
     id: id(),
     /** Fixed before the first try, so that a mail sent twice is known as one. */
-    messageId: exactText(120, 'message_id').notNull().unique(),
+    messageId: exactText(300, 'message_id').notNull().unique(),
     recipient: exactText(254).notNull(),
     subject: varchar({ length: 200 }).notNull(),
-    /** Erased on delivery where it holds a link. */
+    /** Both bodies are erased once it is delivered or given up: they may hold a link. */
     textBody: text('text_body'),
     htmlBody: text('html_body'),
     state: mysqlEnum(mailStates).notNull().default('waiting'),
@@ -27,3 +27,16 @@ export const mailOutbox = mysqlTable(
   },
   (table) => [index('mail_outbox_due').on(table.state, table.dueAt)],
 );
+
+/** Mail that came to the readable mailbox of this machine; filled only with the private database. */
+export const mailboxMessages = mysqlTable('mailbox_messages', {
+  id: id(),
+  /** A mail sent twice arrives once. */
+  messageId: exactText(300, 'message_id').notNull().unique(),
+  recipient: exactText(254).notNull(),
+  sender: varchar({ length: 300 }).notNull(),
+  subject: varchar({ length: 300 }).notNull(),
+  textBody: mediumtext('text_body').notNull(),
+  htmlBody: mediumtext('html_body').notNull(),
+  receivedAt: moment('received_at').notNull(),
+});

@@ -1,10 +1,11 @@
-import { bigint, index, int, mysqlTable, varchar } from 'drizzle-orm/mysql-core';
+import { bigint, index, int, mysqlTable } from 'drizzle-orm/mysql-core';
+import { exactText } from './columns.ts';
 
-/** Counters of the rate limiter, in the shape that rate-limiter-flexible keeps them in. */
+/** Counters of the rate limiter: just the columns that rate-limiter-flexible fills, in its order. */
 export const rateLimits = mysqlTable(
   'rate_limits',
   {
-    key: varchar({ length: 255 }).primaryKey(),
+    key: exactText(255).primaryKey(),
     points: int().notNull().default(0),
     /** Milliseconds since 1970. */
     expire: bigint({ mode: 'number', unsigned: true }),

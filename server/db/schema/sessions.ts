@@ -1,5 +1,6 @@
 import { index, int, mysqlEnum, mysqlTable, varchar } from 'drizzle-orm/mysql-core';
 import { createdAt, exactText, id, moment, reference } from './columns.ts';
+import { mailOutbox } from './mail.ts';
 import { roles, teams } from './teams.ts';
 import { users } from './users.ts';
 
@@ -39,6 +40,8 @@ export const oneTimeLinks = mysqlTable(
     userId: reference('user_id').references(() => users.id, { onDelete: 'cascade' }),
     teamId: reference('team_id').references(() => teams.id, { onDelete: 'cascade' }),
     role: mysqlEnum(roles),
+    /** The mail that carries it: shows whether it got there. */
+    mailId: reference('mail_id').references(() => mailOutbox.id, { onDelete: 'set null' }),
     createdBy: reference('created_by').references(() => users.id, { onDelete: 'set null' }),
     createdAt: createdAt(),
     expiresAt: moment('expires_at').notNull(),

@@ -1,0 +1,85 @@
+import type { Command } from 'commander';
+import { buildTable } from '../../shared/build-table.ts';
+import { Refusal, type GeneratedFile } from '../../shared/contract/index.ts';
+import { renderFiles, targetOf, targets } from '../../shared/firmware/index.ts';
+import { readTemplates } from '../tables/read-templates.ts';
+import { say, sayError } from './output.ts';
+import { readDefinition } from './read-definition.ts';
+import { onOneLine } from './terminal.ts';
+import { writeFiles } from './write-files.ts';
+
+interface Flags extends Readonly<Record<string, string>> {
+  readonly target: string;
+  readonly out: string;
+}
+
+/** `render DEFINITION.json --target NAME [--out DIR]`, and a flag for each option that some target has. */
+export function addRender(command: Command): void {
+  command
+    .argument('<DEFINITION.json>', 'the definition; - reads standard input')
+    .requiredOption('--target <name>', targets.map(({ id, title }) => `${id}: ${title}`).join('; '))
+    .option('--out <folder>', 'folder for the files, made where it is missing; without it they go to standard output');
+  for (const [flag, description] of optionFlags()) command.option(`${flag} <value>`, description);
+  command.action(async (file: string, { target, out, ...options }: Flags) => {
+    try {
+      await render(file, target, out, options);
+    } catch (error) {
+      throw error instanceof Refusal ? inFlags(error) : error;
+    }
+  });
+}
+
+async function render(file: string, target: string, out: string | undefined, flags: Readonly<Record<string, string>>) {
+  const { lineComment } = targetOf(target);
+  const table = buildTable(await readDefinition(file));
+  const options = Object.fromEntries(Object.entries(flags).map(([flag, value]) => [optionNamed(flag), value]));
+  const files = renderFiles(table, target, options, readTemplates());
+  const said = out === undefined ? asOneText(files, lineComment) : `${(await writeFiles(out, files)).join('\n')}\n`;
+  say(said);
+  for (const { path, message } of table.warnings) sayError(onOneLine(`warning: ${path}: ${message}`));
+}
+
+/** One file as it is; several one after the other, each below a comment line that names it: `// file: tone.h`. */
+const asOneText = (files: readonly GeneratedFile[], lineComment: string) =>
+  files.length === 1
+    ? files[0].text
+    : files.map(({ name, text }) => `${lineComment} file: ${name}\n${text}`).join('');
+
+const renamed = { arrayName: 'name' } as const;
+
+/** `arrayName` is `--name`, `highPort` is `--high-port`. */
+const flagOf = (option: string) =>
+  `--${option === 'arrayName' ? renamed.arrayName : option.replace(/[A-Z]/g, (letter) => `-${letter.toLowerCase()}`)}`;
+
+/** The option behind a flag, which commander gives in camel case. */
+const optionNamed = (flag: string) => (flag === renamed.arrayName ? 'arrayName' : flag);
+
+/** Flags of every option of every target, with what each says of itself and the targets that have it. */
+function optionFlags(): [flag: string, description: string][] {
+  const found = new Map<string, { description: string; ids: string[] }>();
+  for (const { id, options } of targets) {
+    for (const [option, schema] of Object.entries(options.shape)) {
+      const entry = found.get(option) ?? { description: descriptionOf(schema), ids: [] };
+      entry.ids.push(id);
+      found.set(option, entry);
+    }
+  }
+  return [...found].map(([option, { description, ids }]) => [
+    flagOf(option),
+    ids.length === targets.length ? description : `${description} (${ids.join(', ')})`,
+  ]);
+}
+
+const descriptionOf = (schema: object) => ('description' in schema ? String(schema.description) : '');
+
+/** The same refusal in the words of the command line: `options.highPort` is `--high-port`. */
+function inFlags({ problems }: Refusal): Refusal {
+  const [first, ...others] = problems.map((problem) => ({
+    ...problem,
+    path:
+      problem.path === 'target'
+        ? '--target'
+        : problem.path.replace(/^options\.(\w+)/, (_path, option: string) => flagOf(option)),
+  }));
+  return new Refusal(first, ...others);
+}

@@ -1,0 +1,55 @@
+/** A mail as data: typed text goes in as it is and is made harmless when it is written out. */
+export interface Letter {
+  readonly subject: string;
+  readonly paragraphs: readonly string[];
+  /** The one thing to do, with its address. */
+  readonly action?: { readonly label: string; readonly url: string };
+  /** Said after the action, such as how long it works. */
+  readonly afterwards?: readonly string[];
+}
+
+export interface WrittenLetter {
+  readonly subject: string;
+  readonly text: string;
+  readonly html: string;
+}
+
+/** On one line, without control and invisible formatting characters: they could end a header or turn text round. */
+const oneLine = (text: string) => text.replace(/[\p{C}\p{Zl}\p{Zp}\s]+/gu, ' ').trim();
+
+/**
+ * Text that a person typed, for use inside a paragraph: mail programs must not make a link out of it, since it comes
+ * from us and was chosen by somebody else.
+ */
+export const quoted = (typed: string) => `“${oneLine(typed).replace(/[.:@/\\](?=\S)/g, '$&\u2060')}”`;
+
+/** Text that a person typed, for the subject, where nothing becomes a link. */
+export const plain = (typed: string) => oneLine(typed);
+
+const escapes: Readonly<Record<string, string>> = { '&': '&amp;', '<': '&lt;', '>': '&gt;', '"': '&quot;', "'": '&#39;' };
+const escapeHtml = (text: string) => text.replace(/[&<>"']/g, (character) => escapes[character]);
+
+const signature = 'Stepwell sends this because of something done at its address; nobody reads answers to it.';
+
+/** Writes a letter out as plain text and as HTML; every text in it is escaped. */
+export function writeLetter({ subject, paragraphs, action, afterwards = [] }: Letter): WrittenLetter {
+  const before = paragraphs.map(withoutBreaks);
+  const after = [...afterwards, signature].map(withoutBreaks);
+  const text = [...before, ...(action ? [`${action.label}:\n${action.url}`] : []), ...after].join('\n\n');
+  const html = [
+    '<!doctype html><html lang="en"><head><meta charset="utf-8"><title>',
+    escapeHtml(oneLine(subject)),
+    '</title></head><body style="font-family:sans-serif;line-height:1.5;max-width:36em">',
+    ...before.map((line) => `<p>${escapeHtml(line)}</p>`),
+    ...(action
+      ? [`<p><a href="${escapeHtml(action.url)}">${escapeHtml(action.label)}</a></p>`, `<p>${escapeHtml(action.url)}</p>`]
+      : []),
+    ...after.map((line) => `<p>${escapeHtml(line)}</p>`),
+    '</body></html>',
+  ].join('');
+  return { subject: oneLine(subject).slice(0, 200), text: `${text}\n`, html };
+}
+
+/** As `oneLine`, but for the joiner that `quoted` has put in. */
+const withoutBreaks = (text: string) => text.split('\u2060').map(oneLinePart).join('\u2060');
+const oneLinePart = (text: string) => text.replace(/[\p{C}\p{Zl}\p{Zp}\s]+/gu, ' ');

@@ -1,0 +1,113 @@
+import { mkdtempSync, rmSync, statSync } from 'node:fs';
+import { createServer } from 'node:net';
+import { tmpdir } from 'node:os';
+import { join } from 'node:path';
+import { afterEach, beforeEach, describe, expect, it } from 'vitest';
+import { processesWith, startScript, type StartScript } from '../support/start-script.ts';
+import { waitUntil } from '../support/wait-until.ts';
+
+let folder: string;
+const started: StartScript[] = [];
+const start = (env?: Record<string, string>) => {
+  const script = startScript(folder, env);
+  started.push(script);
+  return script;
+};
+
+beforeEach(() => {
+  folder = mkdtempSync(join(tmpdir(), 'stepwell-start-'));
+});
+afterEach(async () => {
+  for (const { child, ended } of started.splice(0)) {
+    child.kill('SIGTERM');
+    await ended();
+  }
+  // Whatever a failed test has left: all of it names this test's own folder.
+  for (const pid of processesWith(folder)) process.kill(pid, 'SIGKILL');
+  rmSync(folder, { recursive: true, force: true });
+});
+
+const health = async (address: string) => (await fetch(new URL('/api/v1/health', address))).status;
+
+describe('npm start', () => {
+  it('ends by printing one address, where the application answers', async () => {
+    const script = start();
+    const address = await script.address();
+    expect(script.output()).toBe(`Stepwell is open at ${address}\n`);
+    expect(await health(address)).toBe(200);
+    const page = await fetch(address);
+    expect(page.headers.get('content-type')).toContain('text/html');
+    expect(statSync(join(folder, 'auth-secret')).mode & 0o777).toBe(0o600);
+  });
+
+  it.each(['SIGINT', 'SIGTERM', 'SIGHUP'] as const)('leaves no process behind after %s', async (signal) => {
+    const script = start();
+    await script.address();
+    expect(processesWith(folder).length).toBeGreaterThanOrEqual(3);
+    script.child.kill(signal);
+    expect(await script.ended()).toBe(0);
+    expect(processesWith(folder)).toEqual([]);
+  });
+
+  it('leaves no process behind when it is stopped in the middle of the set-up', async () => {
+    const script = start();
+    await waitUntil('the database on its way', () => processesWith(join(folder, 'mariadb')).length > 0);
+    script.child.kill('SIGINT');
+    await script.ended();
+    expect(processesWith(folder)).toEqual([]);
+    expect(await health(await start().address())).toBe(200);
+  });
+
+  it('works again after kill -9 of the script, and of everything', async () => {
+    const first = start();
+    await first.address();
+    first.child.kill('SIGKILL');
+    await first.ended();
+    const second = start();
+    expect(await health(await second.address())).toBe(200);
+    await waitUntil('the old application gone', () => processesWith(join(folder)).length === 3);
+
+    for (const pid of processesWith(folder)) process.kill(pid, 'SIGKILL');
+    const third = start();
+    expect(await health(await third.address())).toBe(200);
+    third.child.kill('SIGINT');
+    expect(await third.ended()).toBe(0);
+    expect(processesWith(folder)).toEqual([]);
+  });
+
+  it('runs twice side by side on one database; each end leaves the other in peace', async () => {
+    const [one, other] = [start(), start()];
+    const [first, second] = await Promise.all([one.address(), other.address()]);
+    expect(first).not.toBe(second);
+    one.child.kill('SIGINT');
+    expect(await one.ended()).toBe(0);
+    expect(await health(second)).toBe(200);
+    other.child.kill('SIGINT');
+    expect(await other.ended()).toBe(0);
+    expect(processesWith(folder)).toEqual([]);
+  });
+
+  it('takes a free port where its own is in use, and only where nobody asked for that one', async () => {
+    const busy = createServer().listen(4173, '127.0.0.1');
+    await new Promise((resolve) => busy.once('listening', resolve).once('error', resolve));
+    try {
+      const moved = start({ PORT: '' });
+      const address = await moved.address();
+      expect(new URL(address).port).not.toBe('4173');
+      expect(await health(address)).toBe(200);
+      const stubborn = start({ PORT: '4173' });
+      expect(await stubborn.ended()).toBe(1);
+      expect(stubborn.errors()).toContain('EADDRINUSE');
+      expect(stubborn.output()).toBe('');
+    } finally {
+      busy.close();
+    }
+  });
+
+  it('lists what is missing where it is to be reached from outside', async () => {
+    const script = start({ HOST: '0.0.0.0' });
+    expect(await script.ended()).toBe(1);
+    expect(script.errors()).toMatch(/APP_ORIGIN.*\n.*SMTP_URL.*\n.*DATABASE_URL/);
+    expect(processesWith(folder)).toEqual([]);
+  });
+});

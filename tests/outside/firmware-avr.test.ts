@@ -1,0 +1,90 @@
+import { beforeAll, describe, expect, it } from 'vitest';
+import type { BuiltTable } from '../../shared/build-table.ts';
+import { portWrites, type RegisterWrite } from './support/avr-simulator.ts';
+import { avrPart, avrProgram, type AvrPart } from './support/compilers.ts';
+import { exported, pair, tone } from './support/tables.ts';
+
+// Compiler and addresses: avr-gcc and avr-libc. Judge of what runs: the instruction-level simulator avr8js.
+// That a port's pins follow the words bit by bit is the definition of an export to a port; it needs no source.
+
+const mcu = 'attiny4313';
+let part: AvrPart;
+beforeAll(async () => {
+  part = await avrPart(mcu, ['B', 'D']);
+});
+
+const valuesAt = (writes: readonly RegisterWrite[], register: string) =>
+  writes.filter((write) => write.register === register).map(({ value }) => value);
+
+const twice = (words: readonly number[]) => [...words, ...words];
+
+const pins = (table: BuiltTable, from: number, to: number) =>
+  Array.from(table.stored, (word) => (word >> from) & (2 ** (to - from) - 1));
+
+describe('avr export, run in the simulator', () => {
+  const onOnePort = {
+    '256 × 8': () => exported(tone({}), 'avr'),
+    '100 × 8': () => exported(tone({ length: 100 }), 'avr'),
+    '2 × 8': () => exported(pair, 'avr'),
+    '1000 × 8': () => exported(tone({ length: 1000 }), 'avr'),
+    '100 × 8 in two’s complement': () => exported(tone({ length: 100, coding: 'twos-complement' }), 'avr'),
+    '100 × 6 in two’s complement': () => exported(tone({ length: 100, bits: 6, coding: 'twos-complement' }), 'avr'),
+    '64 × 1': () => exported(tone({ length: 64, bits: 1 }), 'avr'),
+  };
+
+  it.each(Object.entries(onOnePort))('writes %s to the port in order, twice round', async (_title, render) => {
+    const { table, files } = render();
+    const bits = table.definition.table.bits;
+    const writes = portWrites(await avrProgram(files, mcu), part, 2 * table.stored.length);
+    expect(writes[0]).toMatchObject({ register: 'DDRB', value: 2 ** bits - 1 });
+    expect(valuesAt(writes, 'PORTB')).toEqual(twice(pins(table, 0, bits)));
+    expect(writes).toHaveLength(1 + 2 * table.stored.length);
+  });
+
+  it('writes to the port that was chosen, and to no other', async () => {
+    const { table, files } = exported(tone({ length: 100, bits: 7 }), 'avr', { port: 'D' });
+    const writes = portWrites(await avrProgram(files, mcu), part, 2 * table.stored.length);
+    expect(writes[0]).toMatchObject({ register: 'DDRD', value: 0x7f });
+    expect(valuesAt(writes, 'PORTD')).toEqual(twice(Array.from(table.codes)));
+    expect(valuesAt(writes, 'PORTB')).toEqual([]);
+  });
+
+  const onTwoPorts = {
+    '256 × 12': tone({ bits: 12 }),
+    '100 × 9': tone({ length: 100, bits: 9 }),
+    '100 × 12 in two’s complement': tone({ length: 100, bits: 12, coding: 'twos-complement' }),
+    '1000 × 16': tone({ length: 1000, bits: 16 }),
+  };
+
+  it.each(Object.entries(onTwoPorts))('writes %s to two ports, the upper bits first', async (_title, definition) => {
+    const { table, files } = exported(definition, 'avr', { port: 'B', highPort: 'D' });
+    const bits = table.definition.table.bits;
+    const writes = portWrites(await avrProgram(files, mcu), part, 4 * table.stored.length);
+    expect(writes.slice(0, 3).map(({ register }) => register)).toEqual(['DDRD', 'DDRB', 'PORTD']);
+    expect(writes[0].value).toBe(2 ** (bits - 8) - 1);
+    expect(valuesAt(writes, 'PORTB')).toEqual(twice(pins(table, 0, 8)));
+    expect(valuesAt(writes, 'PORTD')).toEqual(twice(pins(table, 8, bits)));
+  });
+
+  it('takes as long for each step but the one round the seam, as its comment says', async () => {
+    const { files } = exported(tone({ length: 100 }), 'avr');
+    const cycles = portWrites(await avrProgram(files, mcu), part, 200)
+      .filter(({ register }) => register === 'PORTB')
+      .map(({ cycle }) => cycle);
+    const steps = cycles.slice(1).map((cycle, index) => cycle - cycles[index]);
+    const [step] = steps;
+    const others = steps.flatMap((length, index) => (length === step ? [] : [index]));
+    expect(others).toEqual([99]);
+    expect(steps[99]).toBeGreaterThan(step);
+  });
+
+  it('compiles with every warning an error as C99 and is read from C++', async () => {
+    const { files } = exported(tone({ bits: 10, coding: 'twos-complement' }), 'avr');
+    await avrProgram(files, mcu, ['-std=c99', '-Os', '-Wall', '-Wextra', '-Wpedantic', '-Wconversion', '-Werror']);
+  });
+
+  it('says so where the part lacks the port', async () => {
+    const { files } = exported(tone({}), 'avr', { port: 'G' });
+    await expect(avrProgram(files, mcu)).rejects.toThrow('This part has no port G: render for one that it has.');
+  });
+});
