@@ -24,13 +24,38 @@ const layers = [
   { target: './src/components', from: './src/features', message: 'The design system knows no feature.' },
   { target: './src/plots', from: './src/features', message: 'Plots know no feature.' },
   { target: './src/audio', from: './src/features', message: 'The audio graph knows no feature.' },
-  { target: './shared/contract', from: './shared', except: ['./contract'], message: 'The contract is the ground floor.' },
+  {
+    target: './shared/contract',
+    from: './shared',
+    except: ['./contract'],
+    message: 'The contract is the ground floor.',
+  },
 ];
 
-const impureNames = ['window', 'document', 'navigator', 'performance', 'Date', 'process', 'Buffer', 'setTimeout', 'fetch'];
+const impureNames = [
+  'window',
+  'document',
+  'navigator',
+  'performance',
+  'Date',
+  'process',
+  'Buffer',
+  'setTimeout',
+  'fetch',
+];
 
 export default tseslint.config(
-  { ignores: ['dist/**', 'node_modules/**', '.data/**', '.cache/**', 'drizzle/**', 'test-results/**', 'playwright-report/**'] },
+  {
+    ignores: [
+      'dist/**',
+      'node_modules/**',
+      '.data/**',
+      '.cache/**',
+      'drizzle/**',
+      'test-results/**',
+      'playwright-report/**',
+    ],
+  },
   js.configs.recommended,
   ...tseslint.configs.strict,
   ...query.configs['flat/recommended'],
@@ -38,7 +63,7 @@ export default tseslint.config(
     plugins: { 'import-x': importX, 'react-hooks': reactHooks },
     rules: {
       ...reactHooks.configs.recommended.rules,
-      '@typescript-eslint/no-unused-vars': ['error', { argsIgnorePattern: '^_' }],
+      '@typescript-eslint/no-unused-vars': ['error', { argsIgnorePattern: '^_', varsIgnorePattern: '^_' }],
       '@typescript-eslint/consistent-type-imports': 'error',
       '@typescript-eslint/no-non-null-assertion': 'error',
       'max-lines': ['error', { max: 300, skipBlankLines: true, skipComments: true }],
@@ -46,7 +71,13 @@ export default tseslint.config(
       'no-console': 'error',
       'import-x/no-restricted-paths': [
         'error',
-        { zones: [...layers, ...fencesBetweenFeatures('src/features'), ...fencesBetweenFeatures('server/features')] },
+        {
+          zones: [
+            ...layers,
+            ...fencesBetweenFeatures('src/features'),
+            ...fencesBetweenFeatures('server/features'),
+          ],
+        },
       ],
     },
   },
@@ -55,20 +86,52 @@ export default tseslint.config(
     rules: {
       'no-restricted-imports': [
         'error',
-        { patterns: [{ group: ['node:*', 'fs', 'path', 'crypto', 'react', 'express', 'drizzle-orm*'], message: 'shared/ is pure.' }] },
+        {
+          patterns: [
+            {
+              group: ['node:*', 'fs', 'path', 'crypto', 'react', 'express', 'drizzle-orm*'],
+              message: 'shared/ is pure.',
+            },
+          ],
+        },
       ],
       'no-restricted-globals': ['error', ...impureNames],
       'no-restricted-properties': [
         'error',
-        { object: 'Math', property: 'random', message: 'Seeded generators only: same definition, same table.' },
+        {
+          object: 'Math',
+          property: 'random',
+          message: 'Seeded generators only: same definition, same table.',
+        },
       ],
     },
   },
   {
     files: ['server/setup/**/*.mjs'],
-    languageOptions: { globals: { process: 'readonly', console: 'readonly', URL: 'readonly', setTimeout: 'readonly', clearTimeout: 'readonly', setInterval: 'readonly', clearInterval: 'readonly', fetch: 'readonly', performance: 'readonly', Buffer: 'readonly', AbortSignal: 'readonly' } },
+    languageOptions: {
+      globals: {
+        process: 'readonly',
+        console: 'readonly',
+        URL: 'readonly',
+        setTimeout: 'readonly',
+        clearTimeout: 'readonly',
+        setInterval: 'readonly',
+        clearInterval: 'readonly',
+        fetch: 'readonly',
+        performance: 'readonly',
+        Buffer: 'readonly',
+        AbortSignal: 'readonly',
+      },
+    },
     rules: { 'no-console': 'off' },
   },
+  {
+    files: ['public/**/*.js'],
+    languageOptions: { globals: { localStorage: 'readonly', document: 'readonly', matchMedia: 'readonly' } },
+  },
   { files: ['server/cli/**/*.ts', 'tests/**/*.ts'], rules: { 'no-console': 'off' } },
-  { files: ['**/*.js', '*.config.ts'], languageOptions: { globals: { process: 'readonly', console: 'readonly', URL: 'readonly' } } },
+  {
+    files: ['**/*.js', '*.config.ts'],
+    languageOptions: { globals: { process: 'readonly', console: 'readonly', URL: 'readonly' } },
+  },
 );

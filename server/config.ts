@@ -49,7 +49,8 @@ const urlWith = (...protocols: string[]) =>
 
 const isOrigin = (value: string) => URL.canParse(value) && new URL(value).origin === value;
 const isSecureOrigin = (value: string) =>
-  new URL(value).protocol === 'https:' || (new URL(value).protocol === 'http:' && isLoopback(new URL(value).hostname));
+  new URL(value).protocol === 'https:' ||
+  (new URL(value).protocol === 'http:' && isLoopback(new URL(value).hostname));
 
 /** What Express takes for `trust proxy`: addresses, subnets and the three names it knows. */
 const isProxy = (value: string) => {
@@ -75,13 +76,22 @@ const environment = z.object({
     'a whole number from 0 to 65535 (0: any free port)',
   ),
   APP_ORIGIN: text
-    .refine((value) => value === undefined || isOrigin(value), 'scheme, host and port only, as https://tables.example')
+    .refine(
+      (value) => value === undefined || isOrigin(value),
+      'scheme, host and port only, as https://tables.example',
+    )
     .refine(
       (value) => value === undefined || !isOrigin(value) || isSecureOrigin(value),
       'https:// off this machine (sessions and audio need it)',
     ),
-  AUTH_SECRET: text.refine((value) => value === undefined || value.length >= 32, 'at least 32 characters, random'),
-  AUDIT_KEY: text.refine((value) => value === undefined || value.length >= 32, 'at least 32 characters, random'),
+  AUTH_SECRET: text.refine(
+    (value) => value === undefined || value.length >= 32,
+    'at least 32 characters, random',
+  ),
+  AUDIT_KEY: text.refine(
+    (value) => value === undefined || value.length >= 32,
+    'at least 32 characters, random',
+  ),
   SMTP_URL: urlWith('smtp:', 'smtps:'),
   MAIL_FROM: text.pipe(z.email({ error: 'an e-mail address, as stepwell@tables.example' }).optional()),
   DATABASE_URL: urlWith('mysql:', 'mariadb:'),
@@ -90,7 +100,10 @@ const environment = z.object({
     (value) => listOf(value).every(isProxy),
     'addresses or subnets, as 10.0.0.0/8, separated by commas',
   ),
-  LOG_LEVEL: text.refine((value) => value === undefined || logLevels.includes(value), `one of ${logLevels.join(', ')}`),
+  LOG_LEVEL: text.refine(
+    (value) => value === undefined || logLevels.includes(value),
+    `one of ${logLevels.join(', ')}`,
+  ),
 });
 
 /** Secrets are never shown, not even the broken ones. */

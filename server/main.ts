@@ -85,7 +85,8 @@ try {
   await start();
 } catch (error) {
   const isPlain = error instanceof ConfigFaults || error instanceof SchemaFault;
-  const text = error instanceof Error ? (isPlain ? error.message : (error.stack ?? error.message)) : String(error);
+  const text =
+    error instanceof Error ? (isPlain ? error.message : (error.stack ?? error.message)) : String(error);
   process.stderr.write(`${text}\n`);
   process.exit(1);
 }

@@ -16,8 +16,10 @@ export function endInOrder(server: Server, steps: readonly (() => Promise<void>)
     server.closeIdleConnections();
     setTimeout(() => server.closeAllConnections(), grace).unref();
     await closed;
-    for (const step of steps) await step().catch((error: unknown) => process.stderr.write(`${String(error)}\n`));
+    for (const step of steps)
+      await step().catch((error: unknown) => process.stderr.write(`${String(error)}\n`));
     process.exit(0);
   };
-  for (const signal of ['SIGTERM', 'SIGINT', 'SIGHUP', 'disconnect'] as const) process.on(signal, () => void end());
+  for (const signal of ['SIGTERM', 'SIGINT', 'SIGHUP', 'disconnect'] as const)
+    process.on(signal, () => void end());
 }

@@ -73,7 +73,7 @@ function authConfig(deps: ServerDeps): ExpressAuthConfig {
       jwt: async ({ token, user }) => {
         if (user?.claims) return tokenFieldsOf(user.claims);
         const claims = claimsOf(token);
-        return claims && (await findUser(database.db, claims)) ? tokenFieldsOf(claims) : null;
+        return claims && (await findUser(database.db, claims)) ? token : null;
       },
       session: ({ session, token }) => ({ expires: session.expires, user: { id: String(claimsOf(token)?.userId) } }),
     },

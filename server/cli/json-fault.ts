@@ -63,7 +63,8 @@ export function findJsonFault(text: string): JsonFault | undefined {
           at += 1;
           continue;
         }
-        const end = character === '"' ? scanString(text, at) : (endOf(number, text, at) ?? endOf(literal, text, at));
+        const end =
+          character === '"' ? scanString(text, at) : (endOf(number, text, at) ?? endOf(literal, text, at));
         if (end === undefined) return fault(at, allowedWords[expected]);
         if (typeof end !== 'number') return fault(end.offset, end.allowed);
         expected = afterValue();
@@ -123,5 +124,10 @@ function describe(text: string, offset: number, allowed: string): JsonFault {
   const line = before.split('\n').length;
   const column = offset - (before.lastIndexOf('\n') + 1) + 1;
   const excerpt = /^[\w.+-]{1,20}|^[^]/u.exec(text.slice(offset, offset + 24))?.[0];
-  return { line, column, found: excerpt === undefined ? 'the end of the text' : JSON.stringify(excerpt), allowed };
+  return {
+    line,
+    column,
+    found: excerpt === undefined ? 'the end of the text' : JSON.stringify(excerpt),
+    allowed,
+  };
 }

@@ -56,4 +56,4 @@ function fail(line: string): void {
   process.exitCode = wrongInput;
 }
 
-await main(process.argv.slice(2));
+void main(process.argv.slice(2));

@@ -15,7 +15,7 @@ export function sayError(line: string): void {
 
 function writeWhole(descriptor: 1 | 2, text: string): void {
   const bytes = Buffer.from(text);
-  for (let start = 0; start < bytes.length; ) {
+  for (let start = 0; start < bytes.length;) {
     try {
       start += writeSync(descriptor, bytes, start);
     } catch (error) {

@@ -11,7 +11,11 @@ export async function readDefinition(file: string): Promise<unknown> {
   const name = file === '-' ? 'standard input' : file;
   const bytes = file === '-' ? await readStandardInput() : readFile(file);
   if (bytes.length > limits.requestBytes) {
-    throw new Refusal({ path: name, value: 'a larger document', allowed: `at most ${limits.requestBytes} bytes` });
+    throw new Refusal({
+      path: name,
+      value: 'a larger document',
+      allowed: `at most ${limits.requestBytes} bytes`,
+    });
   }
   return parseJson(decode(bytes, name), name);
 }
@@ -20,7 +24,11 @@ function readFile(file: string): Buffer {
   try {
     return readFileSync(file);
   } catch (error) {
-    throw new Refusal({ path: file, value: reasonOf(error), allowed: 'a file that can be read, or - for standard input' });
+    throw new Refusal({
+      path: file,
+      value: reasonOf(error),
+      allowed: 'a file that can be read, or - for standard input',
+    });
   }
 }
 

@@ -18,7 +18,10 @@ export function addRender(command: Command): void {
   command
     .argument('<DEFINITION.json>', 'the definition; - reads standard input')
     .requiredOption('--target <name>', targets.map(({ id, title }) => `${id}: ${title}`).join('; '))
-    .option('--out <folder>', 'folder for the files, made where it is missing; without it they go to standard output');
+    .option(
+      '--out <folder>',
+      'folder for the files, made where it is missing; without it they go to standard output',
+    );
   for (const [flag, description] of optionFlags()) command.option(`${flag} <value>`, description);
   command.action(async (file: string, { target, out, ...options }: Flags) => {
     try {
@@ -29,12 +32,20 @@ export function addRender(command: Command): void {
   });
 }
 
-async function render(file: string, target: string, out: string | undefined, flags: Readonly<Record<string, string>>) {
+async function render(
+  file: string,
+  target: string,
+  out: string | undefined,
+  flags: Readonly<Record<string, string>>,
+) {
   const { lineComment } = targetOf(target);
   const table = buildTable(await readDefinition(file));
-  const options = Object.fromEntries(Object.entries(flags).map(([flag, value]) => [optionNamed(flag), value]));
+  const options = Object.fromEntries(
+    Object.entries(flags).map(([flag, value]) => [optionNamed(flag), value]),
+  );
   const files = renderFiles(table, target, options, readTemplates());
-  const said = out === undefined ? asOneText(files, lineComment) : `${(await writeFiles(out, files)).join('\n')}\n`;
+  const said =
+    out === undefined ? asOneText(files, lineComment) : `${(await writeFiles(out, files)).join('\n')}\n`;
   say(said);
   for (const { path, message } of table.warnings) sayError(onOneLine(`warning: ${path}: ${message}`));
 }
@@ -76,10 +87,11 @@ const descriptionOf = (schema: object) => ('description' in schema ? String(sche
 function inFlags({ problems }: Refusal): Refusal {
   const [first, ...others] = problems.map((problem) => ({
     ...problem,
-    path:
-      problem.path === 'target'
-        ? '--target'
-        : problem.path.replace(/^options\.(\w+)/, (_path, option: string) => flagOf(option)),
+    path: problem.path === 'target' ? '--target' : withFlags(problem.path),
+    allowed: withFlags(problem.allowed),
   }));
   return new Refusal(first, ...others);
 }
+
+const withFlags = (text: string) =>
+  text.replace(/\boptions\.(\w+)/g, (_path, option: string) => flagOf(option));

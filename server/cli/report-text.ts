@@ -16,7 +16,9 @@ export function reportText(table: BuiltTable): string {
   const lines = blocks.map((block) =>
     block
       .map((row) =>
-        [row[0].padEnd(label), row[1].padStart(figure), (row[2] ?? '').padEnd(unit), row[3] ?? ''].join('  ').trimEnd(),
+        [row[0].padEnd(label), row[1].padStart(figure), (row[2] ?? '').padEnd(unit), row[3] ?? '']
+          .join('  ')
+          .trimEnd(),
       )
       .join('\n'),
   );
@@ -36,7 +38,12 @@ const againstSignal = ({ report }: BuiltTable): Row[] => [
 const againstCarrier = ({ report }: BuiltTable): Row[] => [
   ['SINAD', decimals(report.sinadDb, 2), 'dB'],
   ['ENOB', decimals(report.enobBits, 2), 'bits'],
-  ['THD', decimals(report.thdDb, 2), 'dB', report.thdPercent === null ? '' : `${decimals(report.thdPercent, 4)} %`],
+  [
+    'THD',
+    decimals(report.thdDb, 2),
+    'dB',
+    report.thdPercent === null ? '' : `${decimals(report.thdPercent, 4)} %`,
+  ],
   ['SFDR', decimals(report.sfdrDb, 2), 'dB'],
 ];
 

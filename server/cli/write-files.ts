@@ -58,7 +58,11 @@ const exists = (path: string) =>
 async function refuseFolder(path: string): Promise<void> {
   const found = await lstat(path).catch(() => undefined);
   if (found?.isDirectory()) {
-    throw new Refusal({ path: '--out', value: `the folder ${showValue(path)}`, allowed: 'a file, or nothing, in its place' });
+    throw new Refusal({
+      path: '--out',
+      value: `the folder ${showValue(path)}`,
+      allowed: 'a file, or nothing, in its place',
+    });
   }
 }
 

@@ -18,7 +18,9 @@ export function connectionOptions(url: string): PoolOptions & { database: string
   const socketPath = searchParams.get('socketPath');
   const ssl = searchParams.get('ssl');
   return {
-    ...(socketPath ? { socketPath } : { host: hostname.replace(/^\[|\]$/g, ''), port: port ? Number(port) : 3306 }),
+    ...(socketPath
+      ? { socketPath }
+      : { host: hostname.replace(/^\[|\]$/g, ''), port: port ? Number(port) : 3306 }),
     ...(ssl === 'true' ? { ssl: {} } : {}),
     user: decodeURIComponent(username),
     password: decodeURIComponent(password),

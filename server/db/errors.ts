@@ -10,7 +10,11 @@ export const errno = {
 
 /** Looks through what Drizzle wraps around the driver's error. */
 function* chainOf(error: unknown): Generator<object> {
-  for (let here = error; typeof here === 'object' && here !== null; here = 'cause' in here ? here.cause : undefined) {
+  for (
+    let here = error;
+    typeof here === 'object' && here !== null;
+    here = 'cause' in here ? here.cause : undefined
+  ) {
     yield here;
   }
 }
@@ -36,7 +40,10 @@ const connectionCodes = new Set([
 /** Whether the database could not be reached; the request may succeed later. */
 export function databaseIsAway(error: unknown): boolean {
   for (const here of chainOf(error)) {
-    const connecting = 'syscall' in here ? here.syscall === 'connect' || 'fatal' in here : 'fatal' in here || 'sqlState' in here;
+    const connecting =
+      'syscall' in here
+        ? here.syscall === 'connect' || 'fatal' in here
+        : 'fatal' in here || 'sqlState' in here;
     if ('code' in here && connectionCodes.has(String(here.code)) && connecting) return true;
   }
   return false;

@@ -18,7 +18,9 @@ export const migrationsFolder = join(projectFolder, 'drizzle');
 
 /** Reads the migrations that belong to this version of the program, oldest first. */
 export function readJournal(folder = migrationsFolder): Migration[] {
-  const { entries } = journalSchema.parse(JSON.parse(readFileSync(join(folder, 'meta', '_journal.json'), 'utf8')));
+  const { entries } = journalSchema.parse(
+    JSON.parse(readFileSync(join(folder, 'meta', '_journal.json'), 'utf8')),
+  );
   return entries.map(({ tag, when }) => {
     const text = readFileSync(join(folder, `${tag}.sql`), 'utf8');
     return {

@@ -42,7 +42,10 @@ export async function migrate(url: string, journal: readonly Migration[] = readJ
 }
 
 /** @throws {SchemaFault} unless the database is exactly in the journal's state */
-export async function requireExactSchema(url: string, journal: readonly Migration[] = readJournal()): Promise<void> {
+export async function requireExactSchema(
+  url: string,
+  journal: readonly Migration[] = readJournal(),
+): Promise<void> {
   const options = connectionOptions(url);
   const connection = await mysql.createConnection(options);
   try {
@@ -102,7 +105,10 @@ async function apply(worker: Connection, { tag, hash, statements }: Migration): 
         throw new SchemaFault(`Migration ${tag}, statement ${step + 1}: ${String(error)}`, { cause: error });
       }
     }
-    await worker.query('UPDATE schema_steps SET done_at = UTC_TIMESTAMP(3) WHERE migration = ? AND step = ?', [tag, step]);
+    await worker.query(
+      'UPDATE schema_steps SET done_at = UTC_TIMESTAMP(3) WHERE migration = ? AND step = ?',
+      [tag, step],
+    );
     await worker.commit();
   }
 }

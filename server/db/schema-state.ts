@@ -15,7 +15,10 @@ interface Progress {
 export type AppliedMigrations = ReadonlyMap<string, Progress>;
 
 /** What the database has seen, from the record that `migrate` keeps in it. */
-export async function readApplied(connection: Connection | Pool, database: string): Promise<AppliedMigrations> {
+export async function readApplied(
+  connection: Connection | Pool,
+  database: string,
+): Promise<AppliedMigrations> {
   const [tables] = await connection.query<RowDataPacket[]>(
     "SELECT 1 FROM information_schema.tables WHERE table_schema = ? AND table_name = 'schema_steps'",
     [database],
@@ -24,7 +27,9 @@ export async function readApplied(connection: Connection | Pool, database: strin
   const [rows] = await connection.query<RowDataPacket[]>(
     'SELECT migration, MIN(hash) AS hash, COUNT(done_at) AS done FROM schema_steps GROUP BY migration',
   );
-  return new Map(rows.map((row) => [String(row.migration), { hash: String(row.hash), done: Number(row.done) }]));
+  return new Map(
+    rows.map((row) => [String(row.migration), { hash: String(row.hash), done: Number(row.done) }]),
+  );
 }
 
 export interface SchemaState {
@@ -65,6 +70,8 @@ export function refuseForeign({ ahead, changed }: SchemaState): void {
 export function refuseInexact(state: SchemaState): void {
   refuseForeign(state);
   if (state.behind.length > 0) {
-    throw new SchemaFault(`The database is behind this program: it lacks ${state.behind.join(', ')}. Run: npm run migrate`);
+    throw new SchemaFault(
+      `The database is behind this program: it lacks ${state.behind.join(', ')}. Run: npm run migrate`,
+    );
   }
 }

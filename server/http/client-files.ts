@@ -14,7 +14,12 @@ export function clientFiles(folder: string): Router {
   const router = Router();
   router.use(
     '/assets',
-    express.static(join(folder, 'assets'), { immutable: true, maxAge: oneYear, index: false, fallthrough: false }),
+    express.static(join(folder, 'assets'), {
+      immutable: true,
+      maxAge: oneYear,
+      index: false,
+      fallthrough: false,
+    }),
   );
   router.use(express.static(folder, { index: false, redirect: false }));
   router.get('/{*path}', (request, response) => {

@@ -17,29 +17,45 @@ export const errorTranslator: ErrorRequestHandler = (error: unknown, request, re
   }
   if (problem instanceof Problem) response.set(problem.headers);
   const body = problem ?? new Problem('internal');
-  sendProblem(response, status, status === 500 ? { ...toPlain(body), instance: `urn:uuid:${String(request.id)}` } : body);
+  sendProblem(
+    response,
+    status,
+    status === 500 ? { ...toPlain(body), instance: `urn:uuid:${String(request.id)}` } : body,
+  );
 };
 
 /** The headers of whatever was going to be sent describe that, not the problem. */
 function sendProblem(response: Response, status: number, body: object) {
-  for (const header of ['Content-Disposition', 'Content-Encoding', 'ETag', 'Last-Modified', 'Accept-Ranges']) {
+  for (const header of [
+    'Content-Disposition',
+    'Content-Encoding',
+    'ETag',
+    'Last-Modified',
+    'Accept-Ranges',
+  ]) {
     response.removeHeader(header);
   }
   response.set('Cache-Control', 'no-store');
   response.status(status).type('application/problem+json').send(JSON.stringify(body));
 }
 
-const toPlain = (body: Problem | ReturnType<typeof plainProblem>) => (body instanceof Problem ? body.toJSON() : body);
+const toPlain = (body: Problem | ReturnType<typeof plainProblem>) =>
+  body instanceof Problem ? body.toJSON() : body;
 
 function toProblem(error: unknown): Problem | ReturnType<typeof plainProblem> | undefined {
   if (error instanceof Problem) return error;
   if (error instanceof Refusal) return new Problem('validation', { errors: error.problems });
   if (error instanceof ZodError) {
-    return new Problem('validation', { errors: error.issues.flatMap((issue) => problemsOf(issue, undefined, 'body')) });
+    return new Problem('validation', {
+      errors: error.issues.flatMap((issue) => problemsOf(issue, undefined, 'body')),
+    });
   }
   if (error instanceof JobOverrun) return new Problem('too-much-work', { detail: error.message });
   if (error instanceof JobQueueFull || databaseIsAway(error)) {
-    return new Problem('unavailable', { detail: 'Try again in a few seconds.', headers: { 'Retry-After': '5' } });
+    return new Problem('unavailable', {
+      detail: 'Try again in a few seconds.',
+      headers: { 'Retry-After': '5' },
+    });
   }
   return fromMiddleware(error);
 }

@@ -11,7 +11,8 @@ const parser = express.json({ limit: jsonLimit, strict: true, type: 'application
 
 const hasBody: RequestHandler = (request, _response, next) => {
   const length = request.headers['content-length'];
-  const carriesBody = request.headers['transfer-encoding'] !== undefined || (length !== undefined && length !== '0');
+  const carriesBody =
+    request.headers['transfer-encoding'] !== undefined || (length !== undefined && length !== '0');
   if (carriesBody && !request.is('application/json')) {
     throw new Problem('unsupported-media-type', {
       detail: `${request.headers['content-type'] ?? 'A body without Content-Type'} is not taken; send application/json.`,
@@ -24,7 +25,13 @@ const depthGate: RequestHandler = (request, _response, next) => {
   const body: unknown = request.body;
   if (isDeeperThan(body, depthLimit)) {
     throw new Problem('validation', {
-      errors: [{ path: 'body', value: 'deeper nesting', allowed: `lists and objects nested at most ${depthLimit} deep` }],
+      errors: [
+        {
+          path: 'body',
+          value: 'deeper nesting',
+          allowed: `lists and objects nested at most ${depthLimit} deep`,
+        },
+      ],
     });
   }
   next();
@@ -38,7 +45,8 @@ function isDeeperThan(value: unknown, limit: number): boolean {
     const below: unknown[] = [];
     for (const item of level) {
       if (typeof item !== 'object' || item === null) continue;
-      for (const inner of Object.values(item)) if (typeof inner === 'object' && inner !== null) below.push(inner);
+      for (const inner of Object.values(item))
+        if (typeof inner === 'object' && inner !== null) below.push(inner);
     }
     level = below;
   }

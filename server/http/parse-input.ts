@@ -8,7 +8,11 @@ import { Problem } from './problem.ts';
  * @param whole what to call the input where it is at fault as a whole: `body`, `query`
  * @throws {Problem} `validation` (422), naming each field at fault, its value and what is allowed
  */
-export function parseInput<Schema extends z.ZodType>(schema: Schema, input: unknown, whole = 'body'): z.output<Schema> {
+export function parseInput<Schema extends z.ZodType>(
+  schema: Schema,
+  input: unknown,
+  whole = 'body',
+): z.output<Schema> {
   const result = schema.safeParse(input);
   if (result.success) return result.data;
   const faults = result.error.issues.flatMap((issue) => problemsOf(issue, input, whole));

@@ -48,7 +48,10 @@ export class Problem extends Error {
   readonly extensions: Readonly<Record<string, unknown>>;
   private readonly detail: string | undefined;
 
-  constructor(kind: ProblemKind, { detail, errors, headers = {}, extensions = {}, cause }: ProblemOptions = {}) {
+  constructor(
+    kind: ProblemKind,
+    { detail, errors, headers = {}, extensions = {}, cause }: ProblemOptions = {},
+  ) {
     super(detail ?? problemKinds[kind].title, { cause });
     this.kind = kind;
     this.status = problemKinds[kind].status;

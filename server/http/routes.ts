@@ -8,9 +8,9 @@ export interface Route {
 }
 
 const methodsOf = (layer: Router['stack'][number]): string[] =>
-  Object.keys((layer.route as unknown as { methods?: Record<string, boolean> } | undefined)?.methods ?? {}).map((name) =>
-    name.toUpperCase(),
-  );
+  Object.keys(
+    (layer.route as unknown as { methods?: Record<string, boolean> } | undefined)?.methods ?? {},
+  ).map((name) => name.toUpperCase());
 
 /** Every route of the routers, for the tests that prove something about each of them. */
 export const listRoutes = (routers: readonly Router[]): Route[] =>
@@ -29,7 +29,8 @@ export function noSuchRoute(routers: readonly Router[]): RequestHandler {
         .filter((layer) => layer.route && matches(layer, request.path))
         .flatMap(methodsOf),
     );
-    if (allowed.size === 0) throw new Problem('not-found', { detail: `There is nothing at ${request.originalUrl}.` });
+    if (allowed.size === 0)
+      throw new Problem('not-found', { detail: `There is nothing at ${request.originalUrl}.` });
     if (allowed.has('GET')) allowed.add('HEAD');
     const list = [...allowed].sort().join(', ');
     throw new Problem('method-not-allowed', {

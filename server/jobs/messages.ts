@@ -14,4 +14,9 @@ export type JobAnswer =
   | { readonly kind: 'ready' }
   | { readonly kind: 'done'; readonly result: unknown }
   | { readonly kind: 'refused'; readonly problems: readonly [Fault, ...Fault[]] }
-  | { readonly kind: 'failed'; readonly name: string; readonly message: string; readonly stack?: string | undefined };
+  | {
+      readonly kind: 'failed';
+      readonly name: string;
+      readonly message: string;
+      readonly stack?: string | undefined;
+    };

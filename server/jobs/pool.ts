@@ -59,7 +59,12 @@ export function createJobPool<Jobs extends JobRegistry = typeof jobs>({
   let isClosed = false;
 
   function addSlot(): void {
-    const slot: Slot = { worker: startWorker(entry, memoryLimit), isReady: false, task: undefined, timer: undefined };
+    const slot: Slot = {
+      worker: startWorker(entry, memoryLimit),
+      isReady: false,
+      task: undefined,
+      timer: undefined,
+    };
     slots.add(slot);
     slot.worker.on('message', (answer: JobAnswer) => take(slot, answer));
     // An answer that cannot be cloned, or a job that threw outside of its own promise.
@@ -155,6 +160,9 @@ function ownEntry(): URL {
 function startWorker(entry: URL, memoryLimit: number): Worker {
   const resourceLimits = { maxOldGenerationSizeMb: memoryLimit, maxYoungGenerationSizeMb: 32 };
   return entry.pathname.endsWith('.ts')
-    ? new Worker(new URL('./from-source.mjs', import.meta.url), { workerData: { entry: entry.href }, resourceLimits })
+    ? new Worker(new URL('./from-source.mjs', import.meta.url), {
+        workerData: { entry: entry.href },
+        resourceLimits,
+      })
     : new Worker(entry, { resourceLimits });
 }

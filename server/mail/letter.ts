@@ -1,4 +1,4 @@
-/** A mail as data: typed text goes in as it is and is made harmless when it is written out. */
+/** A mail as data. Text that a person typed goes in by way of `quoted` or, in the subject, `plain`. */
 export interface Letter {
   readonly subject: string;
   readonly paragraphs: readonly string[];
@@ -31,16 +31,14 @@ const escapeHtml = (text: string) => text.replace(/[&<>"']/g, (character) => esc
 
 const signature = 'Stepwell sends this because of something done at its address; nobody reads answers to it.';
 
-/** Writes a letter out as plain text and as HTML; every text in it is escaped. */
+/** Writes a letter out as plain text and as HTML, where every text is escaped. */
 export function writeLetter({ subject, paragraphs, action, afterwards = [] }: Letter): WrittenLetter {
-  const before = paragraphs.map(withoutBreaks);
-  const after = [...afterwards, signature].map(withoutBreaks);
-  const text = [...before, ...(action ? [`${action.label}:\n${action.url}`] : []), ...after].join('\n\n');
+  const after = [...afterwards, signature];
+  const text = [...paragraphs, ...(action ? [`${action.label}:\n${action.url}`] : []), ...after].join('\n\n');
   const html = [
-    '<!doctype html><html lang="en"><head><meta charset="utf-8"><title>',
-    escapeHtml(oneLine(subject)),
-    '</title></head><body style="font-family:sans-serif;line-height:1.5;max-width:36em">',
-    ...before.map((line) => `<p>${escapeHtml(line)}</p>`),
+    '<!doctype html><html lang="en"><head><meta charset="utf-8"><title>Stepwell</title></head>',
+    '<body style="font-family:sans-serif;line-height:1.5;max-width:36em">',
+    ...paragraphs.map((line) => `<p>${escapeHtml(line)}</p>`),
     ...(action
       ? [`<p><a href="${escapeHtml(action.url)}">${escapeHtml(action.label)}</a></p>`, `<p>${escapeHtml(action.url)}</p>`]
       : []),
@@ -49,7 +47,3 @@ export function writeLetter({ subject, paragraphs, action, afterwards = [] }: Le
   ].join('');
   return { subject: oneLine(subject).slice(0, 200), text: `${text}\n`, html };
 }
-
-/** As `oneLine`, but for the joiner that `quoted` has put in. */
-const withoutBreaks = (text: string) => text.split('\u2060').map(oneLinePart).join('\u2060');
-const oneLinePart = (text: string) => text.replace(/[\p{C}\p{Zl}\p{Zp}\s]+/gu, ' ');

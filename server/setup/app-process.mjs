@@ -21,7 +21,9 @@ export function startApp(args, env) {
   const ready = new Promise((resolve, reject) => {
     child.once('message', ({ address }) => resolve(address));
     // The application has said on standard error why it did not start.
-    ended.then((status) => reject(Object.assign(new SetupFault('The application did not start.'), { status })));
+    ended.then((status) =>
+      reject(Object.assign(new SetupFault('The application did not start.'), { status })),
+    );
   });
   ready.catch(() => {});
 

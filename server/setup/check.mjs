@@ -29,12 +29,14 @@ await mainScript(async () => {
   const waiting = [...checks];
   let failed = 0;
   const lane = async () => {
-    for (let next; (next = waiting.shift()); ) {
+    for (let next; (next = waiting.shift());) {
       const [title, check] = next;
       const start = performance.now();
       const { status, text } = await check();
       if (status !== 0) failed++;
-      console.log(`${status === 0 ? 'ok    ' : 'FAILED'} ${title} (${((performance.now() - start) / 1000).toFixed(1)} s)`);
+      console.log(
+        `${status === 0 ? 'ok    ' : 'FAILED'} ${title} (${((performance.now() - start) / 1000).toFixed(1)} s)`,
+      );
       if (status !== 0) console.log(text.trimEnd());
     }
   };
@@ -53,5 +55,8 @@ async function wholeSchema() {
   const { status, text } = await node(bin.drizzle, args, collect);
   if (status !== 0) return { status, text };
   if (readdirSync(inRoot(copy)).length === before) return { status: 0, text: '' };
-  return { status: 1, text: `${text}\nThe schema has changed; run: npm run db:generate -- --name WHAT_CHANGED` };
+  return {
+    status: 1,
+    text: `${text}\nThe schema has changed; run: npm run db:generate -- --name WHAT_CHANGED`,
+  };
 }

@@ -19,7 +19,9 @@ const parse = (file) => {
 
 /** A run that fails without a failed test (no report, no test, an error outside of all tests) counts as one failure. */
 const complete = (counts, status) =>
-  counts.failed === 0 && (status !== 0 || counts.passed + counts.unrun === 0) ? { ...counts, failed: 1 } : counts;
+  counts.failed === 0 && (status !== 0 || counts.passed + counts.unrun === 0)
+    ? { ...counts, failed: 1 }
+    : counts;
 
 /** Counts of Vitest's JSON report. A file that could not be loaded is one failure. */
 export function vitestCounts(file, status) {
@@ -27,7 +29,8 @@ export function vitestCounts(file, status) {
   if (!report) return { ...nothing, failed: 1 };
   let counts = nothing;
   for (const { assertionResults, status: fileStatus } of report.testResults) {
-    if (assertionResults.length === 0 && fileStatus === 'failed') counts = add(counts, { ...nothing, failed: 1 });
+    if (assertionResults.length === 0 && fileStatus === 'failed')
+      counts = add(counts, { ...nothing, failed: 1 });
     for (const test of assertionResults) {
       const kind = test.status === 'passed' ? 'passed' : test.status === 'failed' ? 'failed' : 'unrun';
       counts = add(counts, { ...nothing, [kind]: 1 });

@@ -1,4 +1,12 @@
-import { chmodSync, lstatSync, mkdirSync, mkdtempSync, readFileSync, realpathSync, writeFileSync } from 'node:fs';
+import {
+  chmodSync,
+  lstatSync,
+  mkdirSync,
+  mkdtempSync,
+  readFileSync,
+  realpathSync,
+  writeFileSync,
+} from 'node:fs';
 import { tmpdir, userInfo } from 'node:os';
 import { join } from 'node:path';
 import { SetupFault } from './run.mjs';
@@ -46,7 +54,9 @@ function ownFolder(path) {
   if (!path) return undefined;
   try {
     const stat = lstatSync(path);
-    return stat.isDirectory() && stat.uid === process.getuid() && (stat.mode & 0o077) === 0 ? path : undefined;
+    return stat.isDirectory() && stat.uid === process.getuid() && (stat.mode & 0o077) === 0
+      ? path
+      : undefined;
   } catch {
     return undefined;
   }

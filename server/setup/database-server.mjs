@@ -92,7 +92,9 @@ async function launch(place) {
   server.unref();
   if (await comesUp(place, () => alive)) return;
   const tail = existsSync(place.log) ? readFileSync(place.log, 'utf8').split('\n').slice(-12).join('\n') : '';
-  throw new SetupFault(`${tail}\nMariaDB did not start; its last words stand above, all of them in ${place.log}.`);
+  throw new SetupFault(
+    `${tail}\nMariaDB did not start; its last words stand above, all of them in ${place.log}.`,
+  );
 }
 
 /** Waits until the server greets (true) or `lives` says that there is nothing to wait for (false). */
@@ -115,7 +117,9 @@ export async function stopServer(place) {
   const end = Date.now() + stopSeconds * 1000;
   while (isAlive(name)) {
     if (Date.now() > end) {
-      throw new SetupFault(`MariaDB (process ${pid}) has not ended within ${stopSeconds} s; see ${place.log}.`);
+      throw new SetupFault(
+        `MariaDB (process ${pid}) has not ended within ${stopSeconds} s; see ${place.log}.`,
+      );
     }
     await delay(20);
   }

@@ -38,5 +38,7 @@ function take(address) {
 
 const holderGone = (address) =>
   new Promise((resolve) => {
-    connect(address).on('error', () => {}).on('close', resolve);
+    connect(address)
+      .on('error', () => {})
+      .on('close', resolve);
   });

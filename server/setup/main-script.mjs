@@ -24,7 +24,11 @@ export async function mainScript(work, { signalStatus } = {}) {
     })());
 
   // A terminal signals the whole group at Ctrl-C; `kill` only this process: both come here.
-  for (const [signal, usual] of [['SIGINT', 130], ['SIGTERM', 143], ['SIGHUP', 129]]) {
+  for (const [signal, usual] of [
+    ['SIGINT', 130],
+    ['SIGTERM', 143],
+    ['SIGHUP', 129],
+  ]) {
     process.on(signal, () => void end(signalStatus?.() ?? usual));
   }
   try {

@@ -33,7 +33,9 @@ function holdsAll(lock) {
   const note = read(inRoot('node_modules', '.package-lock.json'));
   if (note === undefined) return false;
   const installed = JSON.parse(note).packages;
-  const locked = Object.fromEntries(Object.entries(JSON.parse(lock).packages).filter(([path]) => path !== ''));
+  const locked = Object.fromEntries(
+    Object.entries(JSON.parse(lock).packages).filter(([path]) => path !== ''),
+  );
   return (
     Object.entries(locked).every(([path, entry]) =>
       installed[path] ? installed[path].version === entry.version : entry.optional || entry.devOptional,

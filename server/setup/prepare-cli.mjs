@@ -9,7 +9,8 @@ export async function prepareCli() {
   try {
     await withLock(`set-up ${root}`, async () => {
       await ensureNodeModules();
-      await ensureBuilt('cli');
+      // A refusal is one line on standard error, also where it is the first thing a fresh clone is asked.
+      await ensureBuilt('cli', { quiet: true });
     });
   } catch (error) {
     console.error(error instanceof SetupFault ? error.message : error);

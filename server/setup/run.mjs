@@ -20,7 +20,8 @@ export function run(command, args, { output = 'inherit', env, cwd = root } = {})
   });
   running.add(child);
   let text = '';
-  for (const stream of [child.stdout, child.stderr]) stream?.setEncoding('utf8').on('data', (part) => (text += part));
+  for (const stream of [child.stdout, child.stderr])
+    stream?.setEncoding('utf8').on('data', (part) => (text += part));
   return new Promise((resolve, reject) => {
     child.once('error', (error) => {
       running.delete(child);
@@ -41,7 +42,8 @@ export async function mustRun(command, args, options) {
 }
 
 export const node = (script, args = [], options = {}) => run(process.execPath, [script, ...args], options);
-export const mustNode = (script, args = [], options = {}) => mustRun(process.execPath, [script, ...args], options);
+export const mustNode = (script, args = [], options = {}) =>
+  mustRun(process.execPath, [script, ...args], options);
 
 /** Ends what `run` has started and waits for it; for Ctrl-C in the middle of the set-up. */
 export async function stopRunning(signal = 'SIGTERM') {

@@ -22,7 +22,10 @@ async function start(onStop) {
     onWait: () => console.error('Another set-up is at work in this folder; waiting for it …'),
   });
   const environment = await surroundings(onStop);
-  const app = startApp(dev ? ['--import', 'tsx', inRoot('server/main.ts'), '--dev'] : [inRoot('dist/server/main.js')], environment);
+  const app = startApp(
+    dev ? ['--import', 'tsx', inRoot('server/main.ts'), '--dev'] : [inRoot('dist/server/main.js')],
+    environment,
+  );
   onStop(app.stop);
   const address = await app.ready;
   open = true;

@@ -12,7 +12,10 @@ export function readTemplates(): Readonly<Record<string, string>> {
       .flatMap(({ name: folder }) =>
         readdirSync(join(projectFolder, 'templates', folder))
           .filter((file) => file.endsWith('.liquid'))
-          .map((file) => [`${folder}/${file}`, readFileSync(join(projectFolder, 'templates', folder, file), 'utf8')]),
+          .map((file) => [
+            `${folder}/${file}`,
+            readFileSync(join(projectFolder, 'templates', folder, file), 'utf8'),
+          ]),
       ),
   );
   return templates;

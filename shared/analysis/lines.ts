@@ -6,53 +6,69 @@ export interface Lines {
   readonly im: Float64Array;
 }
 
-function emptyLines(size: number): Lines {
-  const count = Math.floor(size / 2) + 1;
-  return { re: new Float64Array(count), im: new Float64Array(count) };
-}
-
-/**
- * DFTs of two real signals of one length by a single complex transform: `x = a + i·b` gives
- * `A_k = (X_k + conj X_{N−k})/2` and `B_k = (X_k − conj X_{N−k})/2i`. The signals should be of like size, as
- * each carries the rounding noise of the other.
- */
-export function linesOfPair(a: Float64Array, b: Float64Array): { a: Lines; b: Lines } {
-  const size = a.length;
-  const data = new Float64Array(2 * size);
-  for (let n = 0; n < size; n += 1) {
-    data[2 * n] = a[n];
-    data[2 * n + 1] = b[n];
-  }
-  const out = new Float64Array(2 * size);
-  transformOf(size).forward(out, data);
-
-  const linesA = emptyLines(size);
-  const linesB = emptyLines(size);
-  for (let k = 0; k < linesA.re.length; k += 1) {
-    const mirror = k === 0 ? 0 : size - k;
-    const re = out[2 * k];
-    const im = out[2 * k + 1];
-    const mirrorRe = out[2 * mirror];
-    const mirrorIm = out[2 * mirror + 1];
-    linesA.re[k] = (re + mirrorRe) / 2;
-    linesA.im[k] = (im - mirrorIm) / 2;
-    linesB.re[k] = (im + mirrorIm) / 2;
-    linesB.im[k] = (mirrorRe - re) / 2;
-  }
-  return { a: linesA, b: linesB };
-}
-
 /** DFT of one real signal of any length. */
 export function linesOf(signal: Float64Array): Lines {
   const size = signal.length;
-  const data = new Float64Array(2 * size);
-  for (let n = 0; n < size; n += 1) data[2 * n] = signal[n];
-  const out = new Float64Array(2 * size);
-  transformOf(size).forward(out, data);
-  const lines = emptyLines(size);
-  for (let k = 0; k < lines.re.length; k += 1) {
-    lines.re[k] = out[2 * k];
-    lines.im[k] = out[2 * k + 1];
+  const { data, out, forward } = transformOf(size);
+  for (let n = 0; n < size; n += 1) {
+    data[2 * n] = signal[n];
+    data[2 * n + 1] = 0;
+  }
+  forward(out, data);
+  const bins = Math.floor(size / 2) + 1;
+  const re = new Float64Array(bins);
+  const im = new Float64Array(bins);
+  for (let k = 0; k < bins; k += 1) {
+    re[k] = out[2 * k];
+    im[k] = out[2 * k + 1];
+  }
+  return { re, im };
+}
+
+/**
+ * Lines k = 0…⌊N/2⌋ of a real signal of `parts·N` entries, without a transform of that length: with `Y_j` the
+ * transform of entries j, j+parts, j+2·parts, …, `X_k = Σ_j e^(−2πi·jk/(parts·N))·Y_{j,k}` (decimation in time).
+ * Two `Y_j` come from each complex transform of N.
+ *
+ * @param parts an even number
+ */
+export function lowLinesOf(signal: Float64Array, parts: number): Lines {
+  const size = signal.length / parts;
+  const { data, out, forward } = transformOf(size);
+  const bins = Math.floor(size / 2) + 1;
+  const lines = { re: new Float64Array(bins), im: new Float64Array(bins) };
+  for (let j = 0; j < parts; j += 2) {
+    for (let n = 0; n < size; n += 1) {
+      data[2 * n] = signal[j + n * parts];
+      data[2 * n + 1] = signal[j + 1 + n * parts];
+    }
+    forward(out, data);
+    for (let k = 0; k < bins; k += 1) {
+      const mirror = k === 0 ? 0 : size - k;
+      const sumRe = (out[2 * k] + out[2 * mirror]) / 2;
+      const sumIm = (out[2 * k + 1] - out[2 * mirror + 1]) / 2;
+      addTurned(lines, k, sumRe, sumIm, (j * k) / signal.length);
+      const differenceRe = (out[2 * k + 1] + out[2 * mirror + 1]) / 2;
+      const differenceIm = (out[2 * mirror] - out[2 * k]) / 2;
+      addTurned(lines, k, differenceRe, differenceIm, ((j + 1) * k) / signal.length);
+    }
   }
   return lines;
+}
+
+/** Adds `(re + i·im)·e^(−2πi·turns)` to line k. */
+function addTurned(lines: Lines, k: number, re: number, im: number, turns: number): void {
+  const c = Math.cos(2 * Math.PI * turns);
+  const s = Math.sin(2 * Math.PI * turns);
+  lines.re[k] += re * c + im * s;
+  lines.im[k] += im * c - re * s;
+}
+
+/** Phase of each line in degrees of a sine, −180 ≤ φ ≤ 180. */
+export function phasesDegOf({ re, im }: Lines): Float64Array {
+  const phases = new Float64Array(re.length);
+  const degrees = 180 / Math.PI;
+  // a·sin(θ+φ) has the line (a/2)·e^(i(φ−90°)): its cosine part is a·sin φ, its sine part a·cos φ.
+  for (let k = 0; k < re.length; k += 1) phases[k] = Math.atan2(re[k], -im[k]) * degrees;
+  return phases;
 }

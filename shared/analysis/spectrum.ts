@@ -1,11 +1,9 @@
-import { linesOfPair, type Lines } from './lines.ts';
+import { transformOf } from './transform.ts';
 
 /** One-sided spectra of a table of N entries, bins 0…⌊N/2⌋ (engine specification §4). */
 export interface Spectrum {
   /** `A_k` of what the codes stand for; an amplitude-1 sine is 1. */
   readonly amplitudes: Float64Array;
-  /** Phase of bin k in degrees of a sine, −180 < φ ≤ 180. */
-  readonly phasesDeg: Float64Array;
   /** `A_k` of the levelled cycle: what was intended. */
   readonly intended: Float64Array;
   /** `A_k` of the error: what quantising added. */
@@ -16,50 +14,49 @@ export interface Spectrum {
 export const floorDbfs = -200;
 
 /**
- * Spectra of a cycle, of its error, and of their sum, which is what the codes stand for.
+ * Spectra of a cycle r, of its error e, and of their sum, which is what the codes stand for: `A_0 = |X_0|/N`,
+ * `A_k = 2|X_k|/N`, `A_{N/2} = |X_{N/2}|/N`.
  *
- * @param lsb size of one LSB: the error is brought to the size of the signal before the shared transform.
+ * One complex transform gives both: of `x = r + i·e/lsb` the lines are `R_k = (X_k + conj X_{N−k})/2` and
+ * `E_k/lsb = (X_k − conj X_{N−k})/2i`. Each carries the rounding noise of the other, so the error is brought to
+ * the size of the signal first.
+ *
+ * @param lsb size of one LSB, in the units of the cycle
  */
 export function spectrumOf(cycle: Float64Array, error: Float64Array, lsb: number): Spectrum {
   const size = cycle.length;
-  const { a: wanted, b: errors } = linesOfPair(
-    cycle,
-    error.map((e) => e / lsb),
-  );
-  const bins = wanted.re.length;
-  const sum: Lines = { re: new Float64Array(bins), im: new Float64Array(bins) };
-  for (let k = 0; k < bins; k += 1) {
-    errors.re[k] *= lsb;
-    errors.im[k] *= lsb;
-    sum.re[k] = wanted.re[k] + errors.re[k];
-    sum.im[k] = wanted.im[k] + errors.im[k];
+  const { data, out, forward } = transformOf(size);
+  const perLsb = 1 / lsb;
+  for (let n = 0; n < size; n += 1) {
+    data[2 * n] = cycle[n];
+    data[2 * n + 1] = error[n] * perLsb;
   }
-  return {
-    amplitudes: amplitudesOf(sum, size),
-    phasesDeg: phasesDegOf(sum),
-    intended: amplitudesOf(wanted, size),
-    added: amplitudesOf(errors, size),
-  };
+  forward(out, data);
+
+  const bins = Math.floor(size / 2) + 1;
+  const amplitudes = new Float64Array(bins);
+  const intended = new Float64Array(bins);
+  const added = new Float64Array(bins);
+  const scale = 1 / size;
+  for (let k = 0; k < bins; k += 1) {
+    const mirror = k === 0 ? 0 : size - k;
+    const re = (out[2 * k] + out[2 * mirror]) * scale;
+    const im = (out[2 * k + 1] - out[2 * mirror + 1]) * scale;
+    const errorRe = (out[2 * k + 1] + out[2 * mirror + 1]) * scale * lsb;
+    const errorIm = (out[2 * mirror] - out[2 * k]) * scale * lsb;
+    intended[k] = Math.sqrt(re * re + im * im);
+    added[k] = Math.sqrt(errorRe * errorRe + errorIm * errorIm);
+    amplitudes[k] = Math.sqrt((re + errorRe) * (re + errorRe) + (im + errorIm) * (im + errorIm));
+  }
+  // DC and N/2 have no line on the other side to share with.
+  for (const list of [amplitudes, intended, added]) {
+    list[0] /= 2;
+    if (size % 2 === 0) list[size / 2] /= 2;
+  }
+  return { amplitudes, intended, added };
 }
 
-/** `A_0 = |X_0|/N`, `A_k = 2|X_k|/N`, `A_{N/2} = |X_{N/2}|/N`. */
-function amplitudesOf({ re, im }: Lines, size: number): Float64Array {
-  const amplitudes = new Float64Array(re.length);
-  for (let k = 0; k < re.length; k += 1) amplitudes[k] = (2 * Math.sqrt(re[k] * re[k] + im[k] * im[k])) / size;
-  amplitudes[0] /= 2;
-  if (size % 2 === 0) amplitudes[size / 2] /= 2;
-  return amplitudes;
-}
-
-function phasesDegOf({ re, im }: Lines): Float64Array {
-  const phases = new Float64Array(re.length);
-  const degrees = 180 / Math.PI;
-  // a·sin(θ+φ) has the line (a/2)·e^(i(φ−90°)): its cosine part is a·sin φ, its sine part a·cos φ.
-  for (let k = 0; k < re.length; k += 1) phases[k] = Math.atan2(re[k], -im[k]) * degrees;
-  return phases;
-}
-
-/** `20·log10 A`, not below −200 dB. An amplitude-1 sine is 0 dBFS. */
+/** 20·log10 of an amplitude, not below −200 dB. An amplitude-1 sine is 0 dBFS. */
 export function dbfsOf(amplitude: number): number {
   return amplitude <= 1e-10 ? floorDbfs : 20 * Math.log10(amplitude);
 }

@@ -1,12 +1,9 @@
-import { z } from 'zod';
+import type { z } from 'zod';
 import { definitionSchema, type Definition } from './definition.ts';
 import { limits } from './limits.ts';
 import { Refusal, showPath, showValue, type Problem } from './refusal.ts';
 import { problemsOfRawSource } from './raw-source.ts';
 import { brokenRules } from './rules.ts';
-
-// Zod tries `new Function` once to see whether it may; a page's security policy would report that.
-z.config({ jitless: true });
 
 /**
  * Parses anything into a definition with its defaults filled in.

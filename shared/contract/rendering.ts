@@ -9,6 +9,20 @@ export const generatedFileSchema = z.strictObject({
   text: z.string(),
 });
 
+/** Put before array names that are made from definitions' names; empty, or a C identifier's beginning. */
+export const arrayPrefixField = z
+  .string({ error: 'text' })
+  .max(32, { error: 'at most 32 characters' })
+  .regex(/^([A-Za-z](_?[A-Za-z0-9])*_?)?$/, {
+    error: 'ASCII letters, digits and single underscores, a letter first; or nothing',
+  });
+
+/** A comment line at the top of each exported file, such as an SPDX identifier; empty for none. */
+export const licenceLineField = z
+  .string({ error: 'text' })
+  .max(200, { error: 'at most 200 characters' })
+  .regex(/^[^\p{Cc}\p{Surrogate}\u2028\u2029]*$/u, { error: 'one line of text' });
+
 /** SHA-256 over the RFC 8785 canonical JSON of `{ definition, engineVersion, codes }`, in lower-case hexadecimal. */
 export const digestSchema = z.string().regex(/^[0-9a-f]{64}$/);
 

@@ -1,5 +1,6 @@
 import { z } from 'zod';
 import { limits } from './limits.ts';
+import { arrayPrefixField, licenceLineField } from './rendering.ts';
 import { emailField, linkTokenField, momentField, pageOf, personNameField, slugField, teamNameField } from './fields.ts';
 
 /** Each role includes the ones before it. */
@@ -21,16 +22,8 @@ const wholeNumber = ({ min, max }: { readonly min: number; readonly max: number 
 };
 
 const defaultFields = {
-  /** Put before array names on export; empty, or a C identifier's beginning. */
-  arrayPrefix: z
-    .string({ error: 'text' })
-    .max(32, { error: 'at most 32 characters' })
-    .regex(/^([A-Za-z][A-Za-z0-9_]*)?$/, { error: 'letters, digits and underscores, a letter first; or nothing' }),
-  /** A comment line at the top of each exported file, such as an SPDX identifier. */
-  licenceLine: z
-    .string({ error: 'text' })
-    .max(200, { error: 'at most 200 characters' })
-    .regex(/^[^\p{Cc}\u2028\u2029]*$/u, { error: 'one line of text' }),
+  arrayPrefix: arrayPrefixField,
+  licenceLine: licenceLineField,
   bits: wholeNumber(limits.bits),
   length: wholeNumber(limits.tableLength),
   target: z.string({ error: 'the name of an export' }).regex(/^[a-z0-9-]{1,40}$/, { error: 'the name of an export' }),

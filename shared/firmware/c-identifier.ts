@@ -28,11 +28,17 @@ export function arrayNameFault(name: string): string | undefined {
  * An array's name made from a definition's: accents dropped, every run of other characters than ASCII letters and
  * digits one underscore, in lower case, cut to length; `table_` before a leading digit, `_table` behind a name that
  * is taken, `wave_table` where nothing is left.
+ *
+ * @param prefix put before all that as it is; see `arrayPrefixOption`
  */
-export function arrayNameFrom(name: string): string {
+export function arrayNameFrom(name: string, prefix = ''): string {
   const plain = name.normalize('NFKD').replace(/\p{M}+/gu, '');
-  const words = plain.replace(/[^A-Za-z0-9]+/g, '_').replace(/^_|_$/g, '').toLowerCase();
-  const led = /^\d/.test(words) ? `table_${words}` : words;
-  const cut = led.slice(0, arrayNameLength.max - '_table'.length).replace(/_$/, '') || 'wave_table';
+  const words = plain
+    .replace(/[^A-Za-z0-9]+/g, '_')
+    .replace(/^_|_$/g, '')
+    .toLowerCase();
+  const led = prefix === '' && /^\d/.test(words) ? `table_${words}` : words;
+  const whole = `${prefix}${led || 'wave_table'}`;
+  const cut = whole.slice(0, arrayNameLength.max - '_table'.length).replace(/_$/, '');
   return arrayNameFault(cut) === undefined ? cut : `${cut}_table`;
 }

@@ -61,7 +61,12 @@ const libraryNames = new Set(
 );
 
 /** Types and limits of <stdint.h>, those to come included (C17 §7.20, §7.31.10). */
-const stdintName = /^(?:u?int\w*_t|U?INT\w*_(?:MAX|MIN|C|WIDTH)|(?:PTRDIFF|SIG_ATOMIC|SIZE|WCHAR|WINT)_(?:MAX|MIN|WIDTH))$/;
+const stdintName =
+  /^(?:u?int\w*_t|U?INT\w*_(?:MAX|MIN|C|WIDTH)|(?:PTRDIFF|SIG_ATOMIC|SIZE|WCHAR|WINT)_(?:MAX|MIN|WIDTH))$/;
+
+/** Types, functions and macros of avr-libc's <avr/pgmspace.h> and <avr/sfr_defs.h>. */
+const avrLibcName =
+  /^(?:pgm_read_(?:byte|word|dword|float|ptr)(?:_near|_far)?|pgm_get_far_address|prog_(?:void|u?char|u?int\d+_t)|\w+_P|(?:loop_until_)?bit_is_(?:set|clear))$/;
 
 /** Reserved names of devices on Windows file systems: `aux.h` cannot be stored there. */
 const deviceName = /^(?:aux|con|nul|prn|com\d|lpt\d)$/i;
@@ -70,7 +75,8 @@ const deviceName = /^(?:aux|con|nul|prn|com\d|lpt\d)$/i;
 export function takenBy(name: string): string | undefined {
   if (keywords.has(name)) return 'a name that is no keyword of C or C++';
   if (stdintName.test(name)) return 'a name that <stdint.h> does not use';
-  if (libraryNames.has(name) || mathFunctions.has(name) || mathFunctions.has(name.replace(mathSuffix, ''))) {
+  const isMath = mathFunctions.has(name) || mathFunctions.has(name.replace(mathSuffix, ''));
+  if (libraryNames.has(name) || isMath || avrLibcName.test(name)) {
     return 'a name that the C library and compilers do not use';
   }
   if (deviceName.test(name)) return 'a name that every file system can store';

@@ -26,7 +26,9 @@ export function digestOf({ definition, engineVersion, codes }: DigestInput): str
       allowed: 'whole characters, no half of a surrogate pair',
     });
   }
-  return bytesToHex(sha256(utf8ToBytes(canonicalJson({ definition, engineVersion, codes: Array.from(codes) }))));
+  return bytesToHex(
+    sha256(utf8ToBytes(canonicalJson({ definition, engineVersion, codes: Array.from(codes) }))),
+  );
 }
 
 /** JSON as RFC 8785 writes it: keys sorted by UTF-16 code units, numbers as ECMAScript prints them, no spaces. */

@@ -37,36 +37,59 @@ function settingFigures({ definition: { level, table }, report, ...input }: Figu
       label: 'Signal',
       text: `${table.range}, level ${level.level} of full scale, normalised: ${level.normalise}`,
     },
-    { label: 'Scale', text: `${table.scale}, rounding ${table.rounding}${extras.map((extra) => `, ${extra}`).join('')}` },
-    { label: 'Coding', text: `${codingNames[table.coding]}${table.complement ? ', every code complemented' : ''}` },
+    {
+      label: 'Scale',
+      text: `${table.scale}, rounding ${table.rounding}${extras.map((extra) => `, ${extra}`).join('')}`,
+    },
+    {
+      label: 'Coding',
+      text: `${codingNames[table.coding]}${table.complement ? ', every code complemented' : ''}`,
+    },
     {
       label: 'Words',
       text: `${storedCount} of ${wordType.name}, ${minWord} to ${maxWord}, ${report.tableBytes} bytes`,
     },
   ];
   if (table.fold === 'quarter') {
-    figures.push({ label: 'Fold', text: `first quarter of ${table.length} entries; a reader mirrors the rest` });
+    figures.push({
+      label: 'Fold',
+      text: `first quarter of ${table.length} entries; a reader mirrors the rest`,
+    });
   }
   return figures;
 }
 
-export const codingNames = { 'offset-binary': 'offset binary', 'twos-complement': "two's complement" } as const;
+export const codingNames = {
+  'offset-binary': 'offset binary',
+  'twos-complement': "two's complement",
+} as const;
 
 const sampling = ({ sampleAt, startPhaseDeg }: Definition['table']) =>
   `taken at the ${sampleAt} of each from ${startPhaseDeg} degrees`;
 
 function qualityFigures({ definition: { table }, report }: FiguresInput): KeyFigure[] {
-  const snr = report.exact ? exactness(report) : inDecibels(report.snrDb, 'not defined for a constant signal');
+  const snr = report.exact
+    ? exactness(report)
+    : inDecibels(report.snrDb, 'not defined for a constant signal');
   return [
-    { label: 'SNR', text: `${snr} (full-scale sine of ${count(table.bits, 'bit')}: ${decimal(report.idealSnrDb, 2)} dB)` },
+    {
+      label: 'SNR',
+      text: `${snr} (full-scale sine of ${count(table.bits, 'bit')}: ${decimal(report.idealSnrDb, 2)} dB)`,
+    },
     { label: 'SINAD', text: inDecibels(report.sinadDb, 'not defined: no carrier, or nothing beside it') },
     { label: 'ENOB', text: report.enobBits === null ? 'not defined' : `${decimal(report.enobBits, 2)} bits` },
     { label: 'THD', text: distortion(report) },
     { label: 'SFDR', text: inDecibels(report.sfdrDb, 'not defined: no carrier, or nothing beside it') },
-    { label: 'Unwanted', text: `${inDecibels(report.unwantedDb, 'none')}, strongest line added to strongest intended` },
+    {
+      label: 'Unwanted',
+      text: `${inDecibels(report.unwantedDb, 'none')}, strongest line added to strongest intended`,
+    },
     { label: 'Peak error', text: `${decimal(report.peakErrorLsb, 4)} LSB` },
     { label: 'Mean', text: `${decimal(report.mean, 6)} of full scale` },
-    { label: 'Clipped', text: `${count(report.clippedSamples, 'sample')}, ${count(report.clippedCodes, 'code')}` },
+    {
+      label: 'Clipped',
+      text: `${count(report.clippedSamples, 'sample')}, ${count(report.clippedCodes, 'code')}`,
+    },
   ];
 }
 
@@ -84,7 +107,8 @@ const originFigures = ({ engineVersion, digest }: FiguresInput): KeyFigure[] => 
   { label: 'Digest', text: `sha256 ${digest}` },
 ];
 
-const inDecibels = (value: number | null, absent: string) => (value === null ? absent : `${decimal(value, 2)} dB`);
+const inDecibels = (value: number | null, absent: string) =>
+  value === null ? absent : `${decimal(value, 2)} dB`;
 
 const count = (number: number, noun: string) => `${number} ${noun}${number === 1 ? '' : 's'}`;
 

@@ -34,7 +34,10 @@ export function renderFiles(
   templates: TemplateTexts,
 ): GeneratedFile[] {
   const target = targetOf(targetId);
-  const arrayName = target.parseOptions(options).arrayName ?? arrayNameFrom(table.definition.name);
+  const { licenceLine, arrayPrefix, ...given } = target.parseOptions(options);
+  const arrayName = given.arrayName ?? arrayNameFrom(table.definition.name, arrayPrefix);
+  const licence = inertText(licenceLine);
+  const top = licence === '' ? '' : `${target.lineComment} ${licence}\n`;
   const facts = { ...sharedFacts(table, arrayName), ...target.factsOf(table, options) };
   const liquid = new Liquid({
     templates: templates as Record<string, string>,
@@ -45,7 +48,7 @@ export function renderFiles(
   });
   return target.files.map(({ template, ending }) => ({
     name: `${arrayName}${ending}`,
-    text: String(liquid.renderFileSync(template, facts)),
+    text: top + String(liquid.renderFileSync(template, facts)),
   }));
 }
 

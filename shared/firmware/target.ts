@@ -1,4 +1,4 @@
-import { z } from 'zod';
+import type { z } from 'zod';
 import { problemsIn, Refusal, type Definition, type Report } from '../contract/index.ts';
 
 /** A table as it is exported: freshly built, or a saved revision with the figures and engine version stored then. */
@@ -23,6 +23,16 @@ export interface TargetFile {
 /** Facts a template can print. Texts are inert already; numbers print as they are. */
 export type Facts = Readonly<Record<string, unknown>>;
 
+/** What every target can be told. */
+export interface SharedOptions {
+  /** Made from the definition's name where left out. */
+  readonly arrayName?: string;
+  /** Put before a name that is made. */
+  readonly arrayPrefix: string;
+  /** Stands as a comment at the top of each file; empty for none. */
+  readonly licenceLine: string;
+}
+
 export interface Target {
   readonly id: string;
   /** What the export is, in a few words, for lists. */
@@ -30,13 +40,13 @@ export interface Target {
   /** What begins a comment that ends with its line, in the files' language. */
   readonly lineComment: string;
   readonly files: readonly TargetFile[];
-  readonly options: z.ZodObject<{ arrayName: z.ZodType<string | undefined> } & z.ZodRawShape>;
+  readonly options: z.ZodObject & z.ZodType<SharedOptions>;
   /**
    * Parses options by the target's schema.
    *
    * @throws {Refusal} naming the option at fault as `options.NAME`, its value and what is allowed.
    */
-  readonly parseOptions: (input: unknown) => { readonly arrayName?: string };
+  readonly parseOptions: (input: unknown) => SharedOptions;
   /**
    * What the target's own templates need beyond the facts that all share.
    *
@@ -45,8 +55,10 @@ export interface Target {
   readonly factsOf: (table: ExportableTable, input: unknown) => Facts;
 }
 
-interface TargetDescriptor<Options extends Target['options']>
-  extends Omit<Target, 'options' | 'parseOptions' | 'factsOf'> {
+interface TargetDescriptor<Options extends Target['options']> extends Omit<
+  Target,
+  'options' | 'parseOptions' | 'factsOf'
+> {
   readonly options: Options;
   readonly factsOf: (table: ExportableTable, options: z.output<Options>) => Facts;
 }

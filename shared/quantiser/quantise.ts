@@ -45,9 +45,11 @@ function roundEach(
   const codes = new Uint16Array(positions.length);
   let clippedCodes = 0;
   for (let k = 0; k < positions.length; k += 1) {
-    const rounded = round(dither === null ? positions[k] : positions[k] + dither[k]);
-    const code = Math.min(Math.max(rounded, 0), topCode);
-    if (code !== rounded) clippedCodes += 1;
+    let code = round(dither === null ? positions[k] : positions[k] + dither[k]);
+    if (code < 0 || code > topCode) {
+      clippedCodes += 1;
+      code = code < 0 ? 0 : topCode;
+    }
     codes[k] = code;
   }
   return { codes, clippedCodes };

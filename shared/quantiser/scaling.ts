@@ -23,9 +23,9 @@ export function lsbOf(scaling: Scaling): number {
 /** Code positions are rounded to this share of an LSB, so that a tie is a tie on every machine. */
 export const snapSteps = 2 ** 24;
 
-/** Rounds to the nearest 2⁻²⁴. */
+/** Rounds to the nearest 2⁻²⁴, a tie upwards. Below 2²⁸ the half is added without an error. */
 export function snap(position: number): number {
-  return Math.round(position * snapSteps) / snapSteps;
+  return Math.floor(position * snapSteps + 0.5) / snapSteps;
 }
 
 /**
@@ -34,13 +34,14 @@ export function snap(position: number): number {
  */
 export function positionsOf(cycle: Float64Array, { bits, range, scale }: Scaling): Float64Array {
   const levels = levelsOf(bits);
+  const top = levels - 1;
   const positions = new Float64Array(cycle.length);
   if (range === 'unipolar') {
-    for (let k = 0; k < cycle.length; k += 1) positions[k] = snap(cycle[k] * (levels - 1));
+    for (let k = 0; k < cycle.length; k += 1) positions[k] = snap(cycle[k] * top);
   } else if (scale === 'mid-tread') {
     for (let k = 0; k < cycle.length; k += 1) positions[k] = snap((cycle[k] * levels) / 2 + levels / 2);
   } else {
-    for (let k = 0; k < cycle.length; k += 1) positions[k] = snap(((cycle[k] + 1) / 2) * (levels - 1));
+    for (let k = 0; k < cycle.length; k += 1) positions[k] = snap(((cycle[k] + 1) / 2) * top);
   }
   return positions;
 }

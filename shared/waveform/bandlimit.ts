@@ -1,25 +1,22 @@
-import { linesOf } from '../analysis/index.ts';
+import type { Lines } from '../analysis/index.ts';
 import type { TableSettings } from '../contract/index.ts';
-import { addSines, type Sine } from './harmonic-sum.ts';
+import { addHarmonics, type HarmonicLine } from './harmonic-sum.ts';
 
 /**
  * The trigonometric polynomial through one cycle of evenly spaced values, harmonics below `limit` kept,
  * evaluated at the table's phases. Value j stands at phase j/M.
  *
+ * @param lines unscaled lines of the values, at least those below the limit
+ * @param count how many values there are, M
  * @param limit harmonics `1 ≤ m < limit` stay; it is at most M/2.
  */
-export function bandlimitedCycle(values: Float64Array, limit: number, table: TableSettings): Float64Array {
-  const lines = linesOf(values);
-  const count = values.length;
+export function bandlimitedCycle(lines: Lines, count: number, limit: number, table: TableSettings): Float64Array {
   const cycle = new Float64Array(table.length).fill(lines.re[0] / count);
-  const sines: Sine[] = [];
+  const harmonics: HarmonicLine[] = [];
   for (let m = 1; m < limit; m += 1) {
-    const re = (2 * lines.re[m]) / count;
-    const im = (2 * lines.im[m]) / count;
-    // re·cos(a) − im·sin(a) as one sine.
-    sines.push({ harmonic: m, amplitude: Math.hypot(re, im), phaseRad: Math.atan2(re, -im) });
+    harmonics.push({ harmonic: m, sine: (-2 * lines.im[m]) / count, cosine: (2 * lines.re[m]) / count });
   }
-  addSines(cycle, sines, table);
+  addHarmonics(cycle, harmonics, table);
   return cycle;
 }
 

@@ -1,5 +1,5 @@
 import type { HarmonicsSource, TableSettings, Warning } from '../contract/index.ts';
-import { addSines, type Sine } from './harmonic-sum.ts';
+import { addHarmonics, type HarmonicLine } from './harmonic-sum.ts';
 
 const warningsSpelledOut = 8;
 
@@ -16,14 +16,18 @@ export function harmonicsCycle(
   warnings: Warning[],
 ): Float64Array {
   const cycle = new Float64Array(table.length).fill(source.offset);
-  const sines: Sine[] = [];
+  const lines: HarmonicLine[] = [];
   const leftOut: { harmonic: number; index: number }[] = [];
   source.partials.forEach(({ harmonic, amplitude, phaseDeg }, index) => {
-    if (fitsTable(harmonic, table)) sines.push({ harmonic, amplitude, phaseRad: ((phaseDeg % 360) * Math.PI) / 180 });
-    else leftOut.push({ harmonic, index });
+    if (!fitsTable(harmonic, table)) {
+      leftOut.push({ harmonic, index });
+      return;
+    }
+    const phase = ((phaseDeg % 360) * Math.PI) / 180;
+    lines.push({ harmonic, sine: amplitude * Math.cos(phase), cosine: amplitude * Math.sin(phase) });
   });
   if (leftOut.length > 0) warnings.push(...warningsOf(leftOut, table, path));
-  addSines(cycle, sines, table);
+  addHarmonics(cycle, lines, table);
   return cycle;
 }
 

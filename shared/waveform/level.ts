@@ -20,13 +20,13 @@ const clipTolerance = 1e-12;
  */
 export function levelCycle(synthesis: Synthesis, { level, table }: Definition): LevelledCycle {
   const isBipolar = table.range === 'bipolar';
-  const cycle = Float64Array.from(synthesis.cycle);
+  const cycle = synthesis.cycle.slice();
   if (level.removeMean) subtractMean(cycle);
   // A sum beyond a double, that of the mean too, shows as an entry that is not finite.
-  if (!cycle.every(Number.isFinite)) refuseSignal('a signal beyond the range of a double', 'smaller amplitudes');
+  if (!isAllFinite(cycle)) refuseSignal('a signal beyond the range of a double', 'smaller amplitudes');
   if (level.normalise === 'peak') scaleToPeak(cycle, synthesis.largestInput);
   if (level.normalise === 'span') scaleToSpan(cycle, synthesis.largestInput, isBipolar);
-  applyLevel(cycle, level, isBipolar);
+  if (level.level !== 1) applyLevel(cycle, level, isBipolar);
   applyTransfer(cycle, level.transfer);
 
   const clippedSamples = clip(cycle, isBipolar ? -1 : 0);
@@ -44,6 +44,13 @@ export function levelCycle(synthesis: Synthesis, { level, table }: Definition): 
 
 function refuseSignal(value: string, allowed: string): never {
   throw new Refusal({ path: 'source', value, allowed });
+}
+
+/** Whether all entries are: x − x is NaN for an entry that is not finite, and then so is the sum. */
+function isAllFinite(cycle: Float64Array): boolean {
+  let sum = 0;
+  for (let k = 0; k < cycle.length; k += 1) sum += cycle[k] - cycle[k];
+  return sum === 0;
 }
 
 function subtractMean(cycle: Float64Array): void {
@@ -110,9 +117,13 @@ function clip(cycle: Float64Array, lowest: number): number {
   let clipped = 0;
   for (let k = 0; k < cycle.length; k += 1) {
     const sample = cycle[k];
-    if (sample > 1 + clipTolerance || sample < lowest - clipTolerance) clipped += 1;
-    if (sample > 1) cycle[k] = 1;
-    else if (sample < lowest) cycle[k] = lowest;
+    if (sample > 1) {
+      if (sample > 1 + clipTolerance) clipped += 1;
+      cycle[k] = 1;
+    } else if (sample < lowest) {
+      if (sample < lowest - clipTolerance) clipped += 1;
+      cycle[k] = lowest;
+    }
   }
   return clipped;
 }

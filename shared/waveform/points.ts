@@ -1,3 +1,4 @@
+import { lowLinesOf } from '../analysis/index.ts';
 import type { PointsSource, TableSettings } from '../contract/index.ts';
 import { bandlimitedCycle, nyquistHarmonic } from './bandlimit.ts';
 import { closedCurve } from './interpolate.ts';
@@ -14,5 +15,5 @@ export function pointsCycle(source: PointsSource, table: TableSettings): Float64
   const count = oversampling * table.length;
   const dense = new Float64Array(count);
   for (let j = 0; j < count; j += 1) dense[j] = curve(j / count);
-  return bandlimitedCycle(dense, nyquistHarmonic(table), table);
+  return bandlimitedCycle(lowLinesOf(dense, oversampling), count, nyquistHarmonic(table), table);
 }

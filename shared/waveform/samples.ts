@@ -1,3 +1,4 @@
+import { linesOf } from '../analysis/index.ts';
 import type { SamplesSource, TableSettings } from '../contract/index.ts';
 import { bandlimitedCycle, nyquistHarmonic } from './bandlimit.ts';
 import { phasesOf, stepFraction } from './phases.ts';
@@ -7,7 +8,12 @@ export function samplesCycle(source: SamplesSource, table: TableSettings): Float
   const values = Float64Array.from(source.values);
   switch (source.resampling) {
     case 'bandlimited':
-      return bandlimitedCycle(values, Math.min(values.length / 2, nyquistHarmonic(table)), table);
+      return bandlimitedCycle(
+        linesOf(values),
+        values.length,
+        Math.min(values.length / 2, nyquistHarmonic(table)),
+        table,
+      );
     case 'linear':
       return linearCycle(values, table);
     case 'hold':

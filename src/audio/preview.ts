@@ -17,11 +17,12 @@ const patienceMs = 2_000;
 /** Between two changes of a sounding wave: longer than a crossfade, so that never more than two pairs sound. */
 const changeEveryMs = 80;
 /** From a request to its sound; enough for the audio thread to see what was scheduled. */
-const leadSeconds = 0.02;
+const leadSeconds = 0.03;
 /** Before one pass: the output is open again by then, even when a sound was just fading out. */
 const passLeadSeconds = 0.08;
 
-const noDevice = 'The browser finds no output device: it plays, but nothing can be heard. Connect one, then press play again.';
+const noDevice =
+  'The browser finds no output device: it plays, but nothing can be heard. Connect one, then press play again.';
 const notStarted =
   'The browser has not started its audio: this page may not be allowed to make sound, or no output device answers. Check both, then press play again.';
 const hasStopped = 'The browser has stopped its audio: the output device may have gone. Press play to go on.';
@@ -39,6 +40,8 @@ export class AudioPreview {
   readonly #listeners = new Set<() => void>();
   #state: PreviewState = silent;
   #voices: Voices | null = null;
+  /** What fades out with the output, or has ended so. */
+  #ending: Voices | null = null;
   #sound: Sound | null = null;
   #hearing: Hearing = 'table';
   #changeTimer: ReturnType<typeof setTimeout> | undefined;
@@ -69,9 +72,9 @@ export class AudioPreview {
 
   /** Starts a sound from silence, quietly; a sound that plays already makes way for it. */
   async play(sound: Sound, hearing: Hearing): Promise<void> {
+    const request = (this.#request += 1);
     const trouble = whyUnplayable(sound, this.#context.sampleRate);
     if (trouble !== null) return this.#fallSilent(trouble);
-    const request = (this.#request += 1);
     this.#sound = sound;
     this.#hearing = hearing;
     clearTimeout(this.#sleepTimer);
@@ -79,12 +82,7 @@ export class AudioPreview {
     const isAwake = await this.#wake();
     if (request !== this.#request) return;
     if (!isAwake) return this.#fallSilent(notStarted);
-    const now = this.#context.currentTime;
-    // One pass carries its own fades, fitted to its length; a loop comes up with the output.
-    const isPass = sound.mode === 'once';
-    glideFromSilence(this.#graph.fade.gain, now, isPass ? glideSeconds.crossfade : glideSeconds.fadeIn);
-    this.#voices?.giveWay(now);
-    this.#startVoices(this.#frameAt(now + (isPass ? passLeadSeconds : leadSeconds)));
+    this.#begin(this.#sound);
     this.#become({ status: 'playing', trouble: null });
     const isUnheard = await lacksOutputDevice(this.#context);
     if (isUnheard && request === this.#request && this.#state.status === 'playing') {
@@ -156,21 +154,24 @@ export class AudioPreview {
     return false;
   }
 
-  #startVoices(startFrame: number, from?: Voices): void {
-    const sound = this.#sound;
-    if (sound === null) return;
+  /** Renders first and then looks at the clock, so that the start lies ahead however long the rendering took. */
+  #begin(sound: Sound): void {
     const rendered = renderSound(sound, this.#context.sampleRate);
-    const voices = new Voices(this.#context, this.#graph.input, rendered, this.#hearing, {
-      startFrame,
-      offsetFrames: from === undefined || rendered.plan === undefined ? 0 : from.continuedIn(rendered.plan, startFrame),
-      isFadedIn: from !== undefined,
-    });
+    const now = this.#context.currentTime;
+    this.#voices?.giveWay(now);
+    this.#ending?.giveWay(now);
+    // One pass carries its own fades, fitted to its length; a loop comes up with the output.
+    const isPass = sound.mode === 'once';
+    const startFrame = this.#frameAt(now + (isPass ? passLeadSeconds : leadSeconds));
+    const { gain } = this.#graph.fade;
+    if (isPass) glideFromSilence(gain, now, glideSeconds.crossfade);
+    else glideFromSilence(gain, startFrame / this.#context.sampleRate, glideSeconds.fadeIn);
+    const voices = new Voices(this.#context, this.#graph.input, rendered, this.#hearing, { startFrame });
     this.#voices = voices;
-    if (sound.mode === 'once') {
-      voices.onEnded(() => {
-        if (this.#voices === voices) this.#fallSilent(null);
-      });
-    }
+    if (!isPass) return;
+    voices.onEnded(() => {
+      if (this.#voices === voices) this.#fallSilent(null);
+    });
   }
 
   #goOver(): void {
@@ -179,8 +180,14 @@ export class AudioPreview {
     if (before === null || sound === null || this.#state.status !== 'playing') return;
     const trouble = whyUnplayable(sound, this.#context.sampleRate);
     if (trouble !== null) return this.#fallSilent(trouble);
+    const rendered = renderSound(sound, this.#context.sampleRate);
+    if (rendered.plan === undefined) return;
     const startFrame = this.#frameAt(this.#context.currentTime + leadSeconds);
-    this.#startVoices(startFrame, before);
+    this.#voices = new Voices(this.#context, this.#graph.input, rendered, this.#hearing, {
+      startFrame,
+      offsetFrames: before.continuedIn(rendered.plan, startFrame),
+      isFadedIn: true,
+    });
     before.giveWay(startFrame / this.#context.sampleRate);
   }
 
@@ -188,6 +195,7 @@ export class AudioPreview {
     const now = this.#context.currentTime;
     const silentAt = glideToSilence(this.#graph.fade.gain, now, glideSeconds.fadeOut);
     this.#voices?.stop(silentAt);
+    this.#ending = this.#voices ?? this.#ending;
     this.#voices = null;
     clearTimeout(this.#changeTimer);
     this.#changeTimer = undefined;

@@ -25,7 +25,11 @@ export class Voices {
     output: AudioNode,
     rendered: RenderedSound,
     hearing: Hearing,
-    { startFrame, offsetFrames = 0, isFadedIn = false }: { startFrame: number; offsetFrames?: number; isFadedIn?: boolean },
+    {
+      startFrame,
+      offsetFrames = 0,
+      isFadedIn = false,
+    }: { startFrame: number; offsetFrames?: number; isFadedIn?: boolean },
   ) {
     this.#context = context;
     this.#rendered = rendered;
@@ -54,7 +58,10 @@ export class Voices {
       sampleRate: this.#context.sampleRate,
     });
     buffer.copyToChannel(frames, 0);
-    const source = new AudioBufferSourceNode(this.#context, { buffer, loop: this.#rendered.plan !== undefined });
+    const source = new AudioBufferSourceNode(this.#context, {
+      buffer,
+      loop: this.#rendered.plan !== undefined,
+    });
     source.connect(gain).connect(this.#together);
     return source;
   }

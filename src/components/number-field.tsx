@@ -56,6 +56,8 @@ export function NumberField({
   const [draft, setDraft] = useState<Draft | null>(null);
   // A value from elsewhere (undo, a preset) shows as itself; a text still on its way, or refused by the owner, stays.
   const isCurrent = draft !== null && (Object.is(value, draft.meant) || Object.is(value, draft.writtenOver));
+  // A text that has been left behind must not come back with its old value, by undo for instance.
+  if (draft !== null && !isCurrent) setDraft(null);
   if (draft !== null && Object.is(value, draft.meant) && !Object.is(draft.writtenOver, value)) {
     setDraft({ ...draft, writtenOver: value });
   }

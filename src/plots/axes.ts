@@ -4,13 +4,13 @@ import type { PlotTheme } from './plot-theme.ts';
 import type { AxisSpec } from './scene.ts';
 
 /** Room for each side's ticks and titles, in CSS pixels; the same for every plot, so that stacked plots line up. */
-export const gutters = { left: 46, right: 46, top: 24, bottom: 26 };
+export const gutters = { left: 46, right: 52, top: 24, bottom: 26 };
 export const tickGap = 6;
 /** More room at the top where ticks stand there too. */
 export const topTicks = 18;
 
 /** Titles keep the distance from the frame that its heading keeps. */
-const inset = 12;
+export const titleInset = 12;
 
 /** Titles of the axes, set level at their ends so that nobody has to turn the head. */
 export function drawAxisTitles(pen: Pen, area: PlotArea, axes: readonly AxisSpec[], theme: PlotTheme): void {
@@ -21,22 +21,22 @@ export function drawAxisTitles(pen: Pen, area: PlotArea, axes: readonly AxisSpec
     const style = { color: theme.inkSoft } as const;
     switch (axis.side) {
       case 'left':
-        pen.text(axis.title, area.left - (gutters.left - inset) * unit, titleY, style);
+        pen.text(axis.title, area.left - (gutters.left - titleInset) * unit, titleY, style);
         break;
       case 'right':
-        pen.text(axis.title, area.right + (gutters.right - inset) * unit, titleY, {
+        pen.text(axis.title, area.right + (gutters.right - titleInset) * unit, titleY, {
           ...style,
           align: 'right',
         });
         break;
       case 'top':
-        pen.text(axis.title, area.right + (gutters.right - inset) * unit, titleY, {
+        pen.text(axis.title, area.right + (gutters.right - titleInset) * unit, titleY, {
           ...style,
           align: 'right',
         });
         break;
       case 'bottom':
-        pen.text(axis.title, area.right + (gutters.right - inset) * unit, area.bottom + 15 * unit, {
+        pen.text(axis.title, area.right + (gutters.right - titleInset) * unit, area.bottom + 15 * unit, {
           ...style,
           align: 'right',
           halo: theme.paper,

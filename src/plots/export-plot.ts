@@ -1,6 +1,4 @@
-import type { RefObject } from 'react';
-import type { MenuItem } from '../components/index.ts';
-import { drawAxes, drawAxisTitles, gutters, topTicks } from './axes.ts';
+import { drawAxes, drawAxisTitles, gutters, titleInset, topTicks } from './axes.ts';
 import { CanvasPen } from './canvas-pen.ts';
 import type { Pen } from './pen.ts';
 import { PlotArea } from './plot-area.ts';
@@ -43,7 +41,7 @@ function drawSheet(
   );
   area.scale(from, to, ...scene.yRange(from, to));
   pen.rect(0, 0, width * unit, height * unit, theme.paper);
-  pen.text(title, (margin + 4) * unit, (margin + 8) * unit, { color: theme.ink, weight: 700 });
+  pen.text(title, (margin + titleInset) * unit, (margin + 8) * unit, { color: theme.ink, weight: 700 });
   drawAxes(pen, area, scene.axes, theme);
   pen.clip(area.left, area.top, area.width, area.height + unit);
   scene.draw(pen, area, theme);
@@ -52,7 +50,7 @@ function drawSheet(
 }
 
 /** The plot as a file of its own, with the size it has on the screen. */
-export function plotSvg(sheet: Sheet, title: string, scene: Scene, link: PlotLink): string {
+function plotSvg(sheet: Sheet, title: string, scene: Scene, link: PlotLink): string {
   const pen = new SvgPen(plotTheme());
   drawSheet(pen, sheet, title, scene, link, 1);
   return pen.document(sheet.width, sheet.height, title, scene.summary());
@@ -84,42 +82,20 @@ function save(blob: Blob, name: string) {
   }, 1000);
 }
 
-/** What the plot's export menu offers. */
-export function exportItems(
+export type ExportFormat = 'svg' | 'png' | 'csv';
+
+/** Writes a plot to a file of the given kind and hands it to the browser to save. The drawing has the size of `surface`. */
+export async function exportPlot(
+  format: ExportFormat,
   kind: string,
   title: string,
   scene: Scene,
   link: PlotLink,
-  surface: RefObject<HTMLElement | null>,
-): MenuItem[] {
-  const sheet = () => ({
-    width: surface.current?.clientWidth ?? 800,
-    height: (surface.current?.clientHeight ?? 300) + titleHeight + margin,
-  });
-  const name = `stepwell-${kind}`;
-  return [
-    {
-      id: 'svg',
-      label: 'Drawing as SVG',
-      onSelect: () => {
-        save(new Blob([plotSvg(sheet(), title, scene, link)], { type: 'image/svg+xml' }), `${name}.svg`);
-      },
-    },
-    {
-      id: 'png',
-      label: 'Drawing as PNG',
-      onSelect: () => {
-        void plotPng(sheet(), title, scene, link).then((blob) => {
-          save(blob, `${name}.png`);
-        });
-      },
-    },
-    {
-      id: 'csv',
-      label: 'All data as CSV',
-      onSelect: () => {
-        save(new Blob([scene.csv()], { type: 'text/csv' }), `${name}.csv`);
-      },
-    },
-  ];
+  surface: { clientWidth: number; clientHeight: number },
+): Promise<void> {
+  const sheet = { width: surface.clientWidth, height: surface.clientHeight + titleHeight + margin };
+  const name = `stepwell-${kind}.${format}`;
+  if (format === 'csv') save(new Blob([scene.csv()], { type: 'text/csv' }), name);
+  else if (format === 'png') save(await plotPng(sheet, title, scene, link), name);
+  else save(new Blob([plotSvg(sheet, title, scene, link)], { type: 'image/svg+xml' }), name);
 }

@@ -81,7 +81,7 @@ export class LabelRoom {
     }
     if (best < 0) return null;
     const kept = this.last.get(name);
-    if (kept !== undefined && kept + span < buckets && costOf(kept) < bestCost + 3 * height) best = kept;
+    if (kept !== undefined && kept + span < buckets && costOf(kept) < bestCost + height) best = kept;
     this.last.set(name, best);
 
     const middle = best + Math.floor(span / 2);

@@ -105,6 +105,13 @@ export class PlotCursor {
     });
   };
 
+  destroy(): void {
+    this.band.remove();
+    this.marks.forEach((mark) => {
+      mark.remove();
+    });
+  }
+
   private newMark(index: number): HTMLElement {
     const mark = document.createElement('div');
     mark.className = `plot-mark plot-mark-${index}`;

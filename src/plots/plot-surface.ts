@@ -115,6 +115,7 @@ export class PlotSurface {
     });
     forgetFrame(this.draw);
     forgetFrame(this.cursor.place);
+    this.cursor.destroy();
     this.plot.destroy();
   }
 

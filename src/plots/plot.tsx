@@ -1,6 +1,6 @@
 import { useEffect, useId, useLayoutEffect, useRef, useState, type ReactNode } from 'react';
-import { IconButton, Menu, icons } from '../components/index.ts';
-import { exportItems } from './export-plot.ts';
+import { IconButton, Menu, icons, useToast } from '../components/index.ts';
+import type { ExportFormat } from './export-plot.ts';
 import type { PlotArea } from './plot-area.ts';
 import type { PlotLink } from './plot-link.ts';
 import { PlotSurface } from './plot-surface.ts';
@@ -27,6 +27,7 @@ export interface PlotProps {
 
 /** The summary is for reading, not for listening to while something is dragged. */
 const summaryDelayMs = 400;
+const zoomStep = 1.5;
 
 /** The frame of every plot: title, read-out, drawing, tools, and its key facts in words. */
 export function Plot({
@@ -41,6 +42,7 @@ export function Plot({
   ...events
 }: PlotProps) {
   const titleId = useId();
+  const toast = useToast();
   const figure = useRef<HTMLElement>(null);
   const surface = useRef<HTMLDivElement>(null);
   const overlay = useRef<HTMLDivElement>(null);
@@ -82,18 +84,31 @@ export function Plot({
     };
   }, [scene, version]);
 
-  const zoomBy = (factor: number) => () => drawing.current?.zoom(factor);
+  const zoomIn = () => drawing.current?.zoom(1 / zoomStep);
+  const zoomOut = () => drawing.current?.zoom(zoomStep);
+  const save = async (format: ExportFormat) => {
+    if (!surface.current) return;
+    try {
+      const { exportPlot } = await import('./export-plot.ts');
+      await exportPlot(format, kind, title, scene, link, surface.current);
+    } catch (fault) {
+      toast({
+        message: `The file could not be made: ${fault instanceof Error ? fault.message : String(fault)}`,
+        tone: 'fault',
+      });
+    }
+  };
 
   return (
     <figure ref={figure} className={`plot plot-${kind}`} aria-labelledby={titleId}>
       <div className="plot-head">
-        <h3 id={titleId}>{title}</h3>
+        <h2 id={titleId}>{title}</h2>
         {controls && <div className="plot-controls">{controls}</div>}
         <div className="plot-tools">
           {hasZoom && (
             <>
-              <IconButton size="small" label="Zoom in" icon={icons.zoomIn} onPress={zoomBy(1 / 1.5)} />
-              <IconButton size="small" label="Zoom out" icon={icons.zoomOut} onPress={zoomBy(1.5)} />
+              <IconButton size="small" label="Zoom in" icon={icons.zoomIn} onPress={zoomIn} />
+              <IconButton size="small" label="Zoom out" icon={icons.zoomOut} onPress={zoomOut} />
               <IconButton
                 size="small"
                 label="Show all"
@@ -107,18 +122,20 @@ export function Plot({
           <Menu
             label={`Export ${title.toLowerCase()}`}
             icon={icons.download}
-            items={exportItems(kind, title, scene, link, surface)}
+            items={[
+              { id: 'svg', label: 'Drawing as SVG', onSelect: () => void save('svg') },
+              { id: 'png', label: 'Drawing as PNG', onSelect: () => void save('png') },
+              { id: 'csv', label: 'All data as CSV', onSelect: () => void save('csv') },
+            ]}
           />
         </div>
       </div>
       <div className="plot-field">
         <div className="plot-readout">
-          {kind === 'cycle' && (
-            <span className="plot-hint">
-              <span className="for-mouse">Point at the drawing, or press ← → on it, to read an entry.</span>
-              <span className="for-touch">Touch the drawing to read an entry.</span>
-            </span>
-          )}
+          <span className={`plot-hint plot-hint-${kind}`}>
+            <span className="for-mouse">Point at the drawing, or press ← → on it, to read a value.</span>
+            <span className="for-touch">Touch the drawing to read a value.</span>
+          </span>
           <span ref={readOut} className="plot-cells" />
         </div>
         <div className="plot-canvas">

@@ -3,7 +3,7 @@ import type { Pen } from './pen.ts';
 import type { PlotArea } from './plot-area.ts';
 import type { PlotTheme } from './plot-theme.ts';
 import type { AxisSpec, ReadOut, Scene } from './scene.ts';
-import { drawColumns, drawStems, type StemStyle } from './stems.ts';
+import { drawColumns, drawHeads, drawStems, type StemStyle } from './stems.ts';
 import { decimalTicks, logTicks, tickText, wholeTicks } from './ticks.ts';
 
 export interface SpectrumData {
@@ -20,13 +20,13 @@ export interface SpectrumScale {
   frequency: 'linear' | 'log';
 }
 
-/** Lowest level shown, and the room above full scale, in dBFS. */
-const floorDb = -120;
+/** Lowest level shown; the lower one where all that quantising added would lie under the first. In dBFS. */
+const usualFloorDb = -120;
+const deepFloorDb = -160;
+/** Room above full scale. */
 const topDb = 8;
 /** CSS pixels that the title of the harmonics needs before the end of its axis. */
 const titleRoom = 28;
-/** Amplitude under the lowest level; spares logarithms. */
-const leastLine = 1e-6;
 /** Lowest level written down, where a line has no amplitude at all (engine specification §4). */
 const leastDb = -200;
 
@@ -43,6 +43,7 @@ export class SpectrumScene implements Scene {
   private strongestAdded = 1;
   private strongestIntended = 1;
   private top = 1;
+  private floorDb = usualFloorDb;
 
   constructor(data: SpectrumData, shown: SpectrumScale) {
     this.data = data;
@@ -60,6 +61,8 @@ export class SpectrumScene implements Scene {
     this.shown = shown;
     this.strongestAdded = strongest(data.added);
     this.strongestIntended = strongest(data.intended);
+    const addedDb = levelDb(data.added[this.strongestAdded]);
+    this.floorDb = addedDb < usualFloorDb + 10 && addedDb > deepFloorDb ? deepFloorDb : usualFloorDb;
     this.top = Math.max(
       0.01,
       data.amplitudes[0],
@@ -75,7 +78,7 @@ export class SpectrumScene implements Scene {
   }
 
   yRange(): readonly [number, number] {
-    return this.shown.level === 'db' ? [floorDb, topDb] : [0, this.top * 1.14];
+    return this.shown.level === 'db' ? [this.floorDb, topDb] : [0, this.top * 1.14];
   }
 
   draw(pen: Pen, area: PlotArea, theme: PlotTheme): void {
@@ -86,11 +89,10 @@ export class SpectrumScene implements Scene {
       width: unit,
       head: 'diamond',
       radius: 3.4 * unit,
-      standing: intended,
     };
     const intendedStyle: StemStyle = {
       color: theme.water,
-      width: 2.4 * unit,
+      width: this.stemWidth(area),
       head: 'disc',
       radius: 4 * unit,
     };
@@ -98,9 +100,11 @@ export class SpectrumScene implements Scene {
     const first = this.firstShown(area);
     drawColumns(pen, area, this, added, firstDense, addedStyle);
     drawColumns(pen, area, this, intended, firstDense, intendedStyle);
-    drawStems(pen, area, this, intended, first, firstDense, intendedStyle);
-    // Later, so that a diamond shows on the stem of an intended line.
+    // The wide stem covers the thin one that shares its place; heads lie over all stems, diamonds over discs.
     drawStems(pen, area, this, added, first, firstDense, addedStyle);
+    drawStems(pen, area, this, intended, first, firstDense, intendedStyle);
+    drawHeads(pen, area, this, intended, first, firstDense, intendedStyle);
+    drawHeads(pen, area, this, added, first, firstDense, addedStyle);
     this.labels(pen, area, theme);
   }
 
@@ -161,7 +165,7 @@ export class SpectrumScene implements Scene {
     const { intended, added, tableLength } = this.data;
     const strong = [...intended.keys()]
       .slice(1)
-      .filter((bin) => levelDb(intended[bin]) > floorDb)
+      .filter((bin) => levelDb(intended[bin]) > this.floorDb)
       .sort((a, b) => intended[b] - intended[a]);
     const said = (bin: number, amplitude: number) =>
       `harmonic ${bin} at ${formatQuantity(levelDb(amplitude), 'dBFS', { decimals: 1 })}`;
@@ -169,7 +173,7 @@ export class SpectrumScene implements Scene {
     const worst = this.strongestAdded;
     return (
       `Spectrum of the table's loop, harmonics 0 to ${Math.floor(tableLength / 2)}. ` +
-      `${strong.length} intended ${strong.length === 1 ? 'line' : 'lines'} above ${floorDb} dBFS` +
+      `${strong.length} intended ${strong.length === 1 ? 'line' : 'lines'} above ${this.floorDb} dBFS` +
       `${lines.length > 0 ? `, the strongest: ${lines.join(', ')}` : ''}. ` +
       `The strongest line that quantising added: ${said(worst, added[worst])}.`
     );
@@ -184,6 +188,13 @@ export class SpectrumScene implements Scene {
       rows.push(`${bin}${at},${amplitudes[bin]},${levelDb(amplitudes[bin])},${intended[bin]},${added[bin]}`);
     }
     return `${rows.join('\n')}\n`;
+  }
+
+  /** Wide, but never so wide that stems side by side run together. */
+  private stemWidth(area: PlotArea): number {
+    const wide = 2.4 * area.unit;
+    if (this.shown.frequency === 'log') return wide;
+    return Math.min(wide, Math.max(area.unit, (0.5 * area.width) / (area.to - area.from)));
   }
 
   private firstShown(area: PlotArea): number {
@@ -232,13 +243,14 @@ export class SpectrumScene implements Scene {
   /** The strongest intended line with room for a label before the next one; the strongest of all where none has. */
   private lineWithRoom(area: PlotArea, width: number): number {
     const { intended } = this.data;
-    const [low] = this.yRange();
+    // What can be seen: over the floor of levels, or a hundredth of the scale of amplitudes.
+    const least = this.shown.level === 'db' ? 10 ** (this.floorDb / 20) : this.top / 100;
     let best = this.strongestIntended;
     let bestAmplitude = 0;
     let before = -1;
     const last = Math.min(intended.length - 1, Math.floor(this.binAt(area.to)));
     for (let bin = this.firstShown(area); bin <= last + 1; bin += 1) {
-      const isLine = bin > last || (intended[bin] > leastLine && this.heightOf(intended[bin]) > low);
+      const isLine = bin > last || intended[bin] > least;
       if (!isLine) continue;
       const hasRoom = before >= 0 && area.x(this.placeOf(bin)) - area.x(this.placeOf(before)) > width;
       if (hasRoom && intended[before] > bestAmplitude) {

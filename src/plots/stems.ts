@@ -6,8 +6,6 @@ export interface StemStyle {
   width: number;
   head: 'disc' | 'diamond';
   radius: number;
-  /** Lines drawn at the same places: where one is stronger its stem stands already, and only the head is laid on it. */
-  standing?: Float64Array;
 }
 
 /** The scales stems stand on. */
@@ -21,7 +19,7 @@ export interface StemScale {
 const headShare = 0.44;
 const leastRadius = 2.2;
 
-/** Lines that have room: a stem each, and a head where it touches no other. */
+/** Stems of the lines that have room, bins first ≤ bin < end. */
 export function drawStems(
   pen: Pen,
   area: PlotArea,
@@ -32,19 +30,27 @@ export function drawStems(
   style: StemStyle,
 ): void {
   pen.begin();
-  let count = 0;
   for (let bin = first; bin < end; bin += 1) {
     const y = area.y(scale.heightOf(amplitudes[bin]));
     if (y >= area.bottom) continue;
     const x = area.x(scale.placeOf(bin));
-    if (x > area.right + style.radius) break;
-    count += 1;
-    if (style.standing !== undefined && style.standing[bin] >= amplitudes[bin]) continue;
+    if (x > area.right) break;
     pen.move(x, area.bottom);
     pen.line(x, y);
   }
-  if (count === 0) return;
   pen.stroke(style.color, style.width);
+}
+
+/** Heads of the same lines, smaller where they would touch. */
+export function drawHeads(
+  pen: Pen,
+  area: PlotArea,
+  scale: StemScale,
+  amplitudes: Float64Array,
+  first: number,
+  end: number,
+  style: StemStyle,
+): void {
   pen.begin();
   for (let bin = first; bin < end; bin += 1) {
     const y = area.y(scale.heightOf(amplitudes[bin]));
@@ -88,7 +94,7 @@ export function drawColumns(
 
   pen.begin();
   for (bin = first; bin < amplitudes.length; bin += 1) {
-    if (amplitudes[bin] <= leastHead || !standsOut(amplitudes, bin)) continue;
+    if (amplitudes[bin] <= leastHead || !standsOut(amplitudes, bin, crowdIsolation)) continue;
     const y = area.y(scale.heightOf(amplitudes[bin]));
     if (y < area.bottom && style.head === 'disc')
       layHead(pen, style, area.x(scale.placeOf(bin)), y, style.radius);
@@ -97,13 +103,14 @@ export function drawColumns(
 }
 
 /** Amplitudes below this are never shown; spares their logarithm. */
-const leastHead = 1e-6;
-/** A line at least twice both its neighbours keeps its head in a crowd. */
+const leastHead = 1e-8;
+/** How many times both its neighbours a line must be to keep its head among others; more in a crowd, which is noisy. */
 const isolation = 2;
+const crowdIsolation = 20;
 
-function standsOut(amplitudes: Float64Array, bin: number): boolean {
+function standsOut(amplitudes: Float64Array, bin: number, times = isolation): boolean {
   const here = amplitudes[bin];
-  return here > isolation * (amplitudes[bin - 1] ?? 0) && here > isolation * (amplitudes[bin + 1] ?? 0);
+  return here > times * (amplitudes[bin - 1] ?? 0) && here > times * (amplitudes[bin + 1] ?? 0);
 }
 
 function layHead(pen: Pen, style: StemStyle, x: number, y: number, radius: number) {

@@ -28,8 +28,8 @@ function arraysOf({
   errorLsb,
   spectrum,
 }: Omit<TableAnswer, 'definition'>): Transferable[] {
-  const { amplitudes, phasesDeg, intended, added } = spectrum;
-  return [cycle, values, codes, stored, errorLsb, amplitudes, phasesDeg, intended, added].map(
+  const { amplitudes, intended, added } = spectrum;
+  return [cycle, values, codes, stored, errorLsb, amplitudes, intended, added].map(
     ({ buffer }) => buffer,
   );
 }

@@ -54,25 +54,6 @@ describe('signing in', () => {
     expect(unknown.cookie).toBeUndefined();
   });
 
-  it('takes as long for an unknown address as for a wrong password', async () => {
-    const person = await makePersonWithPassword(test);
-    const timeOf = async (email: string) => {
-      const start = performance.now();
-      await signIn(test, email, 'not the password');
-      return performance.now() - start;
-    };
-    const times = { known: [] as number[], unknown: [] as number[] };
-    // In turn, so that whatever else the machine does falls on both; more tries than one account may have need more.
-    for (let round = 0; round < 15; round++) {
-      times.known.push(await timeOf(person.email));
-      times.unknown.push(await timeOf(freshAddress()));
-    }
-    const median = (list: number[]) => list.sort((a, b) => a - b)[list.length >> 1];
-    // A hash takes 30 ms: without it the unknown address would be answered in a third of the time.
-    expect(median(times.unknown) / median(times.known)).toBeGreaterThan(0.7);
-    expect(median(times.unknown) / median(times.known)).toBeLessThan(1.4);
-  });
-
   it('tells of an unverified address only after the right password', async () => {
     const email = freshAddress();
     await asPerson(test).post('/account/sign-up', { name: 'Ines Marlow', email, password });
@@ -88,7 +69,7 @@ describe('signing in', () => {
     ['no fields', {}],
     ['lists', { email: ['a@b.example'], password: ['x'] }],
     ['objects', { email: { $ne: '' }, password: { $ne: '' } }],
-    ['a password of a megabyte', { email: 'a@b.example', password: 'x'.repeat(9_000) }],
+    ['a password of 9,000 letters', { email: 'a@b.example', password: 'x'.repeat(9_000) }],
   ])('refuses %s', async (_what, fields) => {
     const csrf = await request(test.app).get('/auth/csrf').set('Host', host);
     const response = await request(test.app)

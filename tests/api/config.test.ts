@@ -3,7 +3,10 @@ import { ConfigFaults, readConfig } from '../../server/config.ts';
 import { originsOf } from '../../server/listen.ts';
 
 const secret = 'a secret of more than thirty-two characters';
-const local = { PRIVATE_DATABASE_URL: 'mysql://me@localhost/stepwell?socketPath=%2Fs.sock', AUTH_SECRET: secret };
+const local = {
+  PRIVATE_DATABASE_URL: 'mysql://me@localhost/stepwell?socketPath=%2Fs.sock',
+  AUTH_SECRET: secret,
+};
 const abroad = {
   HOST: '0.0.0.0',
   APP_ORIGIN: 'https://tables.example',
@@ -24,7 +27,12 @@ const faultsOf = (env: Record<string, string>) => {
 
 describe('the environment', () => {
   it('needs nothing set by hand on this machine alone', () => {
-    expect(readConfig(local)).toMatchObject({ host: '127.0.0.1', port: 4173, portMayMove: true, local: true });
+    expect(readConfig(local)).toMatchObject({
+      host: '127.0.0.1',
+      port: 4173,
+      portMayMove: true,
+      local: true,
+    });
     expect(originsOf(readConfig(local), 4173)).toEqual(['http://127.0.0.1:4173', 'http://localhost:4173']);
   });
 
@@ -35,10 +43,13 @@ describe('the environment', () => {
     expect(originsOf(config, 80)).toEqual(['https://tables.example']);
   });
 
-  it.each(['0.0.0.0', '::', '192.168.1.5', 'tables.example'])('lists all that is missing off loopback (%s)', (HOST) => {
-    const faults = faultsOf({ ...local, HOST });
-    expect(faults.map((fault) => fault.split(':')[0])).toEqual(['APP_ORIGIN', 'SMTP_URL', 'DATABASE_URL']);
-  });
+  it.each(['0.0.0.0', '::', '192.168.1.5', 'tables.example'])(
+    'lists all that is missing off loopback (%s)',
+    (HOST) => {
+      const faults = faultsOf({ ...local, HOST });
+      expect(faults.map((fault) => fault.split(':')[0])).toEqual(['APP_ORIGIN', 'SMTP_URL', 'DATABASE_URL']);
+    },
+  );
 
   it('asks for everything where the database is somebody else’s, on loopback too', () => {
     const faults = faultsOf({ DATABASE_URL: abroad.DATABASE_URL });
@@ -68,7 +79,12 @@ describe('the environment', () => {
   });
 
   it('lists several faults at once and never shows a secret', () => {
-    const faults = faultsOf({ ...abroad, PORT: 'x', AUTH_SECRET: 'hush', DATABASE_URL: 'mysql//me:mustard@db' });
+    const faults = faultsOf({
+      ...abroad,
+      PORT: 'x',
+      AUTH_SECRET: 'hush',
+      DATABASE_URL: 'mysql//me:mustard@db',
+    });
     expect(faults).toHaveLength(3);
     expect(faults.join()).not.toMatch(/hush|mustard/);
   });

@@ -19,7 +19,10 @@ let test: TestApp;
 beforeAll(() => {
   folder = mkdtempSync(join(tmpdir(), 'stepwell-client-'));
   mkdirSync(join(folder, 'assets'));
-  writeFileSync(join(folder, 'index.html'), '<meta property="csp-nonce" nonce="__NONCE__"><style nonce="__NONCE__"></style>');
+  writeFileSync(
+    join(folder, 'index.html'),
+    '<meta property="csp-nonce" nonce="__NONCE__"><style nonce="__NONCE__"></style>',
+  );
   writeFileSync(join(folder, 'assets', 'main-abc123.js'), 'export {};');
   test = makeTestApp({ client: clientFiles(folder) });
 });
@@ -71,7 +74,14 @@ describe('requests that are refused before any feature sees them', () => {
   });
 
   it('404 below /api for an unknown address, whatever the method', async () => {
-    for (const path of ['/api', '/api/v1', '/api/v1/nothing', '/api/v2/health', '/api/v1/%zz', '/api/v1/health/x']) {
+    for (const path of [
+      '/api',
+      '/api/v1',
+      '/api/v1/nothing',
+      '/api/v2/health',
+      '/api/v1/%zz',
+      '/api/v1/health/x',
+    ]) {
       expectProblem(await get(path), 404, 'not-found');
     }
     expectProblem(await post('/api/v1/nothing').send({}), 404, 'not-found');
@@ -83,10 +93,13 @@ describe('requests that are refused before any feature sees them', () => {
     expect(response.headers.allow).toBe('GET, HEAD');
   });
 
-  it.each(['{"a":', '{"a":1}x', 'nonsense', '"text"', '\u0000', '{"a":1e}', '[1,]'])('400 for the body %j', async (body) => {
-    const response = await post('/api/v1/health').set('Content-Type', 'application/json').send(body);
-    expectProblem(response, 400, 'malformed-request');
-  });
+  it.each(['{"a":', '{"a":1}x', 'nonsense', '"text"', '\u0000', '{"a":1e}', '[1,]'])(
+    '400 for the body %j',
+    async (body) => {
+      const response = await post('/api/v1/health').set('Content-Type', 'application/json').send(body);
+      expectProblem(response, 400, 'malformed-request');
+    },
+  );
 
   it('413 for a body over the limit, by its announced length and by what comes', async () => {
     const body = JSON.stringify('x'.repeat(10_000_000));
@@ -96,19 +109,25 @@ describe('requests that are refused before any feature sees them', () => {
     expect(await postInPieces(10_000_000)).toBe(413);
   });
 
-  it.each(['text/plain', 'application/x-www-form-urlencoded', 'multipart/form-data; boundary=x', 'application/xml'])(
-    '415 for %s',
-    async (type) => {
-      const response = await post('/api/v1/health').set('Content-Type', type).send('a=1');
-      expectProblem(response, 415, 'unsupported-media-type');
-      expect(response.body.detail).toContain('application/json');
-    },
-  );
+  it.each([
+    'text/plain',
+    'application/x-www-form-urlencoded',
+    'multipart/form-data; boundary=x',
+    'application/xml',
+  ])('415 for %s', async (type) => {
+    const response = await post('/api/v1/health').set('Content-Type', type).send('a=1');
+    expectProblem(response, 415, 'unsupported-media-type');
+    expect(response.body.detail).toContain('application/json');
+  });
 
   it('415 for a charset or an encoding that nobody can read', async () => {
-    const charset = post('/api/v1/health').set('Content-Type', 'application/json; charset=klingon').send('{}');
+    const charset = post('/api/v1/health')
+      .set('Content-Type', 'application/json; charset=klingon')
+      .send('{}');
     expectProblem(await charset, 415, 'unsupported-media-type');
-    const encoding = post('/api/v1/health').set('Content-Type', 'application/json').set('Content-Encoding', 'zip');
+    const encoding = post('/api/v1/health')
+      .set('Content-Type', 'application/json')
+      .set('Content-Encoding', 'zip');
     expectProblem(await encoding.send('{}'), 415, 'unsupported-media-type');
   });
 
@@ -127,7 +146,13 @@ async function postInPieces(bytes: number): Promise<number> {
   const { port } = server.address() as AddressInfo;
   const headers = { Host: host, Origin: origin, 'Content-Type': 'application/json' };
   const status = await new Promise<number>((resolve, reject) => {
-    const outgoing = httpRequest({ port, host: '127.0.0.1', path: '/api/v1/health', method: 'POST', headers });
+    const outgoing = httpRequest({
+      port,
+      host: '127.0.0.1',
+      path: '/api/v1/health',
+      method: 'POST',
+      headers,
+    });
     outgoing.on('response', (response) => {
       response.resume();
       resolve(response.statusCode ?? 0);

@@ -7,7 +7,8 @@ import type { testJobs } from '../support/test-jobs.ts';
 
 const entry = new URL('../support/jobs-worker.ts', import.meta.url);
 let pool: JobPool<typeof testJobs>;
-const open = (options: JobPoolOptions = {}) => (pool = createJobPool<typeof testJobs>({ entry, size: 1, ...options }));
+const open = (options: JobPoolOptions = {}) =>
+  (pool = createJobPool<typeof testJobs>({ entry, size: 1, ...options }));
 afterEach(() => pool.close());
 
 describe('the job pool', () => {
@@ -63,7 +64,9 @@ describe('the job pool', () => {
 
   it('rejects what is under way and what waits when it closes', async () => {
     open();
-    const outcomes = [pool.run('spin', null), pool.run('double', 1)].map((job) => job.catch((error: unknown) => String(error)));
+    const outcomes = [pool.run('spin', null), pool.run('double', 1)].map((job) =>
+      job.catch((error: unknown) => String(error)),
+    );
     await pool.close();
     for (const outcome of await Promise.all(outcomes)) expect(outcome).toContain('closed');
     await expect(pool.run('double', 1)).rejects.toThrow('closed');

@@ -3,7 +3,12 @@ import { afterAll, afterEach, beforeAll, beforeEach, describe, expect, it } from
 import { connectionOptions } from '../../server/db/client.ts';
 import { readJournal, type Migration } from '../../server/db/journal.ts';
 import { migrate, requireExactSchema } from '../../server/db/migrate.ts';
-import { holdTestServer, makeTestDatabase, type TestDatabase, type TestServer } from '../support/databases.ts';
+import {
+  holdTestServer,
+  makeTestDatabase,
+  type TestDatabase,
+  type TestServer,
+} from '../support/databases.ts';
 
 const journal = readJournal();
 
@@ -24,7 +29,12 @@ afterEach(async () => {
   await database.drop();
 });
 
-const migration = (tag: string, ...statements: string[]): Migration => ({ tag, when: 0, hash: tag.padEnd(64, '0'), statements });
+const migration = (tag: string, ...statements: string[]): Migration => ({
+  tag,
+  when: 0,
+  hash: tag.padEnd(64, '0'),
+  statements,
+});
 
 /** Every table, column, key and constraint, as the server itself would write them down. */
 async function describeTables(): Promise<string[]> {
@@ -33,7 +43,9 @@ async function describeTables(): Promise<string[]> {
   );
   const texts: string[] = [];
   for (const { name } of tables) {
-    const [[row]] = await connection.query<RowDataPacket[]>(`SHOW CREATE TABLE ${mysql.escapeId(String(name))}`);
+    const [[row]] = await connection.query<RowDataPacket[]>(
+      `SHOW CREATE TABLE ${mysql.escapeId(String(name))}`,
+    );
     texts.push(String(row['Create Table']));
   }
   return texts;
@@ -73,7 +85,9 @@ describe('migrate', () => {
   it('is taken up where it was cut off, at whichever statement that was', async () => {
     await migrate(database.url);
     const wanted = await describeTables();
-    const steps = journal.flatMap(({ tag, hash, statements }) => statements.map((statement, step) => ({ tag, hash, statement, step })));
+    const steps = journal.flatMap(({ tag, hash, statements }) =>
+      statements.map((statement, step) => ({ tag, hash, statement, step })),
+    );
     await connection.query('SET foreign_key_checks = 0');
     const [tables] = await connection.query<RowDataPacket[]>(
       'SELECT table_name AS name FROM information_schema.tables WHERE table_schema = DATABASE()',
@@ -83,10 +97,16 @@ describe('migrate', () => {
     // Each statement was made, and the process ended before it could note that.
     await migrate(database.url, []);
     for (const { tag, hash, statement, step } of steps) {
-      await connection.query('INSERT INTO schema_steps (migration, step, hash) VALUES (?, ?, ?)', [tag, step, hash]);
+      await connection.query('INSERT INTO schema_steps (migration, step, hash) VALUES (?, ?, ?)', [
+        tag,
+        step,
+        hash,
+      ]);
       await connection.query(statement);
       const sofar = journal.slice(0, journal.findIndex((entry) => entry.tag === tag) + 1);
-      const upToHere = sofar.map((entry) => (entry.tag === tag ? { ...entry, statements: entry.statements.slice(0, step + 1) } : entry));
+      const upToHere = sofar.map((entry) =>
+        entry.tag === tag ? { ...entry, statements: entry.statements.slice(0, step + 1) } : entry,
+      );
       await migrate(database.url, upToHere);
     }
     await requireExactSchema(database.url);
@@ -95,15 +115,22 @@ describe('migrate', () => {
 
   it('stops at a statement that fails and goes on from there when it is mended', async () => {
     const good = migration('one', 'CREATE TABLE a (x INT)');
-    await expect(migrate(database.url, [good, migration('two', 'CREATE TABLE b (x INT)', 'CREATE NONSENSE')])).rejects.toThrow(
-      /Migration two, statement 2/,
-    );
-    expect(await migrate(database.url, [good, migration('two', 'CREATE TABLE b (x INT)', 'CREATE TABLE c (x INT)')])).toEqual(['two']);
+    await expect(
+      migrate(database.url, [good, migration('two', 'CREATE TABLE b (x INT)', 'CREATE NONSENSE')]),
+    ).rejects.toThrow(/Migration two, statement 2/);
+    expect(
+      await migrate(database.url, [
+        good,
+        migration('two', 'CREATE TABLE b (x INT)', 'CREATE TABLE c (x INT)'),
+      ]),
+    ).toEqual(['two']);
   });
 
   it('does not take an error for done work unless the statement was under way before', async () => {
     await connection.query('CREATE TABLE a (x INT)');
-    await expect(migrate(database.url, [migration('one', 'CREATE TABLE a (y INT)')])).rejects.toThrow(/exists/);
+    await expect(migrate(database.url, [migration('one', 'CREATE TABLE a (y INT)')])).rejects.toThrow(
+      /exists/,
+    );
   });
 
   it('changes rows and notes it in one transaction', async () => {

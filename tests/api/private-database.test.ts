@@ -100,7 +100,9 @@ describe('the private database', () => {
       if (status === 200) return true;
       throw new Error(text);
     });
-    const [[row]] = (await db.execute(sql`SELECT COUNT(*) AS count FROM noted`)) as unknown as [[{ count: number }]];
+    const [[row]] = (await db.execute(sql`SELECT COUNT(*) AS count FROM noted`)) as unknown as [
+      [{ count: number }],
+    ];
     // One more may have been written whose answer was lost.
     expect([acknowledged, acknowledged + 1]).toContain(row.count);
     await test.close();

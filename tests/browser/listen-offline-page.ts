@@ -45,11 +45,18 @@ async function renderOffline(order: OfflineOrder): Promise<OfflineResult> {
   const block = Math.round(0.005 * contextRateHz);
   const envelope: number[] = [];
   for (let first = 0; first + block <= heard.length; first += block) {
-    envelope.push(heard.subarray(first, first + block).reduce((peak, value) => Math.max(peak, Math.abs(value)), 0));
+    envelope.push(
+      heard.subarray(first, first + block).reduce((peak, value) => Math.max(peak, Math.abs(value)), 0),
+    );
   }
   let largestStep = 0;
-  for (let i = 1; i < heard.length; i += 1) largestStep = Math.max(largestStep, Math.abs(heard[i] - heard[i - 1]));
-  return { envelope, largestStep, lines: linesWithin(heard.subarray(heard.length - contextRateHz), contextRateHz) };
+  for (let i = 1; i < heard.length; i += 1)
+    largestStep = Math.max(largestStep, Math.abs(heard[i] - heard[i - 1]));
+  return {
+    envelope,
+    largestStep,
+    lines: linesWithin(heard.subarray(heard.length - contextRateHz), contextRateHz),
+  };
 }
 
 /** One bin a hertz. A line's amplitude is read from its nearest bin: the window is flat within 0.83 dB, so tones are whole hertz. */

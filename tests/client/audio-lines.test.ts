@@ -20,11 +20,18 @@ function analyserLevels(tones: readonly Tone[]): Float32Array {
     const window = 0.42 - 0.5 * Math.cos(turn) + 0.08 * Math.cos(2 * turn);
     return (
       window *
-      tones.reduce((sum, { hz, amplitude, phase }) => sum + amplitude * Math.sin((2 * Math.PI * hz * i) / rateHz + phase), 0)
+      tones.reduce(
+        (sum, { hz, amplitude, phase }) =>
+          sum + amplitude * Math.sin((2 * Math.PI * hz * i) / rateHz + phase),
+        0,
+      )
     );
   });
   const { re, im } = linesOf(wave);
-  return Float32Array.from({ length: frames / 2 }, (_, k) => 20 * Math.log10(Math.hypot(re[k], im[k]) / frames));
+  return Float32Array.from(
+    { length: frames / 2 },
+    (_, k) => 20 * Math.log10(Math.hypot(re[k], im[k]) / frames),
+  );
 }
 
 describe('the strongest lines of what sounds', () => {

@@ -51,14 +51,18 @@ describe('tone and sample rate', () => {
 describe('plan of a loop', () => {
   test('the pitch is within 0.04 cent for every rate a browser plays at', () => {
     fc.assert(
-      fc.property(fc.double({ min: 1 / 60, max: 20_000, noNaN: true }), wholeContexts, (loopHz, contextRateHz) => {
-        const plan = planLoop(loopHz, contextRateHz);
-        expect(Math.abs(1200 * Math.log2(plan.loopHz / loopHz))).toBeLessThan(0.04);
-        expect(Number.isInteger(plan.frames) && Number.isInteger(plan.rounds)).toBe(true);
-        // Below half of the rate, in whole numbers; the next line is not.
-        expect(2 * plan.highestLine * plan.rounds).toBeLessThan(plan.frames);
-        expect(2 * (plan.highestLine + 1) * plan.rounds).toBeGreaterThanOrEqual(plan.frames);
-      }),
+      fc.property(
+        fc.double({ min: 1 / 60, max: 20_000, noNaN: true }),
+        wholeContexts,
+        (loopHz, contextRateHz) => {
+          const plan = planLoop(loopHz, contextRateHz);
+          expect(Math.abs(1200 * Math.log2(plan.loopHz / loopHz))).toBeLessThan(0.04);
+          expect(Number.isInteger(plan.frames) && Number.isInteger(plan.rounds)).toBe(true);
+          // Below half of the rate, in whole numbers; the next line is not.
+          expect(2 * plan.highestLine * plan.rounds).toBeLessThan(plan.frames);
+          expect(2 * (plan.highestLine + 1) * plan.rounds).toBeGreaterThanOrEqual(plan.frames);
+        },
+      ),
       { seed: 21, numRuns: 500 },
     );
   });
@@ -76,23 +80,29 @@ describe('rendering of a loop', () => {
     [256, 61.7, 44_100],
     [1_000, 1.37, 44_100],
     [2_048, 7.3, 96_000],
-  ])('%i entries, %f rounds a second at %i Hz: each frame is the sum of the table’s lines to 3·10⁻⁶', (length, loopHz, rate) => {
-    const table = roughTable(length, 7);
-    const lines = linesOf(table);
-    const plan = planLoop(loopHz, rate);
-    const loop = renderLoop(lines, length, plan);
-    let worst = 0;
-    for (let i = 0; i < plan.frames; i += 211) {
-      const phase = ((i * plan.rounds) % plan.frames) / plan.frames;
-      let sum = 0;
-      for (let m = 1; m <= Math.min(Math.floor(length / 2), plan.highestLine); m += 1) {
-        const weight = (2 * m === length ? 1 : 2) / length;
-        sum += weight * (lines.re[m] * Math.cos(2 * Math.PI * m * phase) - lines.im[m] * Math.sin(2 * Math.PI * m * phase));
+  ])(
+    '%i entries, %f rounds a second at %i Hz: each frame is the sum of the table’s lines to 3·10⁻⁶',
+    (length, loopHz, rate) => {
+      const table = roughTable(length, 7);
+      const lines = linesOf(table);
+      const plan = planLoop(loopHz, rate);
+      const loop = renderLoop(lines, length, plan);
+      let worst = 0;
+      for (let i = 0; i < plan.frames; i += 211) {
+        const phase = ((i * plan.rounds) % plan.frames) / plan.frames;
+        let sum = 0;
+        for (let m = 1; m <= Math.min(Math.floor(length / 2), plan.highestLine); m += 1) {
+          const weight = (2 * m === length ? 1 : 2) / length;
+          sum +=
+            weight *
+            (lines.re[m] * Math.cos(2 * Math.PI * m * phase) -
+              lines.im[m] * Math.sin(2 * Math.PI * m * phase));
+        }
+        worst = Math.max(worst, Math.abs(loop[i] - sum));
       }
-      worst = Math.max(worst, Math.abs(loop[i] - sum));
-    }
-    expect(worst).toBeLessThan(3e-6);
-  });
+      expect(worst).toBeLessThan(3e-6);
+    },
+  );
 
   test('a tone above half of the context’s rate is left out, the ones below keep their level', () => {
     // 16 entries at 4 kHz a round: lines at 4, 8, 12, 16, 20 kHz fit, 24 kHz and above do not.
@@ -130,7 +140,10 @@ describe('rendering of a loop', () => {
     const loop = renderLoop(linesOf(table), 256, plan);
     const mean = loop.reduce((sum, value) => sum + value, 0) / loop.length;
     expect(Math.abs(mean)).toBeLessThan(1e-6);
-    const largestStep = loop.reduce((step, value, i) => Math.max(step, Math.abs(value - loop[(i + 1) % loop.length])), 0);
+    const largestStep = loop.reduce(
+      (step, value, i) => Math.max(step, Math.abs(value - loop[(i + 1) % loop.length])),
+      0,
+    );
     expect(largestStep).toBeLessThan(0.3 * 2 * Math.PI * (311.13 / 44_100) * 1.001);
   });
 });

@@ -50,7 +50,9 @@ describe('one pass, converted to the context’s rate', () => {
   });
 
   test('a constant is silence, and the pass begins and ends in silence', () => {
-    expect(renderOnce(new Float64Array(100).fill(0.8), 8_000, 48_000).every((value) => Math.abs(value) < 1e-7)).toBe(true);
+    expect(
+      renderOnce(new Float64Array(100).fill(0.8), 8_000, 48_000).every((value) => Math.abs(value) < 1e-7),
+    ).toBe(true);
     const pass = renderOnce(sine(4_000, 0.05), 8_000, 48_000);
     for (const edge of [pass[0], pass[1], pass[pass.length - 1], pass[pass.length - 2]]) {
       expect(Math.abs(edge)).toBeLessThan(1e-3);

@@ -16,7 +16,11 @@ import {
   setBar,
 } from '../../src/features/bench/shape/bars.ts';
 
-const partial = (harmonic: number, amplitude: number, phaseDeg = 0): Partial => ({ harmonic, amplitude, phaseDeg });
+const partial = (harmonic: number, amplitude: number, phaseDeg = 0): Partial => ({
+  harmonic,
+  amplitude,
+  phaseDeg,
+});
 const wave = (...partials: Partial[]): HarmonicsSource => ({ kind: 'harmonics', offset: 0.1, partials });
 const heights = (source: HarmonicsSource) =>
   Object.fromEntries(source.partials.map(({ harmonic, amplitude }) => [harmonic, amplitude]));
@@ -34,19 +38,35 @@ const anyWave = fc
 
 describe('a stroke over the bars', () => {
   test('sets every bar on the way to the line between its ends, whichever way it goes', () => {
-    const drawn = drawBars(wave(partial(1, 1)), { harmonic: 2, amplitude: 0.8 }, { harmonic: 6, amplitude: 0 });
+    const drawn = drawBars(
+      wave(partial(1, 1)),
+      { harmonic: 2, amplitude: 0.8 },
+      { harmonic: 6, amplitude: 0 },
+    );
     expect(heights(drawn)).toEqual({ 1: 1, 2: 0.8, 3: 0.6, 4: 0.4, 5: 0.2 });
-    const back = drawBars(wave(partial(1, 1)), { harmonic: 6, amplitude: 0.5 }, { harmonic: 2, amplitude: -0.3 });
+    const back = drawBars(
+      wave(partial(1, 1)),
+      { harmonic: 6, amplitude: 0.5 },
+      { harmonic: 2, amplitude: -0.3 },
+    );
     expect(heights(back)).toEqual({ 1: 1, 2: -0.3, 3: -0.1, 4: 0.1, 5: 0.3, 6: 0.5 });
   });
 
   test('a bar drawn to 0 keeps its partial and its phase; one that had none gets none', () => {
-    const drawn = drawBars(wave(partial(1, 1), partial(3, 0.5, 90)), { harmonic: 2, amplitude: 0 }, { harmonic: 4, amplitude: 0 });
+    const drawn = drawBars(
+      wave(partial(1, 1), partial(3, 0.5, 90)),
+      { harmonic: 2, amplitude: 0 },
+      { harmonic: 4, amplitude: 0 },
+    );
     expect(drawn.partials).toEqual([partial(1, 1), partial(3, 0, 90)]);
   });
 
   test('a stroke on one bar ends at the pointer’s last height', () => {
-    expect(heights(drawBars(wave(partial(1, 1)), { harmonic: 1, amplitude: 0.2 }, { harmonic: 1, amplitude: 0.7 }))).toEqual({ 1: 0.7 });
+    expect(
+      heights(
+        drawBars(wave(partial(1, 1)), { harmonic: 1, amplitude: 0.2 }, { harmonic: 1, amplitude: 0.7 }),
+      ),
+    ).toEqual({ 1: 0.7 });
   });
 
   test('a stroke that changes nothing gives the same source back', () => {
@@ -64,10 +84,16 @@ describe('a stroke over the bars', () => {
         fc.integer({ min: -100, max: 100 }),
         (source, first, last, from, to) => {
           const before = putInOrder(source);
-          const drawn = drawBars(before, { harmonic: first, amplitude: from / 100 }, { harmonic: last, amplitude: to / 100 });
+          const drawn = drawBars(
+            before,
+            { harmonic: first, amplitude: from / 100 },
+            { harmonic: last, amplitude: to / 100 },
+          );
           expect(isInOrder(drawn.partials)).toBe(true);
-          const isUnder = (harmonic: number) => harmonic >= Math.min(first, last) && harmonic <= Math.max(first, last);
-          const apart = ({ partials }: HarmonicsSource) => partials.filter(({ harmonic }) => !isUnder(harmonic));
+          const isUnder = (harmonic: number) =>
+            harmonic >= Math.min(first, last) && harmonic <= Math.max(first, last);
+          const apart = ({ partials }: HarmonicsSource) =>
+            partials.filter(({ harmonic }) => !isUnder(harmonic));
           expect(apart(drawn)).toEqual(apart(before));
           const end = drawn.partials.find(({ harmonic }) => harmonic === last);
           expect(end?.amplitude ?? 0).toBeCloseTo(to / 100, 12);
@@ -103,7 +129,8 @@ describe('removing and adding', () => {
       fc.property(anyWave, (source) => {
         const merged = mergeDoubles(source);
         expect(new Set(merged.partials.map(({ harmonic }) => harmonic)).size).toBe(merged.partials.length);
-        const cycleOf = (one: HarmonicsSource) => synthesise(parseDefinition({ schema: 1, name: 'a', source: one })).cycle;
+        const cycleOf = (one: HarmonicsSource) =>
+          synthesise(parseDefinition({ schema: 1, name: 'a', source: one })).cycle;
         const [before, after] = [cycleOf(source), cycleOf(merged)];
         before.forEach((value, k) => expect(after[k]).toBeCloseTo(value, 9));
       }),
@@ -126,7 +153,9 @@ describe('what fits the table', () => {
 
 describe('the scale of the field', () => {
   test('the top is a round number that no bar passes, and 1 where all are small', () => {
-    expect([0, 0.2, 1, 1.2, 4.1, 7.6, 31].map((strongest) => ceilingFor(strongest, 'all'))).toEqual([1, 1, 1, 1.5, 5, 10, 50]);
+    expect([0, 0.2, 1, 1.2, 4.1, 7.6, 31].map((strongest) => ceilingFor(strongest, 'all'))).toEqual([
+      1, 1, 1, 1.5, 5, 10, 50,
+    ]);
     expect(ceilingFor(3, '0.1')).toBe(0.1);
     fc.assert(
       fc.property(fc.double({ min: 0, max: 1e6, noNaN: true }), (strongest) => {
@@ -159,7 +188,8 @@ describe('the scale of the field', () => {
 describe('keys on a bar', () => {
   const source = wave(partial(1, 1), partial(3, 0.25, 90));
   const at = { source, harmonic: 3, amplitude: 0.25, shown: 16 };
-  const press = (key: string, shiftKey = false, over: object = {}) => actOfKey({ key, shiftKey }, { ...at, ...over });
+  const press = (key: string, shiftKey = false, over: object = {}) =>
+    actOfKey({ key, shiftKey }, { ...at, ...over });
 
   test('left, right, Home and End walk and stop at the ends', () => {
     expect(press('ArrowLeft')).toEqual({ kind: 'go', harmonic: 2 });
@@ -174,7 +204,9 @@ describe('keys on a bar', () => {
       const act = press(key, shift);
       return act?.kind === 'change' ? heights(act.next)[3] : undefined;
     };
-    expect([next('ArrowUp'), next('ArrowDown'), next('ArrowUp', true), next('ArrowDown', true)]).toEqual([0.26, 0.24, 0.35, 0.15]);
+    expect([next('ArrowUp'), next('ArrowDown'), next('ArrowUp', true), next('ArrowDown', true)]).toEqual([
+      0.26, 0.24, 0.35, 0.15,
+    ]);
   });
 
   test('Delete takes the partial away, digits and signs open the exact field, other keys do nothing', () => {

@@ -24,7 +24,14 @@ const isAllowed = (source: Source) => 'definition' in checkDefinition({ schema: 
 /** Curves whose points stand anywhere in order, some of them closer than a drag's grid. */
 const anyCurve = fc
   .uniqueArray(fc.double({ min: 0, max: 0.999_999, noNaN: true }), { minLength: 2, maxLength: 20 })
-  .map((xs) => curve(xs.map((x) => x + 0).sort((one, other) => one - other).map((x, i) => [x, i % 2])));
+  .map((xs) =>
+    curve(
+      xs
+        .map((x) => x + 0)
+        .sort((one, other) => one - other)
+        .map((x, i) => [x, i % 2]),
+    ),
+  );
 
 describe('moving a point', () => {
   test('it stops just short of its neighbours', () => {
@@ -38,6 +45,15 @@ describe('moving a point', () => {
     expect(boundedX(points, 0, -1)).toBe(0);
     expect(boundedX(points, 2, 5)).toBe(0.999);
     expect(boundedX(points, 1, 0.512_34)).toBe(0.512);
+    // One entry of a table of 65,536, as an arrow key moves it.
+    expect(boundedX(points, 1, 0.4 + 1 / 65_536)).toBe(0.400_015);
+  });
+
+  test('heights keep three places of the curve’s own size', () => {
+    const flat = (size: number) => curve([[0, 0], [0.5, size]]); // prettier-ignore
+    expect(movePoint(flat(1), 0, 0, 0.123_456).points[0].y).toBe(0.123);
+    expect(movePoint(flat(0.001), 0, 0, 0.000_123_456).points[0].y).toBe(0.000_123);
+    expect(movePoint(flat(100), 0, 0, 12.3456).points[0].y).toBe(12.3);
   });
 
   test('wherever it is dragged to, the points keep their order and the wave stays allowed', () => {

@@ -42,7 +42,7 @@ describe('canonical JSON', () => {
   // RFC 8785 §3.2.2, §3.2.3.
   it('writes strings and literals, and sorts keys, as the RFC does', () => {
     const input = {
-      numbers: [333333333.33333329, 1e30, 4.5, 2e-3, 1e-27],
+      numbers: [JSON.parse('333333333.33333329'), 1e30, 4.5, 2e-3, 1e-27],
       string: '\u20ac$\u000f\nA\'B"\\\\"/',
       literals: [null, true, false],
     };
@@ -52,7 +52,6 @@ describe('canonical JSON', () => {
     );
     const keys = ['\u20ac', '\r', '\ufb33', '1', '\u{1f600}', '\u0080', '\u00f6'];
     const sorted = canonicalJson(Object.fromEntries(keys.map((key) => [key, 0])));
-    expect(Object.keys(JSON.parse(sorted))).not.toHaveLength(0);
     expect([...sorted.matchAll(/"([^"]+)":/g)].map(([, key]) => key)).toEqual([
       '\\r',
       '1',
@@ -103,7 +102,10 @@ describe('digest', () => {
       return { definition, engineVersion, codes };
     });
     const plain = inputs.map((input) => ({ ...input, codes: Array.from(input.codes) }));
-    const answer = execFileSync('python3', ['-c', independent], { input: JSON.stringify(plain), encoding: 'utf8' });
+    const answer = execFileSync('python3', ['-c', independent], {
+      input: JSON.stringify(plain),
+      encoding: 'utf8',
+    });
     expect(inputs.map(digestOf)).toEqual(JSON.parse(answer));
     expect(inputs.length).toBeGreaterThan(30);
   });
@@ -116,14 +118,16 @@ describe('digest', () => {
     expect(digestOf({ definition: reversed, engineVersion, codes })).toBe(digest);
     expect(digestOf({ definition: { ...definition, name: 'other' }, engineVersion, codes })).not.toBe(digest);
     expect(digestOf({ definition, engineVersion: `${engineVersion}-next`, codes })).not.toBe(digest);
-    expect(digestOf({ definition, engineVersion, codes: codes.map((code, k) => (k === 7 ? code + 1 : code)) })).not.toBe(
-      digest,
-    );
+    expect(
+      digestOf({ definition, engineVersion, codes: codes.map((code, k) => (k === 7 ? code + 1 : code)) }),
+    ).not.toBe(digest);
   });
 
   it('refuses half a surrogate pair, for which the RFC has no form', () => {
     const { definition, codes } = buildTable(golden.tables[0].definition);
     const broken = { ...definition, name: 'half \ud83d' };
-    expect(() => digestOf({ definition: broken, engineVersion, codes })).toThrow('name: "half \\ud83d" is not allowed');
+    expect(() => digestOf({ definition: broken, engineVersion, codes })).toThrow(
+      'name: "half \\ud83d" is not allowed',
+    );
   });
 });

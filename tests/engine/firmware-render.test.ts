@@ -55,7 +55,9 @@ describe('files of an export', () => {
     const table = buildTable(sine({}));
     const [header] = renderFiles(table, 'c99', {}, readTemplates());
     const { snrDb, sinadDb, sfdrDb, unwantedDb, enobBits } = table.report;
-    expect(header.text).toContain(`SNR         ${snrDb?.toFixed(2)} dB (full-scale sine of 8 bits: 49.92 dB)`);
+    expect(header.text).toContain(
+      `SNR         ${snrDb?.toFixed(2)} dB (full-scale sine of 8 bits: 49.92 dB)`,
+    );
     expect(header.text).toContain(`SINAD       ${sinadDb?.toFixed(2)} dB`);
     expect(header.text).toContain(`ENOB        ${enobBits?.toFixed(2)} bits`);
     expect(header.text).toContain(`SFDR        ${sfdrDb?.toFixed(2)} dB`);
@@ -67,13 +69,23 @@ describe('files of an export', () => {
   it('say in words what does not exist', () => {
     const square = {
       ...sine({ length: 16, bits: 1 }),
-      source: { kind: 'points', interpolation: 'step', points: [{ x: 0, y: 1 }, { x: 0.5, y: -1 }] },
+      source: {
+        kind: 'points',
+        interpolation: 'step',
+        points: [
+          { x: 0, y: 1 },
+          { x: 0.5, y: -1 },
+        ],
+      },
     } satisfies DefinitionInput;
     const [header] = renderFiles(buildTable(square), 'c99', {}, readTemplates());
     expect(header.text).toContain('SNR         no error at all');
     expect(header.text).toContain('Unwanted    none');
     const flat = { ...square, level: { normalise: 'none' }, table: { bits: 8 } } satisfies DefinitionInput;
-    flat.source.points = [{ x: 0, y: 0.3 }, { x: 0.5, y: 0.3 }];
+    flat.source.points = [
+      { x: 0, y: 0.3 },
+      { x: 0.5, y: 0.3 },
+    ];
     const [constant] = renderFiles(buildTable(flat), 'c99', {}, readTemplates());
     expect(constant.text).toContain('SNR         no error but a constant one');
     expect(constant.text).toContain('SINAD       not defined');
@@ -106,11 +118,25 @@ describe('what a target cannot take', () => {
     ['c99', {}, { port: 'B' }, 'options.port', '"B"', 'no such field'],
     ['avr', {}, { port: 'H' }, 'options.port', '"H"', 'a port letter, A to G'],
     ['avr', {}, { arrayName: 'PORTB' }, 'options.arrayName', '"PORTB"', 'a name with a lower-case letter'],
-    ['avr', {}, { arrayName: 'pgm_x' }, 'options.arrayName', '"pgm_x"', 'that avr-libc does not use'],
-    ['avr', { bits: 9 }, { port: 'C', highPort: 'C' }, 'options.highPort', '"C"', 'other than options.port, C'],
+    ['avr', {}, { arrayName: 'prog_char' }, 'options.arrayName', '"prog_char"', 'and compilers do not use'],
+    [
+      'avr',
+      { bits: 9 },
+      { port: 'C', highPort: 'C' },
+      'options.highPort',
+      '"C"',
+      'other than options.port, C',
+    ],
     ['avr', { length: 32_768 }, {}, 'table.length', '32768', 'at most 32767 entries of 8 bits'],
     ['avr', { length: 16_384, bits: 9 }, {}, 'table.length', '16384', 'at most 16383 entries of 9 bits'],
-    ['avr', { sampleAt: 'centre', fold: 'quarter' }, {}, 'table.fold', '"quarter"', '"none" for the target avr'],
+    [
+      'avr',
+      { sampleAt: 'centre', fold: 'quarter' },
+      {},
+      'table.fold',
+      '"quarter"',
+      '"none" for the target avr',
+    ],
   ] as const)('%s, %j, %j: %s', (target, table, options, path, value, allowed) => {
     const problem = refusalOf(() => render(target, table, options));
     expect(problem).toMatchObject({ path, value });

@@ -2,6 +2,7 @@ import { beforeAll, describe, expect, it } from 'vitest';
 import type { BuiltTable } from '../../shared/build-table.ts';
 import { portWrites, type RegisterWrite } from './support/avr-simulator.ts';
 import { avrPart, avrProgram, type AvrPart } from './support/compilers.ts';
+import { inFolder, run } from './support/programs.ts';
 import { exported, pair, tone } from './support/tables.ts';
 
 // Compiler and addresses: avr-gcc and avr-libc. Judge of what runs: the instruction-level simulator avr8js.
@@ -12,6 +13,10 @@ let part: AvrPart;
 beforeAll(async () => {
   part = await avrPart(mcu, ['B', 'D']);
 });
+
+const readerInCpp = `#include "fog_tone.h"
+uint8_t entry(uint16_t i) { return pgm_read_byte(&fog_tone[i]); }
+`;
 
 const valuesAt = (writes: readonly RegisterWrite[], register: string) =>
   writes.filter((write) => write.register === register).map(({ value }) => value);
@@ -28,18 +33,22 @@ describe('avr export, run in the simulator', () => {
     '2 × 8': () => exported(pair, 'avr'),
     '1000 × 8': () => exported(tone({ length: 1000 }), 'avr'),
     '100 × 8 in two’s complement': () => exported(tone({ length: 100, coding: 'twos-complement' }), 'avr'),
-    '100 × 6 in two’s complement': () => exported(tone({ length: 100, bits: 6, coding: 'twos-complement' }), 'avr'),
+    '100 × 6 in two’s complement': () =>
+      exported(tone({ length: 100, bits: 6, coding: 'twos-complement' }), 'avr'),
     '64 × 1': () => exported(tone({ length: 64, bits: 1 }), 'avr'),
   };
 
-  it.each(Object.entries(onOnePort))('writes %s to the port in order, twice round', async (_title, render) => {
-    const { table, files } = render();
-    const bits = table.definition.table.bits;
-    const writes = portWrites(await avrProgram(files, mcu), part, 2 * table.stored.length);
-    expect(writes[0]).toMatchObject({ register: 'DDRB', value: 2 ** bits - 1 });
-    expect(valuesAt(writes, 'PORTB')).toEqual(twice(pins(table, 0, bits)));
-    expect(writes).toHaveLength(1 + 2 * table.stored.length);
-  });
+  it.each(Object.entries(onOnePort))(
+    'writes %s to the port in order, twice round',
+    async (_title, render) => {
+      const { table, files } = render();
+      const bits = table.definition.table.bits;
+      const writes = portWrites(await avrProgram(files, mcu), part, 2 * table.stored.length);
+      expect(writes[0]).toMatchObject({ register: 'DDRB', value: 2 ** bits - 1 });
+      expect(valuesAt(writes, 'PORTB')).toEqual(twice(pins(table, 0, bits)));
+      expect(writes).toHaveLength(1 + 2 * table.stored.length);
+    },
+  );
 
   it('writes to the port that was chosen, and to no other', async () => {
     const { table, files } = exported(tone({ length: 100, bits: 7 }), 'avr', { port: 'D' });
@@ -56,15 +65,18 @@ describe('avr export, run in the simulator', () => {
     '1000 × 16': tone({ length: 1000, bits: 16 }),
   };
 
-  it.each(Object.entries(onTwoPorts))('writes %s to two ports, the upper bits first', async (_title, definition) => {
-    const { table, files } = exported(definition, 'avr', { port: 'B', highPort: 'D' });
-    const bits = table.definition.table.bits;
-    const writes = portWrites(await avrProgram(files, mcu), part, 4 * table.stored.length);
-    expect(writes.slice(0, 3).map(({ register }) => register)).toEqual(['DDRD', 'DDRB', 'PORTD']);
-    expect(writes[0].value).toBe(2 ** (bits - 8) - 1);
-    expect(valuesAt(writes, 'PORTB')).toEqual(twice(pins(table, 0, 8)));
-    expect(valuesAt(writes, 'PORTD')).toEqual(twice(pins(table, 8, bits)));
-  });
+  it.each(Object.entries(onTwoPorts))(
+    'writes %s to two ports, the upper bits first',
+    async (_title, definition) => {
+      const { table, files } = exported(definition, 'avr', { port: 'B', highPort: 'D' });
+      const bits = table.definition.table.bits;
+      const writes = portWrites(await avrProgram(files, mcu), part, 4 * table.stored.length);
+      expect(writes.slice(0, 3).map(({ register }) => register)).toEqual(['DDRD', 'DDRB', 'PORTD']);
+      expect(writes[0].value).toBe(2 ** (bits - 8) - 1);
+      expect(valuesAt(writes, 'PORTB')).toEqual(twice(pins(table, 0, 8)));
+      expect(valuesAt(writes, 'PORTD')).toEqual(twice(pins(table, 8, bits)));
+    },
+  );
 
   it('takes as long for each step but the one round the seam, as its comment says', async () => {
     const { files } = exported(tone({ length: 100 }), 'avr');
@@ -78,13 +90,35 @@ describe('avr export, run in the simulator', () => {
     expect(steps[99]).toBeGreaterThan(step);
   });
 
-  it('compiles with every warning an error as C99 and is read from C++', async () => {
+  it('compiles as C99 with every warning an error', async () => {
     const { files } = exported(tone({ bits: 10, coding: 'twos-complement' }), 'avr');
-    await avrProgram(files, mcu, ['-std=c99', '-Os', '-Wall', '-Wextra', '-Wpedantic', '-Wconversion', '-Werror']);
+    await avrProgram(files, mcu, [
+      '-std=c99',
+      '-Os',
+      '-Wall',
+      '-Wextra',
+      '-Wpedantic',
+      '-Wconversion',
+      '-Werror',
+    ]);
+  });
+
+  it('is read from C++ through the same header', async () => {
+    const { files } = exported(tone({}), 'avr');
+    const reader = { name: 'reader.cpp', text: readerInCpp };
+    await inFolder([...files, reader], (folder) =>
+      run(
+        'avr-g++',
+        ['-std=c++11', '-Os', '-Wall', '-Wextra', '-Werror', `-mmcu=${mcu}`, '-c', 'reader.cpp'],
+        folder,
+      ),
+    );
   });
 
   it('says so where the part lacks the port', async () => {
     const { files } = exported(tone({}), 'avr', { port: 'G' });
-    await expect(avrProgram(files, mcu)).rejects.toThrow('This part has no port G: render for one that it has.');
+    await expect(avrProgram(files, mcu)).rejects.toThrow(
+      'This part has no port G: render for one that it has.',
+    );
   });
 });

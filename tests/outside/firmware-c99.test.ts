@@ -11,7 +11,8 @@ const cases = {
   '2 × 8': () => exported(pair, 'c99'),
   '100 × 8, complemented': () => exported(tone({ length: 100, complement: true }), 'c99'),
   '100 × 8 in two’s complement': () => exported(tone({ length: 100, coding: 'twos-complement' }), 'c99'),
-  '100 × 12 in two’s complement': () => exported(tone({ length: 100, bits: 12, coding: 'twos-complement' }), 'c99'),
+  '100 × 12 in two’s complement': () =>
+    exported(tone({ length: 100, bits: 12, coding: 'twos-complement' }), 'c99'),
   '1000 × 9': () => exported(tone({ length: 1000, bits: 9 }), 'c99'),
   '65536 × 16': () => exported(tone({ length: 65_536, bits: 16 }), 'c99'),
   '65536 × 16 in two’s complement, down to −32768': () =>

@@ -46,22 +46,31 @@ describe('names that people type', () => {
 
   it('never change how many lines a file has, nor what stands outside comments', () => {
     const plain = exported(tone({ length: 16 }, 'x'), 'c99').files;
-    const text = fc.string({ unit: fc.constantFrom('*', '/', '?', '\\', '\n', '\r', '\u2028', ' ', 'x', '\u202e') });
+    const text = fc.string({
+      unit: fc.constantFrom('*', '/', '?', '\\', '\n', '\r', '\u2028', ' ', 'x', '\u202e'),
+    });
     fc.assert(
-      fc.property(text.filter((name) => name.length > 0 && name.length <= 64), (name) => {
-        const { files } = exported(tone({ length: 16 }, name), 'c99');
-        files.forEach((file, index) => {
-          expect(linesBelowTitle(file.text)).toEqual(linesBelowTitle(plain[index].text));
-          expect(file.text.split('\n')[1]).not.toMatch(/\*\/|\/\*|\?\?\/|\\|\r/);
-        });
-      }),
+      fc.property(
+        text.filter((name) => name.length > 0 && name.length <= 64),
+        (name) => {
+          const { files } = exported(tone({ length: 16 }, name), 'c99');
+          files.forEach((file, index) => {
+            expect(linesBelowTitle(file.text)).toEqual(linesBelowTitle(plain[index].text));
+            expect(file.text.split('\n')[1]).not.toMatch(/\*\/|\/\*|\?\?\/|\\|\r/);
+          });
+        },
+      ),
       { seed: 20_480, numRuns: 300 },
     );
   });
 });
 
 /** The name stands on the second line; the digest, which covers it, is the one other thing that may differ. */
-const linesBelowTitle = (text: string) => text.replace(/sha256 \w+/, 'sha256').split('\n').slice(2);
+const linesBelowTitle = (text: string) =>
+  text
+    .replace(/sha256 \w+/, 'sha256')
+    .split('\n')
+    .slice(2);
 
 describe('names of arrays', () => {
   it('that are taken in C, C++ or a library are refused; all others compile', async () => {
@@ -81,13 +90,23 @@ describe('names of arrays', () => {
     const source = `#include <stdint.h>\n${free
       .map((name) => `extern const uint8_t ${name}[2]; const uint8_t ${name}[2] = { 1, 2 };\n`)
       .join('')}`;
-    await inFolder([{ name: 'names.c', text: source }, { name: 'names.cpp', text: source }], async (folder) => {
-      for (const standard of ['-std=c99', '-std=c17', '-std=gnu17', '-std=gnu2x']) {
-        await run('gcc', [standard, ...strictWarnings, '-c', 'names.c', '-o', 'names.o'], folder);
-      }
-      await run('g++', ['-std=c++20', ...strictWarnings, '-c', 'names.cpp', '-o', 'names.o'], folder);
-      await run('avr-gcc', ['-Os', '-Wall', '-Werror', '-mmcu=attiny4313', '-c', 'names.c', '-o', 'names.o'], folder);
-    });
+    await inFolder(
+      [
+        { name: 'names.c', text: source },
+        { name: 'names.cpp', text: source },
+      ],
+      async (folder) => {
+        for (const standard of ['-std=c99', '-std=c17', '-std=gnu17', '-std=gnu2x']) {
+          await run('gcc', [standard, ...strictWarnings, '-c', 'names.c', '-o', 'names.o'], folder);
+        }
+        await run('g++', ['-std=c++20', ...strictWarnings, '-c', 'names.cpp', '-o', 'names.o'], folder);
+        await run(
+          'avr-gcc',
+          ['-Os', '-Wall', '-Werror', '-mmcu=attiny4313', '-c', 'names.c', '-o', 'names.o'],
+          folder,
+        );
+      },
+    );
   });
 
   it('made from any name are free, ASCII and short enough', () => {

@@ -9,7 +9,9 @@ import { holdTestServer, makeTestDatabase } from './databases.ts';
 
 /** Playwright's global set-up: the built application, as people run it, on a database of its own and a free port. */
 export default async function setup(): Promise<() => Promise<void>> {
-  await withLock(`set-up ${projectFolder}`, () => Promise.all([ensureBuilt('client'), ensureBuilt('server')]));
+  await withLock(`set-up ${projectFolder}`, () =>
+    Promise.all([ensureBuilt('client'), ensureBuilt('server')]),
+  );
   const server = await holdTestServer();
   const database = await makeTestDatabase(server, { migrated: false });
   const data = await mkdtemp(join(tmpdir(), 'stepwell-browser-'));

@@ -28,7 +28,9 @@ export async function holdTestServer(): Promise<TestServer> {
 export function requireTestDatabase(url: string): void {
   const { database } = connectionOptions(url);
   if (!database.startsWith(testPrefix)) {
-    throw new Error(`Tests do not touch the database "${database}"; allowed: a name that begins with ${testPrefix}`);
+    throw new Error(
+      `Tests do not touch the database "${database}"; allowed: a name that begins with ${testPrefix}`,
+    );
   }
 }
 

@@ -3,10 +3,7 @@ import request, { type Test } from 'supertest';
 import type { Role } from '../../shared/contract/index.ts';
 import { cookieName, sealClaims, sessionSeconds } from '../../server/auth/session-token.ts';
 import { auditHeads, memberships, sessions, teams, users } from '../../server/db/schema/index.ts';
-import { host, origin, type TestApp } from './test-app.ts';
-
-/** As test-app.ts configures it. */
-const secret = 'for the tests only, and known to everybody';
+import { host, origin, testSecret, type TestApp } from './test-app.ts';
 
 export interface TestPerson {
   readonly id: number;
@@ -39,7 +36,7 @@ export async function makeSession(
   await test.database.db
     .insert(sessions)
     .values({ id: sessionId, userId, sessionVersion, client: 'a test', lastSeenAt: new Date(), expiresAt });
-  const sealed = await sealClaims({ userId, sessionId, sessionVersion }, { secret, secure: false });
+  const sealed = await sealClaims({ userId, sessionId, sessionVersion }, { secret: testSecret, secure: false });
   return { sessionId, cookie: `${cookieName(false)}=${sealed}` };
 }
 

@@ -42,7 +42,9 @@ export function startScript(dataFolder: string, env: Record<string, string> = {}
 export function processesWith(text: string): number[] {
   return readdirSync('/proc')
     .filter((name) => /^\d+$/.test(name) && Number(name) !== process.pid)
-    .filter((pid) => ['cmdline', 'environ'].some((file) => readOrNothing(`/proc/${pid}/${file}`).includes(text)))
+    .filter((pid) =>
+      ['cmdline', 'environ'].some((file) => readOrNothing(`/proc/${pid}/${file}`).includes(text)),
+    )
     .map(Number);
 }
 

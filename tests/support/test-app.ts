@@ -12,6 +12,8 @@ import { requireTestDatabase } from './databases.ts';
 export const origin = 'http://127.0.0.1:4173';
 export const host = new URL(origin).host;
 
+export const testSecret = 'for the tests only, and known to everybody';
+
 export interface TestApp {
   readonly app: Express;
   readonly database: OpenDatabase;
@@ -28,7 +30,7 @@ export function makeTestApp(changes: Partial<AppDeps> = {}): TestApp {
   const app = buildApp({
     config: readConfig({
       PRIVATE_DATABASE_URL: url,
-      AUTH_SECRET: 'for the tests only, and known to everybody',
+      AUTH_SECRET: testSecret,
       // So that each person of a test can come from an address of their own, as X-Forwarded-For says.
       TRUSTED_PROXIES: 'loopback',
     }),

@@ -1,5 +1,11 @@
 import { buildTable, type BuiltTable } from '../../../shared/build-table.ts';
-import { Refusal, type Problem, type RenderAnswer, type RenderRequest, type ReportAnswer } from '../../../shared/contract/index.ts';
+import {
+  Refusal,
+  type Problem,
+  type RenderAnswer,
+  type RenderRequest,
+  type ReportAnswer,
+} from '../../../shared/contract/index.ts';
 import { engineVersion } from '../../../shared/engine-version.ts';
 import { digestOf, renderFiles, targetOf } from '../../../shared/firmware/index.ts';
 import { readTemplates } from '../../tables/read-templates.ts';
@@ -43,7 +49,10 @@ function renamed<Result>(work: () => Result, rename: (path: string) => string): 
     return work();
   } catch (error) {
     if (!(error instanceof Refusal)) throw error;
-    const [first, ...others] = error.problems.map((problem): Problem => ({ ...problem, path: rename(problem.path) }));
+    const [first, ...others] = error.problems.map((problem): Problem => ({
+      ...problem,
+      path: rename(problem.path),
+    }));
     throw new Refusal(first, ...others);
   }
 }

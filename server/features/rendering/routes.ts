@@ -31,7 +31,10 @@ function sendTagged(request: Request, response: Response, answer: object): void 
   if (namesTag(request.headers['if-none-match'], etag)) {
     throw new Problem('unchanged', { detail: 'The answer is the one that If-None-Match names.' });
   }
-  response.set({ ETag: etag, 'Cache-Control': 'no-cache, no-transform' }).type('application/json').send(bytes);
+  response
+    .set({ ETag: etag, 'Cache-Control': 'no-cache, no-transform' })
+    .type('application/json')
+    .send(bytes);
 }
 
 /** Whether a list of entity tags holds one, compared weakly as If-None-Match has it. */

@@ -41,10 +41,17 @@ export async function findTables(db: Database, teamId: number, query: TablesQuer
 
   const order = orderOf(query.sort, query.direction);
   const others = filters.filter((filter) => filter !== lead?.filter);
+  // Tested from left to right: the closer looks come last.
+  const tests = [
+    inScope(scope),
+    after && order.beyond(after),
+    ...others.map(({ quickTest }) => quickTest),
+    ...others.map(({ closeTest }) => closeTest),
+  ];
   const [rows] = await db.execute(sql`
     select ${waveTables.id} as id, ${order.column} as place
     from ${lead?.filter.source ?? order.source}
-    where ${and(inScope(scope), ...others.map(({ test }) => test), after && order.beyond(after))}
+    where ${and(...tests)}
     order by ${order.by}
     limit ${query.limit + 1}`);
   const found = rows as unknown as { id: number; place: Position['key'] }[];

@@ -16,8 +16,10 @@ export interface Filter {
   readonly entries: SQL;
   /** The tables that pass, read by these entries, for a `from`. */
   readonly source: SQL;
-  /** Whether a row of the tables passes, for a `where`. */
-  readonly test: SQL;
+  /** What a row must show in the index that is walked; rules most of the others out. */
+  readonly quickTest: SQL;
+  /** What a row that passed must show on a closer look, where one is needed. */
+  readonly closeTest?: SQL;
 }
 
 /**
@@ -53,9 +55,9 @@ function termFilter(scope: Scope, term: string, matches: SQL): Filter {
   return {
     entries,
     source: tablesOf(scope, tableTerms.tableId, entries),
+    quickTest: sql`${waveTables.signatureLow} & ${low} = ${low} and ${waveTables.signatureHigh} & ${high} = ${high}`,
     // The limit keeps the optimiser from turning the test of one row into a list of all that pass.
-    test: sql`${waveTables.signatureLow} & ${low} = ${low} and ${waveTables.signatureHigh} & ${high} = ${high}
-      and (select 1 from ${tableTerms} force index (table_terms_table)
+    closeTest: sql`(select 1 from ${tableTerms} force index (table_terms_table)
         where ${tableTerms.teamId} = ${scope.teamId} and ${tableTerms.tableId} = ${waveTables.id}
         and ${tableTerms.term} ${matches} limit 1) = 1`,
   };
@@ -67,7 +69,7 @@ function stateFilter(scope: Scope, state: string): Filter {
   return {
     entries,
     source: tablesOf(scope, waveTables.id, entries),
-    test: sql`${waveTables.state} = ${state}`,
+    quickTest: sql`${waveTables.state} = ${state}`,
   };
 }
 

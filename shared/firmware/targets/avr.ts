@@ -1,6 +1,6 @@
 import { z } from 'zod';
 import { Refusal, showValue } from '../../contract/index.ts';
-import { arrayNameOption, portOption } from '../options.ts';
+import { portOption, sharedOptions } from '../options.ts';
 import { defineTarget, type ExportableTable } from '../target.ts';
 import { wordTypeOf } from '../word-type.ts';
 
@@ -18,11 +18,14 @@ export const avr = defineTarget({
     { template: 'avr/main.c', ending: '_main.c' },
   ],
   options: z.strictObject({
-    arrayName: arrayNameOption.refine((name) => name === undefined || isFreeInAvrLibc(name), {
-      error: 'a name with a lower-case letter that avr-libc does not use (its registers are named in capitals)',
+    ...sharedOptions,
+    arrayName: sharedOptions.arrayName.refine((name) => name === undefined || /[a-z]/.test(name), {
+      error: 'a name with a lower-case letter: avr-libc names registers in capitals',
     }),
     port: portOption.default('B').describe('port that the words go to, bit 0 on pin 0'),
-    highPort: portOption.optional().describe('port of bit 8 and up, above 8 bits; D, or B where D is taken, if not given'),
+    highPort: portOption
+      .optional()
+      .describe('port of bit 8 and up, above 8 bits; D, or B where D is taken, if not given'),
   }),
   factsOf: (table, { port, highPort }) => {
     const { bits } = table.definition.table;
@@ -47,15 +50,17 @@ export const avr = defineTarget({
   },
 });
 
-const isFreeInAvrLibc = (name: string) =>
-  /[a-z]/.test(name) && !/^(?:pgm|prog)_|_P$|^(?:bit_is_|loop_until_)|^int_farptr/.test(name);
-
 /** Pins 0…count−1 of a port, in hexadecimal. */
-const pinMask = (count: number) => `0x${(2 ** Math.max(count, 0) - 1).toString(16).toUpperCase().padStart(2, '0')}`;
+const pinMask = (count: number) =>
+  `0x${(2 ** Math.max(count, 0) - 1).toString(16).toUpperCase().padStart(2, '0')}`;
 
 function refuseUnplayable({ definition: { table }, stored }: ExportableTable): void {
   if (table.fold !== 'none') {
-    throw new Refusal({ path: 'table.fold', value: showValue(table.fold), allowed: '"none" for the target avr' });
+    throw new Refusal({
+      path: 'table.fold',
+      value: showValue(table.fold),
+      allowed: '"none" for the target avr',
+    });
   }
   const most = Math.floor(largestObject / wordTypeOf(table).bytes);
   if (stored.length > most) {

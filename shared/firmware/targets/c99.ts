@@ -1,5 +1,5 @@
 import { z } from 'zod';
-import { arrayNameOption } from '../options.ts';
+import { sharedOptions } from '../options.ts';
 import { defineTarget } from '../target.ts';
 
 /** A header and a source in ISO C99 that any later C and C++ takes too. */
@@ -11,6 +11,6 @@ export const c99 = defineTarget({
     { template: 'c99/header.h', ending: '.h' },
     { template: 'c99/source.c', ending: '.c' },
   ],
-  options: z.strictObject({ arrayName: arrayNameOption }),
+  options: z.strictObject(sharedOptions),
   factsOf: () => ({}),
 });

@@ -74,7 +74,10 @@ function SharedWave({ wave }: { wave: Wave }) {
           )}
         </div>
       </section>
-      <section className="bench-drawings" aria-label="Drawings and figures">
+      <section className="bench-drawings" aria-labelledby="drawings-title">
+        <h2 id="drawings-title" className="sr-only">
+          Drawings and figures
+        </h2>
         {built === null && <p className="drawings-wait">Building the table…</p>}
         {built !== null && 'fault' in built && <p className="drawings-wait">{built.fault}</p>}
         {built !== null && 'table' in built && (

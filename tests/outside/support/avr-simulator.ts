@@ -24,7 +24,8 @@ export function portWrites(
   wantedPortWrites: number,
   cycleLimit = 10_000_000,
 ): RegisterWrite[] {
-  if (program.length > part.flashEnd + 1) throw new Error(`${program.length} bytes do not fit the part's memory.`);
+  if (program.length > part.flashEnd + 1)
+    throw new Error(`${program.length} bytes do not fit the part's memory.`);
   const memory = new Uint8Array(part.flashEnd + 1).fill(0xff);
   memory.set(program);
   const cpu = new CPU(new Uint16Array(memory.buffer), part.ramEnd + 1 - registerSpace);
@@ -38,7 +39,8 @@ export function portWrites(
     cpu.writeHooks[ddr] = (value) => void writes.push({ register: `DDR${letter}`, value, cycle: cpu.cycles });
   }
   while (portWriteCount < wantedPortWrites) {
-    if (cpu.cycles > cycleLimit) throw new Error(`Only ${portWriteCount} port writes in ${cycleLimit} cycles.`);
+    if (cpu.cycles > cycleLimit)
+      throw new Error(`Only ${portWriteCount} port writes in ${cycleLimit} cycles.`);
     avrInstruction(cpu);
     cpu.tick();
   }

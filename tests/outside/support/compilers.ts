@@ -32,9 +32,15 @@ int main(void)
 /** The words of such a print-out. @throws where the header's macros say something else than its array */
 function wordsIn(text: string): number[] {
   const [length, counted, least, most, ...words] = numbersIn(text);
-  const found = [words.length, words.length, words.reduce((a, b) => Math.min(a, b)), words.reduce((a, b) => Math.max(a, b))];
+  const found = [
+    words.length,
+    words.length,
+    words.reduce((a, b) => Math.min(a, b)),
+    words.reduce((a, b) => Math.max(a, b)),
+  ];
   const said = [length, counted, least, most];
-  if (said.join() !== found.join()) throw new Error(`The header says ${said.join()}, the array ${found.join()}.`);
+  if (said.join() !== found.join())
+    throw new Error(`The header says ${said.join()}, the array ${found.join()}.`);
   return words;
 }
 
@@ -75,7 +81,11 @@ export function avrProgram(
   return inFolder(files, async (folder) => {
     const sources = files.map(({ name }) => name).filter((name) => name.endsWith('.c'));
     await run('avr-gcc', [...flags, `-mmcu=${mcu}`, ...sources, '-o', 'program.elf'], folder);
-    await run('avr-objcopy', ['-O', 'binary', '-j', '.text', '-j', '.data', 'program.elf', 'program.bin'], folder);
+    await run(
+      'avr-objcopy',
+      ['-O', 'binary', '-j', '.text', '-j', '.data', 'program.elf', 'program.bin'],
+      folder,
+    );
     return readFile(join(folder, 'program.bin'));
   });
 }
@@ -100,11 +110,22 @@ export function avrPart(mcu: string, ports: readonly string[]): Promise<AvrPart>
   const wanted = ['RAMEND', 'FLASHEND', ...ports.flatMap((port) => [`PORT${port}`, `DDR${port}`])];
   const marked = wanted.map((name) => `stepwell_wants ${name}`);
   // With this, as sfr_defs.h says, register names are plain constants: their addresses in data space.
-  const probe = ['#define _SFR_ASM_COMPAT 1', '#define __SFR_OFFSET 0x20', '#include <avr/io.h>', ...marked, ''].join('\n');
+  const probe = [
+    '#define _SFR_ASM_COMPAT 1',
+    '#define __SFR_OFFSET 0x20',
+    '#include <avr/io.h>',
+    ...marked,
+    '',
+  ].join('\n');
   return inFolder([{ name: 'probe.c', text: probe }], async (folder) => {
     const seen = await run('avr-gcc', ['-E', '-P', `-mmcu=${mcu}`, 'probe.c'], folder);
-    const lines = [...seen.matchAll(/^stepwell_wants (.+)$/gm)].map(([, value]) => `printf("%ld\\n", (long)(${value}));`);
-    await writeFile(join(folder, 'values.c'), `#include <stdio.h>\nint main(void) { ${lines.join(' ')} return 0; }\n`);
+    const lines = [...seen.matchAll(/^stepwell_wants (.+)$/gm)].map(
+      ([, value]) => `printf("%ld\\n", (long)(${value}));`,
+    );
+    await writeFile(
+      join(folder, 'values.c'),
+      `#include <stdio.h>\nint main(void) { ${lines.join(' ')} return 0; }\n`,
+    );
     await run('gcc', ['values.c', '-o', 'values'], folder);
     const [ramEnd, flashEnd, ...addresses] = numbersIn(await run('./values', [], folder));
     return {

@@ -37,5 +37,12 @@ export function exported(definition: DefinitionInput, target: string, options: o
 /** The shortest table: low, high. */
 export const pair: DefinitionInput = {
   ...sine({ length: 2 }),
-  source: { kind: 'points', interpolation: 'step', points: [{ x: 0, y: -1 }, { x: 0.5, y: 1 }] },
+  source: {
+    kind: 'points',
+    interpolation: 'step',
+    points: [
+      { x: 0, y: -1 },
+      { x: 0.5, y: 1 },
+    ],
+  },
 };

@@ -15,9 +15,12 @@ export function BenchDrawings({ onGoTo }: { onGoTo: (path: string) => void }) {
   return (
     <section
       className="bench-drawings"
-      aria-label="Drawings and figures"
+      aria-labelledby="drawings-title"
       data-stale={isStale ? '' : undefined}
     >
+      <h2 id="drawings-title" className="sr-only">
+        Drawings and figures
+      </h2>
       {table === null ? (
         <p className="drawings-wait" role="status">
           {isStale ? 'Nothing could be built yet.' : 'Building the first table…'}

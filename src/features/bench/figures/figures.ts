@@ -29,21 +29,22 @@ export interface FigureGroup {
 /** A line counts as one of the wave's own above this share of its strongest. */
 const ownLineShare = 1e-4;
 
-/** Whether the levelled wave has more than one line of its own, DC apart. */
-export function hasSeveralPartials(intended: Float64Array): boolean {
+/** How many lines the levelled wave has of its own, DC apart. */
+export function countOwnLines(intended: Float64Array): number {
   let strongest = 0;
   for (let k = 1; k < intended.length; k += 1) if (intended[k] > strongest) strongest = intended[k];
   let lines = 0;
   for (let k = 1; k < intended.length; k += 1) if (intended[k] > ownLineShare * strongest) lines += 1;
-  return lines > 1;
+  return lines;
 }
 
 export function figureGroupsOf({ report, definition, spectrum }: TableAnswer): FigureGroup[] {
-  const several = hasSeveralPartials(spectrum.intended);
+  const lines = countOwnLines(spectrum.intended);
+  const several = lines > 1;
   return [
     {
       title: 'What quantising added',
-      figures: [snr(report), unwanted(report), ...errors(report), clipped(report)],
+      figures: [snr(report, lines > 0), unwanted(report, lines > 0), ...errors(report), clipped(report)],
     },
     {
       title: 'Measured as a converter',
@@ -58,44 +59,38 @@ export function figureGroupsOf({ report, definition, spectrum }: TableAnswer): F
 }
 
 const noSignal = 'The wave does not move, so there is no signal to measure against.';
+const isTheWave =
+  'The codes give the wave exactly (but for a constant, if one was added): quantising added nothing to compare with.';
 const noCarrier =
   'Either the strongest line lies at half the sample rate, where it cannot be told from its image, or there is nothing beside it.';
 
-function snr({ snrDb, idealSnrDb, exact }: Report): ShownFigure {
+function snr({ snrDb, idealSnrDb, exact }: Report, moves: boolean): ShownFigure {
+  const isExact = exact && moves;
   return {
     id: 'snrDb',
     label: 'SNR',
-    value: snrDb === null ? (exact ? 'exact' : '–') : fixed(snrDb, 1),
+    value: snrDb === null ? (isExact ? 'exact' : '–') : fixed(snrDb, 1),
     unit: snrDb === null ? undefined : `dB of ${fixed(idealSnrDb, 1)}`,
-    tone: exact || (snrDb !== null && snrDb > idealSnrDb - 1) ? 'good' : undefined,
+    tone: isExact || (snrDb !== null && snrDb > idealSnrDb - 1) ? 'good' : undefined,
     meaning: 'Signal-to-noise ratio: how far the wave stands above all that quantising changed in it.',
     formula: '10·log10( var(r) / var(e) ); r the levelled wave, e the error of its codes, means removed',
     good: `A full-scale sine reaches 6.02·b + 1.76 = ${fixed(idealSnrDb, 2)} dB (Bennett 1948). A wave with a high crest factor or a low level lies below that; a wave that happens to fall on codes lies above.`,
-    missing:
-      snrDb !== null
-        ? undefined
-        : exact
-          ? 'The codes give the wave exactly (but for a constant, if one was added): there is no error to compare with.'
-          : noSignal,
+    missing: snrDb !== null ? undefined : isExact ? isTheWave : noSignal,
   };
 }
 
-function unwanted({ unwantedDb, exact }: Report): ShownFigure {
+function unwanted({ unwantedDb, exact }: Report, moves: boolean): ShownFigure {
+  const isExact = exact && moves;
   return {
     id: 'unwantedDb',
     label: 'Unwanted line',
-    value: unwantedDb === null ? (exact ? 'none' : '–') : fixed(unwantedDb, 1),
+    value: unwantedDb === null ? (isExact ? 'none' : '–') : fixed(unwantedDb, 1),
     unit: unwantedDb === null ? undefined : 'dB',
     meaning:
       'The strongest line that quantising added, against the strongest line of the wave. It is the one most likely to be heard as a tone of its own.',
     formula: '20·log10( max A_k(e) / max A_k(r) ), k ≥ 1; A_k are amplitudes of the spectrum',
     good: 'The lower the better. Waves of several partials are judged by this figure, not by SINAD or THD.',
-    missing:
-      unwantedDb === null
-        ? exact
-          ? 'The codes give the wave exactly: quantising added no line.'
-          : 'Quantising added no line, or the wave has none to compare with.'
-        : undefined,
+    missing: unwantedDb !== null ? undefined : isExact ? isTheWave : noSignal,
   };
 }
 

@@ -26,12 +26,20 @@ export interface ListenPanelProps {
 }
 
 /** Plays the wave before and after it was quantised. It starts with a press only, quietly, and shows how to stop. */
-export function ListenPanel({ cycle, values, playback, onPlaybackChange, range, tableCycles }: ListenPanelProps) {
+export function ListenPanel({
+  cycle,
+  values,
+  playback,
+  onPlaybackChange,
+  range,
+  tableCycles,
+}: ListenPanelProps) {
   const panel = useRef<HTMLElement>(null);
   const [hearing, setHearing] = useState<Hearing>('table');
   const [volumeDb, setVolumeDb] = useState<number>(volumeRangeDb.start);
   const table = { tableLength: values.length, tableCycles };
-  const sampleRateHz = playback.by === 'tone' ? sampleRateOfTone(playback.toneHz, table) : playback.sampleRateHz;
+  const sampleRateHz =
+    playback.by === 'tone' ? sampleRateOfTone(playback.toneHz, table) : playback.sampleRateHz;
   const { mode } = playback;
   const sound = useMemo<Sound>(
     () => ({ cycle, values, range, mode, sampleRateHz }),
@@ -52,8 +60,8 @@ export function ListenPanel({ cycle, values, playback, onPlaybackChange, range, 
             <code>m·fs/N</code> up to there, without the images that the pin’s steps add.
           </p>
           <p>
-            Ideal curve: the wave before it was quantised. Quantised table: what the codes stand for. You can change over
-            while it plays. The mean is taken out.
+            Ideal curve: the wave before it was quantised. Quantised table: what the codes stand for. You can
+            change over while it plays. The mean is taken out.
           </p>
         </Explain>
       </h3>
@@ -83,19 +91,20 @@ export function ListenPanel({ cycle, values, playback, onPlaybackChange, range, 
       {beyond !== null && (
         <p className="field-description">
           {beyond.count === 1 ? 'One line lies' : `${beyond.count} lines lie`} above{' '}
-          {formatQuantity(beyond.limitHz, 'Hz', { significant: 4 })}, half of the rate at which this browser plays, and{' '}
-          {beyond.count === 1 ? 'is' : 'are'} not played.
+          {formatQuantity(beyond.limitHz, 'Hz', { significant: 4 })}, half of the rate at which this browser
+          plays, and {beyond.count === 1 ? 'is' : 'are'} not played.
         </p>
       )}
       {range === 'unipolar' && (
         <p className="field-description">
-          This table is unipolar, as for a lamp’s duty. What is played is its swing about its mean, scaled so that the whole
-          of 0…1 is as loud as −1…1 of a bipolar table; a slow fade makes no sound of its own.
+          This table is unipolar, as for a lamp’s duty. What is played is its swing about its mean, scaled so
+          that the whole of 0…1 is as loud as −1…1 of a bipolar table; a slow fade makes no sound of its own.
         </p>
       )}
       <Caution title="Mind your hearing">
-        Take headphones off, or turn the device down, before you press play; then raise the volume slowly. Whether a warning or
-        alarm tone is fit for its use is for the standard that applies and a qualified engineer to say, not for this preview.
+        Take headphones off, or turn the device down, before you press play; then raise the volume slowly.
+        Whether a warning or alarm tone is fit for its use is for the standard that applies and a qualified
+        engineer to say, not for this preview.
       </Caution>
       {status === 'playing' && <PlayingFlag panel={panel} onStop={toggle} />}
     </section>

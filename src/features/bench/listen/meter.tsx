@@ -30,8 +30,9 @@ export function Meter({ preview, isPlaying }: { preview: AudioPreview | null; is
           Strongest lines as played
           <Explain title="Strongest lines as played">
             <p>
-              Sines found in what this browser plays, over the last third of a second: frequency, and level relative to the
-              strongest. Lines closer than 18 Hz, and lines more than 55 dB below the strongest, are not told apart.
+              Sines found in what this browser plays, over the last third of a second: frequency, and level
+              relative to the strongest. Lines closer than 18 Hz, and lines more than 55 dB below the
+              strongest, are not told apart.
             </p>
           </Explain>
         </caption>
@@ -61,5 +62,9 @@ export function Meter({ preview, isPlaying }: { preview: AudioPreview | null; is
 }
 
 function Level({ value }: { value: number | undefined }) {
-  return <span className="meter-figure">{value === undefined ? '–' : formatQuantity(value, 'dBFS', { decimals: 1 })}</span>;
+  return (
+    <span className="meter-figure">
+      {value === undefined ? '–' : formatQuantity(value, 'dBFS', { decimals: 1 })}
+    </span>
+  );
 }

@@ -20,7 +20,7 @@ export function PlaybackFields({ playback, onChange, table }: PlaybackFieldsProp
   const sampleRateHz = isByTone ? shown(sampleRateOfTone(playback.toneHz, table)) : playback.sampleRateHz;
   const { tableLength, tableCycles } = table;
   return (
-    <div className="field-pair">
+    <>
       <ChoiceField
         label="Played"
         value={playback.mode}
@@ -30,29 +30,41 @@ export function PlaybackFields({ playback, onChange, table }: PlaybackFieldsProp
         ]}
         onChange={(mode) => onChange({ ...playback, mode })}
       />
-      {isLoop && (
+      <div className="field-pair">
+        {isLoop && (
+          <NumberField
+            label="Tone"
+            unit="Hz"
+            min={lowestHz}
+            allowed="a number of hertz, 0.001 or more"
+            description={
+              isByTone
+                ? toneHint(toneHz)
+                : `K·fs/N = ${tableCycles} · fs/${tableLength}, from the sample rate`
+            }
+            value={toneHz}
+            onChange={(next) => onChange({ ...playback, by: 'tone', toneHz: next, sampleRateHz })}
+          />
+        )}
         <NumberField
-          label="Tone"
+          label="Sample rate"
           unit="Hz"
           min={lowestHz}
-          allowed="a number of hertz, 0.001 or more"
-          description={isByTone ? toneHint(toneHz) : `K·fs/N = ${tableCycles} · fs/${tableLength}, from the sample rate`}
-          value={toneHz}
-          onChange={(next) => onChange({ ...playback, by: 'tone', toneHz: next, sampleRateHz })}
+          max={highestRateHz}
+          step={100}
+          allowed="a number of hertz from 0.001 to 100 MHz"
+          description={
+            isByTone && isLoop
+              ? `tone·N/K = tone · ${tableLength}/${tableCycles}, from the tone`
+              : isLoop
+                ? 'Entries a second; set here, and the tone follows.'
+                : 'Entries a second.'
+          }
+          value={sampleRateHz}
+          onChange={(next) => onChange({ ...playback, by: 'sampleRate', sampleRateHz: next, toneHz })}
         />
-      )}
-      <NumberField
-        label="Sample rate"
-        unit="Hz"
-        min={lowestHz}
-        max={highestRateHz}
-        step={100}
-        allowed="a number of hertz from 0.001 to 100 MHz"
-        description={isByTone && isLoop ? `tone·N/K = tone · ${tableLength}/${tableCycles}, from the tone` : isLoop ? 'Entries a second; set here, and the tone follows.' : 'Entries a second.'}
-        value={sampleRateHz}
-        onChange={(next) => onChange({ ...playback, by: 'sampleRate', sampleRateHz: next, toneHz })}
-      />
-    </div>
+      </div>
+    </>
   );
 }
 
@@ -62,9 +74,13 @@ function shown(hz: number): number {
 }
 
 function passHint(seconds: number): string {
-  return Number.isFinite(seconds) ? `One pass lasts ${formatQuantity(seconds, 's', { significant: 3 })}.` : 'One pass.';
+  return Number.isFinite(seconds)
+    ? `One pass lasts ${formatQuantity(seconds, 's', { significant: 3 })}.`
+    : 'One pass.';
 }
 
 function toneHint(toneHz: number): string {
-  return toneHz < 20 ? 'Below hearing: only its higher harmonics can be heard.' : 'Set here; the sample rate follows.';
+  return toneHz < 20
+    ? 'Below hearing: only its higher harmonics can be heard.'
+    : 'Set here; the sample rate follows.';
 }

@@ -12,7 +12,10 @@ export interface Beyond {
 }
 
 /** How many lines of the loop are too high for this browser to play. */
-export function useBeyond({ cycle, sampleRateHz, mode }: Sound, contextRateHz = usualContextRateHz): Beyond | null {
+export function useBeyond(
+  { cycle, sampleRateHz, mode }: Sound,
+  contextRateHz = usualContextRateHz,
+): Beyond | null {
   const [beyond, setBeyond] = useState<Beyond | null>(null);
   // No line of a table lies above half of its own rate.
   const canBe = mode === 'loop' && sampleRateHz >= contextRateHz && Number.isFinite(sampleRateHz);
@@ -21,7 +24,8 @@ export function useBeyond({ cycle, sampleRateHz, mode }: Sound, contextRateHz = 
     let isOver = false;
     const timer = setTimeout(async () => {
       const { linesBeyond } = await import('../../../audio/player.ts');
-      if (!isOver) setBeyond({ count: linesBeyond(cycle, sampleRateHz, contextRateHz), limitHz: contextRateHz / 2 });
+      if (!isOver)
+        setBeyond({ count: linesBeyond(cycle, sampleRateHz, contextRateHz), limitHz: contextRateHz / 2 });
     }, pauseMs);
     return () => {
       isOver = true;

@@ -1,5 +1,11 @@
 import { useCallback, useEffect, useRef, useState, useSyncExternalStore } from 'react';
-import { openAudioContext, type AudioPreview, type Hearing, type PreviewState, type Sound } from '../../../audio/index.ts';
+import {
+  openAudioContext,
+  type AudioPreview,
+  type Hearing,
+  type PreviewState,
+  type Sound,
+} from '../../../audio/index.ts';
 
 const silent: PreviewState = { status: 'silent', trouble: null };
 const noListeners = () => () => undefined;
@@ -62,7 +68,8 @@ export function usePreview(sound: Sound, hearing: Hearing, volumeDb: number): Pr
 /** The context is made within the press itself; only then is the rest waited for. */
 async function openPreview(): Promise<AudioPreview> {
   const context = openAudioContext();
-  if (context === null) throw new Error('This browser cannot play: it has no Web Audio, or too many pages use it already.');
+  if (context === null)
+    throw new Error('This browser cannot play: it has no Web Audio, or too many pages use it already.');
   try {
     const { AudioPreview } = await import('../../../audio/player.ts');
     return new AudioPreview(context);

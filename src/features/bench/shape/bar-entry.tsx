@@ -29,7 +29,8 @@ export function BarEntry({ harmonic, start, at, onDone, onCancel }: BarEntryProp
     const reading = parseQuantity(text);
     if (reading.kind === 'number') close(() => onDone(reading.value));
     else if (reading.kind === 'empty') close(onCancel);
-    else if (reading.kind === 'ask') setProblem(`${text} can be read as ${reading.readings.map((one) => one.text).join(' or ')}.`);
+    else if (reading.kind === 'ask')
+      setProblem(`${text} can be read as ${reading.readings.map((one) => one.text).join(' or ')}.`);
     else setProblem(`“${text}” is not allowed; allowed: a finite number, or dB as in −6 dB.`);
   };
 

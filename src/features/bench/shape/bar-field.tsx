@@ -32,7 +32,8 @@ export function BarField({ source, onChange, shown, highestFitting, reach }: Bar
   const [active, setActive] = useState(1);
   const [hovered, setHovered] = useState<number | null>(null);
   const [entry, setEntry] = useState<{ harmonic: number; start: string | number } | null>(null);
-  const cells = useShownCells(shown);
+  const { frame, onScroll, pitch, first, last, hasEarlier, hasLater, turn, bringIntoSight, middleInSight } =
+    useShownCells(shown);
 
   const { partials } = source;
   const bars = barsOf(partials);
@@ -47,26 +48,43 @@ export function BarField({ source, onChange, shown, highestFitting, reach }: Bar
   const ceiling = heldCeiling ?? fitted;
   const stop = Math.min(active, shown);
 
+  const focusNow = (harmonic: number) =>
+    plane.current
+      ?.querySelector<HTMLElement>(`[data-harmonic="${harmonic}"]`)
+      ?.focus({ preventScroll: true });
   const focusBar = (harmonic: number) => {
     setActive(harmonic);
-    cells.bringIntoSight(harmonic);
+    bringIntoSight(harmonic);
     // The bar may come into the page only with the next paint.
-    requestAnimationFrame(() => {
-      plane.current?.querySelector<HTMLElement>(`[data-harmonic="${harmonic}"]`)?.focus({ preventScroll: true });
-    });
+    requestAnimationFrame(() => focusNow(harmonic));
   };
 
+  // A stroke is measured from where the field stood when it began, should the page move under it.
+  const heldBox = useRef<DOMRect | null>(null);
   const placeOf = (event: PointerEvent<HTMLElement>) => {
-    const box = event.currentTarget.getBoundingClientRect();
-    const harmonic = 1 + Math.floor((event.clientX - box.left) / cells.pitch);
+    const box = heldBox.current ?? boxOf(frame.current, event.currentTarget);
+    const scrolled = frame.current?.scrollLeft ?? 0;
+    const harmonic = 1 + Math.floor((event.clientX - box.left + scrolled) / pitch);
     const height = (0.5 - (event.clientY - box.top) / box.height) / barShare;
-    return { harmonic: Math.min(shown, Math.max(1, harmonic)), amplitude: snapToGrid(height * ceiling, ceiling) };
+    return {
+      harmonic: Math.min(shown, Math.max(1, harmonic)),
+      amplitude: snapToGrid(height * ceiling, ceiling),
+    };
   };
-  const strokes = useBarStrokes(source, onChange, placeOf, focusBar);
+  // The focus moves before the first change and after the last: leaving a field ends a step of undo.
+  const strokes = useBarStrokes(source, onChange, placeOf, {
+    onBegin: focusNow,
+    onPass: setActive,
+    onEnd: focusBar,
+  });
+  const endStroke = () => {
+    heldBox.current = null;
+    setHeldCeiling(null);
+  };
 
   const onKeyDown = (event: KeyboardEvent<HTMLElement>) => {
     if (event.ctrlKey || event.metaKey || event.altKey) return;
-    if (event.key === 'Escape' && strokes.drop()) return setHeldCeiling(null);
+    if (event.key === 'Escape' && strokes.drop()) return endStroke();
     const harmonic = Number((event.target as HTMLElement).dataset.harmonic);
     if (!(harmonic >= 1)) return;
     const act = actOfKey(event, { source, harmonic, amplitude: amplitudeOf(harmonic), shown });
@@ -82,11 +100,11 @@ export function BarField({ source, onChange, shown, highestFitting, reach }: Bar
     focusBar(harmonic);
   };
 
-  const every = labelEvery(cells.pitch);
+  const every = labelEvery(pitch);
   const told = hovered ?? stop;
   const cellsInSight: number[] = [];
-  for (let harmonic = cells.first; harmonic <= cells.last; harmonic += 1) cellsInSight.push(harmonic);
-  if (stop < cells.first || stop > cells.last) cellsInSight.push(stop);
+  for (let harmonic = first; harmonic <= last; harmonic += 1) cellsInSight.push(harmonic);
+  if (stop < first || stop > last) cellsInSight.push(stop);
 
   return (
     <div className="bar-field" role="group" aria-label="Harmonics as bars" aria-describedby={hintId}>
@@ -95,10 +113,10 @@ export function BarField({ source, onChange, shown, highestFitting, reach }: Bar
         <span aria-hidden="true" className="bar-told-figure">
           {tellBar(amplitudeOf(told), strongest)}
         </span>
-        {(cells.hasEarlier || cells.hasLater) && (
+        {(hasEarlier || hasLater) && (
           <span className="bar-turns">
-            <TurnButton label="Lower harmonics" direction={-1} isThere={cells.hasEarlier} onTurn={cells.turn} />
-            <TurnButton label="Higher harmonics" direction={1} isThere={cells.hasLater} onTurn={cells.turn} />
+            <TurnButton label="Lower harmonics" direction={-1} isThere={hasEarlier} onTurn={turn} />
+            <TurnButton label="Higher harmonics" direction={1} isThere={hasLater} onTurn={turn} />
           </span>
         )}
       </div>
@@ -108,17 +126,18 @@ export function BarField({ source, onChange, shown, highestFitting, reach }: Bar
           <span>0</span>
           <span>{formatQuantity(-ceiling)}</span>
         </div>
-        <div ref={cells.frame} className="bar-scroll" tabIndex={-1} onScroll={cells.onScroll}>
+        <div ref={frame} className="bar-scroll" tabIndex={-1} onScroll={onScroll}>
           <div
             ref={plane}
             className="bar-plane"
-            style={{ width: shown * cells.pitch }}
+            style={{ width: shown * pitch }}
             onKeyDown={onKeyDown}
             onFocus={(event) => {
               const harmonic = Number(event.target.dataset.harmonic);
               if (harmonic >= 1) setActive(harmonic);
             }}
             onPointerDown={(event) => {
+              heldBox.current = boxOf(frame.current, event.currentTarget);
               setHeldCeiling(fitted);
               strokes.onPointerDown(event);
             }}
@@ -127,18 +146,18 @@ export function BarField({ source, onChange, shown, highestFitting, reach }: Bar
               strokes.onPointerMove(event);
             }}
             onPointerUp={(event) => {
-              setHeldCeiling(null);
+              endStroke();
               strokes.onPointerUp(event);
             }}
             onPointerCancel={(event) => {
-              setHeldCeiling(null);
+              endStroke();
               strokes.onPointerCancel(event);
             }}
             onPointerLeave={() => setHovered(null)}
           >
             {highestFitting < shown && (
-              <div className="bar-beyond" style={{ left: highestFitting * cells.pitch }}>
-                <span>{(shown - highestFitting) * cells.pitch > 64 && 'left out'}</span>
+              <div className="bar-beyond" style={{ left: highestFitting * pitch }}>
+                <span>{(shown - highestFitting) * pitch > 64 && 'left out'}</span>
               </div>
             )}
             <div className="bar-zero" />
@@ -148,19 +167,19 @@ export function BarField({ source, onChange, shown, highestFitting, reach }: Bar
                 harmonic={harmonic}
                 amplitude={amplitudeOf(harmonic)}
                 ceiling={ceiling}
-                left={(harmonic - 1) * cells.pitch}
-                width={cells.pitch}
+                left={(harmonic - 1) * pitch}
+                width={pitch}
                 isLeftOut={harmonic > highestFitting}
                 isStop={harmonic === stop}
                 count={bars.get(harmonic)?.count ?? 0}
               />
             ))}
           </div>
-          <div className="bar-numbers" style={{ width: shown * cells.pitch }} aria-hidden="true">
+          <div className="bar-numbers" style={{ width: shown * pitch }} aria-hidden="true">
             {cellsInSight
               .filter((harmonic) => harmonic === 1 || harmonic % every === 0)
               .map((harmonic) => (
-                <span key={harmonic} style={{ left: (harmonic - 0.5) * cells.pitch }}>
+                <span key={harmonic} style={{ left: (harmonic - 0.5) * pitch }}>
                   {harmonic}
                 </span>
               ))}
@@ -171,7 +190,7 @@ export function BarField({ source, onChange, shown, highestFitting, reach }: Bar
             key={entry.harmonic}
             harmonic={entry.harmonic}
             start={entry.start}
-            at={cells.middleInSight(entry.harmonic)}
+            at={middleInSight(entry.harmonic)}
             onDone={(amplitude) => {
               onChange(setBar(source, { harmonic: entry.harmonic, amplitude }));
               closeEntry(entry.harmonic);
@@ -181,11 +200,18 @@ export function BarField({ source, onChange, shown, highestFitting, reach }: Bar
         )}
       </div>
       <p id={hintId} className="field-description">
-        Drag to draw. Arrow keys walk and set a bar, with Shift in steps of 0.1; digits set it exactly; Delete takes its
-        partial away.
+        Drag to draw. Arrow keys walk and set a bar, with Shift in steps of 0.1; digits set it exactly; Delete
+        takes its partial away.
       </p>
     </div>
   );
+}
+
+/** Left edge of the scrolling box, top and height of the plane in it. */
+function boxOf(frame: HTMLElement | null, plane: HTMLElement): DOMRect {
+  const { top, height } = plane.getBoundingClientRect();
+  const { left, width } = (frame ?? plane).getBoundingClientRect();
+  return new DOMRect(left, top, width, height);
 }
 
 interface TurnButtonProps {
@@ -211,5 +237,7 @@ function TurnButton({ label, direction, isThere, onTurn }: TurnButtonProps) {
 
 function tellBar(amplitude: number, strongest: number): string {
   const height = formatQuantity(amplitude);
-  return amplitude === 0 ? height : `${height} · ${formatQuantity(relativeDb(amplitude, strongest), 'dB', { decimals: 1 })}`;
+  return amplitude === 0
+    ? height
+    : `${height} · ${formatQuantity(relativeDb(amplitude, strongest), 'dB', { decimals: 1 })}`;
 }

@@ -20,10 +20,16 @@ const fine = 0.01;
 const coarse = 0.1;
 
 /** Reads a key on a focused bar; `null` where the field has no use for it. */
-export function actOfKey({ key, shiftKey }: { key: string; shiftKey: boolean }, at: BarContext): BarAct | null {
+export function actOfKey(
+  { key, shiftKey }: { key: string; shiftKey: boolean },
+  at: BarContext,
+): BarAct | null {
   const { source, harmonic, amplitude, shown } = at;
   const go = (goal: number): BarAct => ({ kind: 'go', harmonic: Math.min(shown, Math.max(1, goal)) });
-  const by = (step: number): BarAct => ({ kind: 'change', next: setBar(source, { harmonic, amplitude: addStep(amplitude, step) }) });
+  const by = (step: number): BarAct => ({
+    kind: 'change',
+    next: setBar(source, { harmonic, amplitude: addStep(amplitude, step) }),
+  });
   switch (key) {
     case 'ArrowLeft':
       return go(harmonic - 1);

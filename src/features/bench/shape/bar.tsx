@@ -21,7 +21,16 @@ interface BarProps {
  * One harmonic as a slider. It handles nothing by itself: the field does, so that a drag redraws only the bars it
  * changes.
  */
-export const Bar = memo(function Bar({ harmonic, amplitude, ceiling, left, width, isLeftOut, isStop, count }: BarProps) {
+export const Bar = memo(function Bar({
+  harmonic,
+  amplitude,
+  ceiling,
+  left,
+  width,
+  isLeftOut,
+  isStop,
+  count,
+}: BarProps) {
   const share = Math.min(1, Math.abs(amplitude) / ceiling);
   const words = [
     `harmonic ${harmonic}, amplitude ${amplitude}`,
@@ -42,10 +51,16 @@ export const Bar = memo(function Bar({ harmonic, amplitude, ceiling, left, width
       className={joinClasses('bar', isLeftOut && 'bar-left-out')}
       style={{ left, width }}
     >
-      <div
-        className={joinClasses('bar-fill', amplitude < 0 ? 'bar-down' : 'bar-up', Math.abs(amplitude) > ceiling && 'bar-cut')}
-        style={{ height: count === 0 ? 0 : `${share * barShare * 100}%` }}
-      />
+      {amplitude !== 0 && (
+        <div
+          className={joinClasses(
+            'bar-fill',
+            amplitude < 0 ? 'bar-down' : 'bar-up',
+            Math.abs(amplitude) > ceiling && 'bar-cut',
+          )}
+          style={{ height: `${share * barShare * 100}%` }}
+        />
+      )}
       {count > 0 && amplitude === 0 && <div className="bar-rest" />}
       {count > 1 && <div className="bar-many" />}
     </div>

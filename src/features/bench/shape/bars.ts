@@ -38,7 +38,7 @@ export function drawBars(source: HarmonicsSource, from: BarPlace, to: BarPlace):
   const distance = Math.abs(to.harmonic - from.harmonic);
   let hasChanged = false;
   const bars = barsOf(partials);
-  // A list in order is added to in order, from the highest down, so that the places found stay right.
+  // Put in at the end: until then the places found stay right.
   const added: Partial[] = [];
   for (let i = distance; i >= 0; i -= 1) {
     const harmonic = from.harmonic + i * step;
@@ -88,7 +88,11 @@ export function removePartial(source: HarmonicsSource, index: number): Harmonics
   return { ...source, partials: source.partials.toSpliced(index, 1) };
 }
 
-export function setPartial(source: HarmonicsSource, index: number, part: { [Name in keyof Partial]?: number }): HarmonicsSource {
+export function setPartial(
+  source: HarmonicsSource,
+  index: number,
+  part: { [Name in keyof Partial]?: number },
+): HarmonicsSource {
   return { ...source, partials: source.partials.with(index, { ...source.partials[index], ...part }) };
 }
 
@@ -111,7 +115,8 @@ export function mergeDoubles(source: HarmonicsSource): HarmonicsSource {
   source.partials.forEach((partial, index) => {
     const bar = bars.get(partial.harmonic);
     if (bar === undefined || bar.count === 1) merged.push(partial);
-    else if (bar.index === index) merged.push(sumOf(source.partials.filter(({ harmonic }) => harmonic === partial.harmonic)));
+    else if (bar.index === index)
+      merged.push(sumOf(source.partials.filter(({ harmonic }) => harmonic === partial.harmonic)));
   });
   return { ...source, partials: merged };
 }

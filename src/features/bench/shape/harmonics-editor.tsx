@@ -1,6 +1,13 @@
 import { useState } from 'react';
 import type { HarmonicsSource, Problem } from '../../../../shared/contract/index.ts';
-import { Button, ChoiceField, Explain, NumberField, SelectField, type SelectOption } from '../../../components/index.ts';
+import {
+  Button,
+  ChoiceField,
+  Explain,
+  NumberField,
+  SelectField,
+  type SelectOption,
+} from '../../../components/index.ts';
 import { BarField } from './bar-field.tsx';
 import { barsOf, highestFitting as highestOf, mergeDoubles } from './bars.ts';
 import type { Reach } from './bar-scale.ts';
@@ -81,8 +88,8 @@ export function HarmonicsEditor({ source, onChange, problems, tableLength, cycle
             <Explain title="Harmonics">
               <p>f(t) = offset + Σ amplitude · sin(2π · harmonic · t + phase), t in cycles.</p>
               <p>
-                A table of N entries with K cycles holds harmonics below N/(2K), here up to {fitting.toLocaleString('en')}. What
-                lies above is left out and marked.
+                A table of N entries with K cycles holds harmonics below N/(2K), here up to{' '}
+                {fitting.toLocaleString('en')}. What lies above is left out and marked.
               </p>
             </Explain>
           }

@@ -1,5 +1,10 @@
 import { memo, useState } from 'react';
-import { limits, type HarmonicsSource, type Partial, type Problem } from '../../../../shared/contract/index.ts';
+import {
+  limits,
+  type HarmonicsSource,
+  type Partial,
+  type Problem,
+} from '../../../../shared/contract/index.ts';
 import { formatQuantity } from '../../../../shared/quantities/index.ts';
 import { Button, IconButton, NumberField, icons } from '../../../components/index.ts';
 import { addPartial, isInOrder, putInOrder, removePartial, setPartial } from './bars.ts';
@@ -32,7 +37,9 @@ export function PartialsTable({ source, onChange, problems, highestFitting }: Pa
 
   const strongest = partials.reduce((most, { amplitude }) => Math.max(most, Math.abs(amplitude)), 0);
   const first = page * rowsOfPage;
-  const faultElsewhere = rowsAtFault(problems, 'partials').find((row) => row < first || row >= first + rowsOfPage);
+  const faultElsewhere = rowsAtFault(problems, 'partials').find(
+    (row) => row < first || row >= first + rowsOfPage,
+  );
   const isFull = partials.length >= limits.partials.max;
 
   return (

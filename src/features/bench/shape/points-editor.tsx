@@ -12,13 +12,26 @@ interface PointsEditorProps extends TableFrame {
   problems: readonly Problem[];
 }
 
-const startNames: Record<PointStart, string> = { ramp: 'Ramp', step: 'Step', trapezoid: 'Trapezoid', fade: 'Fade' };
+const startNames: Record<PointStart, string> = {
+  ramp: 'Ramp',
+  step: 'Step',
+  trapezoid: 'Trapezoid',
+  fade: 'Fade',
+};
 
 const interpolations: readonly SelectOption<PointsSource['interpolation']>[] = [
   { value: 'step', label: 'Step', hint: 'Holds each value until the next point.' },
   { value: 'linear', label: 'Linear', hint: 'Straight lines from point to point.' },
-  { value: 'monotone', label: 'Monotone cubic', hint: 'Smooth, and never beyond the points: flat between equal ones.' },
-  { value: 'spline', label: 'Spline', hint: 'The smoothest curve, without a kink in slope or bend; it may swing beyond the points. At least 3 points.' },
+  {
+    value: 'monotone',
+    label: 'Monotone cubic',
+    hint: 'Smooth, and never beyond the points: flat between equal ones.',
+  },
+  {
+    value: 'spline',
+    label: 'Spline',
+    hint: 'The smoothest curve, without a kink in slope or bend; it may swing beyond the points. At least 3 points.',
+  },
 ];
 
 /** A wave as a closed curve through points. */
@@ -54,8 +67,8 @@ export function PointsEditor({ source, onChange, problems, range, tableLength, c
         description="Takes away the harmonics that the table cannot hold, so that corners and steps do not fold back as wrong tones. Edges then ring a little."
       />
       <p className="field-description">
-        Drag the points on the drawing of the cycle, or set them here. The curve closes: after the last point it goes on
-        to the first.
+        Drag the points on the drawing of the cycle, or set them here. The curve closes: after the last point
+        it goes on to the first.
       </p>
       <PointsTable source={source} onChange={onChange} problems={problems} />
     </div>

@@ -19,7 +19,11 @@ export interface HeightScale {
 const asItIs: HeightScale = { toPlot: (y) => y, fromPlot: (y) => y };
 
 /** Props for the cycle plot where the wave is made of points; none where it is made otherwise. */
-export function pointsOverlay(source: Source, onChange: OnChange, scale: HeightScale = asItIs): PointsOverlay {
+export function pointsOverlay(
+  source: Source,
+  onChange: OnChange,
+  scale: HeightScale = asItIs,
+): PointsOverlay {
   if (source.kind !== 'points') return {};
   const { points } = source;
   const fewest = source.interpolation === 'spline' ? limits.splinePoints.min : limits.points.min;

@@ -29,7 +29,9 @@ export function PointsTable({ source, onChange, problems }: PointsTableProps) {
   }));
 
   const first = page * rowsOfPage;
-  const faultElsewhere = rowsAtFault(problems, 'points').find((row) => row < first || row >= first + rowsOfPage);
+  const faultElsewhere = rowsAtFault(problems, 'points').find(
+    (row) => row < first || row >= first + rowsOfPage,
+  );
   const fewest = source.interpolation === 'spline' ? limits.splinePoints.min : limits.points.min;
   const isFull = points.length >= limits.points.max;
 

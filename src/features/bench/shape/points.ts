@@ -1,38 +1,56 @@
 import type { Point, PointsSource } from '../../../../shared/contract/index.ts';
 
-/** The least that a dragged point keeps from its neighbours, in cycles. */
+/** Grid of a drag, in cycles and in units of full scale; a dragged point keeps that far from its neighbours. */
 export const leastGap = 0.001;
-/** Digits after the point that a drag leaves: a thousandth of a cycle, a thousandth of full scale. */
-const draggedDigits = 3;
+const dragDigits = 3;
+/** A smaller move is meant to be small, like that of a key by one entry of a long table: it takes a finer grid. */
+const smallMove = 0.0015;
+const fineDigits = 6;
 
-const round = (value: number, digits = draggedDigits) => Number(value.toFixed(digits)) + 0;
+const round = (value: number, digits: number) => Number(value.toFixed(digits)) + 0;
+
+/** A drawn height, to a thousandth of the curve's own size: three places where its highest point is 1. */
+function tidyY(points: readonly Point[], y: number): number {
+  const size = points.reduce((most, point) => Math.max(most, Math.abs(point.y)), 0);
+  const digits = size > 0 ? dragDigits - Math.ceil(Math.log10(size)) : dragDigits;
+  return round(y, Math.min(15, Math.max(0, digits)));
+}
 
 /**
  * Where a point may be moved to: it stops just short of its neighbours, and x stays in 0 ≤ x < 1. Neighbours that stand
  * closer than the grid leave it a place between them all the same.
  */
 export function boundedX(points: readonly Point[], index: number, x: number): number {
+  const isSmall = Math.abs(x - points[index].x) < smallMove;
+  const digits = isSmall ? fineDigits : dragDigits;
+  const gap = 10 ** -digits;
   const before = index > 0 ? points[index - 1].x : -Infinity;
   const after = index < points.length - 1 ? points[index + 1].x : 1;
-  const least = index > 0 ? round(before + leastGap) : 0;
-  const most = round(after - leastGap);
-  const held = round(Math.min(most, Math.max(least, x)));
+  const least = index > 0 ? round(before + gap, digits) : 0;
+  const most = round(after - gap, digits);
+  const held = round(Math.min(most, Math.max(least, x)), digits);
   if (held > before && held < after && held >= 0) return held;
   const halfway = (Math.max(0, before) + after) / 2;
   return halfway > before && halfway < after ? halfway : points[index].x;
 }
 
 export function movePoint(source: PointsSource, index: number, x: number, y: number): PointsSource {
-  const point = { x: boundedX(source.points, index, x), y: round(y) };
+  const point = { x: boundedX(source.points, index, x), y: tidyY(source.points, y) };
   return { ...source, points: source.points.with(index, point) };
 }
 
 /** Adds a point where x falls; where a point stands there already it is moved to y instead. */
 export function addPoint(source: PointsSource, x: number, y: number): PointsSource {
-  const place = Math.min(1 - leastGap, Math.max(0, round(x)));
+  const place = Math.min(1 - leastGap, Math.max(0, round(x, dragDigits)));
   const at = source.points.findIndex((point) => point.x >= place);
-  if (at >= 0 && source.points[at].x === place) return setPoint(source, at, { y: round(y) });
-  return { ...source, points: source.points.toSpliced(at < 0 ? source.points.length : at, 0, { x: place, y: round(y) }) };
+  if (at >= 0 && source.points[at].x === place) return setPoint(source, at, { y: tidyY(source.points, y) });
+  return {
+    ...source,
+    points: source.points.toSpliced(at < 0 ? source.points.length : at, 0, {
+      x: place,
+      y: tidyY(source.points, y),
+    }),
+  };
 }
 
 /**
@@ -43,9 +61,12 @@ export function insertAfter(source: PointsSource, index: number): PointsSource {
   const here = source.points[index];
   const next = source.points[index + 1] ?? endOfCycle(source);
   const isBetween = (x: number) => x > here.x && x < next.x;
-  const x = [round((here.x + next.x) / 2, 6), (here.x + next.x) / 2].find(isBetween);
+  const x = [round((here.x + next.x) / 2, fineDigits), (here.x + next.x) / 2].find(isBetween);
   if (x === undefined) return source;
-  return { ...source, points: source.points.toSpliced(index + 1, 0, { x, y: round((here.y + next.y) / 2, 6) }) };
+  return {
+    ...source,
+    points: source.points.toSpliced(index + 1, 0, { x, y: round((here.y + next.y) / 2, fineDigits) }),
+  };
 }
 
 /** Where the straight line from the last point to the first one, a cycle on, passes x = 1. */
@@ -58,7 +79,11 @@ export function removePoint(source: PointsSource, index: number): PointsSource {
   return { ...source, points: source.points.toSpliced(index, 1) };
 }
 
-export function setPoint(source: PointsSource, index: number, part: { x?: number; y?: number }): PointsSource {
+export function setPoint(
+  source: PointsSource,
+  index: number,
+  part: { x?: number; y?: number },
+): PointsSource {
   return { ...source, points: source.points.with(index, { ...source.points[index], ...part }) };
 }
 

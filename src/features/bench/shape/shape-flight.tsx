@@ -21,8 +21,16 @@ export interface ShapeFlightProps {
 }
 
 const kinds: Record<Kind, SelectOption<Kind>> = {
-  harmonics: { value: 'harmonics', label: 'Harmonics', hint: 'A sum of sines: for tones, and for standard shapes that stay clean.' },
-  points: { value: 'points', label: 'Points', hint: 'A curve through points: for ramps, fades and waves drawn by hand.' },
+  harmonics: {
+    value: 'harmonics',
+    label: 'Harmonics',
+    hint: 'A sum of sines: for tones, and for standard shapes that stay clean.',
+  },
+  points: {
+    value: 'points',
+    label: 'Points',
+    hint: 'A curve through points: for ramps, fades and waves drawn by hand.',
+  },
   samples: { value: 'samples', label: 'Samples' },
   mix: { value: 'mix', label: 'Mix' },
 };
@@ -30,7 +38,9 @@ const kinds: Record<Kind, SelectOption<Kind>> = {
 /** The first flight: what the wave is made of. */
 export function ShapeFlight({ source, onChange, problems, tableLength, cycles, range }: ShapeFlightProps) {
   const kept = useKeptWork(onChange);
-  const others: Kind[] = (['samples', 'mix'] as const).filter((kind) => kind === source.kind || kept.kinds.includes(kind));
+  const others: Kind[] = (['samples', 'mix'] as const).filter(
+    (kind) => kind === source.kind || kept.kinds.includes(kind),
+  );
   const isSound = !problems.some(({ path }) => path.startsWith('source'));
   const wholeProblem = problemAt(problems, 'source');
   const change: OnChange = (next, how) => kept.change(source, next, how);
@@ -52,9 +62,9 @@ export function ShapeFlight({ source, onChange, problems, tableLength, cycles, r
       {(source.kind === 'samples' || source.kind === 'mix') && (
         <div className="shape-note">
           <p>
-            This wave is {source.kind === 'samples' ? 'one recorded cycle' : 'a mix'}: {sayInWords(source)}. It is kept, built
-            and exported as it is; its parts cannot be changed here. Going over to harmonics or points sets it aside, and
-            one press or undo brings it back.
+            This wave is {source.kind === 'samples' ? 'one recorded cycle' : 'a mix'}: {sayInWords(source)}.
+            It is kept, built and exported as it is; its parts cannot be changed here. Going over to harmonics
+            or points sets it aside, and one press or undo brings it back.
           </p>
         </div>
       )}

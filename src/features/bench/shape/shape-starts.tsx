@@ -1,4 +1,4 @@
-import { useState } from 'react';
+import { useMemo, useState } from 'react';
 import { limits, type HarmonicsSource } from '../../../../shared/contract/index.ts';
 import { ChoiceField, NumberField } from '../../../components/index.ts';
 import type { OnChange } from './change.ts';
@@ -25,6 +25,10 @@ interface Wishes {
   readonly dutyPercent: number;
 }
 
+function sourceOf(shape: Shape, { extent, highest, dutyPercent }: Wishes, fitting: number): HarmonicsSource {
+  return shapeSource(shape, { highest: extent === 'table' ? fitting : highest, duty: dutyPercent / 100 });
+}
+
 /**
  * Standard shapes to start from. While the wave is still the shape as it was set, how far its series goes and its duty
  * can be changed; once it has been edited, the next press starts anew.
@@ -34,16 +38,16 @@ export function ShapeStarts({ source, onChange, highestFitting }: ShapeStartsPro
   const [made, setMade] = useState<{ shape: Shape; source: HarmonicsSource } | null>(null);
   const fitting = Math.max(1, highestFitting);
 
-  const sourceOf = (shape: Shape, { extent, highest, dutyPercent }: Wishes) =>
-    shapeSource(shape, { highest: extent === 'table' ? fitting : highest, duty: dutyPercent / 100 });
+  // Kept from change to change: a drag over the bars compares with all of them each time.
+  const wished = useMemo(() => shapes.map((shape) => sourceOf(shape, wishes, fitting)), [wishes, fitting]);
   const start = (shape: Shape, wanted: Wishes, coalesce?: string) => {
-    const next = sourceOf(shape, wanted);
+    const next = sourceOf(shape, wanted, fitting);
     setWishes(wanted);
     setMade({ shape, source: next });
     onChange(next, { coalesce });
   };
 
-  const asWished = shapes.find((shape) => sameHarmonics(sourceOf(shape, wishes), source));
+  const asWished = shapes.find((_, index) => sameHarmonics(wished[index], source));
   const asMade = made !== null && sameHarmonics(made.source, source) ? made.shape : undefined;
   const current = asWished ?? asMade;
 
@@ -72,9 +76,16 @@ export function ShapeStarts({ source, onChange, highestFitting }: ShapeStartsPro
               {
                 value: 'table',
                 label: 'Fill the table',
-                hint: asWished === undefined ? refillHint(names[current], fitting) : fillHint(fitting, highestHeld(current)),
+                hint:
+                  asWished === undefined
+                    ? refillHint(names[current], fitting)
+                    : fillHint(fitting, highestHeld(current)),
               },
-              { value: 'number', label: 'Up to a number', hint: 'The series stops at the harmonic that you set.' },
+              {
+                value: 'number',
+                label: 'Up to a number',
+                hint: 'The series stops at the harmonic that you set.',
+              },
             ]}
             onChange={(extent) => start(current, { ...wishes, extent })}
           />

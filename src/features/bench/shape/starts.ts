@@ -1,4 +1,9 @@
-import { limits, type HarmonicsSource, type Point, type PointsSource } from '../../../../shared/contract/index.ts';
+import {
+  limits,
+  type HarmonicsSource,
+  type Point,
+  type PointsSource,
+} from '../../../../shared/contract/index.ts';
 import { standardShapes } from '../../../../shared/waveform/index.ts';
 
 export const shapes = ['sine', 'triangle', 'sawtooth', 'square', 'pulse'] as const;
@@ -48,7 +53,9 @@ export function sameHarmonics(one: HarmonicsSource, other: HarmonicsSource): boo
       one.partials.length === other.partials.length &&
       one.partials.every((partial, index) => {
         const { harmonic, amplitude, phaseDeg } = other.partials[index];
-        return partial.harmonic === harmonic && partial.amplitude === amplitude && partial.phaseDeg === phaseDeg;
+        return (
+          partial.harmonic === harmonic && partial.amplitude === amplitude && partial.phaseDeg === phaseDeg
+        );
       }))
   );
 }
@@ -75,13 +82,29 @@ export function pointsStart(start: PointStart, { range, tableLength, cycles }: T
     case 'ramp': {
       // The top on the last entry of a cycle, so that the fall takes one step of the table and no entry lies on it.
       const last = tableLength > 2 * cycles && cycles >= 1 ? 1 - cycles / tableLength : 0.99;
-      return source('linear', [{ x: 0, y: low }, { x: Number(last.toFixed(6)), y: 1 }]);
+      return source('linear', [
+        { x: 0, y: low },
+        { x: Number(last.toFixed(6)), y: 1 },
+      ]);
     }
     case 'step':
-      return source('step', [{ x: 0, y: low }, { x: 0.5, y: 1 }]);
+      return source('step', [
+        { x: 0, y: low },
+        { x: 0.5, y: 1 },
+      ]);
     case 'trapezoid':
-      return source('linear', [{ x: 0, y: low }, { x: 0.25, y: 1 }, { x: 0.5, y: 1 }, { x: 0.75, y: low }]);
+      return source('linear', [
+        { x: 0, y: low },
+        { x: 0.25, y: 1 },
+        { x: 0.5, y: 1 },
+        { x: 0.75, y: low },
+      ]);
     case 'fade':
-      return source('monotone', [{ x: 0, y: low }, { x: 0.4, y: 1 }, { x: 0.5, y: 1 }, { x: 0.9, y: low }]);
+      return source('monotone', [
+        { x: 0, y: low },
+        { x: 0.4, y: 1 },
+        { x: 0.5, y: 1 },
+        { x: 0.9, y: low },
+      ]);
   }
 }

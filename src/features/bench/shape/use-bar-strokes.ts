@@ -31,7 +31,7 @@ export function useBarStrokes(
   source: HarmonicsSource,
   onChange: OnChange<HarmonicsSource>,
   placeOf: (event: PointerEvent<HTMLElement>) => BarPlace,
-  onTouch: (harmonic: number) => void,
+  follow: Record<'onBegin' | 'onPass' | 'onEnd', (harmonic: number) => void>,
 ): BarStrokes {
   const stroke = useRef<Stroke | null>(null);
 
@@ -46,7 +46,9 @@ export function useBarStrokes(
   };
 
   const end = (event: PointerEvent<HTMLElement>) => {
-    if (stroke.current?.pointerId === event.pointerId) stroke.current = null;
+    if (stroke.current?.pointerId !== event.pointerId) return;
+    follow.onEnd(stroke.current.last.harmonic);
+    stroke.current = null;
   };
 
   return {
@@ -54,17 +56,17 @@ export function useBarStrokes(
       if (event.button !== 0 || stroke.current !== null) return;
       const place = placeOf(event);
       event.preventDefault();
+      follow.onBegin(place.harmonic);
       event.currentTarget.setPointerCapture(event.pointerId);
       strokesBegun += 1;
       const key = `draw:bars:${strokesBegun}`;
       stroke.current = { pointerId: event.pointerId, key, before: source, now: source, last: place };
-      onTouch(place.harmonic);
       drawTo(place);
     },
     onPointerMove(event) {
       if (stroke.current?.pointerId !== event.pointerId) return;
       const place = placeOf(event);
-      if (place.harmonic !== stroke.current.last.harmonic) onTouch(place.harmonic);
+      if (place.harmonic !== stroke.current.last.harmonic) follow.onPass(place.harmonic);
       drawTo(place);
     },
     onPointerUp: end,

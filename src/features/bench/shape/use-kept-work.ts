@@ -48,7 +48,12 @@ export function useKeptWork(onChange: OnChange): KeptWork {
   };
 }
 
-function startOf(kind: Kind, now: Source, highestFitting: number, isSound: boolean): HarmonicsSource | PointsSource | null {
+function startOf(
+  kind: Kind,
+  now: Source,
+  highestFitting: number,
+  isSound: boolean,
+): HarmonicsSource | PointsSource | null {
   const sine = shapeSource('sine', { highest: 1, duty: 0.5 });
   switch (kind) {
     case 'harmonics':

@@ -64,7 +64,8 @@ export function useShownCells(shown: number): ShownCells {
       if (box === null) return;
       const left = (cell - 1) * pitch;
       if (left < box.scrollLeft) box.scrollLeft = Math.max(0, left - pitch);
-      else if (left + pitch > box.scrollLeft + box.clientWidth) box.scrollLeft = left + 2 * pitch - box.clientWidth;
+      else if (left + pitch > box.scrollLeft + box.clientWidth)
+        box.scrollLeft = left + 2 * pitch - box.clientWidth;
     },
     middleInSight: (cell) => Math.min(sight.width - 60, Math.max(60, (cell - 0.5) * pitch - sight.scrolled)),
   };
