@@ -7,6 +7,7 @@ import { account } from './features/account/routes.ts';
 import { health } from './features/health/routes.ts';
 import { invitations } from './features/invitations/routes.ts';
 import { mailbox } from './features/mailbox/routes.ts';
+import { openapi } from './features/openapi/routes.ts';
 import { rendering } from './features/rendering/routes.ts';
 import { tables } from './features/tables/routes.ts';
 import { teams } from './features/teams/routes.ts';
@@ -22,7 +23,16 @@ import { noSuchRoute } from './http/routes.ts';
 import { cspNonce, securityHeaders } from './http/security-headers.ts';
 
 /** Every resource of the API. */
-const features: readonly Feature[] = [health, account, teams, invitations, mailbox, tables, rendering];
+const features: readonly Feature[] = [
+  health,
+  account,
+  teams,
+  invitations,
+  mailbox,
+  tables,
+  rendering,
+  openapi,
+];
 
 export interface AppDeps extends ServerDeps {
   /** Serves the client: the built files or, in development, the development server. */

@@ -25,6 +25,16 @@ export interface AuditRow {
 /** HMAC-SHA-256 in hex over the row as canonical JSON (RFC 8785) and the MAC before it; '' begins a chain. */
 export function macOf(key: AuditKey, row: AuditRow, before: string): string {
   const { teamId, sequence, at, actorId, actorName, action, subject, details } = row;
-  const text = canonicalize([teamId, sequence, at.toISOString(), actorId, actorName, action, subject, details, before]);
+  const text = canonicalize([
+    teamId,
+    sequence,
+    at.toISOString(),
+    actorId,
+    actorName,
+    action,
+    subject,
+    details,
+    before,
+  ]);
   return createHmac('sha256', key).update(String(text)).digest('hex');
 }

@@ -25,12 +25,15 @@ export async function verifyChain(
       .orderBy(asc(auditEvents.sequence))
       .limit(pageLength);
     for (const row of page) {
-      if (row.sequence !== sequence + 1 || row.mac !== macOf(key, row, mac)) return { brokenAt: sequence + 1 };
+      if (row.sequence !== sequence + 1 || row.mac !== macOf(key, row, mac))
+        return { brokenAt: sequence + 1 };
       sequence = row.sequence;
       mac = row.mac;
     }
     if (page.length < pageLength) break;
   }
   const [head] = await db.select().from(auditHeads).where(eq(auditHeads.teamId, teamId));
-  return head?.lastSequence === sequence && head.lastMac === mac ? { events: sequence } : { brokenAt: sequence + 1 };
+  return head?.lastSequence === sequence && head.lastMac === mac
+    ? { events: sequence }
+    : { brokenAt: sequence + 1 };
 }

@@ -36,7 +36,9 @@ export function authRoutes(deps: ServerDeps): RequestHandler[] {
  * end speaks https, whatever stands between.
  */
 function protocolOf(origins: readonly string[]): RequestHandler {
-  const protocols = new Map(origins.map((origin) => [new URL(origin).host, new URL(origin).protocol.slice(0, -1)]));
+  const protocols = new Map(
+    origins.map((origin) => [new URL(origin).host, new URL(origin).protocol.slice(0, -1)]),
+  );
   return (request, _response, next) => {
     Object.defineProperty(request, 'protocol', { value: protocols.get(request.headers.host ?? '') });
     next();
@@ -55,7 +57,8 @@ function authConfig(deps: ServerDeps): ExpressAuthConfig {
     pages: { signIn: '/sign-in', error: '/sign-in', signOut: '/sign-in' },
     logger: {
       // A wrong password is no error of ours.
-      error: (error) => logger[error.name === 'CredentialsSignin' ? 'debug' : 'error']({ err: error }, 'sign-in'),
+      error: (error) =>
+        logger[error.name === 'CredentialsSignin' ? 'debug' : 'error']({ err: error }, 'sign-in'),
       warn: (code) => logger.warn({ code }, 'sign-in'),
       debug: () => undefined,
     },
@@ -75,7 +78,10 @@ function authConfig(deps: ServerDeps): ExpressAuthConfig {
         const claims = claimsOf(token);
         return claims && (await findUser(database.db, claims)) ? token : null;
       },
-      session: ({ session, token }) => ({ expires: session.expires, user: { id: String(claimsOf(token)?.userId) } }),
+      session: ({ session, token }) => ({
+        expires: session.expires,
+        user: { id: String(claimsOf(token)?.userId) },
+      }),
     },
     events: {
       signOut: async (message) => {

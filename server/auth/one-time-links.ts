@@ -32,7 +32,10 @@ export interface LinkTarget {
 const hashOf = (token: string) => createHash('sha256').update(token).digest('hex');
 
 /** Makes a link and answers its row and its token; only the token's hash is kept. */
-export async function makeLink(transaction: Executor, target: LinkTarget): Promise<{ id: number; token: string }> {
+export async function makeLink(
+  transaction: Executor,
+  target: LinkTarget,
+): Promise<{ id: number; token: string }> {
   const token = randomBytes(32).toString('base64url');
   const expiresAt = new Date(Date.now() + lifetimes[target.purpose]);
   const [{ id }] = await transaction
@@ -47,13 +50,18 @@ export async function makeLink(transaction: Executor, target: LinkTarget): Promi
  *
  * @throws {Problem} `not-found`, `link-used` or `link-expired`
  */
-export async function findLink(transaction: Executor, token: string, purpose: LinkPurpose): Promise<OneTimeLink> {
+export async function findLink(
+  transaction: Executor,
+  token: string,
+  purpose: LinkPurpose,
+): Promise<OneTimeLink> {
   const [link] = await transaction
     .select()
     .from(oneTimeLinks)
     .where(and(eq(oneTimeLinks.tokenHash, hashOf(token)), eq(oneTimeLinks.purpose, purpose)))
     .for('update');
-  if (!link) throw new Problem('not-found', { detail: 'This link is not valid, or a newer one has replaced it.' });
+  if (!link)
+    throw new Problem('not-found', { detail: 'This link is not valid, or a newer one has replaced it.' });
   if (link.usedAt) throw new Problem('link-used', { detail: 'This link works once, and it has been used.' });
   if (link.expiresAt.getTime() <= Date.now()) {
     throw new Problem('link-expired', { detail: `This link worked until ${link.expiresAt.toISOString()}.` });

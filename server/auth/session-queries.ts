@@ -67,7 +67,7 @@ export async function findUser(db: Database, claims: SessionClaims): Promise<Ses
 /** The same, with the person's place in a team, in one query. */
 export async function findMember(db: Database, claims: SessionClaims, teamSlug: string) {
   const [row] = await preparedMember(db).execute({ ...claims, teamSlug, now: new Date() });
-  return row as (typeof row) | undefined;
+  return row as typeof row | undefined;
 }
 
 /** Notes that the session is in use, every few minutes. */

@@ -33,7 +33,9 @@ const tokenSchema = z.object({ uid: z.int(), sid: z.string(), sv: z.int(), exp: 
 /** Reads the claims out of a decrypted token; undefined where it is none of ours. */
 export function claimsOf(token: unknown): (SessionClaims & { readonly expiresAt: number }) | undefined {
   const { data } = tokenSchema.safeParse(token);
-  return data && { userId: data.uid, sessionId: data.sid, sessionVersion: data.sv, expiresAt: data.exp * 1000 };
+  return (
+    data && { userId: data.uid, sessionId: data.sid, sessionVersion: data.sv, expiresAt: data.exp * 1000 }
+  );
 }
 
 /** Encrypts the claims into a new cookie value. */
@@ -52,12 +54,14 @@ export function claimsReader({ secret, secure }: TokenSettings) {
     if (request.headers.authorization !== undefined) return undefined;
     const sealed = cookieOf(request.headers.cookie, name);
     if (!sealed) return undefined;
-    const claims = known.get(sealed) ?? claimsOf(await decode({ token: sealed, secret, salt: name }).catch(() => null));
+    const claims =
+      known.get(sealed) ?? claimsOf(await decode({ token: sealed, secret, salt: name }).catch(() => null));
     if (!claims) return undefined;
     known.delete(sealed);
     if (claims.expiresAt <= Date.now()) return undefined;
     known.set(sealed, claims);
-    if (known.size > remembered) for (const oldest of known.keys()) if (known.size > remembered) known.delete(oldest);
+    if (known.size > remembered)
+      for (const oldest of known.keys()) if (known.size > remembered) known.delete(oldest);
     return claims;
   };
 }

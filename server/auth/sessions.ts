@@ -3,7 +3,13 @@ import { and, eq, isNull, ne } from 'drizzle-orm';
 import type { CookieOptions, Response } from 'express';
 import type { Executor } from '../db/client.ts';
 import { sessions } from '../db/schema/index.ts';
-import { cookieName, sealClaims, sessionSeconds, type SessionClaims, type TokenSettings } from './session-token.ts';
+import {
+  cookieName,
+  sealClaims,
+  sessionSeconds,
+  type SessionClaims,
+  type TokenSettings,
+} from './session-token.ts';
 
 /** Notes a new sign-in. `sessionVersion` is the one read together with what proved the person. */
 export async function startSession(
@@ -38,10 +44,17 @@ export async function endSessions(executor: Executor, userId: number, but?: stri
   await executor
     .update(sessions)
     .set({ revokedAt: new Date() })
-    .where(and(eq(sessions.userId, userId), isNull(sessions.revokedAt), but ? ne(sessions.id, but) : undefined));
+    .where(
+      and(eq(sessions.userId, userId), isNull(sessions.revokedAt), but ? ne(sessions.id, but) : undefined),
+    );
 }
 
-const cookieOptions = (secure: boolean): CookieOptions => ({ httpOnly: true, sameSite: 'lax', path: '/', secure });
+const cookieOptions = (secure: boolean): CookieOptions => ({
+  httpOnly: true,
+  sameSite: 'lax',
+  path: '/',
+  secure,
+});
 
 /** Puts a session into the answer's cookie, as Auth.js does at sign-in. */
 export async function setSessionCookie(response: Response, claims: SessionClaims, settings: TokenSettings) {

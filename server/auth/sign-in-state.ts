@@ -10,7 +10,10 @@ interface SignInState {
 
 const states = new WeakMap<object, SignInState>();
 
-export const tokenSettings = ({ config, origins }: Pick<ServerDeps, 'config' | 'origins'>): TokenSettings => ({
+export const tokenSettings = ({
+  config,
+  origins,
+}: Pick<ServerDeps, 'config' | 'origins'>): TokenSettings => ({
   secret: config.authSecret,
   secure: origins[0].startsWith('https:'),
 });

@@ -33,19 +33,30 @@ export function signInGate(limiter: RateLimiter, origin: string): RequestHandler
     }
     const email = emailField.safeParse((request.body as { email?: unknown } | undefined)?.email).data ?? '';
     const network = networkOf(request);
-    const keys = { 'sign-in-network': network, 'sign-in': `${email} ${network}`, 'sign-in-address': email } as const;
+    const keys = {
+      'sign-in-network': network,
+      'sign-in': `${email} ${network}`,
+      'sign-in-address': email,
+    } as const;
     for (const policy of ['sign-in-network', 'sign-in', 'sign-in-address'] as const) {
       await countTry(response, limiter, policy, keys[policy], origin);
     }
     const forgive = async () => {
-      for (const policy of ['sign-in', 'sign-in-address'] as const) await limiter.forgive(policy, keys[policy]);
+      for (const policy of ['sign-in', 'sign-in-address'] as const)
+        await limiter.forgive(policy, keys[policy]);
     };
     attempts.run({ forgive }, next);
   };
 }
 
 /** Auth.js tells its outcomes by an address to go on to; the refusal carries one too. */
-async function countTry(response: Response, limiter: RateLimiter, policy: RatePolicyName, key: string, origin: string) {
+async function countTry(
+  response: Response,
+  limiter: RateLimiter,
+  policy: RatePolicyName,
+  key: string,
+  origin: string,
+) {
   const standing = await limiter.count(policy, key);
   try {
     heed(response, standing);
@@ -62,7 +73,11 @@ async function countTry(response: Response, limiter: RateLimiter, policy: RatePo
  *
  * @throws {Unverified} where the password is right but the address was never verified
  */
-export async function signIn(db: Database, typed: unknown, userAgent: string | undefined): Promise<SessionClaims | null> {
+export async function signIn(
+  db: Database,
+  typed: unknown,
+  userAgent: string | undefined,
+): Promise<SessionClaims | null> {
   const attempt = attempts.getStore();
   if (!attempt) throw new Error('signIn was reached without passing signInGate.');
   const { data } = credentialsSchema.safeParse(typed);

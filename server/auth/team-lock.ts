@@ -21,7 +21,8 @@ export async function lockTeam(transaction: Executor, scope: TeamScope, role: Ro
     .from(memberships)
     .where(and(eq(memberships.teamId, scope.teamId), eq(memberships.userId, scope.user.id)))
     .for('update');
-  if (!team || !member) throw new Problem('not-found', { detail: `You have no team named ${scope.teamSlug}.` });
+  if (!team || !member)
+    throw new Problem('not-found', { detail: `You have no team named ${scope.teamSlug}.` });
   if (!includesRole(member.role, role)) {
     throw new Problem('forbidden', { detail: `This takes the role ${role}; yours is ${member.role}.` });
   }

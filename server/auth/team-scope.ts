@@ -38,9 +38,12 @@ export function requireTeam(role: Role): RequestHandler<{ team: string }> {
     const teamSlug = request.params.team;
     const row = claims && (await findMember(db, claims, teamSlug));
     const user = await admit(request, row);
-    if (!row?.teamId || !row.role) throw new Problem('not-found', { detail: `You have no team named ${teamSlug}.` });
+    if (!row?.teamId || !row.role)
+      throw new Problem('not-found', { detail: `You have no team named ${teamSlug}.` });
     if (!includesRole(row.role, role)) {
-      throw new Problem('forbidden', { detail: `This takes the role ${role}; yours in ${teamSlug} is ${row.role}.` });
+      throw new Problem('forbidden', {
+        detail: `This takes the role ${role}; yours in ${teamSlug} is ${row.role}.`,
+      });
     }
     scopes.set(request, { teamId: row.teamId, teamSlug, role: row.role, user });
     next();

@@ -57,7 +57,8 @@ interface Place {
   readonly requestHash: string;
 }
 
-const rowOf = ({ userId, key }: Place) => and(eq(idempotencyKeys.userId, userId), eq(idempotencyKeys.key, key));
+const rowOf = ({ userId, key }: Place) =>
+  and(eq(idempotencyKeys.userId, userId), eq(idempotencyKeys.key, key));
 
 /** Takes the key for this transaction, or answers what was kept under it. A second taker waits for the first's end. */
 async function claim(transaction: Executor, place: Place): Promise<Answer | undefined> {

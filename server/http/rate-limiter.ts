@@ -100,7 +100,12 @@ export const limitRate =
   };
 
 function sayDuration(seconds: number): string {
-  const [count, unit] = seconds < 120 ? [seconds, 'second'] : seconds < 7200 ? [seconds / 60, 'minute'] : [seconds / 3600, 'hour'];
+  const [count, unit] =
+    seconds < 120
+      ? [seconds, 'second']
+      : seconds < 7200
+        ? [seconds / 60, 'minute']
+        : [seconds / 3600, 'hour'];
   const whole = Math.ceil(count);
   return `${whole} ${unit}${whole === 1 ? '' : 's'}`;
 }

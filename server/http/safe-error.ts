@@ -17,16 +17,19 @@ const deepest = 5;
  * addresses, password hashes, links in mail. None of them comes along.
  */
 export function safeError(error: unknown, depth = 0): LoggedError {
-  if (!(error instanceof Error)) return { type: typeof error, message: 'Something other than an error was thrown.' };
+  if (!(error instanceof Error))
+    return { type: typeof error, message: 'Something other than an error was thrown.' };
   const query = textOf(error, 'query');
   const isOfDatabase = query !== undefined || 'sqlState' in error;
-  const message = query !== undefined ? 'The query failed.' : isOfDatabase ? withoutValues(error.message) : error.message;
+  const message =
+    query !== undefined ? 'The query failed.' : isOfDatabase ? withoutValues(error.message) : error.message;
   const frames = error.stack?.split('\n').filter((line) => /^\s+at /.test(line)) ?? [];
   const cause = causeOf(error);
+  const type = error.name === 'Error' ? error.constructor.name : error.name;
   return {
-    type: error.name === 'Error' ? error.constructor.name : error.name,
+    type,
     message,
-    stack: [`${error.name}: ${message}`, ...frames].join('\n'),
+    stack: [`${type}: ${message}`, ...frames].join('\n'),
     ...('code' in error ? { code: error.code } : {}),
     ...('errno' in error ? { errno: error.errno } : {}),
     ...(query !== undefined ? { query } : {}),
@@ -36,8 +39,9 @@ export function safeError(error: unknown, depth = 0): LoggedError {
 
 /** Names of keys, columns and tables may stay: `Duplicate entry '…' for key 'users_email_unique'`. */
 const withoutValues = (message: string) =>
-  message.replace(/((?:key|column|table|constraint|database) )?'(?:[^'\\]|\\.|'')*'/gi, (quoted, named?: string) =>
-    named ? quoted : "'…'",
+  message.replace(
+    /((?:key|column|table|constraint|database) )?'(?:[^'\\]|\\.|'')*'/gi,
+    (quoted, named?: string) => (named ? quoted : "'…'"),
   );
 
 /** Auth.js puts the error it met one step further down. */

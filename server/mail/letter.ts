@@ -26,7 +26,13 @@ export const quoted = (typed: string) => `“${oneLine(typed).replace(/[.:@/\\](
 /** Text that a person typed, for the subject, where nothing becomes a link. */
 export const plain = (typed: string) => oneLine(typed);
 
-const escapes: Readonly<Record<string, string>> = { '&': '&amp;', '<': '&lt;', '>': '&gt;', '"': '&quot;', "'": '&#39;' };
+const escapes: Readonly<Record<string, string>> = {
+  '&': '&amp;',
+  '<': '&lt;',
+  '>': '&gt;',
+  '"': '&quot;',
+  "'": '&#39;',
+};
 const escapeHtml = (text: string) => text.replace(/[&<>"']/g, (character) => escapes[character]);
 
 const signature = 'Stepwell sends this because of something done at its address; nobody reads answers to it.';
@@ -40,7 +46,10 @@ export function writeLetter({ subject, paragraphs, action, afterwards = [] }: Le
     '<body style="font-family:sans-serif;line-height:1.5;max-width:36em">',
     ...paragraphs.map((line) => `<p>${escapeHtml(line)}</p>`),
     ...(action
-      ? [`<p><a href="${escapeHtml(action.url)}">${escapeHtml(action.label)}</a></p>`, `<p>${escapeHtml(action.url)}</p>`]
+      ? [
+          `<p><a href="${escapeHtml(action.url)}">${escapeHtml(action.label)}</a></p>`,
+          `<p>${escapeHtml(action.url)}</p>`,
+        ]
       : []),
     ...after.map((line) => `<p>${escapeHtml(line)}</p>`),
     '</body></html>',

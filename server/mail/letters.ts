@@ -59,10 +59,16 @@ export const accountDeletedLetter = (): Letter => ({
 export const invitationLetter = (
   origin: string,
   token: string,
-  { teamName, invitedBy, role }: { readonly teamName: string; readonly invitedBy: string; readonly role: Role },
+  {
+    teamName,
+    invitedBy,
+    role,
+  }: { readonly teamName: string; readonly invitedBy: string; readonly role: Role },
 ): Letter => ({
   subject: `Invitation to the team ${plain(teamName)}`,
-  paragraphs: [`${quoted(invitedBy)} invites you to the team ${quoted(teamName)} at Stepwell, with the role ${role}.`],
+  paragraphs: [
+    `${quoted(invitedBy)} invites you to the team ${quoted(teamName)} at Stepwell, with the role ${role}.`,
+  ],
   action: { label: 'See the invitation', url: linkTo(origin, '/invitation', token) },
   afterwards: ['The link works once, for 7 days, and only for this address.', notYou],
 });

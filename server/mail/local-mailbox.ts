@@ -58,7 +58,11 @@ export async function startLocalMailbox(db: Database, logger: Logger): Promise<L
 }
 
 async function keep(db: Database, stream: SMTPServerDataStream): Promise<void> {
-  const mail = await simpleParser(stream, { skipTextToHtml: true, skipHtmlToText: true, skipTextLinks: true });
+  const mail = await simpleParser(stream, {
+    skipTextToHtml: true,
+    skipHtmlToText: true,
+    skipTextLinks: true,
+  });
   if (stream.sizeExceeded) throw new Error('The mail is too large.');
   const to = Array.isArray(mail.to) ? mail.to[0] : mail.to;
   await db

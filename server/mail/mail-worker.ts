@@ -52,7 +52,13 @@ export function startMailWorker({
       await noteFailure(mail, error);
       return;
     }
-    await ifStillOurs(mail, { state: 'sent', sentAt: new Date(), textBody: null, htmlBody: null, claimedUntil: null });
+    await ifStillOurs(mail, {
+      state: 'sent',
+      sentAt: new Date(),
+      textBody: null,
+      htmlBody: null,
+      claimedUntil: null,
+    });
     logger.debug({ mail: id }, 'mail sent');
   }
 

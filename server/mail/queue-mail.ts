@@ -7,7 +7,12 @@ import { writeLetter, type Letter } from './letter.ts';
  * Puts a letter into the outbox, in the transaction of its cause: either both happen or neither. Answers the mail's
  * number. The Message-ID is fixed here, so that a mail sent twice after a crash is known as one.
  */
-export async function queueMail(transaction: Executor, origin: string, to: string, letter: Letter): Promise<number> {
+export async function queueMail(
+  transaction: Executor,
+  origin: string,
+  to: string,
+  letter: Letter,
+): Promise<number> {
   const { subject, text, html } = writeLetter(letter);
   const [{ id }] = await transaction
     .insert(mailOutbox)

@@ -30,9 +30,24 @@ export async function cleanUp(db: Database, now = new Date()): Promise<void> {
       .limit(batch),
   );
   // Kept for a while, so that an old link is told apart from a wrong one.
-  await inBatches(() => db.delete(oneTimeLinks).where(lt(oneTimeLinks.expiresAt, ago(30 * day))).limit(batch));
-  await inBatches(() => db.delete(idempotencyKeys).where(lt(idempotencyKeys.createdAt, ago(day))).limit(batch));
-  await inBatches(() => db.delete(rateLimits).where(lt(rateLimits.expire, ago(hour).getTime())).limit(batch));
+  await inBatches(() =>
+    db
+      .delete(oneTimeLinks)
+      .where(lt(oneTimeLinks.expiresAt, ago(30 * day)))
+      .limit(batch),
+  );
+  await inBatches(() =>
+    db
+      .delete(idempotencyKeys)
+      .where(lt(idempotencyKeys.createdAt, ago(day)))
+      .limit(batch),
+  );
+  await inBatches(() =>
+    db
+      .delete(rateLimits)
+      .where(lt(rateLimits.expire, ago(hour).getTime()))
+      .limit(batch),
+  );
   for (const state of ['sent', 'undelivered'] as const) {
     await inBatches(() =>
       db
@@ -48,7 +63,12 @@ export async function cleanUp(db: Database, now = new Date()): Promise<void> {
         and(
           isNull(users.emailVerifiedAt),
           lt(users.createdAt, ago(30 * day)),
-          notExists(db.select({ one: sql`1` }).from(memberships).where(eq(memberships.userId, users.id))),
+          notExists(
+            db
+              .select({ one: sql`1` })
+              .from(memberships)
+              .where(eq(memberships.userId, users.id)),
+          ),
         ),
       )
       .limit(batch),

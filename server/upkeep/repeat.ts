@@ -5,7 +5,11 @@ import type { Logger } from 'pino';
  * Does the work again and again, at once for the first time, with a pause between that differs by up to a fifth:
  * processes started together must not always meet. An error is logged, and the work goes on the next time.
  */
-export function repeat(work: () => Promise<void>, pauseMs: number, logger: Logger): { close(): Promise<void> } {
+export function repeat(
+  work: () => Promise<void>,
+  pauseMs: number,
+  logger: Logger,
+): { close(): Promise<void> } {
   const stop = new AbortController();
   const running = (async () => {
     while (!stop.signal.aborted) {

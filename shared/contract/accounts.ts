@@ -1,8 +1,20 @@
 import { z } from 'zod';
-import { emailField, linkTokenField, momentField, pageOf, passwordField, personNameField, slugField } from './fields.ts';
+import {
+  emailField,
+  linkTokenField,
+  momentField,
+  pageOf,
+  passwordField,
+  personNameField,
+  slugField,
+} from './fields.ts';
 import { roleField } from './teams.ts';
 
-export const signUpSchema = z.strictObject({ name: personNameField, email: emailField, password: passwordField });
+export const signUpSchema = z.strictObject({
+  name: personNameField,
+  email: emailField,
+  password: passwordField,
+});
 export const emailOnlySchema = z.strictObject({ email: emailField });
 export const tokenOnlySchema = z.strictObject({ token: linkTokenField });
 export const resetPasswordSchema = z.strictObject({ token: linkTokenField, password: passwordField });
@@ -11,8 +23,14 @@ const currentPasswordField = z
   .string({ error: 'your password' })
   .min(1, { error: 'your password' })
   .max(200, { error: 'your password' });
-export const changePasswordSchema = z.strictObject({ currentPassword: currentPasswordField, newPassword: passwordField });
-export const changeAddressSchema = z.strictObject({ currentPassword: currentPasswordField, email: emailField });
+export const changePasswordSchema = z.strictObject({
+  currentPassword: currentPasswordField,
+  newPassword: passwordField,
+});
+export const changeAddressSchema = z.strictObject({
+  currentPassword: currentPasswordField,
+  email: emailField,
+});
 export const deleteAccountSchema = z.strictObject({ currentPassword: currentPasswordField });
 export const changeAccountSchema = z.strictObject({ name: personNameField });
 

@@ -1,7 +1,15 @@
 import { z } from 'zod';
 import { limits } from './limits.ts';
 import { arrayPrefixField, licenceLineField } from './rendering.ts';
-import { emailField, linkTokenField, momentField, pageOf, personNameField, slugField, teamNameField } from './fields.ts';
+import {
+  emailField,
+  linkTokenField,
+  momentField,
+  pageOf,
+  personNameField,
+  slugField,
+  teamNameField,
+} from './fields.ts';
 
 /** Each role includes the ones before it. */
 export const roles = ['viewer', 'author', 'reviewer', 'admin'] as const;
@@ -14,7 +22,12 @@ export function includesRole(held: Role, needed: Role): boolean {
 }
 
 /** How much one team or person may have; told before it is hit. */
-export const teamLimits = { teamsOfAPerson: 50, members: 200, openInvitations: 100, tables: 200_000 } as const;
+export const teamLimits = {
+  teamsOfAPerson: 50,
+  members: 200,
+  openInvitations: 100,
+  tables: 200_000,
+} as const;
 
 const wholeNumber = ({ min, max }: { readonly min: number; readonly max: number }) => {
   const error = `a whole number from ${min} to ${max}`;
@@ -26,7 +39,9 @@ const defaultFields = {
   licenceLine: licenceLineField,
   bits: wholeNumber(limits.bits),
   length: wholeNumber(limits.tableLength),
-  target: z.string({ error: 'the name of an export' }).regex(/^[a-z0-9-]{1,40}$/, { error: 'the name of an export' }),
+  target: z
+    .string({ error: 'the name of an export' })
+    .regex(/^[a-z0-9-]{1,40}$/, { error: 'the name of an export' }),
 };
 
 /** What a new table of the team begins with. */

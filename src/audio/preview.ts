@@ -16,6 +16,8 @@ export interface PreviewState {
 const patienceMs = 2_000;
 /** Between two changes of a sounding wave: longer than a crossfade, so that never more than two pairs sound. */
 const changeEveryMs = 80;
+/** A wave that takes long to render is taken up less often, so that the page keeps most of its time. */
+const restPerWork = 4;
 /** From a request to its sound; enough for the audio thread to see what was scheduled. */
 const leadSeconds = 0.03;
 /** Before one pass: the output is open again by then, even when a sound was just fading out. */
@@ -45,6 +47,7 @@ export class AudioPreview {
   #sound: Sound | null = null;
   #hearing: Hearing = 'table';
   #changeTimer: ReturnType<typeof setTimeout> | undefined;
+  #pauseMs = changeEveryMs;
   #sleepTimer: ReturnType<typeof setTimeout> | undefined;
   /** Counts requests, so that what was awaited for an older one is dropped. */
   #request = 0;
@@ -104,8 +107,10 @@ export class AudioPreview {
     if (sound.mode === 'once' || this.#changeTimer !== undefined) return;
     this.#changeTimer = setTimeout(() => {
       this.#changeTimer = undefined;
+      const begun = performance.now();
       this.#goOver();
-    }, changeEveryMs);
+      this.#pauseMs = Math.max(changeEveryMs, restPerWork * (performance.now() - begun));
+    }, this.#pauseMs);
   }
 
   /** Goes over to the other voice, in phase. */

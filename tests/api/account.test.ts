@@ -23,7 +23,9 @@ describe('POST /account/sign-up', () => {
     const email = freshAddress();
     const response = await signUp(email);
     expect([response.status, response.text]).toEqual([202, '']);
-    const verified = await nobody().post('/account/verify-address', { token: await tokenSentTo(test, email) });
+    const verified = await nobody().post('/account/verify-address', {
+      token: await tokenSentTo(test, email),
+    });
     expect([verified.status, verified.body]).toEqual([200, { email }]);
     const { cookie = '' } = await signIn(test, email, password);
     const account = await asPerson(test, { cookie, address: anyAddress() }).get('/account');
@@ -123,8 +125,13 @@ describe('mailed links', () => {
       .update(oneTimeLinks)
       .set({ expiresAt: new Date(Date.now() - 1) })
       .where(eq(oneTimeLinks.email, email));
-    const response = await nobody().post('/account/verify-address', { token: await tokenSentTo(test, email) });
-    expect([response.status, (response.body as { type: string }).type]).toEqual([410, '/problems/link-expired']);
+    const response = await nobody().post('/account/verify-address', {
+      token: await tokenSentTo(test, email),
+    });
+    expect([response.status, (response.body as { type: string }).type]).toEqual([
+      410,
+      '/problems/link-expired',
+    ]);
   });
 
   it('serve no other purpose than their own', async () => {
@@ -212,7 +219,10 @@ describe('a forgotten password', () => {
     const person = await makePersonWithPassword(test);
     const before = Date.now();
     await nobody().post('/account/forgot-password', { email: person.email });
-    const [link] = await test.database.db.select().from(oneTimeLinks).where(eq(oneTimeLinks.userId, person.id));
+    const [link] = await test.database.db
+      .select()
+      .from(oneTimeLinks)
+      .where(eq(oneTimeLinks.userId, person.id));
     const minutes = (link.expiresAt.getTime() - before) / 60_000;
     expect(minutes).toBeGreaterThanOrEqual(30);
     expect(minutes).toBeLessThan(30.2);
@@ -225,7 +235,9 @@ describe('a forgotten password', () => {
     const refused = await nobody().post('/account/reset-password', { token, password: 'short' });
     expect(refused.status).toBe(422);
     expect(refused.text).not.toContain(token);
-    expect((await nobody().post('/account/reset-password', { token, password: newPassword })).status).toBe(200);
+    expect((await nobody().post('/account/reset-password', { token, password: newPassword })).status).toBe(
+      200,
+    );
   });
 });
 
@@ -251,7 +263,13 @@ describe('GET and PATCH /account', () => {
     const person = await makePerson(test);
     expect((await nobody().get('/account')).status).toBe(401);
     expect((await nobody().patch('/account', { name: 'X' })).status).toBe(401);
-    for (const body of [{}, { name: '' }, { name: 7 }, { name: 'x'.repeat(101) }, { name: 'X', email: 'a@b.example' }]) {
+    for (const body of [
+      {},
+      { name: '' },
+      { name: 7 },
+      { name: 'x'.repeat(101) },
+      { name: 'X', email: 'a@b.example' },
+    ]) {
       expect((await asPerson(test, person).patch('/account', body)).status).toBe(422);
     }
   });
@@ -278,10 +296,16 @@ describe('POST /account/change-password', () => {
   it('refuses nobody, a wrong current password, a short new one', async () => {
     const person = await makePersonWithPassword(test);
     expect((await nobody().post('/account/change-password', body)).status).toBe(401);
-    const wrong = await asPerson(test, person).post('/account/change-password', { ...body, currentPassword: 'no' });
+    const wrong = await asPerson(test, person).post('/account/change-password', {
+      ...body,
+      currentPassword: 'no',
+    });
     expect(wrong.status).toBe(422);
     expect((wrong.body as { errors: { path: string }[] }).errors[0].path).toBe('currentPassword');
-    const short = await asPerson(test, person).post('/account/change-password', { ...body, newPassword: 'short' });
+    const short = await asPerson(test, person).post('/account/change-password', {
+      ...body,
+      newPassword: 'short',
+    });
     expect([short.status, short.text.includes('"short"')]).toEqual([422, false]);
     expect((await asPerson(test, person).get('/account')).status).toBe(200);
   });
@@ -290,7 +314,10 @@ describe('POST /account/change-password', () => {
     const person = await makePersonWithPassword(test);
     const answers = await Promise.all(
       ['first new password', 'second new password'].map((typed) =>
-        asPerson(test, person).post('/account/change-password', { currentPassword: password, newPassword: typed }),
+        asPerson(test, person).post('/account/change-password', {
+          currentPassword: password,
+          newPassword: typed,
+        }),
       ),
     );
     expect(answers.map(({ status }) => status).sort()).toEqual([204, expect.toBeOneOf([401, 422])]);
@@ -322,7 +349,9 @@ describe('a change of address', () => {
     const email = freshAddress();
     await ask(person, email);
     await nobody().post('/account/confirm-address', { token: await tokenSentTo(test, email) });
-    expect((await nobody().post('/account/reset-password', { token: reset, password: newPassword })).status).toBe(404);
+    expect(
+      (await nobody().post('/account/reset-password', { token: reset, password: newPassword })).status,
+    ).toBe(404);
   });
 
   it('answers alike for an address that somebody has, who gets word', async () => {
@@ -348,8 +377,13 @@ describe('a change of address', () => {
   it('refuses nobody, a wrong password, the present address, no address', async () => {
     const person = await makePersonWithPassword(test);
     const email = freshAddress();
-    expect((await nobody().post('/account/change-address', { currentPassword: password, email })).status).toBe(401);
-    const wrong = await asPerson(test, person).post('/account/change-address', { currentPassword: 'no', email });
+    expect(
+      (await nobody().post('/account/change-address', { currentPassword: password, email })).status,
+    ).toBe(401);
+    const wrong = await asPerson(test, person).post('/account/change-address', {
+      currentPassword: 'no',
+      email,
+    });
     expect([wrong.status, (await mailsTo(test, email)).length]).toEqual([422, 0]);
     expect((await ask(person, person.email)).status).toBe(422);
     expect((await ask(person, 'nowhere')).status).toBe(422);
@@ -387,7 +421,9 @@ describe('DELETE /account', () => {
     await asPerson(test, person).patch(`/teams/${team.slug}/members/${other.id}`, { role: 'admin' });
     expect((await remove(person)).status).toBe(204);
     const members = await asPerson(test, other).get(`/teams/${team.slug}/members`);
-    expect((members.body as { items: { userId: number }[] }).items.map(({ userId }) => userId)).toEqual([other.id]);
+    expect((members.body as { items: { userId: number }[] }).items.map(({ userId }) => userId)).toEqual([
+      other.id,
+    ]);
   });
 
   it('leaves a team an admin where its last two go at once', async () => {
@@ -467,7 +503,8 @@ describe('limits on the rate of mail', () => {
   it('hold for one address, known or not, whoever asks', async () => {
     for (const email of [(await makePerson(test)).email, freshAddress()]) {
       const answers = [];
-      for (let ask = 0; ask < 7; ask++) answers.push(await nobody().post('/account/forgot-password', { email }));
+      for (let ask = 0; ask < 7; ask++)
+        answers.push(await nobody().post('/account/forgot-password', { email }));
       expect(answers.map(({ status }) => status)).toEqual([...Array<number>(6).fill(202), 429]);
       expect(Number(answers[6].headers['retry-after'])).toBeGreaterThan(3500);
     }

@@ -19,11 +19,13 @@ beforeEach(() => {
 
 /** What the time of a check depends on: which hash, how much memory, how many passes, the password's length. */
 const workDone = () =>
-  vi.mocked(verify).mock.calls.map(([kept, typed]) => [
-    String(kept).split('$').slice(1, 4),
-    String(kept).length,
-    String(typed).length,
-  ]);
+  vi
+    .mocked(verify)
+    .mock.calls.map(([kept, typed]) => [
+      String(kept).split('$').slice(1, 4),
+      String(kept).length,
+      String(typed).length,
+    ]);
 
 describe('signing in computes the same hash', () => {
   it.each([

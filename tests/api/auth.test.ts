@@ -57,7 +57,9 @@ describe('signing in', () => {
   it('tells of an unverified address only after the right password', async () => {
     const email = freshAddress();
     await asPerson(test).post('/account/sign-up', { name: 'Ines Marlow', email, password });
-    expect((await signIn(test, email, 'not the password')).outcome).toBe('error=CredentialsSignin&code=credentials');
+    expect((await signIn(test, email, 'not the password')).outcome).toBe(
+      'error=CredentialsSignin&code=credentials',
+    );
     const right = await signIn(test, email, password);
     expect(right.outcome).toBe('error=CredentialsSignin&code=unverified');
     expect(right.cookie).toBeUndefined();
@@ -115,7 +117,10 @@ describe('signing in', () => {
 
   it('never falls through to the client', async () => {
     for (const path of ['/auth', '/auth/nothing', '/auth/callback/elsewhere']) {
-      const response = await request(test.app).get(path).set('Host', host).set('X-Forwarded-For', anyAddress());
+      const response = await request(test.app)
+        .get(path)
+        .set('Host', host)
+        .set('X-Forwarded-For', anyAddress());
       expect([path, response.status]).toEqual([path, expect.toBeOneOf([302, 400, 404])]);
     }
   });
@@ -130,7 +135,12 @@ describe('a session', () => {
     const csrf = await request(test.app).get('/auth/csrf').set('Host', host).set('Cookie', cookie);
     const response = await request(test.app)
       .post('/auth/signout')
-      .set({ Host: host, Origin: origin, Cookie: `${cookie}; ${cookiesOf(csrf)}`, 'X-Auth-Return-Redirect': '1' })
+      .set({
+        Host: host,
+        Origin: origin,
+        Cookie: `${cookie}; ${cookiesOf(csrf)}`,
+        'X-Auth-Return-Redirect': '1',
+      })
       .send({ csrfToken: (csrf.body as { csrfToken: string }).csrfToken });
     expect(response.status).toBe(200);
     expect(await inApi(cookie)).toBe(401);
@@ -139,9 +149,15 @@ describe('a session', () => {
   it('that was revoked counts neither for the API nor for Auth.js', async () => {
     const person = await makePerson(test);
     expect(await inApi(person.cookie)).toBe(200);
-    await test.database.db.update(sessions).set({ revokedAt: new Date() }).where(eq(sessions.id, person.sessionId));
+    await test.database.db
+      .update(sessions)
+      .set({ revokedAt: new Date() })
+      .where(eq(sessions.id, person.sessionId));
     expect(await inApi(person.cookie)).toBe(401);
-    const session = await request(test.app).get('/auth/session').set('Host', host).set('Cookie', person.cookie);
+    const session = await request(test.app)
+      .get('/auth/session')
+      .set('Host', host)
+      .set('Cookie', person.cookie);
     expect(session.body).toBeNull();
   });
 
@@ -165,7 +181,10 @@ describe('a session', () => {
 
   it.each([
     ['cut short', (cookie: string) => cookie.slice(0, -10)],
-    ['with another letter', (cookie: string) => `${cookie.slice(0, -30)}${cookie.at(-30) === 'A' ? 'B' : 'A'}${cookie.slice(-29)}`],
+    [
+      'with another letter',
+      (cookie: string) => `${cookie.slice(0, -30)}${cookie.at(-30) === 'A' ? 'B' : 'A'}${cookie.slice(-29)}`,
+    ],
     ['empty', () => 'authjs.session-token='],
     ['of rubbish', () => 'authjs.session-token=rubbish'],
   ])('whose cookie is %s does not count', async (_what, change) => {
@@ -190,7 +209,10 @@ describe('a session', () => {
 
   it('shows Auth.js no more than who it is', async () => {
     const person = await makePerson(test);
-    const response = await request(test.app).get('/auth/session').set('Host', host).set('Cookie', person.cookie);
+    const response = await request(test.app)
+      .get('/auth/session')
+      .set('Host', host)
+      .set('Cookie', person.cookie);
     expect(Object.keys(response.body as object).sort()).toEqual(['expires', 'user']);
     expect((response.body as { user: object }).user).toEqual({ id: String(person.id) });
   });

@@ -26,7 +26,8 @@ afterAll(async () => {
   await other.close();
 });
 
-const wrong = (email: string, address: string, app = test) => signIn(app, email, 'not the password', { address });
+const wrong = (email: string, address: string, app = test) =>
+  signIn(app, email, 'not the password', { address });
 
 describe('tries to sign in', () => {
   it('end after ten at one account from one network, in two processes together; the right password does not help', async () => {
@@ -104,7 +105,9 @@ describe('tries to sign in', () => {
     const address = anyAddress();
     for (let index = 0; index < 10; index++) await limiter.count('sign-in', `${person.email} ${address}`);
     const csrf = await request(test.app).get('/auth/csrf').set('Host', host);
-    const cookie = ((csrf.headers['set-cookie'] ?? []) as unknown as string[]).map((line) => line.split(';')[0]);
+    const cookie = ((csrf.headers['set-cookie'] ?? []) as unknown as string[]).map(
+      (line) => line.split(';')[0],
+    );
     const response = await request(test.app)
       .post(path)
       .set({ Host: host, Origin: origin, 'X-Forwarded-For': address, Cookie: cookie.join('; ') })
@@ -196,7 +199,9 @@ describe('the limit on the whole API', () => {
     const person = await makePerson(test);
     await limiter.count('api', `person ${person.id}`, ratePolicies.api.quota - 100);
     const answers = await Promise.all(
-      Array.from({ length: 150 }, (_none, index) => asPerson(index % 2 ? other : test, person).get('/account')),
+      Array.from({ length: 150 }, (_none, index) =>
+        asPerson(index % 2 ? other : test, person).get('/account'),
+      ),
     );
     expect(answers.filter(({ status }) => status === 200)).toHaveLength(100);
   });
@@ -224,7 +229,9 @@ describe('the limit on the whole API', () => {
 describe('the counters', () => {
   it('count exactly where many count at once', async () => {
     const key = randomUUID();
-    const standings = await Promise.all(Array.from({ length: 60 }, () => limiter.count('sign-in-network', key)));
+    const standings = await Promise.all(
+      Array.from({ length: 60 }, () => limiter.count('sign-in-network', key)),
+    );
     expect(standings.map(({ remaining }) => remaining).sort((a, b) => a - b)).toEqual(
       Array.from({ length: 60 }, (_none, index) => 40 + index),
     );

@@ -35,7 +35,8 @@ function expectAbsent(secrets: readonly (string | undefined)[]) {
   expect(log.length).toBeGreaterThan(1000);
   for (const secret of secrets) {
     expect(secret?.length).toBeGreaterThan(7);
-    expect(log).not.toContain(secret);
+    // Not `toContain`: a failure would print the whole log, secret and all.
+    expect([secret, log.includes(String(secret))]).toEqual([secret, false]);
   }
 }
 
@@ -88,10 +89,18 @@ describe('the log at its most talkative', () => {
         instance: expect.stringMatching(/^urn:uuid:/),
       });
     }
-    const errors = lines.filter((line) => line.includes('"err":'));
+    const errors = lines.filter((line) => line.includes('"level":50'));
     expect(errors.length).toBeGreaterThanOrEqual(3);
     expect(errors[0]).toContain('insert into `mail_outbox`');
-    expectAbsent([email, known.email, 'Somebody Unusual', password, '$argon2id$', '/verify#', '/reset-password#']);
+    expectAbsent([
+      email,
+      known.email,
+      'Somebody Unusual',
+      password,
+      '$argon2id$',
+      '/verify#',
+      '/reset-password#',
+    ]);
     // Not only the tokens that we know of: no 43 letters of base64url in a row at all.
     for (const line of errors) expect(line).not.toMatch(/#[\w-]{43}/);
   });
@@ -103,7 +112,7 @@ describe('the log at its most talkative', () => {
     await test.database.pool.query('RENAME TABLE sessions_gone TO sessions');
     expect(outcome).toBe('error=Configuration');
     expect(lines.some((line) => line.includes('insert into `sessions`'))).toBe(true);
-    expectAbsent([person.email, password, 'Sextant/3.1 (a test)",']);
+    expectAbsent([person.email, password]);
   });
 
   it('holds neither the recipient nor the text of a mail that is not taken', async () => {

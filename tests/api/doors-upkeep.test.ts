@@ -48,8 +48,15 @@ describe('the clean-up', () => {
     await db
       .insert(oneTimeLinks)
       .values([link('works', from(hour)), link('over', from(-29 * day)), link('long over', from(-31 * day))]);
-    const answer = (key: string, createdAt: Date) => ({ userId: person.id, key, requestHash: 'x', createdAt });
-    await db.insert(idempotencyKeys).values([answer('fresh', from(-23 * hour)), answer('old', from(-25 * hour))]);
+    const answer = (key: string, createdAt: Date) => ({
+      userId: person.id,
+      key,
+      requestHash: 'x',
+      createdAt,
+    });
+    await db
+      .insert(idempotencyKeys)
+      .values([answer('fresh', from(-23 * hour)), answer('old', from(-25 * hour))]);
     await db.insert(rateLimits).values([
       { key: 'counting', points: 1, expire: from(hour).getTime() },
       { key: 'over', points: 1, expire: from(-2 * hour).getTime() },
@@ -84,13 +91,17 @@ describe('the clean-up', () => {
 
     await cleanUp(db);
 
-    const ids = async <Row>(rows: Promise<Row[]>, name: (row: Row) => string) => (await rows).map(name).sort();
+    const ids = async <Row>(rows: Promise<Row[]>, name: (row: Row) => string) =>
+      (await rows).map(name).sort();
     expect(await ids(db.select().from(sessions), ({ id }) => id)).toEqual([
       'alive',
       'over since an hour',
       'revoked just now',
     ]);
-    expect(await ids(db.select().from(oneTimeLinks), ({ tokenHash }) => tokenHash)).toEqual(['over', 'works']);
+    expect(await ids(db.select().from(oneTimeLinks), ({ tokenHash }) => tokenHash)).toEqual([
+      'over',
+      'works',
+    ]);
     expect(await ids(db.select().from(idempotencyKeys), ({ key }) => key)).toEqual(['fresh']);
     expect(await ids(db.select().from(rateLimits), ({ key }) => key)).toEqual(['counting']);
     expect(await ids(db.select().from(mailOutbox), ({ messageId }) => messageId)).toEqual(['sent', 'waits']);

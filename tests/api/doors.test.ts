@@ -31,7 +31,10 @@ const foreignOrigins = [
 /** Every write of the API, by its route's own path. */
 const writes = () => {
   const routers = buildRouters({
-    config: readConfig({ PRIVATE_DATABASE_URL: 'mysql://x@localhost/stepwell_test_x', AUTH_SECRET: testSecret }),
+    config: readConfig({
+      PRIVATE_DATABASE_URL: 'mysql://x@localhost/stepwell_test_x',
+      AUTH_SECRET: testSecret,
+    }),
     origins: [origin],
     database: test.database,
     jobs: test.jobs,
@@ -67,9 +70,7 @@ describe('a write by cookie', () => {
 
   it.each(foreignOrigins)('is refused from Origin %j and changes nothing', async (from) => {
     const person = await makePerson(test);
-    const sent = request(test.app)
-      .patch('/api/v1/account')
-      .set({ Host: host, Cookie: person.cookie });
+    const sent = request(test.app).patch('/api/v1/account').set({ Host: host, Cookie: person.cookie });
     if (from !== undefined) sent.set('Origin', from);
     expect((await sent.send({ name: 'Taken Over' })).status).toBe(403);
     expect((await asPerson(test, person).get('/account')).body).toMatchObject({ name: person.name });
@@ -96,7 +97,12 @@ describe('a write by cookie', () => {
     for (const scheme of ['Bearer nothing', 'bearer nothing', 'Bearer  ']) {
       const response = await request(test.app)
         .patch('/api/v1/account')
-        .set({ Host: host, Cookie: person.cookie, Authorization: scheme, Origin: 'https://elsewhere.example' })
+        .set({
+          Host: host,
+          Cookie: person.cookie,
+          Authorization: scheme,
+          Origin: 'https://elsewhere.example',
+        })
         .send({ name: 'Taken Over' });
       expect([scheme, response.status]).toEqual([scheme, expect.toBeOneOf([401, 403])]);
     }
@@ -185,7 +191,13 @@ describe('over https behind a proxy', () => {
     expect(account.headers['strict-transport-security']).toMatch(/max-age=/);
     // A cookie without the prefix could have been set by a neighbour over http.
     const bare = cookiesOf(response).replaceAll('__Secure-', '');
-    expect((await request(secure.app).get('/api/v1/account').set({ ...sent, Cookie: bare })).status).toBe(401);
+    expect(
+      (
+        await request(secure.app)
+          .get('/api/v1/account')
+          .set({ ...sent, Cookie: bare })
+      ).status,
+    ).toBe(401);
   });
 
   it('the cookie that a change of password sets is just the same', async () => {
@@ -221,7 +233,11 @@ describe('an answer', () => {
   });
 
   it('does not repeat secrets that were sent to it', async () => {
-    const secrets = { password: 'swordfsh', currentPassword: 'x'.repeat(201), token: 'not-a-token-but-secret' };
+    const secrets = {
+      password: 'swordfsh',
+      currentPassword: 'x'.repeat(201),
+      token: 'not-a-token-but-secret',
+    };
     for (const [path, body] of [
       ['/account/sign-up', { name: 'X', email: freshAddress(), password: secrets.password }],
       ['/account/reset-password', { token: secrets.token, password: secrets.password }],
@@ -237,7 +253,14 @@ describe('an answer', () => {
 
 describe('hostile text', () => {
   it('goes through names unchanged, as text', async () => {
-    const names = ['<script>alert(1)</script>', '*/ ??/\n--> "\' \\', '\u202eabc', '\u{1f6a2}', '=1+1', '\u0000null'];
+    const names = [
+      '<script>alert(1)</script>',
+      '*/ ??/\n--> "\' \\',
+      '\u202eabc',
+      '\u{1f6a2}',
+      '=1+1',
+      '\u0000null',
+    ];
     const person: TestPerson = await makePerson(test);
     for (const name of names) {
       const response = await asPerson(test, person).post('/teams', { name });

@@ -22,7 +22,12 @@ describe('POST /teams/:team/invitations', () => {
     const email = freshAddress();
     const response = await invite(admin, team.slug, email);
     expect(response.status).toBe(201);
-    expect(response.body).toMatchObject({ email, role: 'author', invitedBy: admin.name, delivery: 'waiting' });
+    expect(response.body).toMatchObject({
+      email,
+      role: 'author',
+      invitedBy: admin.name,
+      delivery: 'waiting',
+    });
     const [mail] = await mailsTo(test, email);
     expect(mail.subject).toBe('Invitation to the team Ninth Fathom');
     expect(mail.textBody).toContain(`${origin}/invitation#`);
@@ -38,7 +43,8 @@ describe('POST /teams/:team/invitations', () => {
     const email = freshAddress();
     expect((await invite(undefined, team.slug, email)).status).toBe(401);
     expect((await invite(await makePerson(test), team.slug, email)).status).toBe(404);
-    for (const person of [viewer, author, reviewer]) expect((await invite(person, team.slug, email)).status).toBe(403);
+    for (const person of [viewer, author, reviewer])
+      expect((await invite(person, team.slug, email)).status).toBe(403);
     expect(await mailsTo(test, email)).toHaveLength(0);
   });
 
@@ -75,7 +81,10 @@ describe('open invitations', () => {
     const { team, author, admin } = await makeCrew(test);
     const email = freshAddress();
     await invite(admin, team.slug, email);
-    await test.database.db.update(mailOutbox).set({ state: 'undelivered' }).where(eq(mailOutbox.recipient, email));
+    await test.database.db
+      .update(mailOutbox)
+      .set({ state: 'undelivered' })
+      .where(eq(mailOutbox.recipient, email));
     const list = await as(admin).get(`/teams/${team.slug}/invitations`);
     expect(list.body).toMatchObject({ items: [{ email, delivery: 'undelivered' }], nextCursor: null });
     expect((await as().get(`/teams/${team.slug}/invitations`)).status).toBe(401);
@@ -96,7 +105,9 @@ describe('open invitations', () => {
     expect((await as(author).delete(path)).status).toBe(403);
     expect((await as(admin).delete(path)).status).toBe(204);
     expect((await as(admin).delete(path)).status).toBe(404);
-    expect((await as().post('/invitations/open', { token: await tokenSentTo(test, email) })).status).toBe(404);
+    expect((await as().post('/invitations/open', { token: await tokenSentTo(test, email) })).status).toBe(
+      404,
+    );
   });
 
   it('do not let other links be withdrawn in their place', async () => {
@@ -109,7 +120,8 @@ describe('open invitations', () => {
 });
 
 describe('POST /invitations/accept', () => {
-  const accept = (person: TestPerson | undefined, token: string) => as(person).post('/invitations/accept', { token });
+  const accept = (person: TestPerson | undefined, token: string) =>
+    as(person).post('/invitations/accept', { token });
 
   it('makes a member of who has the address', async () => {
     const { team, admin } = await makeCrew(test);
@@ -162,7 +174,10 @@ describe('POST /invitations/accept', () => {
   it('runs out after seven days', async () => {
     const { team, admin } = await makeCrew(test);
     const guest = await makePerson(test);
-    const { id, expiresAt } = (await invite(admin, team.slug, guest.email)).body as { id: number; expiresAt: string };
+    const { id, expiresAt } = (await invite(admin, team.slug, guest.email)).body as {
+      id: number;
+      expiresAt: string;
+    };
     expect((Date.parse(expiresAt) - Date.now()) / 86_400_000).toBeCloseTo(7, 2);
     await test.database.db
       .update(oneTimeLinks)

@@ -30,7 +30,12 @@ afterAll(async () => {
 
 const send = (mail: object, url = mailbox.smtpUrl) =>
   createTransport({ url }).sendMail({
-    ...{ from: 'Stepwell <no-reply@localhost>', to: 'vera@ninthfathom.example', subject: 'A mail', text: 'Text' },
+    ...{
+      from: 'Stepwell <no-reply@localhost>',
+      to: 'vera@ninthfathom.example',
+      subject: 'A mail',
+      text: 'Text',
+    },
     ...mail,
   });
 
@@ -47,7 +52,10 @@ describe('the readable mailbox', () => {
       const { items } = await page();
       return items.length > 0 && items;
     });
-    await waitUntil('the note', async () => (await test.database.db.select().from(mailOutbox))[0].state === 'sent');
+    await waitUntil(
+      'the note',
+      async () => (await test.database.db.select().from(mailOutbox))[0].state === 'sent',
+    );
     await mail.close();
     expect(summary).toMatchObject({ to: email, subject: 'Verify your address' });
     const { body } = await asPerson(test).get(`/mailbox/${summary.id}`);

@@ -43,7 +43,10 @@ describe('mail about a team with a hostile name, by a person with a hostile name
     const { slug } = team.body as { slug: string };
     const { length } = smtp.mails;
     const to = `guest-${length}@ninthfathom.example`;
-    const invited = await asPerson(test, admin).post(`/teams/${slug}/invitations`, { email: to, role: 'viewer' });
+    const invited = await asPerson(test, admin).post(`/teams/${slug}/invitations`, {
+      email: to,
+      role: 'viewer',
+    });
     expect(invited.status).toBe(201);
     const worker = startMailWorker({
       db: test.database.db,
@@ -57,9 +60,20 @@ describe('mail about a team with a hostile name, by a person with a hostile name
 
     const mail = smtp.mails[length];
     expect([...mail.headers.keys()].sort()).toEqual(
-      ['auto-submitted', 'content-type', 'date', 'from', 'message-id', 'mime-version', 'subject', 'to'].sort(),
+      [
+        'auto-submitted',
+        'content-type',
+        'date',
+        'from',
+        'message-id',
+        'mime-version',
+        'subject',
+        'to',
+      ].sort(),
     );
-    expect((Array.isArray(mail.to) ? mail.to : [mail.to]).map((entry) => entry?.value[0].address)).toEqual([to]);
+    expect((Array.isArray(mail.to) ? mail.to : [mail.to]).map((entry) => entry?.value[0].address)).toEqual([
+      to,
+    ]);
     expect(mail.subject).toMatch(/^Invitation to the team [^\p{C}\p{Zl}\p{Zp}]+$/u);
     // Of the markup nothing but our own: the tags that a letter has, in their order.
     const tags = String(mail.html).match(/<[^>]*>/g) ?? [];
@@ -73,7 +87,9 @@ describe('mail about a team with a hostile name, by a person with a hostile name
       // No bidirectional controls, and nothing a mail program takes for an address but our own link.
       expect(text).not.toMatch(/[\u202a-\u202e\u2066-\u2069\u2028\u2029]/);
       expect(text).not.toMatch(/elsewhere\.example/);
-      expect(text.match(/https?:\/\/[^\s"<]+/g)?.every((url) => url.startsWith(new URL(url).origin))).toBe(true);
+      expect(text.match(/https?:\/\/[^\s"<]+/g)?.every((url) => url.startsWith(new URL(url).origin))).toBe(
+        true,
+      );
       expect(new Set((text.match(/https?:\/\/[^\s"<]+/g) ?? []).map((url) => new URL(url).host))).toEqual(
         new Set(['127.0.0.1:4173']),
       );
@@ -92,7 +108,11 @@ describe('every letter', () => {
     confirm: letters.confirmAddressLetter(origin, token),
     address: letters.addressChangedLetter('new@ninthfathom.example'),
     deleted: letters.accountDeletedLetter(),
-    invitation: letters.invitationLetter(origin, token, { teamName: 'Ninth Fathom', invitedBy: 'Ada', role: 'viewer' }),
+    invitation: letters.invitationLetter(origin, token, {
+      teamName: 'Ninth Fathom',
+      invitedBy: 'Ada',
+      role: 'viewer',
+    }),
   };
 
   it.each(Object.entries(all))('%s says the same in text and HTML', (_name, letter) => {

@@ -54,7 +54,8 @@ async function catcher(options?: Parameters<typeof catchMail>[0]): Promise<SmtpC
 }
 
 const rows = () => test.database.db.select().from(mailOutbox);
-const untilNothingWaits = () => waitUntil('no mail waits', async () => (await rows()).every(({ state }) => state !== 'waiting'));
+const untilNothingWaits = () =>
+  waitUntil('no mail waits', async () => (await rows()).every(({ state }) => state !== 'waiting'));
 
 describe('the mail worker', () => {
   it('sends a mail with its Message-ID and erases the bodies', async () => {
@@ -71,7 +72,14 @@ describe('the mail worker', () => {
     expect(mail.html).toContain(`href="${origin}/verify#${'T'.repeat(43)}"`);
     expect(mail.headers.get('auto-submitted')).toBe('auto-generated');
     expect(await rows()).toMatchObject([
-      { state: 'sent', textBody: null, htmlBody: null, sentAt: expect.any(Date), claimedUntil: null, failures: 0 },
+      {
+        state: 'sent',
+        textBody: null,
+        htmlBody: null,
+        sentAt: expect.any(Date),
+        claimedUntil: null,
+        failures: 0,
+      },
     ]);
   });
 
@@ -141,7 +149,9 @@ describe('the mail worker', () => {
     await queue();
     start(gone.url, { backOff: () => 100 });
     await waitUntil('two failures', async () => (await rows())[0].failures >= 2);
-    expect(await rows()).toMatchObject([{ state: 'waiting', lastError: expect.stringContaining('ECONNREFUSED') }]);
+    expect(await rows()).toMatchObject([
+      { state: 'waiting', lastError: expect.stringContaining('ECONNREFUSED') },
+    ]);
     const back = await catcher({ port: gone.port });
     await untilNothingWaits();
     expect(back.mails).toHaveLength(1);
@@ -160,7 +170,13 @@ describe('the mail worker', () => {
     start(smtp);
     await untilNothingWaits();
     expect(await rows()).toMatchObject([
-      { state: 'undelivered', failures: 8, textBody: null, htmlBody: null, lastError: expect.stringContaining('No room') },
+      {
+        state: 'undelivered',
+        failures: 8,
+        textBody: null,
+        htmlBody: null,
+        lastError: expect.stringContaining('No room'),
+      },
     ]);
     expect(tries).toBe(8);
   });
@@ -208,7 +224,9 @@ describe('the mail worker', () => {
     const smtp = await catcher();
     const pool = openDatabase(test.url, { connectionLimit: 1 });
     start(smtp, { db: pool.db });
-    const [[{ id }]] = (await pool.pool.query('SELECT CONNECTION_ID() AS id')) as unknown as [[{ id: number }]];
+    const [[{ id }]] = (await pool.pool.query('SELECT CONNECTION_ID() AS id')) as unknown as [
+      [{ id: number }],
+    ];
     await test.database.pool.query(`KILL ${id}`);
     await queue();
     await untilNothingWaits();

@@ -6,7 +6,14 @@ import { verifyChain } from '../../server/audit/verify-chain.ts';
 import { openDatabase } from '../../server/db/client.ts';
 import { auditEvents, auditHeads, users } from '../../server/db/schema/index.ts';
 import { withTransaction } from '../../server/db/transaction.ts';
-import { asPerson, makeCrew, makePerson, makeTeam, type TestPerson, type TestTeam } from '../support/people.ts';
+import {
+  asPerson,
+  makeCrew,
+  makePerson,
+  makeTeam,
+  type TestPerson,
+  type TestTeam,
+} from '../support/people.ts';
 import { makeTestApp, testSecret, type TestApp } from '../support/test-app.ts';
 
 let test: TestApp;
@@ -61,7 +68,11 @@ describe('the chain of audit events', () => {
   });
 
   it('holds for any text and number in its details', async () => {
-    await append(test.database.db, { text: 'é \u{1f6a2} */ \u2028 \\ " <b>', number: 0.1 + 0.2, deep: [{ b: 1, a: [null] }] });
+    await append(test.database.db, {
+      text: 'é \u{1f6a2} */ \u2028 \\ " <b>',
+      number: 0.1 + 0.2,
+      deep: [{ b: 1, a: [null] }],
+    });
     expect(await verify()).toEqual({ events: 1 });
   });
 
@@ -110,7 +121,10 @@ describe('the chain of audit events', () => {
   it('shows rows moved to another team', async () => {
     await append();
     const other = await makeTeam(test, [{ person: admin, role: 'admin' }]);
-    await test.database.db.update(auditEvents).set({ teamId: other.id }).where(eq(auditEvents.teamId, team.id));
+    await test.database.db
+      .update(auditEvents)
+      .set({ teamId: other.id })
+      .where(eq(auditEvents.teamId, team.id));
     const [head] = await test.database.db.select().from(auditHeads).where(eq(auditHeads.teamId, team.id));
     await test.database.db
       .update(auditHeads)

@@ -148,12 +148,20 @@ describe('PATCH /teams/:team', () => {
 
   it('changes name and defaults; what is left out stays', async () => {
     const { team, admin } = await makeCrew(test);
-    const first = await patch(admin, team.slug, { defaults: { bits: 10, licenceLine: 'SPDX-License-Identifier: MIT' } });
+    const first = await patch(admin, team.slug, {
+      defaults: { bits: 10, licenceLine: 'SPDX-License-Identifier: MIT' },
+    });
     expect([first.status, first.headers.etag]).toEqual([200, '"2"']);
     const second = await patch(admin, team.slug, { name: 'Tenth Fathom', defaults: { length: 512 } }, '"2"');
     expect(second.body).toMatchObject({
       name: 'Tenth Fathom',
-      defaults: { arrayPrefix: '', licenceLine: 'SPDX-License-Identifier: MIT', bits: 10, length: 512, target: 'c99' },
+      defaults: {
+        arrayPrefix: '',
+        licenceLine: 'SPDX-License-Identifier: MIT',
+        bits: 10,
+        length: 512,
+        target: 'c99',
+      },
       version: 3,
     });
     expect((await as(admin).get(`/teams/${team.slug}`)).body).toEqual(second.body);
@@ -189,7 +197,10 @@ describe('PATCH /teams/:team', () => {
     expect((await patch(await makePerson(test), team.slug, { name: 'X' })).status).toBe(404);
     for (const person of [viewer, author, reviewer]) {
       const response = await patch(person, team.slug, { name: 'X' });
-      expect([response.status, (response.body as { type: string }).type]).toEqual([403, '/problems/forbidden']);
+      expect([response.status, (response.body as { type: string }).type]).toEqual([
+        403,
+        '/problems/forbidden',
+      ]);
     }
   });
 
@@ -210,7 +221,8 @@ describe('PATCH /teams/:team', () => {
 
 describe('members', () => {
   const members = async (person: TestPerson, slug: string) =>
-    ((await as(person).get(`/teams/${slug}/members`)).body as { items: { userId: number; role: string }[] }).items;
+    ((await as(person).get(`/teams/${slug}/members`)).body as { items: { userId: number; role: string }[] })
+      .items;
 
   it('are shown to each other, and to nobody else', async () => {
     const { team, viewer, admin } = await makeCrew(test);
@@ -247,7 +259,9 @@ describe('members', () => {
     const { team, admin } = await makeCrew(test);
     const stranger = await makePerson(test);
     for (const id of [stranger.id, 0, -1, '1e3', 'x', '99999999999999999999']) {
-      expect((await as(admin).patch(`/teams/${team.slug}/members/${id}`, { role: 'author' })).status).toBe(404);
+      expect((await as(admin).patch(`/teams/${team.slug}/members/${id}`, { role: 'author' })).status).toBe(
+        404,
+      );
       expect((await as(admin).delete(`/teams/${team.slug}/members/${id}`)).status).toBe(404);
     }
   });
@@ -267,14 +281,19 @@ describe('members', () => {
   it('always include an admin', async () => {
     const { team, viewer, admin } = await makeCrew(test);
     expect((await as(admin).delete(`/teams/${team.slug}/members/${admin.id}`)).status).toBe(409);
-    expect((await as(admin).patch(`/teams/${team.slug}/members/${admin.id}`, { role: 'author' })).status).toBe(409);
+    expect(
+      (await as(admin).patch(`/teams/${team.slug}/members/${admin.id}`, { role: 'author' })).status,
+    ).toBe(409);
     await as(admin).patch(`/teams/${team.slug}/members/${viewer.id}`, { role: 'admin' });
     expect((await as(admin).delete(`/teams/${team.slug}/members/${admin.id}`)).status).toBe(204);
   });
 
   it.each([
     ['leave', (one: TestPerson, path: (id: number) => string) => as(one).delete(path(one.id))],
-    ['step down', (one: TestPerson, path: (id: number) => string) => as(one).patch(path(one.id), { role: 'viewer' })],
+    [
+      'step down',
+      (one: TestPerson, path: (id: number) => string) => as(one).patch(path(one.id), { role: 'viewer' }),
+    ],
   ])('keep an admin where the last two %s at once, ten times', async (_what, go) => {
     for (let round = 0; round < 10; round++) {
       const [one, two] = [await makePerson(test), await makePerson(test)];
@@ -323,7 +342,9 @@ describe('members', () => {
       ],
       nextCursor: null,
     });
-    expect((await as(person).patch(`/teams/${two.slug}`, { name: 'X' }).set('If-Match', '"1"')).status).toBe(403);
+    expect((await as(person).patch(`/teams/${two.slug}`, { name: 'X' }).set('If-Match', '"1"')).status).toBe(
+      403,
+    );
     const rows = await test.database.db.select().from(teams).where(eq(teams.id, two.id));
     expect(rows[0].name).toBe('Beta');
   });

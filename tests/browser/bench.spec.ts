@@ -447,7 +447,7 @@ for (const colorScheme of ['light', 'dark'] as const) {
 
       test('drawings and flights stand in the order that the keyboard goes', async ({ page }) => {
         await page.goto('/');
-        const places = page.locator('.bench > *');
+        const places = page.locator('.bench > .bench-drawings, .bench > .bench-flights');
         await expect(drawings(page)).toBeVisible();
         const last = await places.last().getAttribute('class');
         expect(last).toContain(viewport.width > 1024 ? 'bench-drawings' : 'bench-flights');

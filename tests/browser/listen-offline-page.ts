@@ -5,7 +5,7 @@ import { glideFromSilence, glideSeconds } from '../../src/audio/ramps.ts';
 import { renderSound, type Sound } from '../../src/audio/sound.ts';
 import { Voices } from '../../src/audio/voices.ts';
 
-// Bundled by listen.spec.ts and run in a blank page: the player's own graph in an offline context.
+// Bundled by listen-levels.spec.ts and run in a blank page: the player's own graph in an offline context.
 
 export interface OfflineOrder {
   values: number[];

@@ -4,7 +4,11 @@ import type { TestApp } from './test-app.ts';
 
 /** What waits in the outbox for an address, the newest first. */
 export const mailsTo = (test: TestApp, address: string) =>
-  test.database.db.select().from(mailOutbox).where(eq(mailOutbox.recipient, address)).orderBy(desc(mailOutbox.id));
+  test.database.db
+    .select()
+    .from(mailOutbox)
+    .where(eq(mailOutbox.recipient, address))
+    .orderBy(desc(mailOutbox.id));
 
 /** The token of the link in the newest mail to an address. */
 export async function tokenSentTo(test: TestApp, address: string): Promise<string> {
@@ -16,4 +20,5 @@ export async function tokenSentTo(test: TestApp, address: string): Promise<strin
 
 /** An address that nobody has. */
 let made = 0;
-export const freshAddress = () => `person-${process.pid}-${Date.now().toString(36)}-${++made}@ninthfathom.example`;
+export const freshAddress = () =>
+  `person-${process.pid}-${Date.now().toString(36)}-${++made}@ninthfathom.example`;

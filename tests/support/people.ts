@@ -36,7 +36,10 @@ export async function makeSession(
   await test.database.db
     .insert(sessions)
     .values({ id: sessionId, userId, sessionVersion, client: 'a test', lastSeenAt: new Date(), expiresAt });
-  const sealed = await sealClaims({ userId, sessionId, sessionVersion }, { secret: testSecret, secure: false });
+  const sealed = await sealClaims(
+    { userId, sessionId, sessionVersion },
+    { secret: testSecret, secure: false },
+  );
   return { sessionId, cookie: `${cookieName(false)}=${sealed}` };
 }
 
@@ -85,7 +88,8 @@ export async function makeCrew(test: TestApp) {
 export function asPerson(test: TestApp, person?: Pick<TestPerson, 'cookie' | 'address'>) {
   const address = person?.address ?? anyAddress();
   const send = (method: 'get' | 'post' | 'patch' | 'put' | 'delete', path: string, body?: object): Test => {
-    const sent = request(test.app)[method](`/api/v1${path}`)
+    const sent = request(test.app)
+      [method](`/api/v1${path}`)
       .set('Host', host)
       .set('Origin', origin)
       .set('X-Forwarded-For', address);

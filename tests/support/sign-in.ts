@@ -12,13 +12,18 @@ let hash: Promise<string> | undefined;
 export async function makePersonWithPassword(test: TestApp, name?: string): Promise<TestPerson> {
   const person = await makePerson(test, name);
   hash ??= hashPassword(password);
-  await test.database.db.update(users).set({ passwordHash: await hash }).where(eq(users.id, person.id));
+  await test.database.db
+    .update(users)
+    .set({ passwordHash: await hash })
+    .where(eq(users.id, person.id));
   return person;
 }
 
 /** All Set-Cookie headers of an answer, as a Cookie header would send them back. */
 export const cookiesOf = (response: Response): string =>
-  ((response.headers['set-cookie'] ?? []) as unknown as string[]).map((line) => line.split(';')[0]).join('; ');
+  ((response.headers['set-cookie'] ?? []) as unknown as string[])
+    .map((line) => line.split(';')[0])
+    .join('; ');
 
 export interface SignInAnswer {
   readonly response: Response;

@@ -31,10 +31,12 @@ export async function catchMail({
         const text = Buffer.concat(parts);
         const fault = refuse?.();
         if (!fault) raw.push(text.toString('latin1'));
-        void simpleParser(text, { skipHtmlToText: true, skipTextToHtml: true, skipTextLinks: true }).then((mail) => {
-          if (!fault) mails.push(mail);
-          setTimeout(() => done(fault), delayMs);
-        });
+        void simpleParser(text, { skipHtmlToText: true, skipTextToHtml: true, skipTextLinks: true }).then(
+          (mail) => {
+            if (!fault) mails.push(mail);
+            setTimeout(() => done(fault), delayMs);
+          },
+        );
       });
     },
   });

@@ -16,6 +16,7 @@ export const testSecret = 'for the tests only, and known to everybody';
 
 export interface TestApp {
   readonly app: Express;
+  readonly deps: AppDeps;
   readonly database: OpenDatabase;
   readonly jobs: JobPool<typeof jobs>;
   close(): Promise<void>;
@@ -27,7 +28,7 @@ export function makeTestApp(changes: Partial<AppDeps> = {}): TestApp {
   requireTestDatabase(url);
   const database = changes.database ?? openDatabase(url);
   const pool = changes.jobs ?? createJobPool();
-  const app = buildApp({
+  const deps: AppDeps = {
     config: readConfig({
       PRIVATE_DATABASE_URL: url,
       AUTH_SECRET: testSecret,
@@ -41,9 +42,10 @@ export function makeTestApp(changes: Partial<AppDeps> = {}): TestApp {
     ...changes,
     database,
     jobs: pool,
-  });
+  };
   return {
-    app,
+    app: buildApp(deps),
+    deps,
     database,
     jobs: pool,
     close: async () => {

@@ -25,7 +25,9 @@ export async function askForAddress(
   await requirePassword(deps, user.id, typed.currentPassword);
   if (email === user.email) {
     throw new Problem('validation', {
-      errors: [{ path: 'email', value: JSON.stringify(email), allowed: 'another address than the present one' }],
+      errors: [
+        { path: 'email', value: JSON.stringify(email), allowed: 'another address than the present one' },
+      ],
     });
   }
   await withTransaction(database.db, async (transaction) => {
@@ -45,7 +47,10 @@ export async function askForAddress(
  *
  * @throws {Problem} `not-found`, `link-used`, `link-expired`, or `conflict` where the address has got another account
  */
-export const confirmAddress = ({ database, origins }: ServerDeps, token: string): Promise<{ email: string }> =>
+export const confirmAddress = (
+  { database, origins }: ServerDeps,
+  token: string,
+): Promise<{ email: string }> =>
   withTransaction(database.db, async (transaction) => {
     const link = await findLink(transaction, token, 'change-address');
     const { email, userId } = link;

@@ -91,12 +91,17 @@ export async function requirePassword(
   userId: number,
   typed: string,
 ): Promise<string> {
-  const [user] = await database.db.select({ kept: users.passwordHash }).from(users).where(eq(users.id, userId));
+  const [user] = await database.db
+    .select({ kept: users.passwordHash })
+    .from(users)
+    .where(eq(users.id, userId));
   if (!(await checkPassword(user?.kept, typed)) || !user.kept) throw wrongPassword();
   return user.kept;
 }
 
 export const wrongPassword = () =>
   new Problem('validation', {
-    errors: [{ path: 'currentPassword', value: 'another one', allowed: 'the current password of the account' }],
+    errors: [
+      { path: 'currentPassword', value: 'another one', allowed: 'the current password of the account' },
+    ],
   });

@@ -2,7 +2,10 @@ import type { Account, SignInSession } from '../../../shared/contract/index.ts';
 import type { Person } from '../../auth/team-scope.ts';
 import type { SessionRow } from './queries.ts';
 
-export const presentAccount = ({ id, name, email }: Person, memberships: Account['memberships']): Account => ({
+export const presentAccount = (
+  { id, name, email }: Person,
+  memberships: Account['memberships'],
+): Account => ({
   id,
   name,
   email,

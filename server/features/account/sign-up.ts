@@ -15,7 +15,10 @@ import { lockUserByAddress } from './queries.ts';
  * Makes an account whose address is still to be verified, or sends word to the owner of the one that exists. Until it
  * is verified the newest sign-up counts: who owns the address can always get their own password in.
  */
-export async function signUp({ database, origins }: ServerDeps, typed: z.infer<typeof signUpSchema>): Promise<void> {
+export async function signUp(
+  { database, origins }: ServerDeps,
+  typed: z.infer<typeof signUpSchema>,
+): Promise<void> {
   const { name, email } = typed;
   const passwordHash = await hashPassword(typed.password);
   await withTransaction(database.db, async (transaction) => {
@@ -24,7 +27,8 @@ export async function signUp({ database, origins }: ServerDeps, typed: z.infer<t
       await queueMail(transaction, origins[0], email, accountExistsLetter(origins[0]));
       return;
     }
-    if (existing) await transaction.update(users).set({ name, passwordHash }).where(eq(users.id, existing.id));
+    if (existing)
+      await transaction.update(users).set({ name, passwordHash }).where(eq(users.id, existing.id));
     const userId = existing?.id ?? (await insertUser(transaction, { name, email, passwordHash }));
     await sendVerification(transaction, origins[0], { userId, email });
   });
@@ -43,7 +47,10 @@ export async function resendVerification({ database, origins }: ServerDeps, emai
 export const verifyAddress = ({ database }: ServerDeps, token: string): Promise<{ email: string }> =>
   withTransaction(database.db, async (transaction) => {
     const link = await findLink(transaction, token, 'verify-address');
-    await transaction.update(users).set({ emailVerifiedAt: new Date() }).where(and(eq(users.id, link.userId ?? 0), eq(users.email, link.email)));
+    await transaction
+      .update(users)
+      .set({ emailVerifiedAt: new Date() })
+      .where(and(eq(users.id, link.userId ?? 0), eq(users.email, link.email)));
     await markUsed(transaction, link);
     return { email: link.email };
   });

@@ -1,6 +1,11 @@
 import { and, eq, isNull } from 'drizzle-orm';
 import type { z } from 'zod';
-import { teamLimits, type Invitation, type inviteSchema, type OpenInvitation } from '../../../shared/contract/index.ts';
+import {
+  teamLimits,
+  type Invitation,
+  type inviteSchema,
+  type OpenInvitation,
+} from '../../../shared/contract/index.ts';
 import { appendEvent } from '../../audit/append-event.ts';
 import { findLink, makeLink, markUsed } from '../../auth/one-time-links.ts';
 import { lockTeam } from '../../auth/team-lock.ts';
@@ -49,11 +54,23 @@ export async function invite(
       ),
     );
   if ((await countInvitations(transaction, teamId)) >= teamLimits.openInvitations) {
-    throw new Problem('conflict', { detail: `A team has at most ${teamLimits.openInvitations} open invitations.` });
+    throw new Problem('conflict', {
+      detail: `A team has at most ${teamLimits.openInvitations} open invitations.`,
+    });
   }
   await requireRoom(transaction, teamId);
-  const link = await makeLink(transaction, { purpose: 'invitation', email, teamId, role, createdBy: user.id });
-  const letter = invitationLetter(origins[0], link.token, { teamName: team.name, invitedBy: user.name, role });
+  const link = await makeLink(transaction, {
+    purpose: 'invitation',
+    email,
+    teamId,
+    role,
+    createdBy: user.id,
+  });
+  const letter = invitationLetter(origins[0], link.token, {
+    teamName: team.name,
+    invitedBy: user.name,
+    role,
+  });
   const mailId = await queueMail(transaction, origins[0], email, letter);
   await transaction.update(oneTimeLinks).set({ mailId }).where(eq(oneTimeLinks.id, link.id));
   const made = (await findInvitations(transaction, teamId)).find(({ id }) => id === link.id);
@@ -69,7 +86,11 @@ export async function invite(
 }
 
 /** @throws {Problem} `not-found` where the team has no such open invitation */
-export const withdrawInvitation = ({ config, database }: ServerDeps, scope: TeamScope, id: number): Promise<void> =>
+export const withdrawInvitation = (
+  { config, database }: ServerDeps,
+  scope: TeamScope,
+  id: number,
+): Promise<void> =>
   withTransaction(database.db, async (transaction) => {
     await lockTeam(transaction, scope, 'admin');
     const [{ affectedRows }] = await transaction

@@ -31,7 +31,11 @@ export const findInvitations = (executor: Executor, teamId: number) =>
 export type InvitationRow = Awaited<ReturnType<typeof findInvitations>>[number];
 
 export async function countInvitations(transaction: Executor, teamId: number): Promise<number> {
-  const [{ open }] = await transaction.select({ open: count() }).from(oneTimeLinks).where(isOpen(teamId)).for('update');
+  const [{ open }] = await transaction
+    .select({ open: count() })
+    .from(oneTimeLinks)
+    .where(isOpen(teamId))
+    .for('update');
   return open;
 }
 
@@ -63,7 +67,11 @@ export async function lockTeamRow(transaction: Executor, teamId: number) {
   return team as typeof team | undefined;
 }
 
-export async function isMemberAddress(transaction: Executor, teamId: number, email: string): Promise<boolean> {
+export async function isMemberAddress(
+  transaction: Executor,
+  teamId: number,
+  email: string,
+): Promise<boolean> {
   const rows = await transaction
     .select({ userId: memberships.userId })
     .from(memberships)

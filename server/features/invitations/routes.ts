@@ -28,7 +28,11 @@ export const invitations: Feature = (deps) => {
     heed(response, await limiter.count('invitations', String(scope.teamId)));
     await answerOnce(request, response, db, async (transaction) => {
       const body = await invite(deps, transaction, scope, typed);
-      return { status: 201, headers: { Location: `/api/v1/teams/${scope.teamSlug}/invitations/${body.id}` }, body };
+      return {
+        status: 201,
+        headers: { Location: `/api/v1/teams/${scope.teamSlug}/invitations/${body.id}` },
+        body,
+      };
     });
   });
   router.delete(

@@ -39,14 +39,17 @@ export async function createTeam(
 ): Promise<Team> {
   const mine = await findTeamsOf(transaction, user.id);
   if (mine.length >= teamLimits.teamsOfAPerson) {
-    throw new Problem('conflict', { detail: `You belong to ${mine.length} teams; that is as many as one may.` });
+    throw new Problem('conflict', {
+      detail: `You belong to ${mine.length} teams; that is as many as one may.`,
+    });
   }
   const team = { name: typed.name, defaults: teamDefaultsSchema.parse({}) };
   const { teamId, slug } =
     typed.slug === undefined
       ? await insertWithFreeSlug(transaction, team)
       : { slug: typed.slug, teamId: await insertTeam(transaction, { ...team, slug: typed.slug }) };
-  if (teamId === undefined) throw new Problem('conflict', { detail: `The address ${slug} is taken by another team.` });
+  if (teamId === undefined)
+    throw new Problem('conflict', { detail: `The address ${slug} is taken by another team.` });
   await transaction.insert(memberships).values({ teamId, userId: user.id, role: 'admin' });
   await transaction.insert(auditHeads).values({ teamId });
   await appendEvent(transaction, config.auditKey, {

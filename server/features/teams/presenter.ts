@@ -1,4 +1,10 @@
-import { teamDefaultsSchema, teamLimits, type Member, type Role, type Team } from '../../../shared/contract/index.ts';
+import {
+  teamDefaultsSchema,
+  teamLimits,
+  type Member,
+  type Role,
+  type Team,
+} from '../../../shared/contract/index.ts';
 import type { MemberRow, TeamRow } from './queries.ts';
 
 export const presentTeam = (
@@ -14,4 +20,7 @@ export const presentTeam = (
   version: team.version,
 });
 
-export const presentMember = ({ since, ...row }: MemberRow): Member => ({ ...row, since: since.toISOString() });
+export const presentMember = ({ since, ...row }: MemberRow): Member => ({
+  ...row,
+  since: since.toISOString(),
+});

@@ -46,14 +46,22 @@ export const teams: Feature = (deps) => {
     const members = await findMembers(db, teamOf(request).teamId);
     response.json({ items: members.map(presentMember), nextCursor: null });
   });
-  router.patch('/teams/:team/members/:userId', requireTeam('admin'), async (request: MemberRequest, response) => {
-    const { role } = parseInput(changeMemberSchema, request.body);
-    response.json(await changeRole(deps, teamOf(request), parseNumber(request.params.userId), role));
-  });
+  router.patch(
+    '/teams/:team/members/:userId',
+    requireTeam('admin'),
+    async (request: MemberRequest, response) => {
+      const { role } = parseInput(changeMemberSchema, request.body);
+      response.json(await changeRole(deps, teamOf(request), parseNumber(request.params.userId), role));
+    },
+  );
   // A viewer may leave; whoever removes somebody else must be an admin, which the command sees to.
-  router.delete('/teams/:team/members/:userId', requireTeam('viewer'), async (request: MemberRequest, response) => {
-    await removeMember(deps, teamOf(request), parseNumber(request.params.userId));
-    response.status(204).end();
-  });
+  router.delete(
+    '/teams/:team/members/:userId',
+    requireTeam('viewer'),
+    async (request: MemberRequest, response) => {
+      await removeMember(deps, teamOf(request), parseNumber(request.params.userId));
+      response.status(204).end();
+    },
+  );
   return router;
 };

@@ -20,9 +20,16 @@ const post = (
   rest: Pick<Operation, 'body' | 'answer'> & Partial<Operation>,
 ): Operation => ({ id, method: 'post', path, summary, access: 'anyone', ...rest });
 
-const onItsWay = { status: 202, description: 'If the address is one for it, a mail is on its way; the answer is alike for all' } as const;
+const onItsWay = {
+  status: 202,
+  description: 'If the address is one for it, a mail is on its way; the answer is alike for all',
+} as const;
 const done = { status: 204, description: 'Done' } as const;
-const proven = { status: 200, description: 'The address that the link has proved', schema: provenAddressSchema } as const;
+const proven = {
+  status: 200,
+  description: 'The address that the link has proved',
+  schema: provenAddressSchema,
+} as const;
 
 export const account: Section = {
   name: 'Account',
@@ -42,11 +49,16 @@ export const account: Section = {
       body: emailOnlySchema,
       answer: onItsWay,
     }),
-    post('resetPassword', '/account/reset-password', 'Set a new password by a mailed link; ends all sessions', {
-      body: resetPasswordSchema,
-      answer: proven,
-      refusals: [404, 410],
-    }),
+    post(
+      'resetPassword',
+      '/account/reset-password',
+      'Set a new password by a mailed link; ends all sessions',
+      {
+        body: resetPasswordSchema,
+        answer: proven,
+        refusals: [404, 410],
+      },
+    ),
     {
       id: 'readAccount',
       method: 'get',
@@ -80,17 +92,27 @@ export const account: Section = {
       answer: done,
       refusals: [403],
     }),
-    post('changeAddress', '/account/change-address', 'Ask for another address; a mail to it confirms the change', {
-      access: 'signed-in',
-      body: changeAddressSchema,
-      answer: onItsWay,
-      refusals: [403],
-    }),
-    post('confirmAddress', '/account/confirm-address', 'Take another address into use by the link mailed to it', {
-      body: tokenOnlySchema,
-      answer: proven,
-      refusals: [404, 409, 410],
-    }),
+    post(
+      'changeAddress',
+      '/account/change-address',
+      'Ask for another address; a mail to it confirms the change',
+      {
+        access: 'signed-in',
+        body: changeAddressSchema,
+        answer: onItsWay,
+        refusals: [403],
+      },
+    ),
+    post(
+      'confirmAddress',
+      '/account/confirm-address',
+      'Take another address into use by the link mailed to it',
+      {
+        body: tokenOnlySchema,
+        answer: proven,
+        refusals: [404, 409, 410],
+      },
+    ),
     {
       id: 'listSessions',
       method: 'get',

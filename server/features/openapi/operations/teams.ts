@@ -134,7 +134,11 @@ export const invitations: Section = {
       access: 'signed-in',
       body: invitationTokenSchema,
       repeatable: true,
-      answer: { status: 200, description: 'The team that was joined' },
+      answer: {
+        status: 200,
+        description: 'The team that was joined, with your role',
+        schema: openInvitationSchema,
+      },
       refusals: [403, 404, 409, 410],
     },
   ],

@@ -6,14 +6,17 @@ function* outwards(path: string): Generator<string> {
   }
 }
 
-const takesFocus = 'input, select, textarea, button, [tabindex="0"]';
+/** Fields first: an explanation's button may stand before its field. */
+const takeFocus = ['input, select, textarea', 'button, [tabindex="0"]'];
 
 /** Brings the field at a path, or the nearest thing that holds it, into sight and gives it the focus. */
 export function goToField(path: string): void {
   for (const here of outwards(path)) {
     const spot = document.querySelector<HTMLElement>(`[data-path="${CSS.escape(here)}"]`);
-    const field = spot?.matches(takesFocus) ? spot : spot?.querySelector<HTMLElement>(takesFocus);
-    if (field === undefined || field === null) continue;
+    const field = takeFocus
+      .map((kind) => (spot?.matches(kind) ? spot : spot?.querySelector<HTMLElement>(kind)))
+      .find((found) => found !== null && found !== undefined);
+    if (!field) continue;
     field.scrollIntoView({ block: 'center' });
     field.focus({ preventScroll: true });
     return;

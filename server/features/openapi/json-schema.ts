@@ -1,0 +1,81 @@
+import { z } from 'zod';
+import * as contract from '../../../shared/contract/index.ts';
+
+export type JsonSchema = Record<string, unknown>;
+
+const place = (id: string) => `#/components/schemas/${id}`;
+
+/** Schemas that have a name of their own in the document: as answered, and as sent where that differs. */
+const answered: Readonly<Record<string, z.ZodType>> = {
+  Definition: contract.definitionSchema,
+  Source: contract.sourceSchema,
+  Report: contract.reportSchema,
+  Warning: contract.warningSchema,
+  Table: contract.libraryTableSchema,
+  TableSummary: contract.tableSummarySchema,
+  Revision: contract.revisionSchema,
+  RevisionSummary: contract.revisionSummarySchema,
+  GeneratedFile: contract.generatedFileSchema,
+  Team: contract.teamSchema,
+  Member: contract.memberSchema,
+  Invitation: contract.invitationSchema,
+  Account: contract.accountSchema,
+  Session: contract.sessionSchema,
+};
+const sent: Readonly<Record<string, z.ZodType>> = {
+  DefinitionInput: contract.definitionSchema,
+  SourceInput: contract.sourceSchema,
+};
+
+/** Fields that take anything here, so that the engine's own parser can say what is wrong with it. */
+const definitions = new Set<unknown>([contract.definitionField, contract.renderRequestSchema.shape.definition]);
+
+type Side = 'input' | 'output';
+const named = { input: sent, output: answered };
+
+/** The components: every named schema, with references to each other. */
+export const componentSchemas = (): Record<string, JsonSchema> => ({ ...allOf('output'), ...allOf('input') });
+
+function allOf(io: Side): Record<string, JsonSchema> {
+  const registry = z.registry<{ id: string }>();
+  for (const [id, schema] of Object.entries(named[io])) registry.add(schema, { id });
+  const { schemas } = z.toJSONSchema(registry, {
+    io,
+    uri: place,
+    unrepresentable: 'any',
+    override: tidied(io),
+  });
+  return Object.fromEntries(Object.entries(schemas).map(([id, schema]) => [id, withoutMarks(schema)]));
+}
+
+/** Any schema, with references to the named ones in it. */
+export function jsonSchemaOf(schema: z.ZodType, io: Side): JsonSchema {
+  const registry = z.registry<{ id: string }>();
+  for (const [id, own] of Object.entries(named[io])) registry.add(own, { id });
+  registry.add(schema, { id: registry.get(schema)?.id ?? 'this' });
+  const { schemas } = z.toJSONSchema(registry, {
+    io,
+    uri: place,
+    unrepresentable: 'any',
+    override: tidied(io),
+  });
+  return registry.get(schema)?.id === 'this'
+    ? withoutMarks(schemas.this)
+    : { $ref: place(String(registry.get(schema)?.id)) };
+}
+
+const tidied =
+  (io: Side) =>
+  ({ zodSchema, jsonSchema }: { zodSchema: unknown; jsonSchema: JsonSchema }) => {
+    if (definitions.has(zodSchema)) {
+      jsonSchema.$ref = place(io === 'input' ? 'DefinitionInput' : 'Definition');
+    }
+    // What every integer of JavaScript keeps to says nothing; `date-time` says all that its pattern does.
+    if (jsonSchema.minimum === Number.MIN_SAFE_INTEGER) delete jsonSchema.minimum;
+    if (jsonSchema.maximum === Number.MAX_SAFE_INTEGER) delete jsonSchema.maximum;
+    if (jsonSchema.format === 'date-time' || jsonSchema.format === 'email') delete jsonSchema.pattern;
+  };
+
+/** The dialect is OpenAPI's own, and a component is named by its place. */
+const withoutMarks = ({ $schema: _dialect, $id: _name, id: _alias, ...schema }: JsonSchema): JsonSchema =>
+  schema;
