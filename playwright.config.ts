@@ -25,7 +25,7 @@ export default defineConfig({
         '--disable-component-update',
         '--disable-sync',
         '--no-first-run',
-        '--autoplay-policy=user-gesture-required',
+        '--autoplay-policy=document-user-activation-required',
       ],
     },
   },

@@ -22,6 +22,8 @@ export interface Config {
   readonly smtpUrl: string | undefined;
   /** What mail is sent from; undefined: `no-reply` at our own host. */
   readonly mailFrom: string | undefined;
+  /** Where the passwords of the demo accounts go, which a fresh database then gets; only ever set where `local`. */
+  readonly demoFile: string | undefined;
   readonly trustedProxies: readonly string[];
   readonly logLevel: string;
 }
@@ -96,6 +98,7 @@ const environment = z.object({
   MAIL_FROM: text.pipe(z.email({ error: 'an e-mail address, as stepwell@tables.example' }).optional()),
   DATABASE_URL: urlWith('mysql:', 'mariadb:'),
   PRIVATE_DATABASE_URL: urlWith('mysql:'),
+  DEMO_FILE: text,
   TRUSTED_PROXIES: text.refine(
     (value) => listOf(value).every(isProxy),
     'addresses or subnets, as 10.0.0.0/8, separated by commas',
@@ -150,6 +153,7 @@ export function readConfig(env: Readonly<Record<string, string | undefined>>): C
     local,
     smtpUrl: value('SMTP_URL'),
     mailFrom: value('MAIL_FROM'),
+    demoFile: local ? value('DEMO_FILE') : undefined,
     trustedProxies: listOf(value('TRUSTED_PROXIES')),
     logLevel: value('LOG_LEVEL') ?? (local ? 'warn' : 'info'),
   };

@@ -9,6 +9,7 @@ import { SchemaFault } from './db/schema-state.ts';
 import { clientFiles } from './http/client-files.ts';
 import { createLogger } from './http/logger.ts';
 import { createJobPool } from './jobs/pool.ts';
+import { seedDemo } from './demo/seed.ts';
 import { listen, originsOf } from './listen.ts';
 import { startMail } from './mail/start-mail.ts';
 import { projectFolder } from './project-folder.ts';
@@ -35,6 +36,8 @@ async function start(): Promise<void> {
   const client = isDevelopment ? await developmentClient(server) : builtClient();
   const database = openDatabase(config.databaseUrl);
   const jobs = createJobPool();
+  const demo = config.demoFile && (await seedDemo({ config, database, jobs }, config.demoFile));
+  if (demo) process.stdout.write(demo);
   const port = await listen(server, config);
   const origins = originsOf(config, port);
   const app = buildApp({

@@ -47,6 +47,7 @@ async function surroundings(onStop) {
   return {
     PRIVATE_DATABASE_URL: (await holding).urlOf('stepwell'),
     AUTH_SECRET: process.env.AUTH_SECRET || localSecret(dataFolder),
+    DEMO_FILE: join(dataFolder, 'demo-accounts.txt'),
   };
 }
 

@@ -23,16 +23,13 @@ export function analyseTable(
 ): TableAnalysis {
   const lsb = lsbOf(table);
   const values = valuesOf(codes, table);
-  const error = new Float64Array(values.length);
-  for (let k = 0; k < error.length; k += 1) error[k] = values[k] - cycle[k];
-
   const wanted = momentsOf(cycle);
-  const errors = momentsOf(error);
+  const errors = momentsOf(values, cycle);
   const result = momentsOf(values);
   const exact = errors.variance <= exactPower;
   // A constant's variance is rounding noise, that of a very small signal may come out as 0.
   const isConstant = wanted.peakToPeak === 0 || wanted.variance === 0;
-  const spectrum = spectrumOf(cycle, error, lsb);
+  const spectrum = spectrumOf(cycle, values, lsb);
   const storedCount = table.fold === 'quarter' ? codes.length / 4 : codes.length;
 
   const report: Report = {
@@ -66,20 +63,24 @@ interface Moments {
   readonly peakToPeak: number;
 }
 
-function momentsOf(signal: Float64Array): Moments {
+/** Moments of a signal, or of what is left of it when another is taken off. */
+function momentsOf(signal: Float64Array, without?: Float64Array): Moments {
   const count = signal.length;
   let sum = 0;
   let lowest = Infinity;
   let highest = -Infinity;
   for (let k = 0; k < count; k += 1) {
-    const value = signal[k];
+    const value = without === undefined ? signal[k] : signal[k] - without[k];
     sum += value;
     if (value < lowest) lowest = value;
     if (value > highest) highest = value;
   }
   const mean = sum / count;
   let squaresAroundMean = 0;
-  for (let k = 0; k < count; k += 1) squaresAroundMean += (signal[k] - mean) ** 2;
+  for (let k = 0; k < count; k += 1) {
+    const value = without === undefined ? signal[k] : signal[k] - without[k];
+    squaresAroundMean += (value - mean) ** 2;
+  }
   const variance = squaresAroundMean / count;
   return {
     mean,

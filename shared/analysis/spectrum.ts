@@ -14,22 +14,22 @@ export interface Spectrum {
 export const floorDbfs = -200;
 
 /**
- * Spectra of a cycle r, of its error e, and of their sum, which is what the codes stand for: `A_0 = |X_0|/N`,
+ * Spectra of a cycle r, of what the codes stand for, q, and of the error `e = q − r`: `A_0 = |X_0|/N`,
  * `A_k = 2|X_k|/N`, `A_{N/2} = |X_{N/2}|/N`.
  *
  * One complex transform gives both: of `x = r + i·e/lsb` the lines are `R_k = (X_k + conj X_{N−k})/2` and
  * `E_k/lsb = (X_k − conj X_{N−k})/2i`. Each carries the rounding noise of the other, so the error is brought to
- * the size of the signal first.
+ * the size of the signal first. The lines of q are the sum of both.
  *
  * @param lsb size of one LSB, in the units of the cycle
  */
-export function spectrumOf(cycle: Float64Array, error: Float64Array, lsb: number): Spectrum {
+export function spectrumOf(cycle: Float64Array, values: Float64Array, lsb: number): Spectrum {
   const size = cycle.length;
   const { data, out, forward } = transformOf(size);
   const perLsb = 1 / lsb;
   for (let n = 0; n < size; n += 1) {
     data[2 * n] = cycle[n];
-    data[2 * n + 1] = error[n] * perLsb;
+    data[2 * n + 1] = (values[n] - cycle[n]) * perLsb;
   }
   forward(out, data);
 

@@ -14,13 +14,14 @@ const zeroFraction = 1e-12;
 const clipTolerance = 1e-12;
 
 /**
- * Level of §3.1: mean, normalisation, level, transfer, clip.
+ * Level of §3.1: mean, normalisation, level, transfer, clip. Takes the synthesis over: its array becomes the
+ * levelled cycle.
  *
  * @throws {Refusal} where the signal is zero (or, for `span`, constant), or grows beyond what a double holds.
  */
 export function levelCycle(synthesis: Synthesis, { level, table }: Definition): LevelledCycle {
   const isBipolar = table.range === 'bipolar';
-  const cycle = synthesis.cycle.slice();
+  const { cycle } = synthesis;
   if (level.removeMean) subtractMean(cycle);
   // A sum beyond a double, that of the mean too, shows as an entry that is not finite.
   if (!isAllFinite(cycle)) refuseSignal('a signal beyond the range of a double', 'smaller amplitudes');

@@ -42,22 +42,23 @@ function sourceCycle(source: Source, table: TableSettings, path: string, warning
 }
 
 function largestInputOf(source: Source): number {
-  const largest = (numbers: Iterable<number>, start = 0) => {
-    let most = start;
-    for (const number of numbers) most = Math.max(most, Math.abs(number));
-    return most;
+  let largest = 0;
+  const take = (number: number) => {
+    largest = Math.max(largest, Math.abs(number));
   };
   switch (source.kind) {
     case 'harmonics':
-      return largest(
-        source.partials.map(({ amplitude }) => amplitude),
-        Math.abs(source.offset),
-      );
+      take(source.offset);
+      for (const { amplitude } of source.partials) take(amplitude);
+      return largest;
     case 'points':
-      return largest(source.points.map(({ y }) => y));
+      for (const { y } of source.points) take(y);
+      return largest;
     case 'samples':
-      return largest(source.values);
+      source.values.forEach(take);
+      return largest;
     case 'mix':
-      return largest(source.parts.map((part) => largestInputOf(part.source)));
+      for (const part of source.parts) take(largestInputOf(part.source));
+      return largest;
   }
 }

@@ -52,9 +52,10 @@ describe('a write by cookie', () => {
     expect(list.length).toBeGreaterThan(20);
     for (const [method, path] of list) {
       for (const from of [undefined, 'null', 'https://elsewhere.example']) {
-        const sent = request(test.app)
-          [method as 'post'](`/api/v1${path.replace(':team', team.slug).replace(/:\w+/g, '1')}`)
-          .set({ Host: host, Cookie: admin.cookie, 'X-Forwarded-For': admin.address });
+        const agent = request(test.app);
+        const sent = agent[method as 'post'](
+          `/api/v1${path.replace(':team', team.slug).replace(/:\w+/g, '1')}`,
+        ).set({ Host: host, Cookie: admin.cookie, 'X-Forwarded-For': admin.address });
         if (from !== undefined) sent.set('Origin', from);
         const response = await sent.send({});
         expect([method, path, from, response.status, kindOf(response)]).toEqual([

@@ -50,7 +50,7 @@ describe('the readable mailbox', () => {
     const mail = await startMail(config, origin, test.database.db, silent);
     const [summary] = await waitUntil('the mail', async () => {
       const { items } = await page();
-      return items.length > 0 && items;
+      return items.length > 0 ? items : undefined;
     });
     await waitUntil(
       'the note',

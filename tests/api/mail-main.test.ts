@@ -46,7 +46,8 @@ describe('the application on its own machine', () => {
     expect(signedUp.status).toBe(202);
     const mail = await waitUntil('the mail', async () => {
       const { items } = (await (await send('/mailbox')).json()) as { items: { id: number }[] };
-      return items.length > 0 && ((await (await send(`/mailbox/${items[0].id}`)).json()) as { text: string });
+      if (items.length === 0) return undefined;
+      return (await (await send(`/mailbox/${items[0].id}`)).json()) as { text: string };
     });
     const link = /http:\/\/\S+/.exec(mail.text)?.[0] ?? '';
     expect(new URL(link).origin).toBe(address);

@@ -88,8 +88,8 @@ export async function makeCrew(test: TestApp) {
 export function asPerson(test: TestApp, person?: Pick<TestPerson, 'cookie' | 'address'>) {
   const address = person?.address ?? anyAddress();
   const send = (method: 'get' | 'post' | 'patch' | 'put' | 'delete', path: string, body?: object): Test => {
-    const sent = request(test.app)
-      [method](`/api/v1${path}`)
+    const agent = request(test.app);
+    const sent = agent[method](`/api/v1${path}`)
       .set('Host', host)
       .set('Origin', origin)
       .set('X-Forwarded-For', address);

@@ -48,7 +48,7 @@ export async function readTable(db: Executor, teamId: number, slug: string): Pro
 
 export async function createTable(
   command: Command,
-  { title, tags, playback, note }: CreateTable,
+  { title, tags, playback, note }: Omit<CreateTable, 'definition'>,
   built: BuiltRevision,
 ): Promise<LibraryTable> {
   const slug = await insertTable(
@@ -65,7 +65,7 @@ export async function addRevision(
   command: Command,
   slug: string,
   precondition: Precondition,
-  { playback, note }: CreateRevision,
+  { playback, note }: Omit<CreateRevision, 'definition'>,
   built: BuiltRevision,
 ): Promise<LibraryTable> {
   const table = await lockUnchanged(command, slug, precondition);

@@ -1,7 +1,9 @@
+import { PlotLinkProvider } from '../../../plots/index.ts';
 import { FigureStrips } from '../figures/figure-strips.tsx';
 import { Warnings } from '../figures/warnings.tsx';
 import { useBench } from '../state/use-bench.ts';
 import { sampleRateOf } from '../state/wave.ts';
+import { useSightInUrl } from '../view/use-sight-in-url.ts';
 import { Drawings } from './drawings.tsx';
 import { usePointsOverlay } from './use-points-overlay.ts';
 
@@ -12,6 +14,7 @@ export function BenchDrawings({ onGoTo }: { onGoTo: (path: string) => void }) {
   const isStale = useBench(({ problems, failure }) => problems.length > 0 || failure !== null);
   const isBuilding = useBench((state) => state.isBuilding);
   const overlay = usePointsOverlay(table);
+  const link = useSightInUrl();
   return (
     <section
       className="bench-drawings"
@@ -28,11 +31,13 @@ export function BenchDrawings({ onGoTo }: { onGoTo: (path: string) => void }) {
       ) : (
         <>
           {isBuilding && <p className="drawings-late">Building…</p>}
-          <Drawings
-            table={table}
-            sampleRateHz={sampleRateOf(playback, table.definition.table)}
-            overlay={overlay}
-          />
+          <PlotLinkProvider value={link}>
+            <Drawings
+              table={table}
+              sampleRateHz={sampleRateOf(playback, table.definition.table)}
+              overlay={overlay}
+            />
+          </PlotLinkProvider>
           <Warnings warnings={table.warnings} onGoTo={onGoTo} />
           <FigureStrips table={table} />
         </>

@@ -2,6 +2,7 @@ import { memo } from 'react';
 import { CyclePlot, ErrorPlot, SpectrumPlot } from '../../../plots/index.ts';
 import type { TableAnswer } from '../../../workers/engine-messages.ts';
 import type { PointsOverlay } from '../shape/index.ts';
+import { useSpectrumScale } from '../view/use-spectrum-scale.ts';
 
 interface DrawingsProps {
   table: TableAnswer;
@@ -34,9 +35,11 @@ const Cycle = memo(function Cycle({ table, overlay }: Pick<DrawingsProps, 'table
 const Spectrum = memo(function Spectrum({ table, sampleRateHz }: Omit<DrawingsProps, 'overlay'>) {
   const { amplitudes, intended, added } = table.spectrum;
   const { length, cycles } = table.definition.table;
+  const scale = useSpectrumScale();
   return (
     <SpectrumPlot
       {...{ amplitudes, intended, added, cycles }}
+      {...scale}
       tableLength={length}
       sampleRateHz={sampleRateHz > 0 && Number.isFinite(sampleRateHz) ? sampleRateHz : undefined}
     />

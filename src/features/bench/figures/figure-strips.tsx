@@ -1,6 +1,7 @@
 import { memo, useDeferredValue, useMemo } from 'react';
 import { Figure, FigureStrip } from '../../../components/index.ts';
 import type { TableAnswer } from '../../../workers/engine-messages.ts';
+import { sameValue } from '../state/same-value.ts';
 import { useIsWide } from '../view/use-is-wide.ts';
 import { figureGroupsOf, type FigureGroup, type ShownFigure } from './figures.ts';
 
@@ -42,11 +43,16 @@ function Course({ group: { title, note, figures } }: { group: FigureGroup }) {
   );
 }
 
-function OneFigure({ figure: { label, value, unit, tone, ...words } }: { figure: ShownFigure }) {
+/** While something is dragged most figures keep what they say. */
+const OneFigure = memo(function OneFigure({
+  figure: { label, value, unit, tone, ...words },
+}: {
+  figure: ShownFigure;
+}) {
   return (
     <Figure label={label} value={value} unit={unit} tone={tone ?? 'plain'} explain={<Words {...words} />} />
   );
-}
+}, sameValue);
 
 function Words({
   meaning,

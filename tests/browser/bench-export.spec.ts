@@ -1,0 +1,89 @@
+import { execFile } from 'node:child_process';
+import { mkdtemp, readFile, readdir, rm } from 'node:fs/promises';
+import { tmpdir } from 'node:os';
+import { join } from 'node:path';
+import { promisify } from 'node:util';
+import { expect } from '@playwright/test';
+import { projectFolder } from '../../server/project-folder.ts';
+import { figure, flight, saidBeside, test, textOf } from '../support/bench-page.ts';
+
+test.describe('export', () => {
+  test.use({ permissions: ['clipboard-read', 'clipboard-write'] });
+
+  test('loads its code when the flight opens, not before', async ({ page }) => {
+    const scripts: string[] = [];
+    page.on('request', (request) => scripts.push(request.url()));
+    await page.goto('/');
+    await expect(figure(page, 'SNR')).toBeVisible();
+    await page.waitForLoadState('networkidle');
+    expect(scripts.filter((url) => /export-panel/.test(url))).toEqual([]);
+    await flight(page, 'Export').click();
+    await expect(page.getByRole('tab', { name: 'fog_signal_tone.h' })).toBeVisible();
+    expect(scripts.filter((url) => /export-panel/.test(url))).not.toEqual([]);
+  });
+
+  for (const target of ['c99', 'avr']) {
+    test(`shows, copies and downloads the same ${target} files that the command line writes`, async ({
+      page,
+    }) => {
+      await page.goto('/?open=export');
+      await page.getByRole('combobox', { name: 'Target' }).selectOption(target);
+      await page.getByRole('textbox', { name: 'Array name' }).fill('buoyTone');
+      if (target === 'avr') await page.getByRole('combobox', { name: 'Port', exact: true }).selectOption('D');
+      await expect(page.getByRole('tab', { name: 'buoyTone.h' })).toBeVisible();
+
+      const folder = await mkdtemp(join(tmpdir(), 'stepwell-export-'));
+      try {
+        const shown = new Map<string, string>();
+        for (const tab of await page.getByRole('tab').all()) {
+          await tab.click();
+          const name = await tab.innerText();
+          const code = page.getByRole('textbox', { name: `${name}, read-only` });
+          await expect(code).toHaveAttribute('aria-readonly', 'true');
+          await page.getByRole('button', { name: `Copy ${name}` }).click();
+          await expect(page.getByText(`${name} copied.`)).toBeVisible();
+          const copied = await page.evaluate(() => navigator.clipboard.readText());
+          const [download] = await Promise.all([
+            page.waitForEvent('download'),
+            page.getByRole('button', { name: `Download ${name}` }).click(),
+          ]);
+          expect(download.suggestedFilename()).toBe(name);
+          expect(await textOf(download)).toBe(copied);
+          const lines = await code.locator('.cm-line').allInnerTexts();
+          expect(copied.split('\n').slice(0, 10)).toEqual(
+            lines.slice(0, 10).map((line) => line.replace(/\n$/, '')),
+          );
+          shown.set(name, copied);
+        }
+
+        const [definition] = await Promise.all([
+          page.waitForEvent('download'),
+          page.getByRole('button', { name: 'Download fog_signal_tone.json' }).click(),
+        ]);
+        await definition.saveAs(join(folder, definition.suggestedFilename()));
+        const command = await page.locator('.command-line').innerText();
+        const [, args] = command.split('npm run --silent stepwell -- ');
+        await promisify(execFile)(
+          process.execPath,
+          [join(projectFolder, 'server/setup/stepwell.mjs'), ...args.trim().split(/\s+/)],
+          { cwd: folder },
+        );
+        const written = (await readdir(folder)).filter((name) => name !== 'fog_signal_tone.json');
+        expect(written.sort()).toEqual([...shown.keys()].sort());
+        for (const name of written) expect(await readFile(join(folder, name), 'utf8')).toBe(shown.get(name));
+      } finally {
+        await rm(folder, { recursive: true });
+      }
+    });
+  }
+
+  test('refuses an array name that C does not take, beside the field', async ({ page }) => {
+    await page.goto('/?open=export');
+    await page.getByRole('textbox', { name: 'Array name' }).fill('2nd-tone');
+    await expect.poll(() => saidBeside(page, 'Array name')).toContain('"2nd-tone" is not allowed');
+    await page.getByRole('textbox', { name: 'Array name' }).fill('volatile');
+    await expect.poll(() => saidBeside(page, 'Array name')).toContain('"volatile" is not allowed');
+    await page.getByRole('textbox', { name: 'Array name' }).fill('');
+    await expect(page.getByRole('tab', { name: 'fog_signal_tone.c' })).toBeVisible();
+  });
+});
