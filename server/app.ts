@@ -60,18 +60,10 @@ export function buildApp(deps: AppDeps): Express {
   app.use(securityHeaders({ https: origins[0].startsWith('https:'), policy: deps.contentPolicy }));
   app.use(compression());
 
-  app.use('/auth', noStore, ...authRoutes(deps));
+  const known = [readSignIn(deps), generalLimit(rateLimiter(deps))];
+  app.use('/auth', noStore, ...known, ...authRoutes(deps));
   const routers = buildRouters(deps);
-  app.use(
-    '/api/v1',
-    noStore,
-    originGate(origins),
-    readSignIn(deps),
-    generalLimit(rateLimiter(deps)),
-    jsonBody,
-    ...routers,
-    noSuchRoute(routers),
-  );
+  app.use('/api/v1', noStore, originGate(origins), ...known, jsonBody, ...routers, noSuchRoute(routers));
   app.use('/api', nothingHere);
 
   app.use(deps.client);

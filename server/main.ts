@@ -80,7 +80,7 @@ async function developmentClient(server: Server): Promise<Client> {
 
 /** To the set-up that started this process; on a terminal of its own, to whoever reads it. */
 function tellAddress(address: string): void {
-  if (process.send) process.send({ address });
+  if (process.send && process.connected) process.send({ address });
   else process.stdout.write(`Stepwell is open at ${address}\n`);
 }
 

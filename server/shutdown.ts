@@ -22,4 +22,6 @@ export function endInOrder(server: Server, steps: readonly (() => Promise<void>)
   };
   for (const signal of ['SIGTERM', 'SIGINT', 'SIGHUP', 'disconnect'] as const)
     process.on(signal, () => void end());
+  // It may have gone while we were starting.
+  if (process.connected === false) void end();
 }

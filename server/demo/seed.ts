@@ -69,7 +69,7 @@ export async function seedDemo(deps: Deps, file: string): Promise<string | undef
     if (errnoOf(error) === errno.duplicate) return undefined;
     throw error;
   }
-  return text;
+  return `${text}  They are kept in ${file}\n`;
 }
 
 const buildAll = ({ jobs }: Deps, { revisions }: DemoTable) =>
@@ -79,8 +79,9 @@ const describe = (accounts: readonly DemoAccount[]) =>
   [
     `Demo accounts of the team ${teamName}, on this machine only:`,
     ...accounts.map(({ email, password }) => `  ${email.padEnd(32)} ${password}`),
-    '',
-  ].join('\n');
+  ]
+    .map((line) => `${line}\n`)
+    .join('');
 
 async function keepSecret(file: string, text: string): Promise<void> {
   await writeFile(file, text, { mode: 0o600 });

@@ -1,8 +1,9 @@
 import express, { type RequestHandler } from 'express';
+import { limits } from '../../shared/contract/index.ts';
 import { Problem } from './problem.ts';
 
-/** Bytes of one JSON request; a definition at all its limits takes about 300 kB. */
-export const jsonLimit = 1_000_000;
+/** Bytes of one JSON request; 65,536 samples with all their digits take 1.3 MB. */
+export const jsonLimit = limits.requestBytes;
 
 /** Nesting of one JSON request; what we take nests 12 deep at most, and parsers recurse. */
 const depthLimit = 64;

@@ -70,5 +70,8 @@ export const invitationLetter = (
     `${quoted(invitedBy)} invites you to the team ${quoted(teamName)} at Stepwell, with the role ${role}.`,
   ],
   action: { label: 'See the invitation', url: linkTo(origin, '/invitation', token) },
-  afterwards: ['The link works once, for 7 days, and only for this address.', notYou],
+  afterwards: [
+    'The link works once, for 7 days, and only for this address.',
+    'If you do not know them, leave this mail alone: nothing happens then.',
+  ],
 });

@@ -31,6 +31,12 @@ export async function mainScript(work, { signalStatus } = {}) {
   ]) {
     process.on(signal, () => void end(signalStatus?.() ?? usual));
   }
+  // Where nobody reads any more (`| head`), what was started must end all the same.
+  for (const stream of [process.stdout, process.stderr]) stream.on('error', () => void end(1));
+  process.on('uncaughtException', (error) => {
+    report(error);
+    void end(1);
+  });
   try {
     await end(await work((step) => steps.push(step)));
   } catch (error) {

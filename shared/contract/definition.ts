@@ -187,12 +187,17 @@ export const tableSchema = z.strictObject({
   levels: listOf(anyNumber, { min: 2, max: 2 ** limits.bits.max }, 'voltages').optional(),
 });
 
+const nameError = `${limits.nameLength.min} to ${limits.nameLength.max} characters`;
+const nameField = z
+  .string({ error: nameError })
+  .min(limits.nameLength.min, { error: nameError })
+  .max(limits.nameLength.max, { error: nameError })
+  // Half a surrogate pair has no UTF-8 form, so no digest (RFC 8785 §3.2.2.2).
+  .regex(/^\P{Cs}*$/u, { error: 'whole characters, no half of a surrogate pair' });
+
 export const definitionSchema = z.strictObject({
   schema: z.literal(1, { error: '1' }),
-  name: z
-    .string({ error: `1 to ${limits.nameLength.max} characters` })
-    .min(limits.nameLength.min, { error: `1 to ${limits.nameLength.max} characters` })
-    .max(limits.nameLength.max, { error: `1 to ${limits.nameLength.max} characters` }),
+  name: nameField,
   source: sourceSchema,
   level: levelSchema.prefault({}),
   table: tableSchema.prefault({}),

@@ -33,7 +33,8 @@ describe('npm start', () => {
   it('ends by printing one address, where the application answers', async () => {
     const script = start();
     const address = await script.address();
-    expect(script.output()).toBe(`Stepwell is open at ${address}\n`);
+    expect(script.output().trimEnd().split('\n').at(-1)).toBe(`Stepwell is open at ${address}`);
+    expect(script.output().match(/https?:\/\//g)).toHaveLength(1);
     expect(await health(address)).toBe(200);
     const page = await fetch(address);
     expect(page.headers.get('content-type')).toContain('text/html');

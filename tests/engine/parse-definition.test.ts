@@ -103,6 +103,7 @@ describe('one field at fault', () => {
   const faults: [path: string, input: (value: unknown) => unknown, values: unknown[], allowed: string][] = [
     ['schema', (v) => sineWith('schema', v), [0, 2, '1', null, 1e300], '1'],
     ['name', (v) => sineWith('name', v), ['', 'x'.repeat(65), 'x'.repeat(1_000_000), 7, null], '1 to 64 characters'],
+    ['name', (v) => sineWith('name', v), ['fog \ud83d', '\udf2b signal'], 'whole characters, no half of a surrogate pair'],
     [
       'table.length',
       (v) => sineWith('table.length', v),

@@ -6,8 +6,8 @@ import { readCursor, writeCursor, type Position } from './list-cursor.ts';
 import { orderOf } from './list-order.ts';
 import { filtersOf, type Filter, type Scope } from './list-filters.ts';
 
-/** Up to how many tables a filter may pass and still lead. */
-const few = 1000;
+/** Up to how many index entries a filter may have and still lead. */
+const leadAtMost = 1000;
 
 export interface FoundPage {
   readonly ids: readonly number[];
@@ -23,7 +23,12 @@ export interface FoundPage {
  *
  * @throws {Problem} `validation` (422) for a cursor of another list and for too many words
  */
-export async function findTables(db: Database, teamId: number, query: TablesQuery): Promise<FoundPage> {
+export async function findTables(
+  db: Database,
+  teamId: number,
+  query: TablesQuery,
+  few = leadAtMost,
+): Promise<FoundPage> {
   const scope = { teamId, isArchived: query.archived === 'yes' };
   const question = [
     teamId,
@@ -36,7 +41,7 @@ export async function findTables(db: Database, teamId: number, query: TablesQuer
   ];
   const after = query.cursor === undefined ? undefined : readCursor(question, query.cursor);
   const filters = filtersOf(scope, query);
-  const lead = await narrowest(db, filters);
+  const lead = await narrowest(db, filters, few);
   if (lead?.passing === 0) return { ids: [], nextCursor: null };
 
   const order = orderOf(query.sort, query.direction);
@@ -73,9 +78,9 @@ interface Lead {
 }
 
 /** The filter that the fewest tables pass, if those are few. Counting stops where it can no longer be one. */
-async function narrowest(db: Database, filters: readonly Filter[]): Promise<Lead | undefined> {
+async function narrowest(db: Database, filters: readonly Filter[], few: number): Promise<Lead | undefined> {
   if (filters.length === 0) return undefined;
-  const counts = filters.map(({ entries }, index) => counted(entries, index));
+  const counts = filters.map(({ entries }, index) => counted(entries, index, few + 1));
   const [rows] = await db.execute(sql`select ${sql.join(counts, sql`, `)}`);
   const [row] = rows as unknown as Record<string, number>[];
   const leads = filters.map((filter, index) => ({ filter, passing: row[`filter${index}`] }));
@@ -85,5 +90,5 @@ async function narrowest(db: Database, filters: readonly Filter[]): Promise<Lead
     .at(0);
 }
 
-const counted = (entries: SQL, index: number) =>
-  sql`(select count(*) from (select 1 from ${entries} limit ${few + 1}) as entries) as ${sql.raw(`filter${index}`)}`;
+const counted = (entries: SQL, index: number, atMost: number) =>
+  sql`(select count(*) from (select 1 from ${entries} limit ${atMost}) as entries) as ${sql.raw(`filter${index}`)}`;

@@ -1,0 +1,40 @@
+import { spawn } from 'node:child_process';
+import { createInterface } from 'node:readline';
+import { fileURLToPath } from 'node:url';
+import { pythonFlags, pythonPath } from '../outside/numpy/python.ts';
+
+export interface NumpyTable {
+  codes: number[];
+  stored: number[];
+  report: Record<string, unknown>;
+  spectrum: number[];
+}
+
+/** pipeline.py in a process of its own, asked line by line. */
+export class NumpyPipeline {
+  readonly #process = spawn(pythonPath, [...pythonFlags, fileURLToPath(new URL('pipeline.py', import.meta.url))], {
+    stdio: ['pipe', 'pipe', 'inherit'],
+  });
+  readonly #answers = createInterface({ input: this.#process.stdout })[Symbol.asyncIterator]();
+
+  /** Takes a definition and answers its table. */
+  open(definition: unknown): Promise<NumpyTable> {
+    return this.#ask<NumpyTable>({ open: definition });
+  }
+
+  /** Milliseconds of each of `count` runs of the definition taken last. */
+  run(count: number): Promise<number[]> {
+    return this.#ask<number[]>({ run: count });
+  }
+
+  close(): void {
+    this.#process.stdin.end();
+  }
+
+  async #ask<Answer>(question: object): Promise<Answer> {
+    this.#process.stdin.write(`${JSON.stringify(question)}\n`);
+    const { value, done } = await this.#answers.next();
+    if (done) throw new Error('The NumPy pipeline has ended.');
+    return JSON.parse(value) as Answer;
+  }
+}
