@@ -1,6 +1,48 @@
-/** Every address of the client, in one place. */
+const part = encodeURIComponent;
+
+/** Every address of the client, in one place. Patterns have their parameters as `:name`. */
 export const paths = {
   bench: '/',
   /** The wave stands in the fragment, which browsers keep to themselves. */
   sharedWave: '/wave',
+
+  /** These lead to the team in use, or say what to do first. */
+  anyTables: '/tables',
+  anyTeam: '/team',
+  newTeam: '/new-team',
+  team: '/teams/:team',
+  tables: '/teams/:team/tables',
+  table: '/teams/:team/tables/:table',
+  /** Puts a revision on the bench. */
+  openRevision: '/teams/:team/tables/:table/revisions/:number/bench',
+
+  signUp: '/sign-up',
+  signIn: '/sign-in',
+  forgotPassword: '/forgot-password',
+  account: '/account',
+  /** Mailed links lead to these, with their token in the fragment. */
+  verify: '/verify',
+  resetPassword: '/reset-password',
+  confirmAddress: '/confirm-address',
+  invitation: '/invitation',
+
+  mailbox: '/mailbox',
+  /** `/api` itself belongs to the server. */
+  api: '/http-api',
 } as const;
+
+export const teamPath = (team: string) => `/teams/${part(team)}`;
+export const tablesPath = (team: string, query = '') => `${teamPath(team)}/tables${query && `?${query}`}`;
+
+export const tablePath = (team: string, table: string, revision?: number) =>
+  `${tablesPath(team)}/${part(table)}${revision === undefined ? '' : `?revision=${revision}`}`;
+
+export const openRevisionPath = (team: string, table: string, revision: number) =>
+  `${tablesPath(team)}/${part(table)}/revisions/${revision}/bench`;
+
+/** The sign-in page, which goes on to `to`. */
+export const signInPath = (to: string) => `${paths.signIn}?${new URLSearchParams({ to })}`;
+
+/** An address to go on to, if it is one of ours: `//host` and `/\host` would lead away. */
+export const ownPath = (to: string | null): string | null =>
+  to !== null && /^\/(?![/\\])/.test(to) ? to : null;

@@ -48,7 +48,8 @@ export async function ensurePackages(names, { output } = {}) {
   }
   console.error(`Installing ${missing.join(', ')} …`);
   const options = { output: output ?? 'stderr', env: { DEBIAN_FRONTEND: 'noninteractive' } };
-  const aptGet = async (args) => (await run('apt-get', ['-qq', '-o=Dpkg::Use-Pty=0', ...args], options)).status === 0;
+  const aptGet = async (args) =>
+    (await run('apt-get', ['-qq', '-o=Dpkg::Use-Pty=0', ...args], options)).status === 0;
   // A fresh machine has no package lists, an old one has outdated ones: both are mended by an update.
   const done = (await aptGet(install)) || ((await aptGet(['update'])) && (await aptGet(install)));
   const stillMissing = missingOf(names);

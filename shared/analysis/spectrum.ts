@@ -17,19 +17,22 @@ export const floorDbfs = -200;
  * Spectra of a cycle r, of what the codes stand for, q, and of the error `e = q − r`: `A_0 = |X_0|/N`,
  * `A_k = 2|X_k|/N`, `A_{N/2} = |X_{N/2}|/N`.
  *
- * One complex transform gives both: of `x = r + i·e/lsb` the lines are `R_k = (X_k + conj X_{N−k})/2` and
- * `E_k/lsb = (X_k − conj X_{N−k})/2i`. Each carries the rounding noise of the other, so the error is brought to
- * the size of the signal first. The lines of q are the sum of both.
- *
- * @param lsb size of one LSB, in the units of the cycle
+ * One complex transform gives both: of `x = r/r̂ + i·e/ê` the lines are `R_k/r̂ = (X_k + conj X_{N−k})/2` and
+ * `E_k/ê = (X_k − conj X_{N−k})/2i`. Each carries the rounding noise of the other, so both are brought to one size
+ * first, by their peaks r̂ and ê. The lines of q are the sum of both.
  */
-export function spectrumOf(cycle: Float64Array, values: Float64Array, lsb: number): Spectrum {
+export function spectrumOf(
+  cycle: Float64Array,
+  values: Float64Array,
+  { cyclePeak, errorPeak }: { cyclePeak: number; errorPeak: number },
+): Spectrum {
   const size = cycle.length;
   const { data, out, forward } = transformOf(size);
-  const perLsb = 1 / lsb;
+  const cycleUnit = cyclePeak === 0 ? 1 : cyclePeak;
+  const errorUnit = errorPeak === 0 ? 1 : errorPeak;
   for (let n = 0; n < size; n += 1) {
-    data[2 * n] = cycle[n];
-    data[2 * n + 1] = (values[n] - cycle[n]) * perLsb;
+    data[2 * n] = cycle[n] / cycleUnit;
+    data[2 * n + 1] = (values[n] - cycle[n]) / errorUnit;
   }
   forward(out, data);
 
@@ -37,16 +40,19 @@ export function spectrumOf(cycle: Float64Array, values: Float64Array, lsb: numbe
   const amplitudes = new Float64Array(bins);
   const intended = new Float64Array(bins);
   const added = new Float64Array(bins);
-  const scale = 1 / size;
+  const cycleScale = cycleUnit / size;
+  const errorScale = errorUnit / size;
   for (let k = 0; k < bins; k += 1) {
     const mirror = k === 0 ? 0 : size - k;
-    const re = (out[2 * k] + out[2 * mirror]) * scale;
-    const im = (out[2 * k + 1] - out[2 * mirror + 1]) * scale;
-    const errorRe = (out[2 * k + 1] + out[2 * mirror + 1]) * scale * lsb;
-    const errorIm = (out[2 * mirror] - out[2 * k]) * scale * lsb;
-    intended[k] = Math.sqrt(re * re + im * im);
-    added[k] = Math.sqrt(errorRe * errorRe + errorIm * errorIm);
-    amplitudes[k] = Math.sqrt((re + errorRe) * (re + errorRe) + (im + errorIm) * (im + errorIm));
+    const re = out[2 * k] + out[2 * mirror];
+    const im = out[2 * k + 1] - out[2 * mirror + 1];
+    const errorRe = out[2 * k + 1] + out[2 * mirror + 1];
+    const errorIm = out[2 * mirror] - out[2 * k];
+    intended[k] = Math.sqrt(re * re + im * im) * cycleScale;
+    added[k] = Math.sqrt(errorRe * errorRe + errorIm * errorIm) * errorScale;
+    const sumRe = re * cycleScale + errorRe * errorScale;
+    const sumIm = im * cycleScale + errorIm * errorScale;
+    amplitudes[k] = Math.sqrt(sumRe * sumRe + sumIm * sumIm);
   }
   // DC and N/2 have no line on the other side to share with.
   for (const list of [amplitudes, intended, added]) {

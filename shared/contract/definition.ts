@@ -177,9 +177,7 @@ export const tableSchema = z.strictObject({
   rounding: oneOf(roundings).default('half-up'),
   dither: oneOf(dithers).default('none'),
   seed: wholeNumber(limits.seed).default(1),
-  shaping: z
-    .union([z.literal(0), z.literal(1), z.literal(2)], { error: 'error-feedback order 0, 1 or 2' })
-    .default(0),
+  shaping: z.literal([0, 1, 2], { error: 'error-feedback order 0, 1 or 2' }).default(0),
   coding: oneOf(codings).default('offset-binary'),
   complement: yesOrNo.default(false),
   fold: oneOf(folds).default('none'),

@@ -1,4 +1,4 @@
 export { quantise, type QuantisedCycle } from './quantise.ts';
-export { levelsOf, lsbOf, snap } from './scaling.ts';
+export { levelsOf, lsbOf } from './scaling.ts';
 export { storedWords, tableBytesOf } from './stored-words.ts';
 export { valuesOf } from './values.ts';

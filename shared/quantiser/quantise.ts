@@ -1,8 +1,8 @@
 import type { TableSettings, Warning } from '../contract/index.ts';
 import { ditherOf } from './dither.ts';
 import { nearestLevels } from './measured-levels.ts';
-import { rounderOf } from './round.ts';
-import { levelsOf, positionsOf } from './scaling.ts';
+import { rounderOf, type Rounder } from './round.ts';
+import { levelsOf, positionsOf, snappedLine, snapSteps } from './scaling.ts';
 import { shapeNoise } from './shape-noise.ts';
 
 export interface QuantisedCycle {
@@ -19,11 +19,11 @@ export function quantise(cycle: Float64Array, table: TableSettings): QuantisedCy
     return { codes: nearestLevels(cycle, table.levels, table.range), clippedCodes: 0, warnings: [] };
   }
   const topCode = levelsOf(table.bits) - 1;
-  const positions = positionsOf(cycle, table);
-  const dither = ditherOf(positions.length, table);
+  const dither = ditherOf(cycle.length, table);
   const round = rounderOf(table.rounding);
-  if (table.shaping === 0) return { ...roundEach(positions, dither, round, topCode), warnings: [] };
+  if (table.shaping === 0) return { ...roundEach(cycle, table, dither, round), warnings: [] };
 
+  const positions = positionsOf(cycle, table);
   const { codes, clippedCodes, isClosed } = shapeNoise(positions, dither, table.shaping, round, topCode);
   const warnings: Warning[] = [];
   if (table.shaping === 1 && !isClosed) {
@@ -36,16 +36,20 @@ export function quantise(cycle: Float64Array, table: TableSettings): QuantisedCy
   return { codes, clippedCodes, warnings };
 }
 
+/** Position, dither, rounding and clip in one pass: long tables are bound by memory. */
 function roundEach(
-  positions: Float64Array,
+  cycle: Float64Array,
+  table: TableSettings,
   dither: Float64Array | null,
-  round: (position: number) => number,
-  topCode: number,
+  round: Rounder,
 ): { codes: Uint16Array; clippedCodes: number } {
-  const codes = new Uint16Array(positions.length);
+  const { gain, offset } = snappedLine(table);
+  const topCode = levelsOf(table.bits) - 1;
+  const codes = new Uint16Array(cycle.length);
   let clippedCodes = 0;
-  for (let k = 0; k < positions.length; k += 1) {
-    let code = round(dither === null ? positions[k] : positions[k] + dither[k]);
+  for (let k = 0; k < cycle.length; k += 1) {
+    const position = Math.floor(cycle[k] * gain + offset) / snapSteps;
+    let code = round(dither === null ? position : position + dither[k]);
     if (code < 0 || code > topCode) {
       clippedCodes += 1;
       code = code < 0 ? 0 : topCode;

@@ -23,26 +23,17 @@ export function lsbOf(scaling: Scaling): number {
 /** Code positions are rounded to this share of an LSB, so that a tie is a tie on every machine. */
 export const snapSteps = 2 ** 24;
 
-/** Rounds to the nearest 2⁻²⁴, a tie upwards. Below 2²⁸ the half is added without an error. */
-export function snap(position: number): number {
-  return Math.floor(position * snapSteps + 0.5) / snapSteps;
+/** The line to whole multiples of 2⁻²⁴, half a step added: `position = floor(x·gain + offset)/2²⁴` is snapped. */
+export function snappedLine(scaling: Scaling): { gain: number; offset: number } {
+  const { gain, offset } = positionLine(scaling);
+  return { gain: gain * snapSteps, offset: offset * snapSteps + 0.5 };
 }
 
-/**
- * Code positions v of a cycle (§3.2), snapped. Written as the specification writes them, so that the same
- * double comes out: `(x+1)/2·(L−1)`, `x·L/2 + L/2`, `x·(L−1)`.
- */
-export function positionsOf(cycle: Float64Array, { bits, range, scale }: Scaling): Float64Array {
-  const levels = levelsOf(bits);
-  const top = levels - 1;
+/** Code positions v of a cycle (§3.2), snapped. */
+export function positionsOf(cycle: Float64Array, scaling: Scaling): Float64Array {
+  const { gain, offset } = snappedLine(scaling);
   const positions = new Float64Array(cycle.length);
-  if (range === 'unipolar') {
-    for (let k = 0; k < cycle.length; k += 1) positions[k] = snap(cycle[k] * top);
-  } else if (scale === 'mid-tread') {
-    for (let k = 0; k < cycle.length; k += 1) positions[k] = snap((cycle[k] * levels) / 2 + levels / 2);
-  } else {
-    for (let k = 0; k < cycle.length; k += 1) positions[k] = snap(((cycle[k] + 1) / 2) * top);
-  }
+  for (let k = 0; k < cycle.length; k += 1) positions[k] = Math.floor(cycle[k] * gain + offset) / snapSteps;
   return positions;
 }
 

@@ -21,110 +21,116 @@ const clipTolerance = 1e-12;
  */
 export function levelCycle(synthesis: Synthesis, { level, table }: Definition): LevelledCycle {
   const isBipolar = table.range === 'bipolar';
-  const { cycle } = synthesis;
-  if (level.removeMean) subtractMean(cycle);
-  // A sum beyond a double, that of the mean too, shows as an entry that is not finite.
-  if (!isAllFinite(cycle)) refuseSignal('a signal beyond the range of a double', 'smaller amplitudes');
-  if (level.normalise === 'peak') scaleToPeak(cycle, synthesis.largestInput);
-  if (level.normalise === 'span') scaleToSpan(cycle, synthesis.largestInput, isBipolar);
-  if (level.level !== 1) applyLevel(cycle, level, isBipolar);
-  applyTransfer(cycle, level.transfer);
+  const { cycle, largestInput } = synthesis;
+  const line = levelLine(cycle, largestInput, level, isBipolar);
+  const lowest = isBipolar ? -1 : 0;
+  const clippedSamples =
+    level.transfer === 'none'
+      ? alongLine(cycle, line, lowest)
+      : throughTransfer(cycle, line, lowest, transferCurve(level.transfer));
+  return { cycle, clippedSamples, warnings: clippedSamples === 0 ? [] : [clippedWarning(clippedSamples, isBipolar)] };
+}
 
-  const clippedSamples = clip(cycle, isBipolar ? -1 : 0);
-  const warnings: Warning[] = [];
-  if (clippedSamples > 0) {
-    const entries = clippedSamples === 1 ? '1 entry leaves' : `${clippedSamples} entries leave`;
-    warnings.push({
-      code: 'clipped',
-      path: 'level',
-      message: `${entries} the range ${isBipolar ? '−1…1' : '0…1'} and ${clippedSamples === 1 ? 'is' : 'are'} clipped.`,
-    });
+function clippedWarning(count: number, isBipolar: boolean): Warning {
+  const entries = count === 1 ? '1 entry leaves' : `${count} entries leave`;
+  const range = isBipolar ? '−1…1' : '0…1';
+  return {
+    code: 'clipped',
+    path: 'level',
+    message: `${entries} the range ${range} and ${count === 1 ? 'is' : 'are'} clipped.`,
+  };
+}
+
+/** Mean, normalisation and level as one straight line: `(x − from)/divisor·multiplier + to`. */
+interface LevelLine {
+  readonly from: number;
+  readonly divisor: number;
+  readonly multiplier: number;
+  readonly to: number;
+}
+
+function levelLine(
+  cycle: Float64Array,
+  largestInput: number,
+  { removeMean, normalise, level }: LevelSettings,
+  isBipolar: boolean,
+): LevelLine {
+  const { sum, lowest, highest } = extentOf(cycle);
+  const from = removeMean ? sum / cycle.length : 0;
+  // An entry that is no number, or a mean beyond a double, shows in the ends.
+  const isHeld = Number.isFinite(lowest - from) && Number.isFinite(highest - from);
+  if (!isHeld || (normalise === 'span' && !Number.isFinite(highest - lowest))) {
+    refuseSignal('a signal beyond the range of a double', 'smaller amplitudes');
   }
-  return { cycle, clippedSamples, warnings };
+  if (normalise === 'none') return { from, divisor: 1, multiplier: level, to: 0 };
+
+  if (normalise === 'peak') {
+    const peak = Math.max(from - lowest, highest - from);
+    if (!(peak > zeroFraction * largestInput)) {
+      refuseSignal('a zero signal', 'a signal to normalise, or level.normalise "none"');
+    }
+    return { from, divisor: peak, multiplier: level, to: 0 };
+  }
+  const span = highest - lowest;
+  if (!(span > zeroFraction * largestInput)) {
+    refuseSignal('a constant signal', 'a signal that moves, or level.normalise "peak" or "none"');
+  }
+  return isBipolar
+    ? { from: lowest, divisor: span, multiplier: 2 * level, to: -level }
+    : { from: lowest, divisor: span, multiplier: level, to: 0.5 - 0.5 * level };
 }
 
 function refuseSignal(value: string, allowed: string): never {
   throw new Refusal({ path: 'source', value, allowed });
 }
 
-/** Whether all entries are: x − x is NaN for an entry that is not finite, and then so is the sum. */
-function isAllFinite(cycle: Float64Array): boolean {
+/** Sum and ends; one entry that is no number makes both ends none. */
+function extentOf(cycle: Float64Array): { sum: number; lowest: number; highest: number } {
   let sum = 0;
-  for (let k = 0; k < cycle.length; k += 1) sum += cycle[k] - cycle[k];
-  return sum === 0;
-}
-
-function subtractMean(cycle: Float64Array): void {
-  let sum = 0;
-  for (let k = 0; k < cycle.length; k += 1) sum += cycle[k];
-  const mean = sum / cycle.length;
-  for (let k = 0; k < cycle.length; k += 1) cycle[k] -= mean;
-}
-
-function extremesOf(cycle: Float64Array): { lowest: number; highest: number } {
   let lowest = Infinity;
   let highest = -Infinity;
   for (let k = 0; k < cycle.length; k += 1) {
-    if (cycle[k] < lowest) lowest = cycle[k];
-    if (cycle[k] > highest) highest = cycle[k];
+    sum += cycle[k];
+    lowest = Math.min(lowest, cycle[k]);
+    highest = Math.max(highest, cycle[k]);
   }
-  return { lowest, highest };
+  return { sum, lowest, highest };
 }
 
-function scaleToPeak(cycle: Float64Array, largestInput: number): void {
-  const { lowest, highest } = extremesOf(cycle);
-  const peak = Math.max(-lowest, highest);
-  if (!(peak > zeroFraction * largestInput)) {
-    refuseSignal('a zero signal', 'a signal to normalise, or level.normalise "none"');
-  }
-  for (let k = 0; k < cycle.length; k += 1) cycle[k] /= peak;
-}
-
-function scaleToSpan(cycle: Float64Array, largestInput: number, isBipolar: boolean): void {
-  const { lowest, highest } = extremesOf(cycle);
-  const span = highest - lowest;
-  if (!(span > zeroFraction * largestInput)) {
-    refuseSignal('a constant signal', 'a signal that moves, or level.normalise "peak" or "none"');
-  }
-  if (!Number.isFinite(span)) refuseSignal('a signal beyond the range of a double', 'smaller amplitudes');
+/** Takes each entry along the line and clips it; answers how many were clipped by more than rounding. */
+function alongLine(cycle: Float64Array, { from, divisor, multiplier, to }: LevelLine, lowest: number): number {
+  let clipped = 0;
   for (let k = 0; k < cycle.length; k += 1) {
-    const share = (cycle[k] - lowest) / span;
-    cycle[k] = isBipolar ? 2 * share - 1 : share;
+    let x = ((cycle[k] - from) / divisor) * multiplier + to;
+    if (x > 1) {
+      if (x > 1 + clipTolerance) clipped += 1;
+      x = 1;
+    } else if (x < lowest) {
+      if (x < lowest - clipTolerance) clipped += 1;
+      x = lowest;
+    }
+    cycle[k] = x;
   }
+  return clipped;
 }
 
-function applyLevel(cycle: Float64Array, { level, normalise }: LevelSettings, isBipolar: boolean): void {
-  const middle = normalise === 'span' && !isBipolar ? 0.5 : 0;
-  for (let k = 0; k < cycle.length; k += 1) cycle[k] = middle + (cycle[k] - middle) * level;
+const asItIs: LevelLine = { from: 0, divisor: 1, multiplier: 1, to: 0 };
+
+/** The same with a curve before the clip. */
+function throughTransfer(cycle: Float64Array, line: LevelLine, lowest: number, curve: (x: number) => number): number {
+  const { from, divisor, multiplier, to } = line;
+  for (let k = 0; k < cycle.length; k += 1) cycle[k] = curve(((cycle[k] - from) / divisor) * multiplier + to);
+  return alongLine(cycle, asItIs, lowest);
 }
 
-/** Below 0 the curves have no meaning: such a sample keeps its sign and is clipped, and counted, afterwards. */
-function applyTransfer(cycle: Float64Array, transfer: Transfer): void {
-  if (transfer === 'none') return;
-  if (transfer === 'cie-lightness') {
-    for (let k = 0; k < cycle.length; k += 1) cycle[k] = luminanceOf(100 * cycle[k]);
-    return;
-  }
+/** Below 0 a curve has no meaning: such a sample stays below 0 and is clipped, and counted, afterwards. */
+function transferCurve(transfer: Exclude<Transfer, 'none'>): (x: number) => number {
+  if (transfer === 'cie-lightness') return (x) => luminanceOf(100 * x);
   const { gamma } = transfer;
-  for (let k = 0; k < cycle.length; k += 1) if (cycle[k] > 0) cycle[k] **= gamma;
+  return (x) => (x > 0 ? x ** gamma : x);
 }
 
 /** Relative luminance 0…1 of a CIE 1976 lightness L* 0…100 (CIE 15). */
 function luminanceOf(lightness: number): number {
   return lightness > 8 ? ((lightness + 16) / 116) ** 3 : lightness / 903.3;
-}
-
-function clip(cycle: Float64Array, lowest: number): number {
-  let clipped = 0;
-  for (let k = 0; k < cycle.length; k += 1) {
-    const sample = cycle[k];
-    if (sample > 1) {
-      if (sample > 1 + clipTolerance) clipped += 1;
-      cycle[k] = 1;
-    } else if (sample < lowest) {
-      if (sample < lowest - clipTolerance) clipped += 1;
-      cycle[k] = lowest;
-    }
-  }
-  return clipped;
 }

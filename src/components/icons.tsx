@@ -61,5 +61,13 @@ export const icons = {
   file: draw('M5 3.5h6.5l4 4v9H5zM11 4v4h4'),
   arrowUp: draw('M10 16.5v-12M5.5 8.5l4.5-4.5 4.5 4.5'),
   arrowDown: draw('M10 3.5v12M5.5 11.5l4.5 4.5 4.5-4.5'),
+  person: draw('M6.5 6.5a3.5 3.5 0 1 0 7 0 3.5 3.5 0 1 0-7 0M3.5 17v-3l3-2h7l3 2v3'),
+  team: draw('M4 6a2.5 2.5 0 1 0 5 0 2.5 2.5 0 1 0-5 0M11.5 7a2 2 0 1 0 4 0 2 2 0 1 0-4 0M2.5 16v-3l2-2h4l2 2v3M13 11h2l2.5 2v3'),
+  leave: draw('M8 3.5H3.5v13H8M8 10h8.5M13 6.5l3.5 3.5-3.5 3.5'),
+  mail: draw('M3 5h14v10.5H3zM3.5 5.5 10 11l6.5-5.5'),
+  search: draw('M3.5 8.5a5 5 0 1 0 10 0 5 5 0 1 0-10 0M12.5 12.5l4 4'),
+  edit: draw('M4 16v-3l8.5-8.5 3 3L7 16zM10.5 6.5l3 3'),
+  archive: draw('M3 4h14v4H3zM4.5 8.5v8h11v-8M8 11.5h4'),
+  hourglass: draw('M5 3.5h10M5 16.5h10M6 4v3l4 3 4-3V4M6 16v-3l4-3 4 3v3'),
   speaker: draw('M3.5 7.5v5h3l4 4v-13l-4 4z'),
 } satisfies Record<string, Icon>;

@@ -1,5 +1,20 @@
+import { useCurrentTeam } from '../api/current-team.ts';
+import { paths, tablesPath, teamPath } from '../paths.ts';
+
 /** One entry of the header's navigation. */
 export interface Place {
   label: string;
   to: string;
+  /** Whether places below it count as others. */
+  isExact: boolean;
+}
+
+/** Places in the header, in order. Those of a team lead to the one in use, or to where it is said what to do first. */
+export function usePlaces(): readonly Place[] {
+  const team = useCurrentTeam()?.teamSlug;
+  return [
+    { label: 'Bench', to: paths.bench, isExact: true },
+    { label: 'Tables', to: team === undefined ? paths.anyTables : tablesPath(team), isExact: false },
+    { label: 'Team', to: team === undefined ? paths.anyTeam : teamPath(team), isExact: true },
+  ];
 }

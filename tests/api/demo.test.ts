@@ -12,7 +12,12 @@ import { createJobPool } from '../../server/jobs/pool.ts';
 import { digestOf } from '../../shared/firmware/index.ts';
 import type { Definition } from '../../shared/contract/index.ts';
 import { unpackCodes } from '../../server/features/tables/stored-codes.ts';
-import { holdTestServer, makeTestDatabase, type TestDatabase, type TestServer } from '../support/databases.ts';
+import {
+  holdTestServer,
+  makeTestDatabase,
+  type TestDatabase,
+  type TestServer,
+} from '../support/databases.ts';
 
 const jobs = createJobPool();
 let server: TestServer;
@@ -42,7 +47,10 @@ describe('demo data', () => {
   it('comes once, with two starts at the same time, and with passwords only its owner can read', async () => {
     const file = join(folder, 'demo-accounts.txt');
     writeFileSync(file, 'left from an earlier database', { mode: 0o644 });
-    const told = await Promise.all([seedDemo({ config, database, jobs }, file), seedDemo({ config, database, jobs }, file)]);
+    const told = await Promise.all([
+      seedDemo({ config, database, jobs }, file),
+      seedDemo({ config, database, jobs }, file),
+    ]);
     const text = told.find((answer) => answer !== undefined) ?? '';
     expect(told.filter((answer) => answer === undefined)).toHaveLength(1);
     expect(await seedDemo({ config, database, jobs }, file)).toBeUndefined();
@@ -50,7 +58,12 @@ describe('demo data', () => {
     expect(statSync(file).mode & 0o777).toBe(0o600);
     expect(text.startsWith(readFileSync(file, 'utf8'))).toBe(true);
     const accounts = [...text.matchAll(/(\S+@ninthfathom\.example)\s+(\S{16})$/gm)];
-    expect(accounts.map(([, email]) => email.split('@')[0])).toEqual(['viewer', 'author', 'reviewer', 'admin']);
+    expect(accounts.map(([, email]) => email.split('@')[0])).toEqual([
+      'viewer',
+      'author',
+      'reviewer',
+      'admin',
+    ]);
     const people = await database.db.select().from(users);
     for (const [, email, password] of accounts) {
       const person = people.find((candidate) => candidate.email === email);
@@ -108,6 +121,8 @@ describe('the file for demo passwords', () => {
     expect(readConfig(there).demoFile).toBeUndefined();
     const { DATABASE_URL: url, ...here } = there;
     expect(readConfig({ ...here, PRIVATE_DATABASE_URL: url }).demoFile).toBe('/demo.txt');
-    expect(readConfig({ ...here, PRIVATE_DATABASE_URL: url, HOST: '0.0.0.0', DATABASE_URL: url }).demoFile).toBeUndefined();
+    expect(
+      readConfig({ ...here, PRIVATE_DATABASE_URL: url, HOST: '0.0.0.0', DATABASE_URL: url }).demoFile,
+    ).toBeUndefined();
   });
 });

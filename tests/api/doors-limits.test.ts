@@ -2,10 +2,13 @@ import { randomBytes, randomUUID } from 'node:crypto';
 import request from 'supertest';
 import { afterAll, beforeAll, describe, expect, inject, it } from 'vitest';
 import { readConfig } from '../../server/config.ts';
+import { connectionOptions } from '../../server/db/client.ts';
+import { databaseIsAway } from '../../server/db/errors.ts';
 import { rateLimits } from '../../server/db/schema/index.ts';
 import { networkOf } from '../../server/http/network.ts';
 import { rateLimiter, type RateLimiter } from '../../server/http/rate-limiter.ts';
 import { ratePolicies } from '../../server/http/rate-policies.ts';
+import { makeOwnTestApp } from '../support/own-database.ts';
 import { freshAddress } from '../support/outbox.ts';
 import { anyAddress, asPerson, makeCrew, makePerson } from '../support/people.ts';
 import { makePersonWithPassword, password, signIn } from '../support/sign-in.ts';
@@ -258,5 +261,32 @@ describe('the counters', () => {
     await new Promise((resolve) => setTimeout(resolve, 1100));
     overs.push((await quick.count('sign-up', key)).isOver);
     expect(overs).toEqual([false, false, true, false]);
+  });
+});
+
+describe('connections that break while they count', () => {
+  it('make a request fail, but neither the process nor the next one', async () => {
+    const own = await makeOwnTestApp();
+    const config = readConfig({ PRIVATE_DATABASE_URL: own.url, AUTH_SECRET: testSecret });
+    const fragile = rateLimiter({ config, database: own.database });
+    const name = connectionOptions(own.url).database;
+    const away: boolean[] = [];
+    for (let round = 0; round < 15; round++) {
+      const counting = Array.from({ length: 12 }, (_none, index) =>
+        fragile
+          .count('sign-up', `${round} ${index}`)
+          .catch((error: unknown) => away.push(databaseIsAway(error))),
+      );
+      const [rows] = (await test.database.pool.query(
+        'SELECT id FROM information_schema.processlist WHERE db = ?',
+        [name],
+      )) as unknown as [{ id: number }[]];
+      for (const { id } of rows) await test.database.pool.query(`KILL ${id}`).catch(() => undefined);
+      await Promise.all(counting);
+    }
+    expect(away.length).toBeGreaterThan(0);
+    expect(new Set(away)).toEqual(new Set([true]));
+    expect((await fragile.count('sign-up', randomUUID())).isOver).toBe(false);
+    await own.close();
   });
 });

@@ -67,10 +67,12 @@ describe('requests that are refused before any feature sees them', () => {
 
   it('403 for a write from another site, with none of ours as Origin', async () => {
     const write = () => request(test.app).post('/api/v1/health').set('Host', host);
-    expectProblem(await write(), 403, 'foreign-origin');
+    expectProblem(await write().set('Cookie', 'a=b'), 403, 'foreign-origin');
     expectProblem(await write().set('Origin', 'https://evil.example'), 403, 'foreign-origin');
     expectProblem(await write().set('Origin', 'null'), 403, 'foreign-origin');
     expectProblem(await write().set('Authorization', 'Bearer x'), 405, 'method-not-allowed');
+    // Neither cookie nor Origin: no page of any site sends that, and there is no sign-in to borrow.
+    expectProblem(await write(), 405, 'method-not-allowed');
   });
 
   it('404 below /api for an unknown address, whatever the method', async () => {

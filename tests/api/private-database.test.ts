@@ -4,10 +4,11 @@ import { dirname, join } from 'node:path';
 import { sql } from 'drizzle-orm';
 import request from 'supertest';
 import { afterEach, beforeEach, describe, expect, it } from 'vitest';
+import { readConfig } from '../../server/config.ts';
 import { openDatabase } from '../../server/db/client.ts';
 import { createDatabase, migrate } from '../../server/db/migrate.ts';
 import { holdDatabase, type HeldDatabase } from '../../server/setup/database.mjs';
-import { host, makeTestApp } from '../support/test-app.ts';
+import { host, makeTestApp, testSecret } from '../support/test-app.ts';
 import { waitUntil } from '../support/wait-until.ts';
 
 let folder: string;
@@ -78,7 +79,10 @@ describe('the private database', () => {
     const url = server.urlOf('stepwell_test_recovery');
     await createDatabase(url);
     await migrate(url);
-    const test = makeTestApp({ database: openDatabase(url) });
+    const test = makeTestApp({
+      config: readConfig({ PRIVATE_DATABASE_URL: url, AUTH_SECRET: testSecret }),
+      database: openDatabase(url),
+    });
     const { db } = test.database;
     await db.execute(sql`CREATE TABLE noted (number INT PRIMARY KEY)`);
 

@@ -1,15 +1,16 @@
-import { mkdtempSync, rmSync, statSync } from 'node:fs';
-import { createServer } from 'node:net';
+import { existsSync, mkdtempSync, rmSync, statSync } from 'node:fs';
+import { createServer, type AddressInfo } from 'node:net';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { afterEach, beforeEach, describe, expect, it } from 'vitest';
+import { holdTestServer, makeTestDatabase } from '../support/databases.ts';
 import { processesWith, startScript, type StartScript } from '../support/start-script.ts';
 import { waitUntil } from '../support/wait-until.ts';
 
 let folder: string;
 const started: StartScript[] = [];
-const start = (env?: Record<string, string>) => {
-  const script = startScript(folder, env);
+const start = (env?: Record<string, string>, args?: readonly string[]) => {
+  const script = startScript(folder, env, args);
   started.push(script);
   return script;
 };
@@ -112,3 +113,60 @@ describe('npm start', () => {
     expect(processesWith(folder)).toEqual([]);
   });
 });
+
+describe('npm start on a database of one’s own', () => {
+  it('starts no server, refuses a schema that nobody has migrated, and runs after npm run migrate', async () => {
+    const server = await holdTestServer();
+    const database = await makeTestDatabase(server, { migrated: false });
+    const port = String(await freePort());
+    const env = {
+      DATABASE_URL: database.url,
+      APP_ORIGIN: `http://127.0.0.1:${port}`,
+      PORT: port,
+      SMTP_URL: 'smtp://127.0.0.1:9',
+      AUTH_SECRET: 'a secret of more than thirty-two characters',
+    };
+    const early = start(env);
+    expect(await early.ended()).toBe(1);
+    expect(early.errors()).toContain('npm run migrate');
+
+    const migration = start(env, ['migrate.mjs']);
+    expect(await migration.ended()).toBe(0);
+    expect(migration.output()).toMatch(/^Migrated: /);
+
+    const script = start(env);
+    const address = await script.address();
+    expect(address).toBe(env.APP_ORIGIN);
+    expect(await health(address)).toBe(200);
+    expect(existsSync(join(folder, 'mariadb'))).toBe(false);
+    script.child.kill('SIGTERM');
+    expect(await script.ended()).toBe(0);
+    await database.drop();
+    await server.release();
+  });
+});
+
+describe('npm run dev', () => {
+  it('serves the sources as they are, under the same address as the API, and ends as cleanly', async () => {
+    const script = start({}, ['start.mjs', '--dev']);
+    const address = await script.address();
+    expect(await health(address)).toBe(200);
+    const page = await (await fetch(address)).text();
+    expect(page).toContain('src="/@vite/client"');
+    expect((await fetch(new URL('/src/main.tsx', address))).headers.get('content-type')).toBe(
+      'text/javascript',
+    );
+    script.child.kill('SIGINT');
+    expect(await script.ended()).toBe(0);
+    expect(processesWith(folder)).toEqual([]);
+  });
+});
+
+/** A port that was free a moment ago. */
+async function freePort(): Promise<number> {
+  const server = createServer().listen(0, '127.0.0.1');
+  await new Promise((resolve) => server.once('listening', resolve));
+  const { port } = server.address() as AddressInfo;
+  await new Promise((resolve) => server.close(resolve));
+  return port;
+}

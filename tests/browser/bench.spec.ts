@@ -190,3 +190,12 @@ test('starts anew from each example and brings the old wave back', async ({ page
   await page.keyboard.press('Control+z');
   await expect(field(page, 'Name of the wave')).toHaveValue('Self-test sine');
 });
+
+test('an engine that cannot be loaded is told, and builds once it can', async ({ page }) => {
+  await page.route('**/engine.worker*', (route) => route.abort('connectionfailed'), { times: 1 });
+  await page.goto('/');
+  await expect(page.getByText('The engine could not build the table')).toBeVisible();
+  await page.getByRole('button', { name: 'Build it again' }).click();
+  await expect(figure(page, 'SNR')).toContainText('dB of 49.9');
+  await expect(page.getByText('The engine could not build the table')).toBeHidden();
+});

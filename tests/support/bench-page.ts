@@ -10,7 +10,11 @@ export const test = base.extend<{ quiet: string[] }>({
         if (['error', 'warning'].includes(message.type())) complaints.push(message.text());
       });
       context.on('weberror', (error) => complaints.push(String(error.error())));
-      context.on('requestfailed', (request) => complaints.push(`${request.url()} failed`));
+      context.on('requestfailed', (request) => {
+        // A page that is left behind gives up what it was still loading.
+        const why = request.failure()?.errorText;
+        if (why !== 'net::ERR_ABORTED') complaints.push(`${request.url()} failed: ${why}`);
+      });
       await use(complaints);
       expect(complaints).toEqual([]);
     },

@@ -13,9 +13,13 @@ export interface StartScript {
   ended(): Promise<number | null>;
 }
 
-/** `npm start` as its script runs it, with a data folder of its own and no port of anybody else's. */
-export function startScript(dataFolder: string, env: Record<string, string> = {}): StartScript {
-  const child = spawn(process.execPath, [join(projectFolder, 'server/setup/start.mjs')], {
+/** A script of server/setup as npm runs it, with a data folder of its own and no port of anybody else's. */
+export function startScript(
+  dataFolder: string,
+  env: Record<string, string> = {},
+  args: readonly string[] = ['start.mjs'],
+): StartScript {
+  const child = spawn(process.execPath, [join(projectFolder, 'server/setup', args[0]), ...args.slice(1)], {
     cwd: projectFolder,
     env: { ...process.env, DATABASE_URL: '', STEPWELL_DATA: dataFolder, PORT: '0', ...env },
     stdio: ['ignore', 'pipe', 'pipe'],

@@ -188,5 +188,9 @@ function asBuilt(row: RevisionRow): BuiltRevision {
   };
 }
 
-/** Leaves room for what is put behind a title of 64 characters. */
-const copyTitle = (title: string) => `${Array.from(title).slice(0, 58).join('').trimEnd()} copy`;
+/** Cut, where it must be, so that the whole has the 64 characters of a title, and not inside a surrogate pair. */
+const copyTitle = (title: string) =>
+  `${title
+    .slice(0, 59)
+    .replace(/[\ud800-\udbff]$/, '')
+    .trimEnd()} copy`;

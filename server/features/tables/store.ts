@@ -130,11 +130,15 @@ const changeRow = (
 const termsOfTable = (teamId: number, tableId: number) =>
   and(eq(tableTerms.teamId, teamId), eq(tableTerms.tableId, tableId));
 
-const insertTerms = (
+async function insertTerms(
   db: Executor,
   row: { readonly teamId: number; readonly tableId: number; readonly isArchived: boolean },
   named: Named,
-) => db.insert(tableTerms).values(termsOf(named).map((term) => ({ ...row, term })));
+): Promise<void> {
+  const rows = termsOf(named).map((term) => ({ ...row, term }));
+  // A title may have neither letters nor digits.
+  if (rows.length > 0) await db.insert(tableTerms).values(rows);
+}
 
 const insertRevision = (
   db: Executor,

@@ -1,5 +1,5 @@
 import { Button, Caution, icons } from '../../components/index.ts';
-import { saveText } from './save-text.ts';
+import { saveText } from '../../components/save-text.ts';
 import { theBench, useBench } from './state/use-bench.ts';
 
 /** What there is to know about where the work is kept, and how to begin. */

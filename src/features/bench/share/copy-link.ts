@@ -14,13 +14,3 @@ export function sayCopied(link: string): string {
     ? said
     : `${said} It is long, ${link.length.toLocaleString('en')} characters: some mail and chat programs cut it.`;
 }
-
-/** Copies text; `false` where the browser does not let the page. */
-export async function copyText(text: string): Promise<boolean> {
-  try {
-    await navigator.clipboard.writeText(text);
-    return true;
-  } catch {
-    return false;
-  }
-}

@@ -1,7 +1,8 @@
 import { useCallback, useState, type ReactNode } from 'react';
+import { copyText } from '../../../components/copy-text.ts';
 import { Dialog, TextField, useToast } from '../../../components/index.ts';
 import type { Wave } from '../state/wave.ts';
-import { copyText, linkTo, sayCopied } from './copy-link.ts';
+import { linkTo, sayCopied } from './copy-link.ts';
 
 /** Copies a wave's link and tells so; where the browser forbids copying, a dialog holds the link for copying by hand. */
 export function useCopyLink(): { copyLink: (wave: Wave) => void; linkDialog: ReactNode } {

@@ -1,6 +1,7 @@
 import type { ReactNode } from 'react';
 import { z } from 'zod';
-import { SelectField, TextField } from '../../../components/index.ts';
+import { SelectField } from '../select-field.tsx';
+import { TextField } from '../text-field.tsx';
 
 interface OptionFieldProps {
   name: string;

@@ -1,0 +1,44 @@
+import { useSyncExternalStore } from 'react';
+import type { Account } from '../../shared/contract/index.ts';
+import { useAccount } from './account-state.ts';
+
+export type Membership = Account['memberships'][number];
+
+const storageKey = 'stepwell.team';
+const listeners = new Set<() => void>();
+let chosen = readKept();
+
+function readKept(): string | null {
+  try {
+    return localStorage.getItem(storageKey);
+  } catch {
+    return null;
+  }
+}
+
+/** Makes a team the one that places lead to and new tables go into. */
+export function chooseTeam(slug: string): void {
+  if (slug === chosen) return;
+  chosen = slug;
+  try {
+    localStorage.setItem(storageKey, slug);
+  } catch {
+    // The choice then lasts as long as the page.
+  }
+  for (const listener of listeners) listener();
+}
+
+function subscribe(listener: () => void): () => void {
+  listeners.add(listener);
+  return () => listeners.delete(listener);
+}
+
+/** The chosen team among an account's, else its first. */
+export const teamAmong = (memberships: readonly Membership[], slug: string | null): Membership | undefined =>
+  memberships.find(({ teamSlug }) => teamSlug === slug) ?? memberships[0];
+
+/** The team that is in use; none where nobody is signed in, or in no team. */
+export function useCurrentTeam(): Membership | undefined {
+  const slug = useSyncExternalStore(subscribe, () => chosen);
+  return teamAmong(useAccount()?.memberships ?? [], slug);
+}

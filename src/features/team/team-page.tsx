@@ -1,0 +1,54 @@
+import './team.css';
+import { useSuspenseQuery, type QueryClient } from '@tanstack/react-query';
+import { Link, useParams, type LoaderFunctionArgs } from 'react-router-dom';
+import { includesRole } from '../../../shared/contract/index.ts';
+import { useAccount } from '../../api/account-state.ts';
+import { chooseTeam } from '../../api/current-team.ts';
+import { teamQueries } from '../../api/teams.ts';
+import { Page } from '../../components/index.ts';
+import { load } from '../../forms/load.ts';
+import { sayRole } from '../../forms/say-role.ts';
+import { tablesPath } from '../../paths.ts';
+import { DefaultsPanel } from './defaults-panel.tsx';
+import { InvitationsPanel } from './invitations-panel.tsx';
+import { MembersPanel } from './members-panel.tsx';
+import { NamePanel } from './name-panel.tsx';
+
+export const teamLoader = (queryClient: QueryClient) => async (args: LoaderFunctionArgs) => {
+  const team = args.params.team ?? '';
+  await load(args, queryClient.query(teamQueries.detail(team)));
+  // The rest comes while the page is drawn.
+  void queryClient.query(teamQueries.members(team)).catch(() => undefined);
+  chooseTeam(team);
+  return null;
+};
+
+/** A team: who belongs to it, who is invited, and what new tables begin with. */
+export function TeamPage() {
+  const { team: slug = '' } = useParams();
+  const { data: team } = useSuspenseQuery(teamQueries.detail(slug));
+  const account = useAccount();
+  const isAdmin = includesRole(team.myRole, 'admin');
+  const { tables, tablesAtMost } = team.usage;
+  return (
+    <Page
+      title={team.name}
+      lead={
+        <p>
+          You are {/^[aeiou]/.test(team.myRole) ? 'an' : 'a'} {team.myRole} here. {sayRole(team.myRole)} Room
+          for tables: {tables.toLocaleString('en')} of {tablesAtMost.toLocaleString('en')} taken.
+        </p>
+      }
+      actions={
+        <Link to={tablesPath(slug)} className="button button-plain">
+          Tables
+        </Link>
+      }
+    >
+      <MembersPanel team={slug} isAdmin={isAdmin} ownId={account?.id} />
+      {isAdmin && <InvitationsPanel team={slug} />}
+      <DefaultsPanel key={`${slug} defaults`} team={team} isAdmin={isAdmin} />
+      {isAdmin && <NamePanel key={slug} team={team} />}
+    </Page>
+  );
+}

@@ -1,0 +1,19 @@
+import { lazy, Suspense, useEffect, useSyncExternalStore } from 'react';
+import { watchAccount } from '../api/account-state.ts';
+import { signInRequests } from '../api/sign-in-again.ts';
+
+const SignInDialog = lazy(async () => ({
+  default: (await import('./sign-in-dialog.tsx')).SignInDialog,
+}));
+
+/** Keeps watch over who is signed in, and asks to sign in where something needs it. */
+export function SignInAgain() {
+  useEffect(watchAccount, []);
+  const isAsked = useSyncExternalStore(signInRequests.subscribe, signInRequests.isAsked);
+  if (!isAsked) return null;
+  return (
+    <Suspense fallback={null}>
+      <SignInDialog />
+    </Suspense>
+  );
+}
