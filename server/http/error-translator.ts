@@ -9,7 +9,7 @@ import { plainProblem, Problem } from './problem.ts';
 export const errorTranslator: ErrorRequestHandler = (error: unknown, request, response, next) => {
   const problem = toProblem(error);
   const status = problem?.status ?? 500;
-  // pino-http logs `response.err` with its stack; what the client did wrong is no error of ours.
+  // The request log has `response.err` with its stack; what the client did wrong is no error of ours.
   if (status >= 500 && error instanceof Error) response.err = error;
   if (response.headersSent) {
     next(error);

@@ -1,13 +1,39 @@
 import { randomUUID } from 'node:crypto';
-import type { Logger } from 'pino';
-import { pinoHttp } from 'pino-http';
-import { safeError } from './safe-error.ts';
+import type { RequestHandler } from 'express';
+import { stdSerializers, type Logger } from 'pino';
 
-/** Logs each request, without what would let a reader of the log act as the person. */
-export const requestLog = (logger: Logger) =>
-  pinoHttp({
-    logger,
-    genReqId: () => randomUUID(),
-    customLogLevel: (_request, response) => (response.statusCode >= 500 ? 'error' : 'info'),
-    serializers: { err: ({ raw }: { readonly raw: unknown }) => safeError(raw) },
-  });
+declare module 'node:http' {
+  interface IncomingMessage {
+    /** Names the request in the log and, where something went wrong here, in its answer. */
+    id: string;
+  }
+  interface ServerResponse {
+    /** What went wrong here, for the log. */
+    err?: Error;
+  }
+}
+
+/**
+ * Logs each request at its end. By hand: the package for it prepares a line for every request, also where the level
+ * says that none is written, and that took a tenth of the time of a short answer.
+ */
+export const requestLog =
+  (logger: Logger): RequestHandler =>
+  (request, response, next) => {
+    request.id = randomUUID();
+    const start = performance.now();
+    response.once('close', () => {
+      const level = response.statusCode >= 500 ? 'error' : 'info';
+      if (!logger.isLevelEnabled(level)) return;
+      logger[level](
+        {
+          req: stdSerializers.req(request),
+          res: stdSerializers.res(response),
+          err: response.err,
+          milliseconds: Math.round(performance.now() - start),
+        },
+        response.writableFinished ? 'answered' : 'broken off',
+      );
+    });
+    next();
+  };

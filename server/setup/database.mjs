@@ -56,6 +56,18 @@ export async function holdDatabase(folder) {
   };
 }
 
+/** `holdDatabase` until the script ends, also where it ends while the server is still on its way. */
+export function holdDatabaseUntilEnd(folder, onStop) {
+  const holding = holdDatabase(folder);
+  onStop(() =>
+    holding.then(
+      (database) => database.release(),
+      () => {},
+    ),
+  );
+  return holding;
+}
+
 let ticketsDrawn = 0;
 
 function othersHold(place) {

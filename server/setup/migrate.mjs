@@ -1,6 +1,6 @@
 // npm run migrate: the schema of DATABASE_URL, or of the private database, to this version's state.
 import { join } from 'node:path';
-import { holdDatabase } from './database.mjs';
+import { holdDatabaseUntilEnd } from './database.mjs';
 import { withLock } from './lock.mjs';
 import { mainScript } from './main-script.mjs';
 import { ensureNodeModules } from './node-modules.mjs';
@@ -16,9 +16,8 @@ await mainScript(async (onStop) => {
   });
   const env = {};
   if (!ownServer) {
-    const holding = holdDatabase(join(dataFolder, 'mariadb'));
-    onStop(async () => (await holding).release());
-    env.PRIVATE_DATABASE_URL = (await holding).urlOf('stepwell');
+    const database = await holdDatabaseUntilEnd(join(dataFolder, 'mariadb'), onStop);
+    env.PRIVATE_DATABASE_URL = database.urlOf('stepwell');
   }
   const { status } = await run(process.execPath, ['--import', 'tsx', inRoot('server/migrate.ts')], { env });
   return status;

@@ -11,6 +11,7 @@ const isHere = {
   'mariadb-client-core': program('mariadb'),
   chromium: program('chromium'),
   gcc: program('gcc'),
+  'g++': program('g++'),
   'libc6-dev': file('/usr/include/stdio.h'),
   'gcc-avr': program('avr-gcc'),
   'avr-libc': file('/usr/lib/avr/include/avr/pgmspace.h'),
@@ -24,6 +25,7 @@ export const numpyPackages = ['python3', 'python3-numpy'];
 export const testPackages = [
   'chromium',
   'gcc',
+  'g++',
   'libc6-dev',
   'gcc-avr',
   'avr-libc',

@@ -2,6 +2,7 @@ import { spawn } from 'node:child_process';
 import { root } from './paths.mjs';
 
 const running = new Set();
+let isStopping = false;
 
 /** A fault to print as it is, without a stack: the person at the terminal can act on it. */
 export class SetupFault extends Error {}
@@ -11,6 +12,8 @@ export class SetupFault extends Error {}
  * `output: 'stderr'` sends all it prints to standard error, `'collect'` answers it as `text` instead.
  */
 export function run(command, args, { output = 'inherit', env, cwd = root } = {}) {
+  if (isStopping)
+    return Promise.reject(new SetupFault(`${command} is not started any more: this script is ending.`));
   const stdout = output === 'stderr' ? 2 : output === 'collect' ? 'pipe' : 'inherit';
   const stderr = output === 'collect' ? 'pipe' : 'inherit';
   const child = spawn(command, args, {
@@ -47,6 +50,7 @@ export const mustNode = (script, args = [], options = {}) =>
 
 /** Ends what `run` has started and waits for it; for Ctrl-C in the middle of the set-up. */
 export async function stopRunning(signal = 'SIGTERM') {
+  isStopping = true;
   await Promise.all(
     [...running].map((child) => {
       const closed = new Promise((resolve) => child.once('close', resolve));

@@ -2,7 +2,7 @@
 import { join } from 'node:path';
 import { startApp } from './app-process.mjs';
 import { ensureBuilt } from './build.mjs';
-import { holdDatabase } from './database.mjs';
+import { holdDatabaseUntilEnd } from './database.mjs';
 import { restartOnChange } from './dev-restart.mjs';
 import { withLock } from './lock.mjs';
 import { mainScript } from './main-script.mjs';
@@ -42,10 +42,9 @@ async function setUp() {
 /** With the private database the application needs nothing from outside; with another one, all of it. */
 async function surroundings(onStop) {
   if (ownServer) return {};
-  const holding = holdDatabase(join(dataFolder, 'mariadb'));
-  onStop(async () => (await holding).release());
+  const database = await holdDatabaseUntilEnd(join(dataFolder, 'mariadb'), onStop);
   return {
-    PRIVATE_DATABASE_URL: (await holding).urlOf('stepwell'),
+    PRIVATE_DATABASE_URL: database.urlOf('stepwell'),
     AUTH_SECRET: process.env.AUTH_SECRET || localSecret(dataFolder),
     DEMO_FILE: join(dataFolder, 'demo-accounts.txt'),
   };

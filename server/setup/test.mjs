@@ -2,7 +2,7 @@
 import { mkdirSync, rmSync } from 'node:fs';
 import { ensureBuilt } from './build.mjs';
 import { add, nothing, playwrightCounts, vitestCounts } from './counts.mjs';
-import { holdDatabase } from './database.mjs';
+import { holdDatabaseUntilEnd } from './database.mjs';
 import { withLock } from './lock.mjs';
 import { mainScript } from './main-script.mjs';
 import { ensureNodeModules } from './node-modules.mjs';
@@ -23,9 +23,7 @@ await mainScript(async (onStop) => {
   });
   if (!ownServer) {
     // Held from here on, so that it is not started and stopped once for each runner.
-    const holding = holdDatabase(inRoot('.data', 'tests', 'mariadb'));
-    onStop(async () => (await holding).release());
-    await holding;
+    await holdDatabaseUntilEnd(inRoot('.data', 'tests', 'mariadb'), onStop);
   }
   rmSync(reports, { recursive: true, force: true });
   mkdirSync(reports, { recursive: true });

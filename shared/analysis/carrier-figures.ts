@@ -36,7 +36,10 @@ export function carrierFigures(
   }
   const thdRatio = distortionRatio(amplitudes, carrier, length);
   const hasThd = thdRatio > pureThdRatio;
-  const thd = { thdDb: hasThd ? 20 * Math.log10(thdRatio) : null, thdPercent: hasThd ? 100 * thdRatio : null };
+  const thd = {
+    thdDb: hasThd ? 20 * Math.log10(thdRatio) : null,
+    thdPercent: hasThd ? 100 * thdRatio : null,
+  };
   if (rest <= purePower) return { ...none, ...thd };
   const sfdrDb = 20 * Math.log10(carrierAmplitude / strongestOther);
   if (2 * carrier === length) return { ...none, ...thd, sfdrDb };

@@ -18,7 +18,12 @@ const entriesKept = 2 ** 18;
 export function transformOf(size: number): Transform {
   const known = plans.get(size);
   if (known !== undefined) return known;
-  const plan = { size, forward: planFor(size), data: new Float64Array(2 * size), out: new Float64Array(2 * size) };
+  const plan = {
+    size,
+    forward: planFor(size),
+    data: new Float64Array(2 * size),
+    out: new Float64Array(2 * size),
+  };
   let kept = size;
   for (const other of plans.keys()) kept += other;
   for (const oldest of plans.keys()) {

@@ -19,7 +19,11 @@ const numberBetween = (min: number, max: number) => {
   return z.number({ error }).min(min, { error }).max(max, { error });
 };
 
-const listOf = <Item extends z.ZodType>(item: Item, { min, max }: { min: number; max: number }, what: string) => {
+const listOf = <Item extends z.ZodType>(
+  item: Item,
+  { min, max }: { min: number; max: number },
+  what: string,
+) => {
   const error = `a list of ${min} to ${max} ${what}`;
   return z.array(item, { error }).min(min, { error }).max(max, { error });
 };
@@ -106,12 +110,9 @@ export type LeafSource = HarmonicsSource | PointsSource | SamplesSource;
 export type Source = LeafSource | MixSource;
 
 type LeafInput =
-  | z.input<typeof harmonicsSchema>
-  | z.input<typeof pointsSchema>
-  | z.input<typeof samplesSchema>;
+  z.input<typeof harmonicsSchema> | z.input<typeof pointsSchema> | z.input<typeof samplesSchema>;
 export type SourceInput =
-  | LeafInput
-  | { kind: 'mix'; parts: { gain: number; source: SourceInput }[]; operation: 'sum' | 'product' };
+  LeafInput | { kind: 'mix'; parts: { gain: number; source: SourceInput }[]; operation: 'sum' | 'product' };
 
 const mixSchema: z.ZodType<MixSource, Extract<SourceInput, { kind: 'mix' }>> & z.ZodObject = z.strictObject({
   kind: z.literal('mix'),
@@ -147,7 +148,9 @@ export const levelSchema = z.strictObject({
         z.literal('cie-lightness'),
         z.strictObject({ gamma: numberBetween(limits.gamma.min, limits.gamma.max) }),
       ],
-      { error: `"none", "cie-lightness" or { "gamma": a number from ${limits.gamma.min} to ${limits.gamma.max} }` },
+      {
+        error: `"none", "cie-lightness" or { "gamma": a number from ${limits.gamma.min} to ${limits.gamma.max} }`,
+      },
     )
     .default('none'),
 });

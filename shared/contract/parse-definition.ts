@@ -38,7 +38,11 @@ export function checkDefinition(
  *
  * @param whole what to call the input where it is at fault as a whole
  */
-export function problemsIn(issues: readonly z.core.$ZodIssue[], input: unknown, whole = 'definition'): Problem[] {
+export function problemsIn(
+  issues: readonly z.core.$ZodIssue[],
+  input: unknown,
+  whole = 'definition',
+): Problem[] {
   const byPath = new Map<string, Problem>();
   for (const issue of issues) {
     for (const problem of problemsOf(issue, input, whole)) {

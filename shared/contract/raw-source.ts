@@ -15,15 +15,19 @@ export function problemsOfRawSource(source: unknown): Problem[] {
     if (!isFields(here)) continue;
     if (Array.isArray(here.parts)) {
       if (depth > limits.mixDepth) {
-        return [{ path: 'source', value: 'a deeper mix', allowed: `mixes nested at most ${limits.mixDepth} deep` }];
+        return [
+          { path: 'source', value: 'a deeper mix', allowed: `mixes nested at most ${limits.mixDepth} deep` },
+        ];
       }
       here.parts.slice(0, limits.mixParts.max).forEach((part: unknown, index) => {
-        if (isFields(part)) waiting.push({ source: part.source, path: `${path}.parts[${index}].source`, depth: depth + 1 });
+        if (isFields(part))
+          waiting.push({ source: part.source, path: `${path}.parts[${index}].source`, depth: depth + 1 });
       });
       continue;
     }
     leaves += 1;
-    if (Array.isArray(here.partials) && here.partials.length <= limits.partials.max) partials += here.partials.length;
+    if (Array.isArray(here.partials) && here.partials.length <= limits.partials.max)
+      partials += here.partials.length;
     if (Array.isArray(here.values) && here.values.length <= limits.samples.max) {
       const wrong = wrongNumbers(here.values, `${path}.values`);
       if (wrong.length === limits.problemsShown) return wrong;
@@ -43,7 +47,11 @@ function problemsOfSize(leaves: number, partials: number): Problem[] {
     });
   }
   if (partials > limits.partialsInAll) {
-    problems.push({ path: 'source', value: `${partials} partials`, allowed: `at most ${limits.partialsInAll} partials in all` });
+    problems.push({
+      path: 'source',
+      value: `${partials} partials`,
+      allowed: `at most ${limits.partialsInAll} partials in all`,
+    });
   }
   return problems;
 }
@@ -52,7 +60,8 @@ function problemsOfSize(leaves: number, partials: number): Problem[] {
 function wrongNumbers(list: readonly unknown[], path: string): Problem[] {
   const problems: Problem[] = [];
   for (let i = 0; i < list.length && problems.length < limits.problemsShown; i += 1) {
-    if (!Number.isFinite(list[i])) problems.push({ path: `${path}[${i}]`, value: showValue(list[i]), allowed: 'a finite number' });
+    if (!Number.isFinite(list[i]))
+      problems.push({ path: `${path}[${i}]`, value: showValue(list[i]), allowed: 'a finite number' });
   }
   return problems;
 }

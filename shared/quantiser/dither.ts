@@ -7,7 +7,10 @@ import type { TableSettings } from '../contract/index.ts';
  *
  * @returns null where no dither is asked for.
  */
-export function ditherOf(length: number, { dither, seed }: Pick<TableSettings, 'dither' | 'seed'>): Float64Array | null {
+export function ditherOf(
+  length: number,
+  { dither, seed }: Pick<TableSettings, 'dither' | 'seed'>,
+): Float64Array | null {
   if (dither === 'none') return null;
   const generator = xoroshiro128plus(seed);
   const draw = () => ((generator.next() >>> 0) + 0.5) / 2 ** 32 - 0.5;

@@ -10,7 +10,12 @@ import { addHarmonics, type HarmonicLine } from './harmonic-sum.ts';
  * @param count how many values there are, M
  * @param limit harmonics `1 ≤ m < limit` stay; it is at most M/2.
  */
-export function bandlimitedCycle(lines: Lines, count: number, limit: number, table: TableSettings): Float64Array {
+export function bandlimitedCycle(
+  lines: Lines,
+  count: number,
+  limit: number,
+  table: TableSettings,
+): Float64Array {
   const cycle = new Float64Array(table.length).fill(lines.re[0] / count);
   const harmonics: HarmonicLine[] = [];
   for (let m = 1; m < limit; m += 1) {

@@ -4,7 +4,10 @@ import { addHarmonics, type HarmonicLine } from './harmonic-sum.ts';
 const warningsSpelledOut = 8;
 
 /** Whether a harmonic fits the table: `2·n·K < N`. */
-export function fitsTable(harmonic: number, { length, cycles }: Pick<TableSettings, 'length' | 'cycles'>): boolean {
+export function fitsTable(
+  harmonic: number,
+  { length, cycles }: Pick<TableSettings, 'length' | 'cycles'>,
+): boolean {
   return 2 * harmonic * cycles < length;
 }
 

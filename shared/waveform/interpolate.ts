@@ -40,7 +40,10 @@ function pieceAt(x: Float64Array, t: number): number {
 }
 
 /** Curve through the points of a source in its own interpolation. */
-export function closedCurve({ points, interpolation }: Pick<PointsSource, 'points' | 'interpolation'>): ClosedCurve {
+export function closedCurve({
+  points,
+  interpolation,
+}: Pick<PointsSource, 'points' | 'interpolation'>): ClosedCurve {
   const { x, y, width } = closed(points);
   const within = (t: number) => (t < x[0] ? t + 1 : t);
   switch (interpolation) {

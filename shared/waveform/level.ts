@@ -1,4 +1,10 @@
-import { Refusal, type Definition, type LevelSettings, type Transfer, type Warning } from '../contract/index.ts';
+import {
+  Refusal,
+  type Definition,
+  type LevelSettings,
+  type Transfer,
+  type Warning,
+} from '../contract/index.ts';
 import type { Synthesis } from './synthesise.ts';
 
 /** A levelled cycle `r`: in −1…1 (bipolar) or 0…1 (unipolar), clipped there. */
@@ -28,7 +34,11 @@ export function levelCycle(synthesis: Synthesis, { level, table }: Definition): 
     level.transfer === 'none'
       ? alongLine(cycle, line, lowest)
       : throughTransfer(cycle, line, lowest, transferCurve(level.transfer));
-  return { cycle, clippedSamples, warnings: clippedSamples === 0 ? [] : [clippedWarning(clippedSamples, isBipolar)] };
+  return {
+    cycle,
+    clippedSamples,
+    warnings: clippedSamples === 0 ? [] : [clippedWarning(clippedSamples, isBipolar)],
+  };
 }
 
 function clippedWarning(count: number, isBipolar: boolean): Warning {
@@ -98,7 +108,11 @@ function extentOf(cycle: Float64Array): { sum: number; lowest: number; highest: 
 }
 
 /** Takes each entry along the line and clips it; answers how many were clipped by more than rounding. */
-function alongLine(cycle: Float64Array, { from, divisor, multiplier, to }: LevelLine, lowest: number): number {
+function alongLine(
+  cycle: Float64Array,
+  { from, divisor, multiplier, to }: LevelLine,
+  lowest: number,
+): number {
   let clipped = 0;
   for (let k = 0; k < cycle.length; k += 1) {
     let x = ((cycle[k] - from) / divisor) * multiplier + to;
@@ -117,7 +131,12 @@ function alongLine(cycle: Float64Array, { from, divisor, multiplier, to }: Level
 const asItIs: LevelLine = { from: 0, divisor: 1, multiplier: 1, to: 0 };
 
 /** The same with a curve before the clip. */
-function throughTransfer(cycle: Float64Array, line: LevelLine, lowest: number, curve: (x: number) => number): number {
+function throughTransfer(
+  cycle: Float64Array,
+  line: LevelLine,
+  lowest: number,
+  curve: (x: number) => number,
+): number {
   const { from, divisor, multiplier, to } = line;
   for (let k = 0; k < cycle.length; k += 1) cycle[k] = curve(((cycle[k] - from) / divisor) * multiplier + to);
   return alongLine(cycle, asItIs, lowest);

@@ -2,7 +2,11 @@ import type { HarmonicsSource, Partial } from '../contract/index.ts';
 
 // Fourier series of the CRC Standard Mathematical Tables, each to harmonics 1…`partials`.
 
-function series(partials: number, offset: number, term: (n: number) => Omit<Partial, 'harmonic'> | null): HarmonicsSource {
+function series(
+  partials: number,
+  offset: number,
+  term: (n: number) => Omit<Partial, 'harmonic'> | null,
+): HarmonicsSource {
   const terms: Partial[] = [];
   for (let n = 1; n <= partials; n += 1) {
     const part = term(n);

@@ -51,7 +51,11 @@ export function Form({
       }}
     >
       {children}
-      <ProblemNotice fault={fault} shownElsewhere={fields} />
+      <ProblemNotice
+        fault={fault}
+        shownElsewhere={fields}
+        actions={fault?.isPassing && 'Nothing you typed is lost; send it again.'}
+      />
       <div className="form-actions">
         <Button
           type="submit"

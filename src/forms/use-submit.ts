@@ -1,7 +1,7 @@
 import { useCallback, useState } from 'react';
 import type { z } from 'zod';
-import { problemsIn } from '../../shared/contract/index.ts';
-import { ProblemError, asProblem } from '../api/problem-error.ts';
+import { asProblem, type ProblemError } from '../api/problem-error.ts';
+import { requireAllowed } from './require-allowed.ts';
 
 export interface Submitting<Input> {
   readonly isBusy: boolean;
@@ -30,7 +30,7 @@ export function useSubmit<Input>(
     setIsBusy(true);
     setFault(null);
     try {
-      if (schema) check(schema, input);
+      if (schema) requireAllowed(schema, input);
       await act(input);
     } catch (error) {
       setFault(asProblem(error));
@@ -44,17 +44,6 @@ export function useSubmit<Input>(
   };
   const clear = useCallback(() => setFault(null), []);
   return { isBusy, fault, submit, at, clear };
-}
-
-function check(schema: z.ZodType, input: unknown): void {
-  const { error } = schema.safeParse(input);
-  if (error === undefined) return;
-  throw new ProblemError({
-    kind: 'validation',
-    status: 422,
-    message: 'Some values are not allowed.',
-    problems: problemsIn(error.issues, input, 'body'),
-  });
 }
 
 /** Says a problem where the field's name stands beside it; what was typed as a secret is not said. */

@@ -204,7 +204,7 @@ describe('the list of tables', () => {
 
   it('looks for nothing where a search has neither letter nor digit', async () => {
     const [all, odd] = await Promise.all(
-      [{}, { search: '%_*"+' }].map((query) =>
+      [{}, { search: '%_*"+' }].map((query: { search?: string }) =>
         asPerson(test, crew.viewer).get(path({ ...query, limit: '100' })),
       ),
     );

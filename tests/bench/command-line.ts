@@ -42,7 +42,10 @@ export function measureCommandLine(): boolean {
 
 function millisecondsOf(args: string[]): number {
   const start = performance.now();
-  const { status, stderr, stdout } = spawnSync(process.execPath, args, { cwd: projectFolder, encoding: 'utf8' });
+  const { status, stderr, stdout } = spawnSync(process.execPath, args, {
+    cwd: projectFolder,
+    encoding: 'utf8',
+  });
   const elapsed = performance.now() - start;
   if (status !== 0) throw new Error(`node ${args.join(' ')} ended with ${status}: ${stderr}`);
   if (args.includes('report') && !stdout.includes('SNR')) throw new Error(`No report came: ${stdout}`);

@@ -1,6 +1,6 @@
 import type { buildTable } from '../../shared/build-table.ts';
 import type { DefinitionInput } from '../../shared/contract/index.ts';
-import { bundleModule } from './bundle-engine.ts';
+import { bundleModule } from './bundle-module.ts';
 import { judge, median } from './judge.ts';
 import { NumpyPipeline, type NumpyTable } from './numpy-pipeline.ts';
 
@@ -72,7 +72,9 @@ async function measureCase(each: Case, build: typeof buildTable, numpy: NumpyPip
     theirs.push(...other);
   }
   const [ownMs, theirsMs] = [median(own), median(theirs)];
-  console.log(`  ${length}×${bits}, ${partials} partials: ${ownMs.toFixed(4)} ms, NumPy ${theirsMs.toFixed(4)} ms`);
+  console.log(
+    `  ${length}×${bits}, ${partials} partials: ${ownMs.toFixed(4)} ms, NumPy ${theirsMs.toFixed(4)} ms`,
+  );
   return judge('  as a share of NumPy', ownMs / theirsMs, goal);
 }
 
@@ -90,7 +92,8 @@ function mustAgree(table: ReturnType<typeof buildTable>, wanted: NumpyTable): vo
   if (!wanted.codes.every((code, k) => code === table.codes[k])) faults.push('codes');
   if (!wanted.stored.every((word, k) => word === table.stored[k])) faults.push('stored words');
   const isClose = (a: number, b: number) => Math.abs(a - b) <= Math.max(1e-7, 1e-6 * Math.abs(b));
-  if (!wanted.spectrum.every((amplitude, k) => isClose(table.spectrum.amplitudes[k], amplitude))) faults.push('spectrum');
+  if (!wanted.spectrum.every((amplitude, k) => isClose(table.spectrum.amplitudes[k], amplitude)))
+    faults.push('spectrum');
   for (const [figure, value] of Object.entries(wanted.report)) {
     const told = table.report[figure as keyof typeof table.report];
     const same =

@@ -2,7 +2,9 @@
 export function judge(what: string, value: number, goal: number, unit = ''): boolean {
   const holds = value <= goal;
   const digits = value < 10 ? 3 : 1;
-  console.log(`  ${what}: ${value.toFixed(digits)}${unit} (goal: at most ${goal}${unit}) ${holds ? 'met' : 'MISSED'}`);
+  console.log(
+    `  ${what}: ${value.toFixed(digits)}${unit} (goal: at most ${goal}${unit}) ${holds ? 'met' : 'MISSED'}`,
+  );
   return holds;
 }
 

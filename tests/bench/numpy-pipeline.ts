@@ -12,9 +12,13 @@ export interface NumpyTable {
 
 /** pipeline.py in a process of its own, asked line by line. */
 export class NumpyPipeline {
-  readonly #process = spawn(pythonPath, [...pythonFlags, fileURLToPath(new URL('pipeline.py', import.meta.url))], {
-    stdio: ['pipe', 'pipe', 'inherit'],
-  });
+  readonly #process = spawn(
+    pythonPath,
+    [...pythonFlags, fileURLToPath(new URL('pipeline.py', import.meta.url))],
+    {
+      stdio: ['pipe', 'pipe', 'inherit'],
+    },
+  );
   readonly #answers = createInterface({ input: this.#process.stdout })[Symbol.asyncIterator]();
 
   /** Takes a definition and answers its table. */

@@ -28,7 +28,10 @@ test.describe('export', () => {
     }) => {
       await page.goto('/?open=export');
       await page.getByRole('combobox', { name: 'Target' }).selectOption(target);
-      await page.getByRole('textbox', { name: 'Array name' }).fill('buoyTone');
+      await page.getByRole('textbox', { name: 'Array name', exact: true }).fill('buoyTone');
+      await page
+        .getByRole('textbox', { name: 'Licence line' })
+        .fill("Ninth Fathom's own; $HOME stays as it is");
       if (target === 'avr') await page.getByRole('combobox', { name: 'Port', exact: true }).selectOption('D');
       await expect(page.getByRole('tab', { name: 'buoyTone.h' })).toBeVisible();
 
@@ -62,12 +65,11 @@ test.describe('export', () => {
         ]);
         await definition.saveAs(join(folder, definition.suggestedFilename()));
         const command = await page.locator('.command-line').innerText();
-        const [, args] = command.split('npm run --silent stepwell -- ');
-        await promisify(execFile)(
-          process.execPath,
-          [join(projectFolder, 'server/setup/stepwell.mjs'), ...args.trim().split(/\s+/)],
-          { cwd: folder },
-        );
+        const stepwell = `${process.execPath} ${join(projectFolder, 'server/setup/stepwell.mjs')}`;
+        expect(command).toContain('npm run --silent stepwell -- ');
+        await promisify(execFile)('sh', ['-c', command.replace('npm run --silent stepwell --', stepwell)], {
+          cwd: folder,
+        });
         const written = (await readdir(folder)).filter((name) => name !== 'fog_signal_tone.json');
         expect(written.sort()).toEqual([...shown.keys()].sort());
         for (const name of written) expect(await readFile(join(folder, name), 'utf8')).toBe(shown.get(name));
@@ -79,11 +81,11 @@ test.describe('export', () => {
 
   test('refuses an array name that C does not take, beside the field', async ({ page }) => {
     await page.goto('/?open=export');
-    await page.getByRole('textbox', { name: 'Array name' }).fill('2nd-tone');
+    await page.getByRole('textbox', { name: 'Array name', exact: true }).fill('2nd-tone');
     await expect.poll(() => saidBeside(page, 'Array name')).toContain('"2nd-tone" is not allowed');
-    await page.getByRole('textbox', { name: 'Array name' }).fill('volatile');
+    await page.getByRole('textbox', { name: 'Array name', exact: true }).fill('volatile');
     await expect.poll(() => saidBeside(page, 'Array name')).toContain('"volatile" is not allowed');
-    await page.getByRole('textbox', { name: 'Array name' }).fill('');
+    await page.getByRole('textbox', { name: 'Array name', exact: true }).fill('');
     await expect(page.getByRole('tab', { name: 'fog_signal_tone.c' })).toBeVisible();
   });
 });

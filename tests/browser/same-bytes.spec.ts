@@ -2,7 +2,7 @@ import { readFile } from 'node:fs/promises';
 import { expect, test } from '@playwright/test';
 import type { DefinitionInput } from '../../shared/contract/index.ts';
 import { readTemplates } from '../../server/tables/read-templates.ts';
-import { bundleModule } from '../bench/bundle-engine.ts';
+import { bundleModule } from '../bench/bundle-module.ts';
 import { ditheredDefinition } from '../engine/support/definitions.ts';
 import { examplesOf } from '../engine/support/seeded.ts';
 import { commitSeed } from '../outside/numpy/seed.ts';

@@ -76,17 +76,35 @@ describe('any definition that is taken', () => {
 
 describe('numbers at the ends of what a double holds', () => {
   const extreme = fc.oneof(
-    fc.constantFrom(0, -0, 5e-324, -5e-324, 1e-310, 1e-200, -1e-160, 1e-17, 1, -1, 1e154, 1e300, -1e308, Number.MAX_VALUE),
+    fc.constantFrom(
+      0,
+      -0,
+      5e-324,
+      -5e-324,
+      1e-310,
+      1e-200,
+      -1e-160,
+      1e-17,
+      1,
+      -1,
+      1e154,
+      1e300,
+      -1e308,
+      Number.MAX_VALUE,
+    ),
     fc.double({ noNaN: true, noDefaultInfinity: true }),
   );
   const source = fc.oneof(
     fc.record({
       kind: fc.constant('harmonics' as const),
       offset: extreme,
-      partials: fc.array(fc.record({ harmonic: fc.integer({ min: 1, max: 40 }), amplitude: extreme, phaseDeg: extreme }), {
-        minLength: 1,
-        maxLength: 4,
-      }),
+      partials: fc.array(
+        fc.record({ harmonic: fc.integer({ min: 1, max: 40 }), amplitude: extreme, phaseDeg: extreme }),
+        {
+          minLength: 1,
+          maxLength: 4,
+        },
+      ),
     }),
     fc.record({
       kind: fc.constant('samples' as const),
@@ -95,14 +113,25 @@ describe('numbers at the ends of what a double holds', () => {
     }),
     fc.record({
       kind: fc.constant('points' as const),
-      interpolation: fc.constantFrom('step' as const, 'linear' as const, 'monotone' as const, 'spline' as const),
+      interpolation: fc.constantFrom(
+        'step' as const,
+        'linear' as const,
+        'monotone' as const,
+        'spline' as const,
+      ),
       bandlimit: fc.boolean(),
       points: fc
-        .uniqueArray(fc.oneof(fc.constantFrom(0, 5e-324, 1e-300, 1e-17, 0.5, 1 - 2 ** -53), fc.double({ min: 0, max: 1, maxExcluded: true, noNaN: true })), {
-          minLength: 3,
-          maxLength: 6,
-          comparator: 'SameValueZero',
-        })
+        .uniqueArray(
+          fc.oneof(
+            fc.constantFrom(0, 5e-324, 1e-300, 1e-17, 0.5, 1 - 2 ** -53),
+            fc.double({ min: 0, max: 1, maxExcluded: true, noNaN: true }),
+          ),
+          {
+            minLength: 3,
+            maxLength: 6,
+            comparator: 'SameValueZero',
+          },
+        )
         .chain((xs) =>
           fc
             .array(extreme, { minLength: xs.length, maxLength: xs.length })

@@ -36,32 +36,69 @@ describe('SINAD, ENOB, THD and SFDR', () => {
 
   it('count harmonics 2…10 below N/2 only', () => {
     // Carrier 3: harmonic 10 is bin 30, 11 is bin 33, beyond N/2 = 32; carrier 1 has its tenth at 10, the eleventh at 11.
-    expect(sinesAt([[3, 0.8], [30, 0.01]]).thdPercent).toBeCloseTo(1.25, 2);
-    expect(sinesAt([[1, 0.8], [10, 0.01]]).thdPercent).toBeCloseTo(1.25, 2);
-    expect(sinesAt([[1, 0.8], [11, 0.01]]).thdPercent).toBeLessThan(0.05);
+    expect(
+      sinesAt([
+        [3, 0.8],
+        [30, 0.01],
+      ]).thdPercent,
+    ).toBeCloseTo(1.25, 2);
+    expect(
+      sinesAt([
+        [1, 0.8],
+        [10, 0.01],
+      ]).thdPercent,
+    ).toBeCloseTo(1.25, 2);
+    expect(
+      sinesAt([
+        [1, 0.8],
+        [11, 0.01],
+      ]).thdPercent,
+    ).toBeLessThan(0.05);
     // Carrier 16: its second harmonic is N/2 itself, which is not below.
-    expect(sinesAt([[16, 0.8], [32, 0.01]]).thdDb).toBeNull();
+    expect(
+      sinesAt([
+        [16, 0.8],
+        [32, 0.01],
+      ]).thdDb,
+    ).toBeNull();
   });
 
   it('give the line at N/2 its whole power', () => {
-    expect(sinesAt([[5, 0.5], [32, 0.05]]).sinadDb).toBeCloseTo(10 * Math.log10(0.5 ** 2 / 2 / 0.05 ** 2), 2);
+    expect(
+      sinesAt([
+        [5, 0.5],
+        [32, 0.05],
+      ]).sinadDb,
+    ).toBeCloseTo(10 * Math.log10(0.5 ** 2 / 2 / 0.05 ** 2), 2);
   });
 
   it('leave DC out', () => {
-    const report = sinesAt([[0, 0.4], [5, 0.5], [7, 0.01]]);
+    const report = sinesAt([
+      [0, 0.4],
+      [5, 0.5],
+      [7, 0.01],
+    ]);
     expect(report.sinadDb).toBeCloseTo(20 * Math.log10(50), 2);
     expect(report.sfdrDb).toBeCloseTo(20 * Math.log10(50), 2);
   });
 
   it('a carrier at N/2 has no SINAD, but the rest below it is told', () => {
-    const report = sinesAt([[32, 0.5], [5, 0.05]]);
+    const report = sinesAt([
+      [32, 0.5],
+      [5, 0.05],
+    ]);
     expect(report).toMatchObject({ sinadDb: null, enobBits: null, thdDb: null, thdPercent: null });
     expect(report.sfdrDb).toBeCloseTo(20, 2);
   });
 
   it('of equal lines the lowest is the carrier', () => {
     // An impulse train of period 4: bins 16 and (at N/2) 32; of period 8: bins 8, 16, 24 alike, and 32.
-    const train = buildTable(valuesOf(Array.from({ length }, (_, k) => (k % 8 === 0 ? 1 : 0)), { ...exactly, length }));
+    const train = buildTable(
+      valuesOf(
+        Array.from({ length }, (_, k) => (k % 8 === 0 ? 1 : 0)),
+        { ...exactly, length },
+      ),
+    );
     expect(train.spectrum.amplitudes[8]).toBeCloseTo(0.25, 4);
     // Harmonics 2 and 3 of bin 8 (bin 32 is N/2): √2 of the carrier; of bin 16 there would be none.
     expect(train.report.thdPercent).toBeCloseTo(100 * Math.SQRT2, 1);
@@ -97,7 +134,10 @@ describe('SINAD, ENOB, THD and SFDR', () => {
 
 describe('SNR', () => {
   it('does not exist where the cycle has no variance that a double can hold', () => {
-    const source = { kind: 'harmonics' as const, partials: [{ harmonic: 1, amplitude: 1e-200, phaseDeg: 0 }] };
+    const source = {
+      kind: 'harmonics' as const,
+      partials: [{ harmonic: 1, amplitude: 1e-200, phaseDeg: 0 }],
+    };
     const { report } = buildTable(waveOf({ source, level: { normalise: 'none' }, table: { shaping: 1 } }));
     expect(report).toMatchObject({ snrDb: null, unwantedDb: null, exact: false });
     expect(report.usedCodes).toBe(2);

@@ -8,7 +8,10 @@ const bits = 8;
 /** Codes of a constant code position, dithered, as offsets from it. */
 function offsetsAt(position: number, dither: 'rectangular' | 'triangular', seed: number): number[] {
   const values = new Array<number>(length).fill(position / (2 ** bits - 1));
-  return Array.from(buildTable(valuesOf(values, { bits, range: 'unipolar', dither, seed })).codes, (code) => code - position);
+  return Array.from(
+    buildTable(valuesOf(values, { bits, range: 'unipolar', dither, seed })).codes,
+    (code) => code - position,
+  );
 }
 const mean = (list: number[]) => list.reduce((sum, x) => sum + x, 0) / list.length;
 const variance = (list: number[]) => mean(list.map((x) => x * x)) - mean(list) ** 2;
@@ -27,14 +30,17 @@ describe('dither', () => {
     }
   });
 
-  it.each([100, 100.25, 100.5, 100.8])('triangular keeps the mean, and a variance of ¼ LSB², at %d', (position) => {
-    for (const seed of [1, 77]) {
-      const offsets = offsetsAt(position, 'triangular', seed);
-      expect(Math.abs(mean(offsets))).toBeLessThan((5 * 0.5) / Math.sqrt(length));
-      expect(Math.abs(variance(offsets) - 0.25)).toBeLessThan(0.01);
-      expect(new Set(offsets).size).toBeLessThanOrEqual(3);
-    }
-  });
+  it.each([100, 100.25, 100.5, 100.8])(
+    'triangular keeps the mean, and a variance of ¼ LSB², at %d',
+    (position) => {
+      for (const seed of [1, 77]) {
+        const offsets = offsetsAt(position, 'triangular', seed);
+        expect(Math.abs(mean(offsets))).toBeLessThan((5 * 0.5) / Math.sqrt(length));
+        expect(Math.abs(variance(offsets) - 0.25)).toBeLessThan(0.01);
+        expect(new Set(offsets).size).toBeLessThanOrEqual(3);
+      }
+    },
+  );
 
   it('neighbouring entries do not depend on each other', () => {
     const offsets = offsetsAt(100.5, 'triangular', 5);
@@ -53,7 +59,10 @@ describe('dither', () => {
   });
 
   it('takes the distortion of a small sine away', () => {
-    const values = Float64Array.from({ length: 4096 }, (_, k) => (1.3 / 255) * Math.sin((2 * Math.PI * 5 * k) / 4096));
+    const values = Float64Array.from(
+      { length: 4096 },
+      (_, k) => (1.3 / 255) * Math.sin((2 * Math.PI * 5 * k) / 4096),
+    );
     const plain = buildTable(valuesOf(values, { bits })).report;
     const dithered = buildTable(valuesOf(values, { bits, dither: 'triangular' })).report;
     expect(Number(dithered.thdDb)).toBeLessThan(Number(plain.thdDb) - 6);

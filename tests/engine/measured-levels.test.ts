@@ -21,7 +21,10 @@ function byForce(x: number, levels: number[], range: Table['range']): number {
 /** Volts in a few steps only: equal ones and exact ties come up often. */
 const coarseLevels = fc.integer({ min: 1, max: 5 }).chain((bits) =>
   fc
-    .array(fc.integer({ min: -8, max: 8 }).map((quarter) => quarter / 4), { minLength: 2 ** bits, maxLength: 2 ** bits })
+    .array(
+      fc.integer({ min: -8, max: 8 }).map((quarter) => quarter / 4),
+      { minLength: 2 ** bits, maxLength: 2 ** bits },
+    )
     .filter((levels) => new Set(levels).size > 1)
     .map((levels) => ({ bits, levels })),
 );
@@ -36,13 +39,18 @@ const range = fc.constantFrom<Table['range']>('bipolar', 'unipolar');
 describe('measured levels', () => {
   it('give the code that trying every code gives', () => {
     holds(
-      fc.property(fc.oneof(coarseLevels, fineLevels), range, fc.integer({ min: 1, max: 1e6 }), ({ bits, levels }, range, seed) => {
-        const values = Array.from(noise(60, seed), (x, k) => (k % 3 === 0 ? Math.round(x * 16) / 16 : x)).map((x) =>
-          range === 'unipolar' ? Math.abs(x) : x,
-        );
-        const { codes } = buildTable(valuesOf(values, { bits, levels, range }));
-        expect(Array.from(codes)).toEqual(values.map((x) => byForce(x, levels, range)));
-      }),
+      fc.property(
+        fc.oneof(coarseLevels, fineLevels),
+        range,
+        fc.integer({ min: 1, max: 1e6 }),
+        ({ bits, levels }, range, seed) => {
+          const values = Array.from(noise(60, seed), (x, k) =>
+            k % 3 === 0 ? Math.round(x * 16) / 16 : x,
+          ).map((x) => (range === 'unipolar' ? Math.abs(x) : x));
+          const { codes } = buildTable(valuesOf(values, { bits, levels, range }));
+          expect(Array.from(codes)).toEqual(values.map((x) => byForce(x, levels, range)));
+        },
+      ),
       300,
     );
   });
@@ -50,21 +58,28 @@ describe('measured levels', () => {
   it('a tie goes to the higher voltage, then to the lower code, across the last bits', () => {
     // Codes 1 and 3 share 1 V, codes 0 and 2 are 0 V; ½ V lies between, also when arithmetic blurs it.
     for (const blur of [-(2 ** -40), 0, 2 ** -40]) {
-      const { codes } = buildTable(valuesOf([0.5 + blur, 0, 1, 0.49], { bits: 2, levels: [0, 1, 0, 1], range: 'unipolar' }));
+      const { codes } = buildTable(
+        valuesOf([0.5 + blur, 0, 1, 0.49], { bits: 2, levels: [0, 1, 0, 1], range: 'unipolar' }),
+      );
       expect(Array.from(codes)).toEqual([1, 0, 1, 0]);
     }
   });
 
   it('that are even give the codes of the even steps', () => {
     holds(
-      fc.property(fc.integer({ min: 1, max: 12 }), range, fc.integer({ min: 1, max: 1e6 }), (bits, range, seed) => {
-        const values = Array.from(noise(200, seed), (x) => (range === 'unipolar' ? Math.abs(x) : x));
-        const levels = Array.from({ length: 2 ** bits }, (_, code) => code);
-        const measured = buildTable(valuesOf(values, { bits, range, levels }));
-        const even = buildTable(valuesOf(values, { bits, range }));
-        expect(measured.codes).toEqual(even.codes);
-        measured.values.forEach((q, k) => expect(q).toBeCloseTo(even.values[k], 13));
-      }),
+      fc.property(
+        fc.integer({ min: 1, max: 12 }),
+        range,
+        fc.integer({ min: 1, max: 1e6 }),
+        (bits, range, seed) => {
+          const values = Array.from(noise(200, seed), (x) => (range === 'unipolar' ? Math.abs(x) : x));
+          const levels = Array.from({ length: 2 ** bits }, (_, code) => code);
+          const measured = buildTable(valuesOf(values, { bits, range, levels }));
+          const even = buildTable(valuesOf(values, { bits, range }));
+          expect(measured.codes).toEqual(even.codes);
+          measured.values.forEach((q, k) => expect(q).toBeCloseTo(even.values[k], 13));
+        },
+      ),
     );
   });
 

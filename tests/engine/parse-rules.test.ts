@@ -52,10 +52,17 @@ describe('lists', () => {
     ['17 parts', mixOf(Array.from({ length: 17 }, () => sineSource)), ['source.parts']],
     ['mixes 4 deep', nested(4), []],
     ['mixes 5 deep', nested(5), ['source']],
-    ['64 leaf sources', mixOf(Array.from({ length: 4 }, () => mixOf(Array.from({ length: 16 }, () => sineSource)))), []],
+    [
+      '64 leaf sources',
+      mixOf(Array.from({ length: 4 }, () => mixOf(Array.from({ length: 16 }, () => sineSource)))),
+      [],
+    ],
     [
       '65 leaf sources',
-      mixOf([...Array.from({ length: 4 }, () => mixOf(Array.from({ length: 16 }, () => sineSource))), sineSource]),
+      mixOf([
+        ...Array.from({ length: 4 }, () => mixOf(Array.from({ length: 16 }, () => sineSource))),
+        sineSource,
+      ]),
       ['source'],
     ],
     ['8,192 partials in all', mixOf([partials(4096), partials(4096)]), []],
@@ -69,7 +76,11 @@ describe('lists', () => {
     ['at one x', [0, 0.5, 0.5], ['source.points[2].x']],
     ['all in reverse', [0.9, 0.5, 0.1], ['source.points[1].x', 'source.points[2].x']],
   ])('points %s', (_what, places, wrong) => {
-    const source = { kind: 'points' as const, interpolation: 'step' as const, points: places.map((x) => ({ x, y: x })) };
+    const source = {
+      kind: 'points' as const,
+      interpolation: 'step' as const,
+      points: places.map((x) => ({ x, y: x })),
+    };
     expect(pathsWrongIn(waveOf({ source }))).toEqual(wrong);
   });
 });
@@ -90,12 +101,20 @@ describe('fields that must agree', () => {
     ['too few voltages', { table: { bits: 3, levels: levels4 } }, ['table.levels']],
     ['too many voltages', { table: { bits: 1, levels: levels4 } }, ['table.levels']],
     ['one voltage for all codes', { table: { bits: 2, levels: [2, 2, 2, 2] } }, ['table.levels']],
-    ['voltages too far apart for a double', { table: { bits: 1, levels: [-1.7e308, 1.7e308] } }, ['table.levels']],
+    [
+      'voltages too far apart for a double',
+      { table: { bits: 1, levels: [-1.7e308, 1.7e308] } },
+      ['table.levels'],
+    ],
     ['voltages too near for a double', { table: { bits: 1, levels: [0, 5e-324] } }, ['table.levels']],
     ['levels with dither', { table: { bits: 2, levels: levels4, dither: 'triangular' } }, ['table.dither']],
     ['levels with shaping', { table: { bits: 2, levels: levels4, shaping: 1 } }, ['table.shaping']],
     ['levels with mid-tread', { table: { bits: 2, levels: levels4, scale: 'mid-tread' } }, ['table.scale']],
-    ['levels with half-even', { table: { bits: 2, levels: levels4, rounding: 'half-even' } }, ['table.rounding']],
+    [
+      'levels with half-even',
+      { table: { bits: 2, levels: levels4, rounding: 'half-even' } },
+      ['table.rounding'],
+    ],
     ['levels with down', { table: { bits: 2, levels: levels4, rounding: 'down' } }, ['table.rounding']],
     ['a quarter, centred', { table: folded }, []],
     ['a quarter, half-even', { table: { ...folded, rounding: 'half-even' } }, []],

@@ -11,7 +11,14 @@ type Table = NonNullable<DefinitionInput['table']>;
 /** Codes of code positions v, sent in as the unipolar values v/(L−1). */
 function codesOf(positions: number[], rounding: Table['rounding'], bits = 4): number[] {
   const top = 2 ** bits - 1;
-  return Array.from(buildTable(valuesOf(positions.map((v) => v / top), { rounding, bits, range: 'unipolar' })).codes);
+  return Array.from(
+    buildTable(
+      valuesOf(
+        positions.map((v) => v / top),
+        { rounding, bits, range: 'unipolar' },
+      ),
+    ).codes,
+  );
 }
 
 describe('rounding', () => {
@@ -27,7 +34,8 @@ describe('rounding', () => {
   it('a tie that the last bits of arithmetic blur is still a tie', () => {
     for (const bits of [1, 4, 8, 12, 16]) {
       const tie = 2 ** (bits - 1) - 0.5;
-      for (const blur of [-(2 ** -26), 0, 2 ** -26]) expect(codesOf([tie + blur, 0], 'half-up', bits)[0]).toBe(2 ** (bits - 1));
+      for (const blur of [-(2 ** -26), 0, 2 ** -26])
+        expect(codesOf([tie + blur, 0], 'half-up', bits)[0]).toBe(2 ** (bits - 1));
     }
     expect(codesOf([7.5 - 2 ** -23, 0], 'half-up')[0]).toBe(7);
   });
@@ -51,7 +59,12 @@ describe('rounding', () => {
           const values = noise(200, seed).map((x) => (scaling.range === 'unipolar' ? Math.abs(x) : x));
           const table: Table = { bits, rounding, ...scaling };
           const { cycle, values: q, report } = buildTable(valuesOf(values, table));
-          const lsb = scaling.range === 'unipolar' ? 1 / (2 ** bits - 1) : scaling.scale === 'mid-tread' ? 2 ** (1 - bits) : 2 / (2 ** bits - 1);
+          const lsb =
+            scaling.range === 'unipolar'
+              ? 1 / (2 ** bits - 1)
+              : scaling.scale === 'mid-tread'
+                ? 2 ** (1 - bits)
+                : 2 / (2 ** bits - 1);
           const [least, most] = bounds[rounding];
           cycle.forEach((r, k) => {
             // Above the last mid-tread level there is no code to round up to.
@@ -70,7 +83,10 @@ describe('scaling', () => {
   it('full-span takes −1 to code 0 and +1 to the top code', () => {
     for (let bits = 1; bits <= 16; bits += 1) {
       expect(Array.from(buildTable(valuesOf([-1, 1], { bits })).codes)).toEqual([0, 2 ** bits - 1]);
-      expect(Array.from(buildTable(valuesOf([0, 1], { bits, range: 'unipolar' })).codes)).toEqual([0, 2 ** bits - 1]);
+      expect(Array.from(buildTable(valuesOf([0, 1], { bits, range: 'unipolar' })).codes)).toEqual([
+        0,
+        2 ** bits - 1,
+      ]);
     }
   });
 
@@ -88,7 +104,13 @@ describe('scaling', () => {
       const values = Array.from({ length: 2 ** bits }, (_, code) => (2 * code) / (2 ** bits - 1) - 1);
       const { codes, report } = buildTable(valuesOf(values, { bits }));
       expect(Array.from(codes)).toEqual(values.map((_, code) => code));
-      expect(report).toMatchObject({ usedCodes: 2 ** bits, minCode: 0, maxCode: 2 ** bits - 1, exact: true, snrDb: null });
+      expect(report).toMatchObject({
+        usedCodes: 2 ** bits,
+        minCode: 0,
+        maxCode: 2 ** bits - 1,
+        exact: true,
+        snrDb: null,
+      });
     }
   });
 });
@@ -99,16 +121,28 @@ describe('figures of the error', () => {
       if (definition.table?.fold !== undefined) continue;
       const { cycle, values, codes, report, definition: parsed } = buildTable(definition);
       const { bits, range, scale } = parsed.table;
-      const lsb = range === 'unipolar' ? 1 / (2 ** bits - 1) : scale === 'mid-tread' ? 2 / 2 ** bits : 2 / (2 ** bits - 1);
+      const lsb =
+        range === 'unipolar'
+          ? 1 / (2 ** bits - 1)
+          : scale === 'mid-tread'
+            ? 2 / 2 ** bits
+            : 2 / (2 ** bits - 1);
       const error = Array.from(values, (q, k) => (q - cycle[k]) / lsb);
       expect(report.meanErrorLsb).toBeCloseTo(error.reduce((sum, e) => sum + e, 0) / error.length, 9);
-      expect(report.rmsErrorLsb).toBeCloseTo(Math.sqrt(error.reduce((sum, e) => sum + e * e, 0) / error.length), 9);
+      expect(report.rmsErrorLsb).toBeCloseTo(
+        Math.sqrt(error.reduce((sum, e) => sum + e * e, 0) / error.length),
+        9,
+      );
       expect(report.peakErrorLsb).toBeCloseTo(Math.max(...error.map(Math.abs)), 9);
       expect(report.mean).toBeCloseTo(values.reduce((sum, q) => sum + q, 0) / values.length, 12);
       const rms = Math.sqrt(values.reduce((sum, q) => sum + q * q, 0) / values.length);
       expect(report.rms).toBeCloseTo(rms, 12);
       expect(report.crestFactor ?? 0).toBeCloseTo(rms === 0 ? 0 : Math.max(...values.map(Math.abs)) / rms, 9);
-      expect([report.minCode, report.maxCode, report.usedCodes]).toEqual([Math.min(...codes), Math.max(...codes), new Set(codes).size]);
+      expect([report.minCode, report.maxCode, report.usedCodes]).toEqual([
+        Math.min(...codes),
+        Math.max(...codes),
+        new Set(codes).size,
+      ]);
     }
   });
 });

@@ -39,7 +39,9 @@ describe('spectra', () => {
         (length, pick, phaseDeg) => {
           const harmonic = 1 + (pick % (Math.ceil(length / 2) - 1));
           const source = { kind: 'harmonics' as const, partials: [{ harmonic, amplitude: 1, phaseDeg }] };
-          const { spectrum, values } = buildTable(waveOf({ source, level: { normalise: 'none' }, table: { length, bits: 16 } }));
+          const { spectrum, values } = buildTable(
+            waveOf({ source, level: { normalise: 'none' }, table: { length, bits: 16 } }),
+          );
           expect(dbfsOf(spectrum.intended[harmonic])).toBeCloseTo(0, 9);
           expect(dbfsOf(spectrum.amplitudes[harmonic])).toBeCloseTo(0, 2);
           const apart = Math.abs(phasesDegOf(linesOf(values))[harmonic] - phaseDeg);
@@ -71,7 +73,10 @@ describe('spectra', () => {
   });
 
   it('what was intended stays exact under an error far stronger than itself', () => {
-    const source = { kind: 'harmonics' as const, partials: [{ harmonic: 5, amplitude: 1e-14, phaseDeg: 40 }] };
+    const source = {
+      kind: 'harmonics' as const,
+      partials: [{ harmonic: 5, amplitude: 1e-14, phaseDeg: 40 }],
+    };
     const { spectrum, report } = buildTable(
       waveOf({ source, level: { normalise: 'none' }, table: { length: 300, shaping: 1 } }),
     );

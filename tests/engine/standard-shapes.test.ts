@@ -11,7 +11,10 @@ function cycleOf(source: HarmonicsSource): Float64Array {
 
 /** Root of the mean square between a series and its shape. */
 function distance(source: HarmonicsSource, shape: (t: number) => number): number {
-  const sum = cycleOf(source).reduce((total, value, k) => total + (value - shape((k + 0.5) / length)) ** 2, 0);
+  const sum = cycleOf(source).reduce(
+    (total, value, k) => total + (value - shape((k + 0.5) / length)) ** 2,
+    0,
+  );
   return Math.sqrt(sum / length);
 }
 
@@ -46,7 +49,9 @@ describe('standard shapes', () => {
       pulse: standardShapes.pulse(9, 0.3),
     })) {
       const harmonics = source.partials.map(({ harmonic }) => harmonic);
-      expect(harmonics, name).toEqual(name === 'triangle' || name === 'square' ? [1, 3, 5, 7, 9] : [1, 2, 3, 4, 5, 6, 7, 8, 9]);
+      expect(harmonics, name).toEqual(
+        name === 'triangle' || name === 'square' ? [1, 3, 5, 7, 9] : [1, 2, 3, 4, 5, 6, 7, 8, 9],
+      );
     }
   });
 

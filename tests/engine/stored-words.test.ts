@@ -26,17 +26,21 @@ describe('stored words', () => {
           expect(coded.codes).toEqual(plain.codes);
           expect(coded.report).toEqual(plain.report);
           const shift = coding === 'twos-complement' ? 2 ** (bits - 1) : 0;
-          const readBack = Array.from(coded.stored, (word) => (complement ? 2 ** bits - 1 - (word + shift) : word + shift));
+          const readBack = Array.from(coded.stored, (word) =>
+            complement ? 2 ** bits - 1 - (word + shift) : word + shift,
+          );
           expect(readBack).toEqual(Array.from(plain.codes));
         }
       }
     }
   });
 
-  it('in two\'s complement are the code with its highest bit inverted', () => {
+  it("in two's complement are the code with its highest bit inverted", () => {
     holds(
       fc.property(fc.integer({ min: 1, max: 16 }), (bits) => {
-        const { codes, stored } = buildTable(waveOf({ table: { bits, length: 97, coding: 'twos-complement' } }));
+        const { codes, stored } = buildTable(
+          waveOf({ table: { bits, length: 97, coding: 'twos-complement' } }),
+        );
         const mask = 2 ** bits - 1;
         codes.forEach((code, k) => expect(stored[k] & mask).toBe((code ^ (1 << (bits - 1))) & mask));
       }),
@@ -57,11 +61,22 @@ describe('a quarter fold', () => {
       fc.property(
         fc.integer({ min: 1, max: 200 }),
         fc.integer({ min: 1, max: 16 }),
-        fc.constantFrom<Table>({}, { complement: true }, { coding: 'twos-complement' }, { rounding: 'half-even' }),
+        fc.constantFrom<Table>(
+          {},
+          { complement: true },
+          { coding: 'twos-complement' },
+          { rounding: 'half-even' },
+        ),
         (count, bits, words) => {
           const length = 4 * count;
-          const source = odd([[1, 1], [3, 0.3], [5, -0.1]]);
-          const { codes, stored, report } = buildTable(waveOf({ source, table: { ...quarter, ...words, length, bits } }));
+          const source = odd([
+            [1, 1],
+            [3, 0.3],
+            [5, -0.1],
+          ]);
+          const { codes, stored, report } = buildTable(
+            waveOf({ source, table: { ...quarter, ...words, length, bits } }),
+          );
           const top = 2 ** bits - 1;
           expect(stored.length).toBe(count);
           expect(report.tableBytes).toBe(count * (bits <= 8 ? 1 : 2));
@@ -79,9 +94,20 @@ describe('a quarter fold', () => {
   });
 
   it.each<[string, SourceInput, Table]>([
-    ['an even harmonic', odd([[1, 1], [2, 0.3]]), {}],
+    [
+      'an even harmonic',
+      odd([
+        [1, 1],
+        [2, 0.3],
+      ]),
+      {},
+    ],
     ['a cosine', { kind: 'harmonics', partials: [{ harmonic: 1, amplitude: 1, phaseDeg: 90 }] }, {}],
-    ['an offset', { kind: 'harmonics', offset: 0.2, partials: [{ harmonic: 1, amplitude: 1, phaseDeg: 0 }] }, {}],
+    [
+      'an offset',
+      { kind: 'harmonics', offset: 0.2, partials: [{ harmonic: 1, amplitude: 1, phaseDeg: 0 }] },
+      {},
+    ],
     ['a shaped error', odd([[1, 1]]), { shaping: 2, bits: 5 }],
   ])('is refused where it fails: %s', (_what, source, table) => {
     let refusal: unknown;

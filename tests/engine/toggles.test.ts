@@ -5,7 +5,12 @@ import { holds } from './support/seeded.ts';
 import { valuesOf } from './support/waves.ts';
 
 const tableOf = (codes: number[], bits: number) =>
-  buildTable(valuesOf(codes.map((code) => code / (2 ** bits - 1)), { bits, range: 'unipolar' }));
+  buildTable(
+    valuesOf(
+      codes.map((code) => code / (2 ** bits - 1)),
+      { bits, range: 'unipolar' },
+    ),
+  );
 
 const onesIn = (word: number) => word.toString(2).replaceAll('0', '').length;
 
@@ -13,7 +18,12 @@ describe('bits that change', () => {
   it('are counted at every step of the loop, the worst and first kept', () => {
     const codes = fc
       .integer({ min: 1, max: 16 })
-      .chain((bits) => fc.record({ bits: fc.constant(bits), list: fc.array(fc.nat(2 ** bits - 1), { minLength: 2, maxLength: 200 }) }));
+      .chain((bits) =>
+        fc.record({
+          bits: fc.constant(bits),
+          list: fc.array(fc.nat(2 ** bits - 1), { minLength: 2, maxLength: 200 }),
+        }),
+      );
     holds(
       fc.property(codes, ({ bits, list }) => {
         const { report, codes: built } = tableOf(list, bits);
@@ -21,7 +31,10 @@ describe('bits that change', () => {
         const steps = list.map((from, index) => ({ from, index, to: list[(index + 1) % list.length] }));
         const changed = steps.map(({ from, to }) => onesIn(from ^ to));
         const bitsAtWorst = Math.max(...changed);
-        expect(report.meanToggles).toBeCloseTo(changed.reduce((sum, ones) => sum + ones, 0) / list.length, 12);
+        expect(report.meanToggles).toBeCloseTo(
+          changed.reduce((sum, ones) => sum + ones, 0) / list.length,
+          12,
+        );
         expect(report.worstToggle).toEqual({ bits: bitsAtWorst, ...steps[changed.indexOf(bitsAtWorst)] });
       }),
       200,
@@ -29,7 +42,12 @@ describe('bits that change', () => {
   });
 
   it('are all of them at the middle of the range', () => {
-    expect(tableOf([0, 32_767, 32_768, 16_384], 16).report.worstToggle).toEqual({ bits: 16, index: 1, from: 32_767, to: 32_768 });
+    expect(tableOf([0, 32_767, 32_768, 16_384], 16).report.worstToggle).toEqual({
+      bits: 16,
+      index: 1,
+      from: 32_767,
+      to: 32_768,
+    });
   });
 });
 

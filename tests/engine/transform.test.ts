@@ -61,7 +61,12 @@ describe('the transform of any length', () => {
         const b = noise(2 * size, seed + 1);
         const [x, y] = [transformed(a), transformed(b)];
         const ofSum = transformed(a.map((value, i) => 0.75 * value - 2.5 * b[i]));
-        expect(distance(ofSum, x.map((value, i) => 0.75 * value - 2.5 * y[i]))).toBeLessThan(rounding);
+        expect(
+          distance(
+            ofSum,
+            x.map((value, i) => 0.75 * value - 2.5 * y[i]),
+          ),
+        ).toBeLessThan(rounding);
       },
     ],
     [
@@ -104,7 +109,8 @@ describe('the transform of any length', () => {
         const low = lowLinesOf(signal, 4);
         const bins = Math.floor(size / 2) + 1;
         expect([low.re.length, low.im.length]).toEqual([bins, bins]);
-        const both = (lines: typeof low) => Float64Array.from([...lines.re.slice(0, bins), ...lines.im.slice(0, bins)]);
+        const both = (lines: typeof low) =>
+          Float64Array.from([...lines.re.slice(0, bins), ...lines.im.slice(0, bins)]);
         expect(distance(both(low), both(whole))).toBeLessThan(rounding);
       },
     ],

@@ -10,7 +10,10 @@ import { commitSeed } from './numpy/seed.ts';
 // Sources: SciPy's CubicSpline (bc_type="periodic") and PchipInterpolator (Fritsch & Butland 1984), NumPy's
 // fft (pocketfft). Versions are Debian 12's: SciPy 1.10, NumPy 1.24.
 
-const sizes = [2, 3, 4, 5, 6, 7, 8, 12, 31, 97, 100, 243, 256, 360, 719, 1000, 1024, 2999, 3000, 8191, 16_384, 44_100, 65_521, 65_535, 65_536];
+const sizes = [
+  2, 3, 4, 5, 6, 7, 8, 12, 31, 97, 100, 243, 256, 360, 719, 1000, 1024, 2999, 3000, 8191, 16_384, 44_100,
+  65_521, 65_535, 65_536,
+];
 
 const pointLists = examplesOf(
   fc
@@ -32,7 +35,10 @@ const pointLists = examplesOf(
 /** Phases from x₀ over one cycle: SciPy's spline reaches no further. */
 const phasesFrom = (start: number) => Array.from({ length: 200 }, (_, i) => start + i / 200);
 const question = pointLists.map((points) => ({ points, at: phasesFrom(points[0].x) }));
-const signals = sizes.map((size) => ({ re: Array.from(noise(size, size)), im: Array.from(noise(size, size + 1)) }));
+const signals = sizes.map((size) => ({
+  re: Array.from(noise(size, size)),
+  im: Array.from(noise(size, size + 1)),
+}));
 const answer = askPython<{
   splines: number[][];
   pchips: number[][];

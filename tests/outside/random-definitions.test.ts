@@ -36,8 +36,14 @@ const isCloseDb = (actual: number, wanted: number) => Math.abs(actual - wanted) 
 
 function differencesIn(actual: BuiltTable, wanted: ModelTable): string[] {
   const differences: string[] = [];
-  const compare = (name: string, list: ArrayLike<number>, against: number[], equal: (a: number, b: number) => boolean) => {
-    if (list.length !== against.length) differences.push(`${name}: ${list.length} entries, wanted ${against.length}`);
+  const compare = (
+    name: string,
+    list: ArrayLike<number>,
+    against: number[],
+    equal: (a: number, b: number) => boolean,
+  ) => {
+    if (list.length !== against.length)
+      differences.push(`${name}: ${list.length} entries, wanted ${against.length}`);
     const k = against.findIndex((value, index) => !equal(list[index], value));
     if (k >= 0) differences.push(`${name}[${k}]: ${list[k]}, wanted ${against[k]}`);
   };
@@ -48,7 +54,8 @@ function differencesIn(actual: BuiltTable, wanted: ModelTable): string[] {
   compare('added', actual.spectrum.added, wanted.added, isClose);
 
   const warnings = [...new Set(actual.warnings.map(({ code }) => code))].sort();
-  if (String(warnings) !== String(wanted.warnings)) differences.push(`warnings: ${warnings}, wanted ${wanted.warnings}`);
+  if (String(warnings) !== String(wanted.warnings))
+    differences.push(`warnings: ${warnings}, wanted ${wanted.warnings}`);
   expect(Object.keys(actual.report).sort()).toEqual(Object.keys(wanted.report).sort());
   for (const [figure, value] of Object.entries(wanted.report)) {
     const told = actual.report[figure as keyof typeof actual.report];

@@ -9,13 +9,16 @@ import { askPython } from './numpy/python.ts';
 // fine quantiser is uniform, LSB²/12, so a full-scale sine has 6.02·b + 1.76 dB. It asks for errors that do not
 // repeat: the lengths are primes.
 describe('a full-span sine (Bennett 1948)', () => {
-  it.each([1009, 4093, 10_007, 65_521])('of %i entries has 6.02·b + 1.76 dB within 0.5 dB, b = 4…16', (length) => {
-    for (let bits = 4; bits <= 16; bits += 1) {
-      const { report } = buildTable(waveOf({ table: { length, bits } }));
-      expect(report.idealSnrDb).toBeCloseTo(6.02 * bits + 1.76, 12);
-      expect(Math.abs(Number(report.snrDb) - (6.02 * bits + 1.76)), `${bits} bits`).toBeLessThan(0.5);
-    }
-  });
+  it.each([1009, 4093, 10_007, 65_521])(
+    'of %i entries has 6.02·b + 1.76 dB within 0.5 dB, b = 4…16',
+    (length) => {
+      for (let bits = 4; bits <= 16; bits += 1) {
+        const { report } = buildTable(waveOf({ table: { length, bits } }));
+        expect(report.idealSnrDb).toBeCloseTo(6.02 * bits + 1.76, 12);
+        expect(Math.abs(Number(report.snrDb) - (6.02 * bits + 1.76)), `${bits} bits`).toBeLessThan(0.5);
+      }
+    },
+  );
 });
 
 // Source: CRC Standard Mathematical Tables, "Fourier series for common functions"; the coefficients themselves
@@ -26,24 +29,31 @@ describe('standard shapes (CRC Standard Mathematical Tables)', () => {
     { shape: 'triangle', source: standardShapes.triangle(harmonics) },
     { shape: 'sawtooth', source: standardShapes.sawtooth(harmonics) },
     { shape: 'square', source: standardShapes.square(harmonics) },
-    ...[0.5, 0.25, 0.1, 1 / 3, 0.9].map((duty) => ({ shape: 'pulse', duty, source: standardShapes.pulse(harmonics, duty) })),
+    ...[0.5, 0.25, 0.1, 1 / 3, 0.9].map((duty) => ({
+      shape: 'pulse',
+      duty,
+      source: standardShapes.pulse(harmonics, duty),
+    })),
   ];
   const integrals = askPython<{ mean: number; cosines: number[]; sines: number[] }[]>(
     'shapes.py',
     shapes.map(({ shape, duty }) => ({ shape, harmonics, duty })),
   );
 
-  it.each(shapes.map(({ shape, duty }, i) => [shape, duty ?? '', i] as const))('%s %s', (_shape, _duty, i) => {
-    const { mean, cosines, sines } = integrals[i];
-    const { offset = 0, partials } = shapes[i].source;
-    expect(offset).toBeCloseTo(mean, 9);
-    for (let n = 1; n <= harmonics; n += 1) {
-      const partial = partials.find(({ harmonic }) => harmonic === n) ?? { amplitude: 0, phaseDeg: 0 };
-      const phase = (partial.phaseDeg * Math.PI) / 180;
-      expect(partial.amplitude * Math.sin(phase)).toBeCloseTo(cosines[n - 1], 8);
-      expect(partial.amplitude * Math.cos(phase)).toBeCloseTo(sines[n - 1], 8);
-    }
-  });
+  it.each(shapes.map(({ shape, duty }, i) => [shape, duty ?? '', i] as const))(
+    '%s %s',
+    (_shape, _duty, i) => {
+      const { mean, cosines, sines } = integrals[i];
+      const { offset = 0, partials } = shapes[i].source;
+      expect(offset).toBeCloseTo(mean, 9);
+      for (let n = 1; n <= harmonics; n += 1) {
+        const partial = partials.find(({ harmonic }) => harmonic === n) ?? { amplitude: 0, phaseDeg: 0 };
+        const phase = (partial.phaseDeg * Math.PI) / 180;
+        expect(partial.amplitude * Math.sin(phase)).toBeCloseTo(cosines[n - 1], 8);
+        expect(partial.amplitude * Math.cos(phase)).toBeCloseTo(sines[n - 1], 8);
+      }
+    },
+  );
 });
 
 describe('scales of converters (common practice, no source)', () => {
@@ -82,7 +92,9 @@ describe('CIE 1976 lightness to luminance', () => {
     [0, 0],
   ])('L* %d is Y %d', (lightness, luminance) => {
     const values = [lightness / 100, 0, 1];
-    const { cycle } = buildTable(valuesOf(values, { range: 'unipolar' }, { normalise: 'none', transfer: 'cie-lightness' }));
+    const { cycle } = buildTable(
+      valuesOf(values, { range: 'unipolar' }, { normalise: 'none', transfer: 'cie-lightness' }),
+    );
     expect(100 * cycle[0]).toBeCloseTo(luminance, 4);
   });
 });

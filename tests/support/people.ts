@@ -18,7 +18,7 @@ export interface TestPerson {
 export const anyAddress = () => `10.${randomInt(256)}.${randomInt(256)}.${randomInt(1, 255)}`;
 
 /** A person with a verified address who is signed in, put straight into the database; the password opens nothing. */
-export async function makePerson(test: TestApp, name = 'Ines Marlow'): Promise<TestPerson> {
+export async function makePerson(test: Pick<TestApp, 'database'>, name = 'Ines Marlow'): Promise<TestPerson> {
   const { db } = test.database;
   const email = `${randomBytes(6).toString('hex')}@ninthfathom.example`;
   const [{ id }] = await db.insert(users).values({ name, email, emailVerifiedAt: new Date() }).$returningId();
@@ -27,7 +27,7 @@ export async function makePerson(test: TestApp, name = 'Ines Marlow'): Promise<T
 
 /** One more sign-in of a person. `expiresAt` in the past makes one that has run out. */
 export async function makeSession(
-  test: TestApp,
+  test: Pick<TestApp, 'database'>,
   userId: number,
   { expiresAt = new Date(Date.now() + sessionSeconds * 1000) } = {},
 ): Promise<{ cookie: string; sessionId: string }> {
@@ -50,7 +50,7 @@ export interface TestTeam {
 
 /** A team with these members, put straight into the database. */
 export async function makeTeam(
-  test: TestApp,
+  test: Pick<TestApp, 'database'>,
   members: readonly { readonly person: TestPerson; readonly role: Role }[],
   name = 'Ninth Fathom',
 ): Promise<TestTeam> {
@@ -63,12 +63,17 @@ export async function makeTeam(
   return { id, slug };
 }
 
-export async function join(test: TestApp, teamId: number, person: TestPerson, role: Role): Promise<void> {
+export async function join(
+  test: Pick<TestApp, 'database'>,
+  teamId: number,
+  person: TestPerson,
+  role: Role,
+): Promise<void> {
   await test.database.db.insert(memberships).values({ teamId, userId: person.id, role });
 }
 
 /** A signed-in person for each role, in one team. */
-export async function makeCrew(test: TestApp) {
+export async function makeCrew(test: Pick<TestApp, 'database'>) {
   const [viewer, author, reviewer, admin] = await Promise.all([
     makePerson(test, 'Vera Quill'),
     makePerson(test, 'Aldo Brine'),

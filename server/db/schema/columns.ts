@@ -9,7 +9,10 @@ export const reference = (name: string) => bigint(name, { mode: 'number', unsign
 /** A moment in UTC, to the millisecond. */
 export const moment = (name: string) => datetime(name, { mode: 'date', fsp: 3 });
 
-export const createdAt = () => moment('created_at').notNull().default(sql`CURRENT_TIMESTAMP(3)`);
+export const createdAt = () =>
+  moment('created_at')
+    .notNull()
+    .default(sql`CURRENT_TIMESTAMP(3)`);
 
 /** Text compared byte by byte, where the database's own collation would take `é` for `e`: addresses, slugs, digests. */
 export const exactText = (length: number, name?: string) =>

@@ -30,5 +30,8 @@ export const memberships = mysqlTable(
     role: mysqlEnum(roles).notNull(),
     createdAt: createdAt(),
   },
-  (table) => [primaryKey({ columns: [table.teamId, table.userId] }), index('memberships_user').on(table.userId)],
+  (table) => [
+    primaryKey({ columns: [table.teamId, table.userId] }),
+    index('memberships_user').on(table.userId),
+  ],
 );

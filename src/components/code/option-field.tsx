@@ -15,6 +15,8 @@ interface OptionFieldProps {
 
 const labels: Readonly<Record<string, string>> = {
   arrayName: 'Array name',
+  arrayPrefix: 'Prefix of array names',
+  licenceLine: 'Licence line',
   port: 'Port',
   highPort: 'Port of bit 8 and up',
 };

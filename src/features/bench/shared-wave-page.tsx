@@ -44,7 +44,7 @@ function SharedWave({ wave }: { wave: Wave }) {
     <div className="bench">
       <section className="bench-top" aria-label="About the wave">
         <header className="bench-head">
-          <div>
+          <div className="basis-full">
             <p className="figure-note">A shared wave, read-only</p>
             <h1>{wave.definition.name}</h1>
           </div>

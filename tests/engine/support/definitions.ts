@@ -1,28 +1,36 @@
 import fc from 'fast-check';
-import type { DefinitionInput, SourceInput } from '../../../shared/contract/index.ts';
+import type { DefinitionInput, Partial, SourceInput } from '../../../shared/contract/index.ts';
 
 // Random definitions that the engine has to take. Numbers have few decimals: a signal is then never so nearly
 // zero, constant or tied that two correct programs may differ about it.
 
 const decimal = (min: number, max: number, perUnit = 1000) =>
-  fc.integer({ min: Math.round(min * perUnit), max: Math.round(max * perUnit) }).map((whole) => whole / perUnit);
+  fc
+    .integer({ min: Math.round(min * perUnit), max: Math.round(max * perUnit) })
+    .map((whole) => whole / perUnit);
 
 const amplitude = fc.oneof(decimal(-1.5, 1.5), decimal(0.05, 1)).filter((value) => value !== 0);
 
 const partial = fc.record({
-  harmonic: fc.oneof({ weight: 3, arbitrary: fc.integer({ min: 1, max: 12 }) }, fc.integer({ min: 1, max: 2000 })),
+  harmonic: fc.oneof(
+    { weight: 3, arbitrary: fc.integer({ min: 1, max: 12 }) },
+    fc.integer({ min: 1, max: 2000 }),
+  ),
   amplitude,
   phaseDeg: fc.oneof(fc.constantFrom(0, 90, 180, 270, 30, 45), decimal(-720, 720, 10)),
 });
 
 /** A few partials: the first is in the list whatever the table's length cuts off. */
 const harmonics = fc
-  .tuple(partial, fc.oneof(fc.array(partial, { maxLength: 8 }), fc.array(partial, { minLength: 120, maxLength: 160 })))
+  .tuple(
+    partial,
+    fc.oneof(fc.array(partial, { maxLength: 8 }), fc.array(partial, { minLength: 120, maxLength: 160 })),
+  )
   .chain(([first, others]) =>
     fc.record({
       kind: fc.constant('harmonics' as const),
       offset: fc.oneof(fc.constant(0), decimal(-0.5, 0.5)),
-      partials: fc.constant([{ ...first, harmonic: 1 }, ...others]),
+      partials: fc.constant<Partial[]>([{ ...first, harmonic: 1 }, ...others]),
     }),
   );
 
@@ -81,7 +89,11 @@ const sampling = tableLength.chain((length) =>
       { weight: 4, arbitrary: fc.constant(1) },
       fc.integer({ min: 1, max: Math.min(64, Math.ceil(length / 2) - 1) }),
     ),
-    startPhaseDeg: fc.oneof({ weight: 2, arbitrary: fc.constant(0) }, fc.constantFrom(90, 180, 45), decimal(0, 359.9, 10)),
+    startPhaseDeg: fc.oneof(
+      { weight: 2, arbitrary: fc.constant(0) },
+      fc.constantFrom(90, 180, 45),
+      decimal(0, 359.9, 10),
+    ),
     sampleAt: fc.constantFrom('start', 'centre'),
   }),
 );
@@ -94,7 +106,10 @@ const wording = fc.record({
 const evenSteps = fc.record({
   bits: fc.integer({ min: 1, max: 16 }),
   rounding: fc.constantFrom('half-up', 'half-even', 'down'),
-  shaping: fc.oneof({ weight: 3, arbitrary: fc.constant(0 as const) }, fc.constantFrom(1 as const, 2 as const)),
+  shaping: fc.oneof(
+    { weight: 3, arbitrary: fc.constant(0 as const) },
+    fc.constantFrom(1 as const, 2 as const),
+  ),
 });
 
 /** Steps as a converter was measured: near the even ones, out of order here and there, all in volts. */
@@ -150,10 +165,12 @@ const withTransfer: fc.Arbitrary<LevelInput> = fc
   .tuple(plainLevel, transfer)
   .map(([level, chosen]) => ({ ...level, transfer: chosen }));
 
-const freeDefinition: fc.Arbitrary<DefinitionInput> = fc.oneof(
-  fc.record({ source: anySource, level: plainLevel, table: bipolarTable }),
-  fc.record({ source: anySource, level: withTransfer, table: unipolarTable }),
-).map((parts) => ({ schema: 1 as const, name: 'random', ...parts }));
+const freeDefinition: fc.Arbitrary<DefinitionInput> = fc
+  .oneof(
+    fc.record({ source: anySource, level: plainLevel, table: bipolarTable }),
+    fc.record({ source: anySource, level: withTransfer, table: unipolarTable }),
+  )
+  .map((parts) => ({ schema: 1 as const, name: 'random', ...parts }));
 
 /** Odd harmonics in phase, sampled at the centres: the symmetry that a quarter fold stores once. */
 const foldable: fc.Arbitrary<DefinitionInput> = fc
@@ -174,7 +191,14 @@ const foldable: fc.Arbitrary<DefinitionInput> = fc
         ...partials.map(([n, a]) => ({ harmonic: 2 * n + 1, amplitude: a / (2 * n + 1), phaseDeg: 0 })),
       ],
     },
-    table: { length: 4 * quarter, bits, rounding, sampleAt: 'centre' as const, fold: 'quarter' as const, ...words },
+    table: {
+      length: 4 * quarter,
+      bits,
+      rounding,
+      sampleAt: 'centre' as const,
+      fold: 'quarter' as const,
+      ...words,
+    },
   }));
 
 /** Definitions without dither: every program that follows the specification must give the same codes. */

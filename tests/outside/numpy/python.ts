@@ -21,7 +21,9 @@ export function askPython<Answer>(program: string, question: unknown): Answer {
     maxBuffer: 512 * 1024 * 1024,
   });
   if (error !== undefined) {
-    throw new Error(`${pythonPath} does not run (Debian: apt-get install python3-numpy python3-scipy)`, { cause: error });
+    throw new Error(`${pythonPath} does not run (Debian: apt-get install python3-numpy python3-scipy)`, {
+      cause: error,
+    });
   }
   if (status !== 0) throw new Error(`${program} ended with ${status}:\n${stderr}`);
   return JSON.parse(stdout) as Answer;

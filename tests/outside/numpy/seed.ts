@@ -10,7 +10,10 @@ export function commitSeed(): number {
   const given = process.env.DEFINITIONS_SEED;
   if (given !== undefined) return Number(given);
   try {
-    const hash = execFileSync('git', ['rev-parse', 'HEAD'], { encoding: 'utf8', stdio: ['ignore', 'pipe', 'ignore'] });
+    const hash = execFileSync('git', ['rev-parse', 'HEAD'], {
+      encoding: 'utf8',
+      stdio: ['ignore', 'pipe', 'ignore'],
+    });
     return Number.parseInt(hash.slice(0, 7), 16);
   } catch {
     return fallback;

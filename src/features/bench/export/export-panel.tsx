@@ -2,11 +2,11 @@ import { useMemo, useState } from 'react';
 import { arrayNameFrom, targets } from '../../../../shared/firmware/index.ts';
 import { OptionField } from '../../../components/code/index.ts';
 import { SelectField } from '../../../components/index.ts';
+import { useSettled } from '../../../components/use-settled.ts';
 import { theBench, useBench } from '../state/use-bench.ts';
 import { ExportedFiles } from './exported-files.tsx';
 import { ExportProblems } from './export-problems.tsx';
 import { givenOptions, renderExport } from './render-export.ts';
-import { useSettled } from './use-settled.ts';
 
 export interface ExportPanelProps {
   /** Brings the field at a path of the definition into sight. */

@@ -30,7 +30,9 @@ export function definitionFileName(name: string): string {
 
 /** The command that writes the same bytes from the definition's file: every option that was given, by its flag. */
 export function commandFor(name: string, target: string, options: TypedOptions): string {
-  const flags = Object.entries(options).map(([option, value]) => `${flagOf(option)} ${String(value)}`);
+  const flags = Object.entries(options).map(
+    ([option, value]) => `${flagOf(option)} ${quoted(String(value))}`,
+  );
   return [
     'npm run --silent stepwell -- render',
     definitionFileName(name),
@@ -45,4 +47,9 @@ function flagOf(option: string): string {
   return option === 'arrayName'
     ? '--name'
     : `--${option.replace(/[A-Z]/g, (letter) => `-${letter.toLowerCase()}`)}`;
+}
+
+/** A word as a POSIX shell reads it back (IEEE Std 1003.1, Shell Command Language §2.2). */
+function quoted(word: string): string {
+  return /^[\w./:@%+=-]+$/.test(word) ? word : `'${word.replaceAll("'", "'\\''")}'`;
 }

@@ -25,11 +25,17 @@ function ProblemWords({ problem }: { problem: Problem }) {
 
 export function MendButtons({ problem }: { problem: Problem }) {
   const definition = useDefinition((whole) => whole);
-  return mendsFor(problem, definition).map(({ label, apply }) => (
-    <Button key={label} size="small" onPress={() => changeDefinition(apply)}>
-      {label}
-    </Button>
-  ));
+  const mends = mendsFor(problem, definition);
+  if (mends.length === 0) return null;
+  return (
+    <span className="mends">
+      {mends.map(({ label, apply }) => (
+        <Button key={label} size="small" onPress={() => changeDefinition(apply)}>
+          {label}
+        </Button>
+      ))}
+    </span>
+  );
 }
 
 /** Says a problem where the field's name stands beside it already. */

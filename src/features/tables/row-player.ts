@@ -1,0 +1,129 @@
+import { useEffect, useRef, useState } from 'react';
+import type { Definition, Revision } from '../../../shared/contract/index.ts';
+import { sayProblem } from '../../../shared/contract/index.ts';
+import { valuesOf } from '../../../shared/quantiser/index.ts';
+import {
+  openAudioContext,
+  sampleRateOfTone,
+  type AudioPreview,
+  type PreviewState,
+  type Sound,
+} from '../../audio/index.ts';
+import { readRevision } from '../../api/tables.ts';
+import { createEngine } from '../../workers/engine-client.ts';
+import type { TableAnswer } from '../../workers/engine-messages.ts';
+
+/** A table of the list, as far as it is to be heard. */
+export interface Playable {
+  readonly slug: string;
+  readonly title: string;
+  readonly latestRevision: number;
+}
+
+export interface RowPlayer {
+  /** The table that plays or is about to. */
+  readonly playing: Playable | null;
+  readonly status: PreviewState['status'] | 'fetching';
+  /** What kept the sound away, and of which table. */
+  readonly trouble: { readonly of: Playable; readonly words: string } | null;
+  /** Starts a table, or stops it. Belongs in the handler of a press or a key. */
+  readonly toggle: (table: Playable) => void;
+  readonly stop: () => void;
+}
+
+/** Tone of a wave that was saved without saying how it is listened to, in hertz. */
+const plainToneHz = 220;
+
+/** Plays one table of the list at a time: what is saved of it, fetched and built once it is asked for. */
+export function useRowPlayer(team: string): RowPlayer {
+  const preview = useRef<AudioPreview | null>(null);
+  const request = useRef(0);
+  const [playing, setPlaying] = useState<Playable | null>(null);
+  const [status, setStatus] = useState<RowPlayer['status']>('silent');
+  const [trouble, setTrouble] = useState<RowPlayer['trouble']>(null);
+
+  useEffect(
+    () => () => {
+      request.current += 1;
+      preview.current?.close();
+      preview.current = null;
+    },
+    [],
+  );
+
+  const stop = () => {
+    request.current += 1;
+    preview.current?.stop();
+    setPlaying(null);
+    setStatus('silent');
+  };
+
+  const start = async (table: Playable, own: number) => {
+    const player = preview.current ?? (await openPlayer());
+    if (preview.current === null) {
+      preview.current = player;
+      player.subscribe(() => {
+        const state = player.state();
+        if (state.status !== 'silent') setStatus(state.status);
+        else setPlaying((before) => (setStatus('silent'), before && null));
+      });
+    }
+    const sound = await soundOf(await readRevision(team, table.slug, table.latestRevision));
+    if (own !== request.current) return;
+    await player.play(sound, 'table');
+    const { trouble: words } = player.state();
+    if (own === request.current && words !== null) setTrouble({ of: table, words });
+  };
+
+  const toggle = (table: Playable) => {
+    if (playing?.slug === table.slug) return stop();
+    const own = (request.current += 1);
+    preview.current?.stop();
+    setTrouble(null);
+    setPlaying(table);
+    setStatus('fetching');
+    start(table, own).catch((error: unknown) => {
+      if (own !== request.current) return;
+      setPlaying(null);
+      setStatus('silent');
+      setTrouble({ of: table, words: error instanceof Error ? error.message : String(error) });
+    });
+  };
+  return { playing, status, trouble, toggle, stop };
+}
+
+/** The context is made within the press itself; only then is the rest waited for. */
+async function openPlayer(): Promise<AudioPreview> {
+  const context = openAudioContext();
+  if (context === null)
+    throw new Error('This browser cannot play: it has no Web Audio, or too many pages use it already.');
+  const { AudioPreview } = await import('../../audio/player.ts');
+  return new AudioPreview(context);
+}
+
+/** The stored codes as they sound, by the settings they were listened to with. */
+async function soundOf({ definition, codes, playback }: Revision): Promise<Sound> {
+  const { cycle } = await build(definition);
+  const { length, cycles, range } = definition.table;
+  const byTone = sampleRateOfTone(playback?.toneHz ?? plainToneHz, { tableLength: length, tableCycles: cycles });
+  return {
+    cycle,
+    values: valuesOf(Uint16Array.from(codes), definition.table),
+    range,
+    mode: playback?.mode ?? 'loop',
+    sampleRateHz: playback?.by === 'sampleRate' ? playback.sampleRateHz : byTone,
+  };
+}
+
+const build = (definition: Definition): Promise<TableAnswer> =>
+  new Promise((resolve, reject) => {
+    const engine = createEngine((reply) => {
+      engine.stop();
+      if (reply.kind === 'built') resolve(reply.table);
+      else
+        reject(
+          new Error(reply.kind === 'failed' ? reply.message : `${sayProblem(reply.problems[0])}.`),
+        );
+    });
+    engine.submit(definition);
+  });

@@ -1,0 +1,3 @@
+import { watchDrag } from './drag-watch.ts';
+
+watchDrag();
