@@ -1,36 +1,166 @@
-import { createBrowserRouter } from 'react-router-dom';
+import type { QueryClient } from '@tanstack/react-query';
+import { createBrowserRouter, type RouteObject } from 'react-router-dom';
 import { paths } from './paths.ts';
 import { FirstLoad } from './shell/first-load.tsx';
 import { NotFoundPage } from './shell/not-found-page.tsx';
-import type { Place } from './shell/places.ts';
 import { RouteFault } from './shell/route-fault.tsx';
 import { Shell } from './shell/shell.tsx';
 
-/** Places in the header, in order. */
-const places: readonly Place[] = [{ label: 'Bench', to: paths.bench }];
-
 /** Composes the features into one application. Each place loads its code when it is entered. */
-export function createRouter() {
+export function createRouter(queryClient: QueryClient) {
   return createBrowserRouter([
     {
-      element: <Shell places={places} />,
+      // Another person must not find what this one has seen.
+      element: <Shell onSignedOut={() => queryClient.clear()} />,
       ErrorBoundary: RouteFault,
       HydrateFallback: FirstLoad,
       children: [
         {
-          path: paths.bench,
           ErrorBoundary: RouteFault,
-          lazy: async () => ({ Component: (await import('./features/bench/bench-page.tsx')).BenchPage }),
+          children: [...benchRoutes(queryClient), ...libraryRoutes(queryClient), ...accountRoutes()],
         },
         {
-          path: paths.sharedWave,
+          path: paths.mailbox,
           ErrorBoundary: RouteFault,
           lazy: async () => ({
-            Component: (await import('./features/bench/shared-wave-page.tsx')).SharedWavePage,
+            Component: (await import('./features/mailbox/mailbox-page.tsx')).MailboxPage,
           }),
+        },
+        {
+          path: paths.api,
+          ErrorBoundary: RouteFault,
+          lazy: async () => {
+            const [{ ApiPage, apiLoader }, ErrorBoundary] = await Promise.all([
+              import('./features/api-page/api-page.tsx'),
+              placeFault(),
+            ]);
+            return { Component: ApiPage, loader: apiLoader(queryClient), ErrorBoundary };
+          },
         },
         { path: '*', element: <NotFoundPage /> },
       ],
     },
   ]);
+}
+
+const placeFault = async () => (await import('./forms/place-fault.tsx')).PlaceFault;
+
+function benchRoutes(queryClient: QueryClient): RouteObject[] {
+  return [
+    {
+      path: paths.bench,
+      ErrorBoundary: RouteFault,
+      lazy: async () => ({ Component: (await import('./features/bench/bench-page.tsx')).BenchPage }),
+    },
+    {
+      path: paths.sharedWave,
+      ErrorBoundary: RouteFault,
+      lazy: async () => ({
+        Component: (await import('./features/bench/shared-wave-page.tsx')).SharedWavePage,
+      }),
+    },
+    {
+      path: paths.openRevision,
+      lazy: async () => {
+        const [{ OpenRevisionPage, openRevisionLoader }, ErrorBoundary] = await Promise.all([
+          import('./features/bench/save/open-revision-page.tsx'),
+          placeFault(),
+        ]);
+        return { Component: OpenRevisionPage, loader: openRevisionLoader(queryClient), ErrorBoundary };
+      },
+    },
+  ];
+}
+
+function libraryRoutes(queryClient: QueryClient): RouteObject[] {
+  return [
+    {
+      path: paths.tables,
+      lazy: async () => {
+        const [{ TablesPage, tablesLoader }, ErrorBoundary] = await Promise.all([
+          import('./features/tables/tables-page.tsx'),
+          placeFault(),
+        ]);
+        return { Component: TablesPage, loader: tablesLoader(queryClient), ErrorBoundary };
+      },
+    },
+    {
+      path: paths.table,
+      lazy: async () => {
+        const [{ TablePage, tableLoader }, { RevisionView }, ErrorBoundary] = await Promise.all([
+          import('./features/tables/table-page.tsx'),
+          import('./features/bench/save/revision-view.tsx'),
+          placeFault(),
+        ]);
+        const element = <TablePage RevisionView={RevisionView} />;
+        return { element, loader: tableLoader(queryClient), ErrorBoundary };
+      },
+    },
+    {
+      path: paths.team,
+      lazy: async () => {
+        const [{ TeamPage, teamLoader }, ErrorBoundary] = await Promise.all([
+          import('./features/team/team-page.tsx'),
+          placeFault(),
+        ]);
+        return { Component: TeamPage, loader: teamLoader(queryClient), ErrorBoundary };
+      },
+    },
+    {
+      path: paths.newTeam,
+      lazy: async () => ({ Component: (await import('./features/team/new-team-page.tsx')).NewTeamPage }),
+    },
+    ...(['tables', 'team'] as const).map((place): RouteObject => ({
+      path: place === 'tables' ? paths.anyTables : paths.anyTeam,
+      lazy: async () => {
+        const { AnyTeamPage } = await import('./features/team/any-team-page.tsx');
+        return { element: <AnyTeamPage place={place} /> };
+      },
+    })),
+  ];
+}
+
+function accountRoutes(): RouteObject[] {
+  return [
+    {
+      path: paths.account,
+      lazy: async () => ({ Component: (await import('./features/account/account-page.tsx')).AccountPage }),
+    },
+    {
+      path: paths.signUp,
+      lazy: async () => ({ Component: (await import('./features/account/sign-up-page.tsx')).SignUpPage }),
+    },
+    {
+      path: paths.signIn,
+      lazy: async () => ({ Component: (await import('./features/account/sign-in-page.tsx')).SignInPage }),
+    },
+    {
+      path: paths.forgotPassword,
+      lazy: async () => ({
+        Component: (await import('./features/account/forgot-password-page.tsx')).ForgotPasswordPage,
+      }),
+    },
+    {
+      path: paths.verify,
+      lazy: async () => ({ Component: (await import('./features/account/verify-page.tsx')).VerifyPage }),
+    },
+    {
+      path: paths.resetPassword,
+      lazy: async () => ({
+        Component: (await import('./features/account/reset-password-page.tsx')).ResetPasswordPage,
+      }),
+    },
+    {
+      path: paths.confirmAddress,
+      lazy: async () => ({
+        Component: (await import('./features/account/confirm-address-page.tsx')).ConfirmAddressPage,
+      }),
+    },
+    {
+      path: paths.invitation,
+      lazy: async () => ({
+        Component: (await import('./features/account/invitation-page.tsx')).InvitationPage,
+      }),
+    },
+  ];
 }

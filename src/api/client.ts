@@ -90,7 +90,8 @@ const unreadable = (status: number) =>
   new ProblemError({
     kind: 'unreadable',
     status,
-    message: 'The server answers in a form that this page does not know. Load the page again: it may be newer.',
+    message:
+      'The server answers in a form that this page does not know. Load the page again: it may be newer.',
   });
 
 async function contentOf(response: Response, signal: AbortSignal | undefined): Promise<unknown> {

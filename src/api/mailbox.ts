@@ -15,6 +15,7 @@ export const mailQueries = {
   detail: (id: number) =>
     queryOptions({
       queryKey: [...mailQueries.all, 'detail', id],
-      queryFn: async ({ signal }) => (await ask(`/mailbox/${id}`, { signal, schema: mailboxMessageSchema })).data,
+      queryFn: async ({ signal }) =>
+        (await ask(`/mailbox/${id}`, { signal, schema: mailboxMessageSchema })).data,
     }),
 };

@@ -16,7 +16,11 @@ export const readRates = (header: string | null): RateStanding[] =>
 /** Says a time span as people do: `40 seconds`, `12 minutes`, `3 hours`. */
 export function saySeconds(seconds: number): string {
   const [count, unit] =
-    seconds < 120 ? [seconds, 'second'] : seconds < 7200 ? [seconds / 60, 'minute'] : [seconds / 3600, 'hour'];
+    seconds < 120
+      ? [seconds, 'second']
+      : seconds < 7200
+        ? [seconds / 60, 'minute']
+        : [seconds / 3600, 'hour'];
   const whole = Math.max(1, Math.ceil(count));
   return `${whole} ${unit}${whole === 1 ? '' : 's'}`;
 }

@@ -39,7 +39,8 @@ export const tableQueries = {
     queryOptions({
       queryKey: [...tableQueries.lists(team), query],
       queryFn: async ({ signal }) =>
-        (await ask(`${under(team)}?${new URLSearchParams(query)}`, { signal, schema: tablesPageSchema })).data,
+        (await ask(`${under(team)}?${new URLSearchParams(query)}`, { signal, schema: tablesPageSchema }))
+          .data,
       placeholderData: keepPreviousData,
     }),
   tags: (team: string) =>
@@ -77,9 +78,8 @@ export const tableQueries = {
     queryOptions({
       queryKey: [...tableQueries.all(team), 'export', table, number, query],
       queryFn: async ({ signal }) =>
-        (
-          await ask(exportPath({ team, table, number, query }), { signal, schema: renderAnswerSchema })
-        ).data.files,
+        (await ask(exportPath({ team, table, number, query }), { signal, schema: renderAnswerSchema })).data
+          .files,
       placeholderData: keepPreviousData,
     }),
 };

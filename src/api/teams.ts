@@ -54,7 +54,8 @@ export async function changeTeam(team: string, body: z.input<typeof changeTeamSc
 }
 
 export const changeRole = async (team: string, userId: number, role: Role) =>
-  (await ask(`${of(team)}/members/${userId}`, { method: 'PATCH', body: { role }, schema: memberSchema })).data;
+  (await ask(`${of(team)}/members/${userId}`, { method: 'PATCH', body: { role }, schema: memberSchema }))
+    .data;
 
 export const removeMember = (team: string, userId: number) =>
   ask(`${of(team)}/members/${userId}`, { method: 'DELETE' });

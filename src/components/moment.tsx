@@ -1,3 +1,5 @@
+import { useState } from 'react';
+
 const dayMs = 24 * 60 * 60 * 1000;
 
 const dates = new Intl.DateTimeFormat('en-GB', { day: 'numeric', month: 'short', year: 'numeric' });
@@ -14,9 +16,10 @@ const sameDay = (at: Date, now: number) => dates.format(at) === dates.format(now
 /** When something was, in this place's own time; the tooltip tells it in full. */
 export function Moment({ at }: { at: string }) {
   const moment = new Date(at);
+  const [now] = useState(Date.now);
   return (
     <time dateTime={at} title={`${dates.format(moment)}, ${times.format(moment)}`}>
-      {sayMoment(moment, Date.now())}
+      {sayMoment(moment, now)}
     </time>
   );
 }

@@ -46,10 +46,7 @@ export function WithAccount({ why, children }: WithAccountProps) {
 
 function Asking() {
   const [isAway, setIsAway] = useState(false);
-  const askNow = () => {
-    setIsAway(false);
-    void refreshAccount().then(({ kind }) => setIsAway(kind === 'unknown'));
-  };
+  const askNow = () => void refreshAccount().then(({ kind }) => setIsAway(kind === 'unknown'));
   useEffect(askNow, []);
   if (!isAway) return <Waiting>Asking the server who is signed in…</Waiting>;
   return (

@@ -29,7 +29,5 @@ function arraysOf({
   spectrum,
 }: Omit<TableAnswer, 'definition'>): Transferable[] {
   const { amplitudes, intended, added } = spectrum;
-  return [cycle, values, codes, stored, errorLsb, amplitudes, intended, added].map(
-    ({ buffer }) => buffer,
-  );
+  return [cycle, values, codes, stored, errorLsb, amplitudes, intended, added].map(({ buffer }) => buffer);
 }

@@ -1,5 +1,4 @@
 import { randomBytes } from 'node:crypto';
-import { waveTables } from '../../server/db/schema/index.ts';
 import { buildRevision } from '../../server/features/tables/build-revision.ts';
 import { insertTable } from '../../server/features/tables/store.ts';
 import type { Role } from '../../shared/contract/index.ts';
@@ -214,6 +213,3 @@ export const routeCases: Readonly<Record<string, RouteCase>> = {
   'GET /mailbox': { access: 'anyone', attempt: always(200, '/mailbox') },
   'GET /mailbox/:id': { access: 'anyone', attempt: always(404, '/mailbox/999999999') },
 };
-
-/** Tables of a team as they are in the database, to be compared before and after. */
-export const rowsOf = ({ test }: Target) => test.database.db.select().from(waveTables);

@@ -69,7 +69,11 @@ function stateFor(name: string, text: string): EditorState {
     extensions: [
       EditorView.cspNonce.of(nonceOfPage()),
       EditorState.readOnly.of(true),
-      EditorView.contentAttributes.of({ 'aria-label': `${name}, read-only`, spellcheck: 'false', tabindex: '0' }),
+      EditorView.contentAttributes.of({
+        'aria-label': `${name}, read-only`,
+        spellcheck: 'false',
+        tabindex: '0',
+      }),
       lineNumbers(),
       cpp(),
       syntaxHighlighting(colours),

@@ -113,11 +113,7 @@ function Accept({
         >
           Join the team
         </Button>
-        <Link
-          to={paths.bench}
-          className="button button-plain"
-          onClick={() => keptInvitation.letGo()}
-        >
+        <Link to={paths.bench} className="button button-plain" onClick={() => keptInvitation.letGo()}>
           Not now
         </Link>
       </div>

@@ -36,7 +36,9 @@ export function SessionsPanel() {
       {sessions !== undefined && (
         <div className="ledger-scroll">
           <table className="ledger">
-            <caption>Browsers that are signed in to this account. A session lasts 30 days from its last use.</caption>
+            <caption>
+              Browsers that are signed in to this account. A session ends by itself after 30 days.
+            </caption>
             <thead>
               <tr>
                 <th scope="col">Browser</th>

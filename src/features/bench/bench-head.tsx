@@ -1,6 +1,9 @@
+import { useTeamStart } from '../../api/team-defaults.ts';
 import { Button, IconButton, Menu, TextField, icons, useToast } from '../../components/index.ts';
 import { Spot, useFieldProblem } from './problems/field-problem.tsx';
-import { examples, type Example } from './state/examples.ts';
+import { SavePart } from './save/save-part.tsx';
+import { startsFor, type Start } from './save/starts.ts';
+import { theSavedLinks } from './save/use-saved-links.ts';
 import { changeDefinition, theBench, useBench, useDefinition } from './state/use-bench.ts';
 
 /** Name of the wave and what can be done with the whole of it. */
@@ -9,6 +12,7 @@ export function BenchHead({ onCopyLink }: { onCopyLink: () => void }) {
     <header className="bench-head">
       <h1 className="sr-only">Bench</h1>
       <NameField />
+      <SavePart />
       <div className="bench-tools">
         <Steps />
         <StartAnew />
@@ -63,8 +67,9 @@ function Steps() {
 
 function StartAnew() {
   const toast = useToast();
-  const start = ({ title, work }: Example) => {
-    theBench().change(({ exporting }) => ({ ...work, exporting }));
+  const team = useTeamStart();
+  const start = ({ title, begin }: Start) => {
+    theSavedLinks().open(begin, null);
     toast({
       message: `${title} is on the bench. What was there comes back with Undo.`,
       action: { label: 'Undo', onPress: theBench().undo },
@@ -74,7 +79,7 @@ function StartAnew() {
     <Menu
       label="Start anew"
       icon={icons.wave}
-      items={examples.map((example) => ({
+      items={startsFor(team).map((example) => ({
         id: example.id,
         label: `${example.title}: ${example.summary}`,
         onSelect: () => start(example),

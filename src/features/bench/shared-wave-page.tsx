@@ -8,11 +8,11 @@ import { Drawings } from './drawings/drawings.tsx';
 import { FigureStrips } from './figures/figure-strips.tsx';
 import { Warnings } from './figures/warnings.tsx';
 import { ListenPanel } from './listen/index.ts';
+import { theSavedLinks } from './save/use-saved-links.ts';
 import { sayInWords } from './shape/index.ts';
 import { useCopyLink } from './share/use-copy-link.tsx';
 import { useSharedWave } from './share/use-shared-wave.ts';
 import { useTable } from './share/use-table.ts';
-import { theBench } from './state/use-bench.ts';
 import { sampleRateOf, toneOf, type Wave } from './state/wave.ts';
 
 /** A wave that a link carries: to be seen and heard, and put on the bench. */
@@ -36,7 +36,7 @@ function SharedWave({ wave }: { wave: Wave }) {
   const { copyLink, linkDialog } = useCopyLink();
   const navigate = useNavigate();
   const open = useCallback(() => {
-    theBench().change(({ exporting }) => ({ ...wave, exporting }));
+    theSavedLinks().open(({ exporting }) => ({ ...wave, exporting }), null);
     void navigate(paths.bench);
   }, [wave, navigate]);
 

@@ -1,7 +1,7 @@
 import { parseDefinition } from '../../../shared/contract/index.ts';
 
 /** A first table for a team that has none: one sine, symmetrical about zero, for checking an output. */
-export const workingExample = {
+export const workingExample = () => ({
   title: 'Self-test sine',
   tags: ['example'],
   note: 'One sine for checking an output, symmetrical about zero.',
@@ -11,5 +11,5 @@ export const workingExample = {
     source: { kind: 'harmonics', partials: [{ harmonic: 1, amplitude: 1, phaseDeg: 0 }] },
     table: { length: 128, bits: 10, sampleAt: 'centre', rounding: 'half-even' },
   }),
-  playback: { mode: 'loop', by: 'tone', toneHz: 1_000, sampleRateHz: 128_000 },
-} as const;
+  playback: { mode: 'loop' as const, by: 'tone' as const, toneHz: 1_000, sampleRateHz: 128_000 },
+});

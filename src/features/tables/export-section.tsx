@@ -9,7 +9,9 @@ import { ProblemNotice } from '../../forms/problem-notice.tsx';
 import { useSettled } from '../../components/use-settled.ts';
 
 const FilesView = lazy(async () => ({ default: (await import('../../components/code/index.ts')).FilesView }));
-const OptionField = lazy(async () => ({ default: (await import('../../components/code/index.ts')).OptionField }));
+const OptionField = lazy(async () => ({
+  default: (await import('../../components/code/index.ts')).OptionField,
+}));
 
 interface ExportSectionProps {
   team: string;
@@ -40,7 +42,9 @@ export function ExportSection(props: ExportSectionProps) {
           <Export {...props} />
         </Suspense>
       ) : (
-        <p className="quiet">Made of the stored codes: the same bytes for the same request, today and later.</p>
+        <p className="quiet">
+          Made of the stored codes: the same bytes for the same request, today and later.
+        </p>
       )}
     </Panel>
   );

@@ -74,12 +74,12 @@ export function changedQuery(
 /** Sorted by a column: the other way round where it is already. */
 export function sortedBy(query: ListQuery, sort: Sort): Record<string, string> {
   const view = viewOf(query);
-  const direction =
-    view.sort !== sort ? firstDirections[sort] : view.direction === 'asc' ? 'desc' : 'asc';
+  const direction = view.sort !== sort ? firstDirections[sort] : view.direction === 'asc' ? 'desc' : 'asc';
   return changedQuery(query, { sort, direction });
 }
 
-export const isFiltered = (query: ListQuery): boolean => filterNames.some((name) => query[name] !== undefined);
+export const isFiltered = (query: ListQuery): boolean =>
+  filterNames.some((name) => query[name] !== undefined);
 
 /** Without filters, in the same order. */
 export const unfiltered = (query: ListQuery): Record<string, string> =>

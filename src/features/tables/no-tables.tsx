@@ -32,7 +32,9 @@ export function NoTables({ team, query, mayEdit, onChange }: NoTablesProps) {
   if (isFiltered(query)) {
     return (
       <EmptyState
-        title={query.archived === 'yes' ? 'Nothing in the archive that fits' : 'No table passes these filters'}
+        title={
+          query.archived === 'yes' ? 'Nothing in the archive that fits' : 'No table passes these filters'
+        }
         actions={<Button onPress={() => onChange(unfiltered(query))}>Clear the filters</Button>}
       >
         <p>The search looks for beginnings of words in names and tags; case and accents do not count.</p>
@@ -55,7 +57,7 @@ function FirstTable({ team }: { team: string }) {
   const queryClient = useQueryClient();
   const navigate = useNavigate();
   const adding = useSubmit(async () => {
-    const made = await createTable(team, workingExample, key);
+    const made = await createTable(team, workingExample(), key);
     await queryClient.invalidateQueries({ queryKey: tableQueries.all(team) });
     await navigate(tablePath(team, made.slug));
   });
@@ -74,8 +76,8 @@ function FirstTable({ team }: { team: string }) {
       }
     >
       <p>
-        Shape a wave on the bench and press Save there: it becomes revision 1 of a table here. The example is a
-        sine for checking an output.
+        Shape a wave on the bench and press Save there: it becomes revision 1 of a table here. The example is
+        a sine for checking an output.
       </p>
       <ProblemNotice fault={adding.fault} />
     </EmptyState>

@@ -17,7 +17,8 @@ export function Pager({ query, count, nextCursor }: PagerProps) {
   return (
     <nav className="pager" aria-label="Pages">
       <span className="quiet">
-        {count} {count === 1 ? 'table' : 'tables'} on this page{isFirst && nextCursor === null && ', all there are'}
+        {count} {count === 1 ? 'table' : 'tables'} on this page
+        {isFirst && nextCursor === null && ', all there are'}
       </span>
       {!isFirst && (
         <Link to={to(first)} className="button button-plain button-small">

@@ -34,8 +34,8 @@ export function RevisionHistory({ team, table, shown }: RevisionHistoryProps) {
           <List team={team} table={table.slug} revisions={revisions} shown={shown} />
           <div className="pager">
             <span className="quiet">
-              {revisions.length} of {table.latestRevision.toLocaleString('en')} shown. A revision never changes; a
-              table takes {table.revisionsAtMost.toLocaleString('en')} of them.
+              {revisions.length} of {table.latestRevision.toLocaleString('en')} shown. A revision never
+              changes; a table takes {table.revisionsAtMost.toLocaleString('en')} of them.
             </span>
             {hasNextPage && (
               <Button size="small" isDisabled={isFetchingNextPage} onPress={() => void fetchNextPage()}>

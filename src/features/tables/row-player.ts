@@ -105,7 +105,10 @@ async function openPlayer(): Promise<AudioPreview> {
 async function soundOf({ definition, codes, playback }: Revision): Promise<Sound> {
   const { cycle } = await build(definition);
   const { length, cycles, range } = definition.table;
-  const byTone = sampleRateOfTone(playback?.toneHz ?? plainToneHz, { tableLength: length, tableCycles: cycles });
+  const byTone = sampleRateOfTone(playback?.toneHz ?? plainToneHz, {
+    tableLength: length,
+    tableCycles: cycles,
+  });
   return {
     cycle,
     values: valuesOf(Uint16Array.from(codes), definition.table),
@@ -120,10 +123,7 @@ const build = (definition: Definition): Promise<TableAnswer> =>
     const engine = createEngine((reply) => {
       engine.stop();
       if (reply.kind === 'built') resolve(reply.table);
-      else
-        reject(
-          new Error(reply.kind === 'failed' ? reply.message : `${sayProblem(reply.problems[0])}.`),
-        );
+      else reject(new Error(reply.kind === 'failed' ? reply.message : `${sayProblem(reply.problems[0])}.`));
     });
     engine.submit(definition);
   });

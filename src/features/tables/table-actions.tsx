@@ -59,11 +59,7 @@ export function TableActions({ team, table, number }: TableActionsProps) {
       <Button icon={icons.copy} isDisabled={isBusy} onPress={() => duplicating.mutate()}>
         Duplicate
       </Button>
-      <Button
-        icon={icons.archive}
-        isDisabled={isBusy}
-        onPress={() => archiving.mutate(!table.isArchived)}
-      >
+      <Button icon={icons.archive} isDisabled={isBusy} onPress={() => archiving.mutate(!table.isArchived)}>
         {table.isArchived ? 'Restore' : 'Archive'}
       </Button>
       <RenameDialog

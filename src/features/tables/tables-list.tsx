@@ -26,7 +26,11 @@ interface TablesListProps {
 export function TablesList(props: TablesListProps) {
   const isNarrow = useIsNarrow();
   const label = props.isArchived ? 'Archived tables' : 'Tables of the library';
-  return <div onKeyDown={walk}>{isNarrow ? <Cards {...props} label={label} /> : <Rows {...props} label={label} />}</div>;
+  return (
+    <div onKeyDown={walk}>
+      {isNarrow ? <Cards {...props} label={label} /> : <Rows {...props} label={label} />}
+    </div>
+  );
 }
 
 function Rows({ team, tables, query, player, onChange, label }: TablesListProps & { label: string }) {

@@ -1,6 +1,7 @@
 import { useQueryClient } from '@tanstack/react-query';
 import { useState } from 'react';
 import { changeTeamSchema, limits, type Team, type TeamDefaults } from '../../../shared/contract/index.ts';
+import { parseQuantity } from '../../../shared/quantities/index.ts';
 import { forgetTeamDefaults } from '../../api/team-defaults.ts';
 import { changeTeam, teamQueries } from '../../api/teams.ts';
 import { Button, NumberField, Panel, SelectField, TextField, useToast } from '../../components/index.ts';
@@ -95,7 +96,7 @@ function DefaultsForm({ team }: { team: TaggedTeam }) {
           allowed={`a whole number from ${limits.tableLength.min} to ${limits.tableLength.max}`}
           value={typed.length}
           onChange={(length) => set({ length })}
-          onDraft={(text) => noteDraft('length', isWhole(text, limits.tableLength))}
+          onDraft={(text) => noteDraft('length', isWhole(text, 'entries', limits.tableLength))}
           problem={at('length')}
         />
         <NumberField
@@ -106,7 +107,7 @@ function DefaultsForm({ team }: { team: TaggedTeam }) {
           allowed={`a whole number from ${limits.bits.min} to ${limits.bits.max}`}
           value={typed.bits}
           onChange={(bits) => set({ bits })}
-          onDraft={(text) => noteDraft('bits', isWhole(text, limits.bits))}
+          onDraft={(text) => noteDraft('bits', isWhole(text, 'bits', limits.bits))}
           problem={at('bits')}
         />
         <SelectField
@@ -140,8 +141,10 @@ function DefaultsForm({ team }: { team: TaggedTeam }) {
   );
 }
 
-/** The number field says what is wrong itself; this only keeps an old number from being sent for a wrong text. */
-const isWhole = (text: string, { min, max }: { min: number; max: number }): boolean => {
-  const number = Number(text.replaceAll(',', '').replace(/\s*(bits|entries)\s*$/, ''));
-  return text.trim() !== '' && Number.isInteger(number) && number >= min && number <= max;
-};
+/** The number field says what is wrong itself; this keeps an old number from being sent for a wrong text. */
+function isWhole(text: string, unit: string, { min, max }: { min: number; max: number }): boolean {
+  const reading = parseQuantity(text, unit);
+  if (reading.kind !== 'number') return false;
+  const { value } = reading;
+  return Number.isInteger(value) && value >= min && value <= max;
+}

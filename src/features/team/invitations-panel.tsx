@@ -1,11 +1,26 @@
 import { useMutation, useQuery, useQueryClient } from '@tanstack/react-query';
 import { useState } from 'react';
-import { inviteSchema, roles, teamLimits, type Invitation, type Role } from '../../../shared/contract/index.ts';
+import {
+  inviteSchema,
+  roles,
+  teamLimits,
+  type Invitation,
+  type Role,
+} from '../../../shared/contract/index.ts';
 import { newKey } from '../../api/new-key.ts';
 import { asProblem } from '../../api/problem-error.ts';
 import { saySeconds, type RateStanding } from '../../api/rate-standing.ts';
 import { invite, teamQueries, withdrawInvitation } from '../../api/teams.ts';
-import { Button, Moment, Panel, SelectField, TextField, Waiting, icons, useToast } from '../../components/index.ts';
+import {
+  Button,
+  Moment,
+  Panel,
+  SelectField,
+  TextField,
+  Waiting,
+  icons,
+  useToast,
+} from '../../components/index.ts';
 import { Form } from '../../forms/form.tsx';
 import { ProblemNotice } from '../../forms/problem-notice.tsx';
 import { sayRole } from '../../forms/say-role.ts';

@@ -25,7 +25,11 @@ export const teamLoader = (queryClient: QueryClient) => async (args: LoaderFunct
 
 /** A team: who belongs to it, who is invited, and what new tables begin with. */
 export function TeamPage() {
-  const { team: slug = '' } = useParams();
+  const { team = '' } = useParams();
+  return <TeamParts key={team} slug={team} />;
+}
+
+function TeamParts({ slug }: { slug: string }) {
   const { data: team } = useSuspenseQuery(teamQueries.detail(slug));
   const account = useAccount();
   const isAdmin = includesRole(team.myRole, 'admin');
@@ -47,8 +51,8 @@ export function TeamPage() {
     >
       <MembersPanel team={slug} isAdmin={isAdmin} ownId={account?.id} />
       {isAdmin && <InvitationsPanel team={slug} />}
-      <DefaultsPanel key={`${slug} defaults`} team={team} isAdmin={isAdmin} />
-      {isAdmin && <NamePanel key={slug} team={team} />}
+      <DefaultsPanel team={team} isAdmin={isAdmin} />
+      {isAdmin && <NamePanel team={team} />}
     </Page>
   );
 }

@@ -1,6 +1,5 @@
 import type { Revision } from '../../../../shared/contract/index.ts';
-import { spectrumOf } from '../../../../shared/analysis/index.ts';
-import { valuesOf } from '../../../../shared/quantiser/index.ts';
+import { analyseTable } from '../../../../shared/analysis/index.ts';
 import type { TableAnswer } from '../../../workers/engine-messages.ts';
 
 /**
@@ -14,8 +13,12 @@ export function asStored(
   const isSame = stored.length === built.codes.length && stored.every((code, k) => code === built.codes[k]);
   if (isSame) return { ...built, report, warnings };
   const codes = Uint16Array.from(stored);
-  const values = valuesOf(codes, built.definition.table);
+  const { clippedSamples, clippedCodes } = report;
+  const { values, spectrum } = analyseTable(
+    { cycle: built.cycle, clippedSamples },
+    { codes, clippedCodes },
+    built.definition.table,
+  );
   const errorLsb = values.map((value, k) => (value - built.cycle[k]) / built.lsb);
-  const spectrum = spectrumOf(built.cycle, values, built.lsb);
   return { ...built, codes, values, errorLsb, spectrum, report, warnings };
 }

@@ -18,7 +18,7 @@ interface ConflictProps {
 /** Both sides of a save that came second: what is on the bench, and what is in the library by now. */
 export function Conflict({ link, theirs }: ConflictProps) {
   const number = theirs.latestRevision;
-  if (number === link.revision) {
+  if (number === link.newest) {
     return (
       <section className="slab slab-saffron" aria-label="Both sides">
         <p>
@@ -61,13 +61,22 @@ function Sides({ link, theirs }: ConflictProps) {
         </div>
         <div className="side">
           <h3>Theirs, revision {number}</h3>
-          <StairDrawing codes={revision.codes} bits={revision.bits} label={`Staircase of revision ${number}`} />
+          <StairDrawing
+            codes={revision.codes}
+            bits={revision.bits}
+            label={`Staircase of revision ${number}`}
+          />
           <p>
             {revision.madeBy.name}, <Moment at={revision.madeAt} />
             {revision.note !== '' && `: ${revision.note}`}
           </p>
           <p>
-            <a className="link" href={tablePath(link.team, link.table, number)} target="_blank" rel="noreferrer">
+            <a
+              className="link"
+              href={tablePath(link.team, link.table, number)}
+              target="_blank"
+              rel="noreferrer"
+            >
               Look at theirs in a new tab
             </a>
           </p>

@@ -89,8 +89,9 @@ export function FirstSave({ account, onClose, onFault }: SaveFormProps) {
 function NowhereToSave({ memberships }: Pick<Account, 'memberships'>) {
   return (
     <Notice title="There is no team that you may save for.">
-      You are a viewer in {memberships.map(({ teamName }) => teamName).join(', ')}; saving takes the role author.
-      Ask an admin there, or <Link to={paths.newTeam}>make a team</Link> of your own. The wave stays on the bench.
+      You are a viewer in {memberships.map(({ teamName }) => teamName).join(', ')}; saving takes the role
+      author. Ask an admin there, or <Link to={paths.newTeam}>make a team</Link> of your own. The wave stays
+      on the bench.
     </Notice>
   );
 }

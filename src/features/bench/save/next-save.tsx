@@ -44,8 +44,8 @@ export function NextSave({ link, aside, onClose, onFault }: NextSaveProps) {
       aside={theirs === null && aside}
     >
       <p>
-        The next revision of <strong className="break-words">{link.title}</strong>, {teamName}. The ones before
-        stay as they are.
+        The next revision of <strong className="break-words">{link.title}</strong>, {teamName}. The ones
+        before stay as they are.
       </p>
       {theirs !== null && <Conflict link={link} theirs={theirs} />}
       <NoteField value={draft.note} onChange={(note) => type({ note })} problem={saving.at('note')} />

@@ -27,6 +27,7 @@ export const openRevisionLoader = (queryClient: QueryClient) => async (args: Loa
     table: tableSlug,
     title: table.title,
     revision: revision.number,
+    newest: table.latestRevision,
     etag: table.etag,
   };
   return { link, revision };

@@ -46,8 +46,8 @@ function NeedsAccount({ onClose }: { onClose: () => void }) {
   return (
     <div className="form">
       <p>
-        A team’s library keeps every revision of a table, to be found again, heard, exported and shared. It needs
-        an account. What is on the bench stays there meanwhile, also after sign-up and verification.
+        A team’s library keeps every revision of a table, to be found again, heard, exported and shared. It
+        needs an account. What is on the bench stays there meanwhile, also after sign-up and verification.
       </p>
       <div className="form-actions">
         <Button variant="primary" onPress={() => void askToSignIn()}>
@@ -65,8 +65,8 @@ function NeedsTeam() {
   return (
     <div className="form">
       <p>
-        Tables are saved for a team. Make one now; you can be its only member. If you have been invited to one,
-        open the invitation in your mail instead.
+        Tables are saved for a team. Make one now; you can be its only member. If you have been invited to
+        one, open the invitation in your mail instead.
       </p>
       <NewTeamForm onMade={() => undefined} />
     </div>

@@ -10,6 +10,8 @@ const linkSchema = z.strictObject({
   title: z.string(),
   /** The revision that the work was saved as, or began with. */
   revision: z.int(),
+  /** The newest revision that this page has seen. */
+  newest: z.int(),
   /** Of the table's state that this page has seen; the next revision is made from that. */
   etag: z.string(),
 });

@@ -12,14 +12,12 @@ export interface Start {
 
 /** Waves to start anew from. With a team in use its defaults hold: a plain sine of its size comes first. */
 export function startsFor(team: TeamStart | null): Start[] {
-  const worked = examples.map(
-    ({ id, title, summary, work }): Start => ({
-      id,
-      title,
-      summary,
-      begin: ({ exporting }) => ({ ...work, exporting: exportingFor(team, exporting) }),
-    }),
-  );
+  const worked = examples.map(({ id, title, summary, work }): Start => ({
+    id,
+    title,
+    summary,
+    begin: ({ exporting }) => ({ ...work, exporting: exportingFor(team, exporting) }),
+  }));
   return team === null ? worked : [plainSine(team), ...worked];
 }
 

@@ -67,7 +67,10 @@ export function useSave({ schema, onClose, onFault }: SaveParts) {
       keep(keyed.draft);
       const table = await send(body, keyed.key);
       const { slug, title, latestRevision, etag } = table;
-      theSavedLinks().markSaved({ ...linkTo, table: slug, title, revision: latestRevision, etag }, work);
+      theSavedLinks().markSaved(
+        { ...linkTo, table: slug, title, revision: latestRevision, newest: latestRevision, etag },
+        work,
+      );
       keep({ ...emptyDraft, team: linkTo.team });
       queryClient.setQueryData(tableQueries.detail(linkTo.team, slug).queryKey, table);
       void queryClient.invalidateQueries({ queryKey: tableQueries.all(linkTo.team) });
