@@ -28,7 +28,6 @@ export function createRouter(queryClient: QueryClient) {
         },
         {
           path: paths.api,
-          ErrorBoundary: RouteFault,
           lazy: async () => {
             const [{ ApiPage, apiLoader }, ErrorBoundary] = await Promise.all([
               import('./features/api-page/api-page.tsx'),

@@ -1,5 +1,6 @@
 import { and, eq, gt, isNull, sql } from 'drizzle-orm';
 import type { Database } from '../db/client.ts';
+import { once } from '../db/once.ts';
 import { memberships, sessions, teams, users } from '../db/schema/index.ts';
 import type { SessionClaims } from './session-token.ts';
 
@@ -36,16 +37,6 @@ const memberQuery = (db: Database) =>
     .leftJoin(memberships, and(eq(memberships.teamId, teams.id), eq(memberships.userId, users.id)))
     .where(isAlive)
     .prepare();
-
-/** Runs on nearly every request: the statement's text is put together once for each database. */
-const once = <Query extends object>(make: (db: Database) => Query) => {
-  const made = new WeakMap<Database, Query>();
-  return (db: Database): Query => {
-    const query = made.get(db) ?? make(db);
-    made.set(db, query);
-    return query;
-  };
-};
 
 const preparedUser = once(userQuery);
 const preparedMember = once(memberQuery);

@@ -22,7 +22,12 @@ export function drawingOf(codes: Uint16Array, bits: number): Uint8Array {
   return drawing;
 }
 
-export const presentDrawing = (stored: Uint8Array): Drawing => ({
-  low: Array.from(stored).filter((_, index) => index % 2 === 0),
-  high: Array.from(stored).filter((_, index) => index % 2 === 1),
-});
+export function presentDrawing(stored: Uint8Array): Drawing {
+  const low: number[] = [];
+  const high: number[] = [];
+  for (let k = 0; k < stored.length; k += 2) {
+    low.push(stored[k]);
+    high.push(stored[k + 1]);
+  }
+  return { low, high };
+}

@@ -87,7 +87,8 @@ function Facts({ team, table, mayEdit }: { team: string; table: TaggedTable; may
         <StateWord state={table.state} />
         {table.isArchived && <strong>Archived</strong>}
         <span>
-          Revision {table.latestRevision} of <Moment at={table.changedAt} />, {table.changedBy.name}
+          Newest revision: {table.latestRevision}. Changed <Moment at={table.changedAt} /> by{' '}
+          {table.changedBy.name}
         </span>
       </p>
       {table.tags.length > 0 && (

@@ -99,6 +99,9 @@ function Found({ team, query, mayEdit, onChange }: FoundProps) {
   if (data.items.length === 0) return <NoTables {...{ team, query, mayEdit, onChange }} />;
   return (
     <>
+      <p className="quiet">
+        Play starts quietly. Take headphones off, or turn the device down, before you press it.
+      </p>
       <div aria-busy={isPlaceholderData} className="found">
         <TablesList
           {...{ team, query, player, onChange }}
@@ -107,9 +110,6 @@ function Found({ team, query, mayEdit, onChange }: FoundProps) {
         />
       </div>
       <Pager query={query} count={data.items.length} nextCursor={data.nextCursor} />
-      <p className="quiet">
-        Play starts quietly. Take headphones off, or turn the device down, before you press it.
-      </p>
       <PlayingBar player={player} />
     </>
   );

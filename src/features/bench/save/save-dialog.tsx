@@ -23,7 +23,6 @@ export function SaveDialog({ onClose, onFault }: SaveDialogProps) {
       title={link === null ? 'Save to a library' : 'Save a revision'}
       isOpen
       onClose={onClose}
-      size={link === null ? 'medium' : 'wide'}
     >
       {known.kind === 'nobody' ? (
         <NeedsAccount onClose={onClose} />

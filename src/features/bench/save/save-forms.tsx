@@ -19,9 +19,10 @@ export function SaveForms(props: SaveFormProps) {
   const refusal = link && whyNotThere(props.account, link);
   if (link === null || isAsNew) return <FirstSave {...props} />;
   if (refusal !== null) {
+    const isOpenElsewhere = props.account.memberships.some(({ role }) => includesRole(role, 'author'));
     return (
       <div className="form">
-        <Notice title="No revision can be saved there.">{refusal}</Notice>
+        {isOpenElsewhere && <Notice title="No revision can be saved there.">{refusal}</Notice>}
         <FirstSave {...props} />
       </div>
     );

@@ -1,9 +1,11 @@
 import './save.css';
 import { lazy, Suspense, useCallback, useEffect, useState } from 'react';
 import { Link } from 'react-router-dom';
+import { useAccount } from '../../../api/account-state.ts';
 import { Button, icons, useKeyGroup, useToast, type KeyGroup } from '../../../components/index.ts';
 import { tablePath } from '../../../paths.ts';
 import { theBench } from '../state/use-bench.ts';
+import type { SavedLink } from './saved-links.ts';
 import { useSavedView } from './use-saved-links.ts';
 
 const SaveDialog = lazy(async () => ({ default: (await import('./save-dialog.tsx')).SaveDialog }));
@@ -17,6 +19,7 @@ const saveKeys: KeyGroup = {
 /** Saves the wave to a team's library, and says how far it has got there. */
 export function SavePart() {
   const { link } = useSavedView();
+  const isRefused = useIsViewer(link);
   const [isOpen, setIsOpen] = useState(false);
   const [fault, setFault] = useState<string | null>(null);
   const toast = useToast();
@@ -32,7 +35,7 @@ export function SavePart() {
   return (
     <>
       <Button variant="primary" icon={icons.save} onPress={open}>
-        {link === null ? 'Save' : 'Save revision'}
+        {link === null || isRefused ? 'Save' : 'Save revision'}
       </Button>
       <Standing fault={fault} onTryAgain={open} />
       {isOpen && (
@@ -47,6 +50,7 @@ export function SavePart() {
 /** Where the work stands with the library. */
 function Standing({ fault, onTryAgain }: { fault: string | null; onTryAgain: () => void }) {
   const { link, isChanged } = useSavedView();
+  const isRefused = useIsViewer(link);
   return (
     <div role="status" className="save-standing">
       {fault !== null && (
@@ -67,10 +71,17 @@ function Standing({ fault, onTryAgain }: { fault: string | null; onTryAgain: () 
             {link.title}
           </Link>
           , {link.teamName}
+          {isRefused && '. As a viewer there you can listen and export, but save no revision'}
         </p>
       )}
     </div>
   );
+}
+
+/** Whether the one who is signed in may save no revision of the work's table. */
+function useIsViewer(link: SavedLink | null): boolean {
+  const account = useAccount();
+  return account?.memberships.find(({ teamSlug }) => teamSlug === link?.team)?.role === 'viewer';
 }
 
 function useSaveKey(save: () => void): void {
