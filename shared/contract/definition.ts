@@ -1,10 +1,6 @@
 import { z } from 'zod';
 import { limits } from './limits.ts';
 
-// With its first object schema Zod tries `new Function` to see whether it may; a page's security policy would report
-// that. This module is the first of the contract's that makes one.
-z.config({ jitless: true });
-
 // Zod's `error` texts here say what is allowed; parse-definition.ts adds the path and the value found.
 
 const wholeNumber = ({ min, max }: { min: number; max: number }) => {

@@ -2,6 +2,7 @@ export { Button, IconButton, type ButtonProps, type IconButtonProps } from './bu
 export { Caution } from './caution.tsx';
 export { ChoiceField, type ChoiceFieldProps } from './choice-field.tsx';
 export { Dialog, type DialogProps } from './dialog.tsx';
+export { onEarlyMoves } from './early-moves.ts';
 export { EmptyState, type EmptyStateProps } from './empty-state.tsx';
 export { Explain, type ExplainProps } from './explain.tsx';
 export { Figure, FigureStrip, type FigureProps, type FigureTone } from './figure.tsx';

@@ -47,3 +47,24 @@ export function partOf<Whole, Part>(whole: Live<Whole>, map: (whole: Whole) => P
     },
   };
 }
+
+/** What follows from two live values. `join` runs once a pair. */
+export function joined<One, Other, Both>(
+  one: Live<One>,
+  other: Live<Other>,
+  join: (one: One, other: Other) => Both,
+): Live<Both> {
+  let pair: readonly [One, Other] | undefined;
+  const pairs: Live<readonly [One, Other]> = {
+    now() {
+      const next = [one.now(), other.now()] as const;
+      if (pair === undefined || !next.every((value, index) => Object.is(value, pair?.[index]))) pair = next;
+      return pair;
+    },
+    subscribe(onChange) {
+      const ends = [one.subscribe(onChange), other.subscribe(onChange)];
+      return () => ends.forEach((end) => end());
+    },
+  };
+  return partOf(pairs, ([first, second]) => join(first, second));
+}

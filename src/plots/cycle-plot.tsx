@@ -1,5 +1,6 @@
-import { useCallback, useLayoutEffect, useMemo, useRef, useState } from 'react';
+import { useCallback, useMemo, useRef, useState } from 'react';
 import { useKeyGroup, type KeyGroup } from '../components/index.ts';
+import type { Live } from '../live/index.ts';
 import { CycleScene, type CycleData } from './cycle-scene.ts';
 import type { PlotArea } from './plot-area.ts';
 import { usePlotLink } from './plot-link.ts';
@@ -9,29 +10,11 @@ import { PointHandles, type PlotPoint } from './point-handles.tsx';
 export type { PlotPoint } from './point-handles.tsx';
 
 export interface CyclePlotProps {
-  /** The levelled cycle, one value an entry. */
-  cycle: Float64Array;
-  /** What the codes stand for, in the units of `cycle`. */
-  values: Float64Array;
-  /** 0…2^bits − 1. */
-  codes: Uint16Array;
-  bits: number;
-  range: 'bipolar' | 'unipolar';
-  /** One LSB in the units of `cycle`. */
-  lsb: number;
-  errorLsb: Float64Array;
-  sampleAt: 'start' | 'centre';
-  /** Periods of the wave in the table; 1 unless told. Places points. */
-  cycles?: number;
-  /** Where the table starts in the cycle, in degrees; 0 unless told. Places points. */
-  startPhaseDeg?: number;
-  points?: readonly PlotPoint[];
-  onPointMove?: (index: number, x: number, y: number) => void;
-  onPointAdd?: (x: number, y: number) => void;
-  onPointRemove?: (index: number) => void;
-  onPointFocus?: (index: number) => void;
-  /** Pin voltage of a code, shown in the read-out. */
-  voltsOf?: (code: number) => number;
+  data: Live<CycleData>;
+  points?: readonly PlotPoint[] | undefined;
+  onPointMove?: ((index: number, x: number, y: number) => void) | undefined;
+  onPointAdd?: ((x: number, y: number) => void) | undefined;
+  onPointRemove?: ((index: number) => void) | undefined;
 }
 
 const drawingKeys: KeyGroup = {
@@ -48,46 +31,29 @@ const drawingKeys: KeyGroup = {
 };
 
 /** The ideal cycle under the staircase of its codes, and the points of its shape where it has any. */
-export function CyclePlot({
-  points,
-  onPointMove,
-  onPointAdd,
-  onPointRemove,
-  onPointFocus,
-  ...props
-}: CyclePlotProps) {
-  const {
-    cycle,
-    values,
-    codes,
-    bits,
-    range,
-    lsb,
-    errorLsb,
-    sampleAt,
-    voltsOf,
-    cycles = 1,
-    startPhaseDeg = 0,
-  } = props;
-  const data = useMemo<CycleData>(
-    () => ({ cycle, values, codes, bits, range, lsb, errorLsb, sampleAt, voltsOf }),
-    [cycle, values, codes, bits, range, lsb, errorLsb, sampleAt, voltsOf],
-  );
-  const [scene] = useState(() => new CycleScene(data));
+export function CyclePlot({ data, points, onPointMove, onPointAdd, onPointRemove }: CyclePlotProps) {
+  const [scene] = useState(() => new CycleScene(data.now()));
   const link = usePlotLink();
   useKeyGroup(drawingKeys);
 
-  useLayoutEffect(() => {
-    scene.set(data);
-  }, [scene, data]);
-
-  const length = codes.length;
-  const start = startPhaseDeg / 360;
   // t = (k·K/N + φ/360) mod 1, without δ: a point stands on the curve, which is drawn at k + δ.
-  const toEntry = useCallback((x: number) => (modulo1(x - start) * length) / cycles, [start, length, cycles]);
-  const toCycle = useCallback(
-    (entry: number) => modulo1((entry * cycles) / length + start),
-    [start, length, cycles],
+  const places = useMemo(
+    () => ({
+      toEntry(x: number) {
+        const { codes, cycles, startPhaseDeg } = data.now();
+        return (modulo1(x - startPhaseDeg / 360) * codes.length) / cycles;
+      },
+      toCycle(entry: number) {
+        const { codes, cycles, startPhaseDeg } = data.now();
+        return modulo1((entry * cycles) / codes.length + startPhaseDeg / 360);
+      },
+      /** What one arrow key moves a point by: an entry, and an LSB or a hundredth where that is more. */
+      step() {
+        const { codes, lsb } = data.now();
+        return { x: 1 / codes.length, y: Math.max(lsb, 0.01) };
+      },
+    }),
+    [data],
   );
 
   const area = useRef<PlotArea | null>(null);
@@ -105,24 +71,20 @@ export function CyclePlot({
       title="Cycle"
       kind="cycle"
       scene={scene}
+      data={data}
       link={link}
-      version={data}
       hasZoom
       onDrawn={onDrawn}
-      onDoublePress={(entry, y) => onPointAdd?.(toCycle(entry), y)}
-      onEnter={(item) => onPointAdd?.(toCycle(item + 0.5), cycle[item])}
+      onDoublePress={(entry, y) => onPointAdd?.(places.toCycle(entry), y)}
+      onEnter={(item) => onPointAdd?.(places.toCycle(item + 0.5), data.now().cycle[item])}
     >
       {points && (
         <PointHandles
           points={points}
-          tableLength={length}
-          lsb={lsb}
-          toEntry={toEntry}
-          toCycle={toCycle}
+          places={places}
           area={area}
           onMove={onPointMove}
           onRemove={onPointRemove}
-          onFocus={onPointFocus}
           onPlacer={onPlacer}
         />
       )}

@@ -8,14 +8,23 @@ import { binaryTicks, decimalTicks, tickText, wholeTicks } from './ticks.ts';
 import { isDense, traceLine, traceStairs } from './traces.ts';
 
 export interface CycleData {
+  /** The levelled cycle, one value an entry. */
   cycle: Float64Array;
+  /** What the codes stand for, in the units of `cycle`. */
   values: Float64Array;
+  /** 0…2^bits − 1. */
   codes: Uint16Array;
   bits: number;
   range: 'bipolar' | 'unipolar';
+  /** One LSB in the units of `cycle`. */
   lsb: number;
   errorLsb: Float64Array;
   sampleAt: 'start' | 'centre';
+  /** Periods of the wave in the table. Places points. */
+  cycles: number;
+  /** Where the table starts in the cycle, in degrees. Places points. */
+  startPhaseDeg: number;
+  /** Pin voltage of a code, shown in the read-out. */
   voltsOf?: (code: number) => number;
 }
 
@@ -28,7 +37,7 @@ const codeWidth = 44;
 const titleRoom = 16;
 
 /** One table: the ideal line, and the treads of the codes as masonry standing on code 0. */
-export class CycleScene implements Scene {
+export class CycleScene implements Scene<CycleData> {
   readonly leastSpan = 4;
   readonly axes: readonly AxisSpec[];
   private data: CycleData;

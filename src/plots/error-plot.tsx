@@ -1,19 +1,17 @@
-import { useLayoutEffect, useState } from 'react';
+import { useState } from 'react';
+import type { Live } from '../live/index.ts';
 import { ErrorScene } from './error-scene.ts';
 import { Plot } from './plot.tsx';
 import { usePlotLink } from './plot-link.ts';
 
 export interface ErrorPlotProps {
   /** Code value less the ideal, in LSB, one an entry. */
-  errorLsb: Float64Array;
+  errorLsb: Live<Float64Array>;
 }
 
 /** The error in LSB, over the same entries as the cycle and with the same cursor and zoom. */
 export function ErrorPlot({ errorLsb }: ErrorPlotProps) {
-  const [scene] = useState(() => new ErrorScene(errorLsb));
+  const [scene] = useState(() => new ErrorScene(errorLsb.now()));
   const link = usePlotLink();
-  useLayoutEffect(() => {
-    scene.set(errorLsb);
-  }, [scene, errorLsb]);
-  return <Plot title="Error" kind="error" scene={scene} link={link} version={errorLsb} />;
+  return <Plot title="Error" kind="error" scene={scene} data={errorLsb} link={link} />;
 }

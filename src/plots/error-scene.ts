@@ -11,7 +11,7 @@ import { isDense, traceStairs } from './traces.ts';
 const reaches = [0.75, 1.25, 2.5, 5, 10, 25, 50, 100];
 
 /** What quantising did to each entry, in LSB, between the lines that rounding alone never crosses. */
-export class ErrorScene implements Scene {
+export class ErrorScene implements Scene<Float64Array> {
   readonly leastSpan = 4;
   readonly axes: readonly AxisSpec[];
   private error: Float64Array;

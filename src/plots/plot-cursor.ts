@@ -75,21 +75,21 @@ export class PlotCursor {
     const { scene, area, band } = this;
     const { surface, overlay, readOut } = this.elements;
     const [first, last] = scene.items();
-    surface.setAttribute('aria-valuemin', String(first));
-    surface.setAttribute('aria-valuemax', String(last));
+    say(surface, 'aria-valuemin', String(first));
+    say(surface, 'aria-valuemax', String(last));
     const item = this.link.cursor();
     if (item === null || item < first || item > last) {
       overlay.classList.remove('has-cursor');
-      surface.setAttribute('aria-valuenow', String(first));
-      surface.setAttribute('aria-valuetext', 'nothing chosen');
+      say(surface, 'aria-valuenow', String(first));
+      say(surface, 'aria-valuetext', 'nothing chosen');
       readOut.classList.remove('has-cursor');
       return;
     }
 
     const said = scene.readOut(item);
     write(readOut, said);
-    surface.setAttribute('aria-valuenow', String(item));
-    surface.setAttribute('aria-valuetext', said.map(({ label, value }) => `${label} ${value}`).join(', '));
+    say(surface, 'aria-valuenow', String(item));
+    say(surface, 'aria-valuetext', said.map(({ label, value }) => `${label} ${value}`).join(', '));
 
     const [from, to] = scene.spanOf(item);
     const left = area.x(from) - area.left;
@@ -120,6 +120,11 @@ export class PlotCursor {
   }
 }
 
+/** Writing the same again would make the browser look through its styles again. */
+function say(surface: HTMLElement, name: string, value: string) {
+  if (surface.getAttribute(name) !== value) surface.setAttribute(name, value);
+}
+
 /** Fills the read-out's cells, making only those that are not there yet. */
 function write(readOut: HTMLElement, said: readonly ReadOut[]) {
   while (readOut.children.length > said.length) readOut.lastElementChild?.remove();
@@ -132,6 +137,6 @@ function write(readOut: HTMLElement, said: readonly ReadOut[]) {
     }
     const [name, , figure] = cell.childNodes;
     if (name.textContent !== label) name.textContent = label;
-    figure.textContent = value;
+    if (figure.textContent !== value) figure.textContent = value;
   });
 }

@@ -1,4 +1,5 @@
 import uPlot from 'uplot';
+import type { Live } from '../live/index.ts';
 import { drawAxisTitles, gutters, tickGap, topTicks } from './axes.ts';
 import { CanvasPen } from './canvas-pen.ts';
 import { forgetFrame, onNextFrame } from './frame.ts';
@@ -12,7 +13,6 @@ import { shifted, viewWithin, zoomed } from './plot-view.ts';
 import type { AxisSpec, Scene } from './scene.ts';
 
 export interface SurfaceElements {
-  figure: HTMLElement;
   /** Takes the focus and holds the canvas. */
   surface: HTMLElement;
   /** Lies over the area inside the axes. */
@@ -24,41 +24,53 @@ const sides = { top: 0, right: 1, bottom: 2, left: 3 } as const;
 
 /**
  * The plotting library's canvas, axes and scales with a scene drawn in them. Lives outside React: whatever changes only
- * asks for the next frame, and each frame draws once.
+ * asks for the next frame, and each frame draws once, with the data of that moment.
  */
-export class PlotSurface {
+export class PlotSurface<Data> {
   /** In CSS pixels from the surface's corner. */
   readonly area = new PlotArea();
   onDrawn: ((area: PlotArea) => void) | undefined;
 
   private readonly elements: SurfaceElements;
-  private readonly scene: Scene;
+  private readonly scene: Scene<Data>;
+  private readonly data: Live<Data>;
   private readonly link: PlotLink;
   private readonly plot: uPlot;
   private readonly pen: CanvasPen;
   private readonly canvasArea = new PlotArea();
   private readonly cursor: PlotCursor;
   private readonly endings: (() => void)[];
-  private drawn = 0;
+  private readonly size: { width: number; height: number };
+  private shownData: Data;
   private shownView: PlotView | null;
 
-  constructor(elements: SurfaceElements, scene: Scene, link: PlotLink) {
+  constructor(elements: SurfaceElements, scene: Scene<Data>, data: Live<Data>, link: PlotLink) {
     this.elements = elements;
     this.scene = scene;
+    this.data = data;
     this.link = link;
+    this.shownData = data.now();
+    scene.set(this.shownData);
     this.shownView = link.view();
     const { surface } = elements;
-    this.plot = new uPlot(this.options(surface), [[0, 1]], surface);
+    this.size = { width: surface.clientWidth, height: surface.clientHeight };
+    this.plot = new uPlot(this.options(), [[0, 1]], surface);
     this.pen = new CanvasPen(this.plot.ctx, uPlot.pxRatio, plotTheme());
     this.cursor = new PlotCursor(elements, scene, link, this.area);
 
-    const sizes = new ResizeObserver(this.renew);
+    const sizes = new ResizeObserver(([{ contentRect }]) => {
+      // Asking the surface itself in each frame would lay the whole page out there and then.
+      this.size.width = contentRect.width;
+      this.size.height = contentRect.height;
+      this.renew();
+    });
     sizes.observe(surface);
     this.endings = [
       () => {
         sizes.disconnect();
       },
       onThemeChange(this.renew),
+      data.subscribe(this.renew),
       link.subscribe(() => {
         if (link.view() !== this.shownView) this.renew();
         else onNextFrame(this.cursor.place);
@@ -128,9 +140,11 @@ export class PlotSurface {
   }
 
   private readonly draw = (): void => {
-    const { surface } = this.elements;
-    const { clientWidth: width, clientHeight: height } = surface;
+    const { width, height } = this.size;
     if (width < gutters.left + gutters.right || height < gutters.top + gutters.bottom) return;
+    const data = this.data.now();
+    if (!Object.is(data, this.shownData)) this.scene.set(data);
+    this.shownData = data;
     this.shownView = this.link.view();
     const { from, to } = this.view();
     const [low, high] = this.scene.yRange(from, to);
@@ -148,7 +162,7 @@ export class PlotSurface {
     const ranges = [x.min ?? 0, x.max ?? 1, y.min ?? 0, y.max ?? 1] as const;
     this.canvasArea.place(left, top, width, height, unit);
     this.canvasArea.scale(...ranges);
-    this.area.place(left / unit, top / unit, width / unit, height / unit, 1);
+    this.placeOverlay(left / unit, top / unit, width / unit, height / unit);
     this.area.scale(...ranges);
 
     const theme = plotTheme();
@@ -162,20 +176,24 @@ export class PlotSurface {
     drawAxisTitles(this.pen, this.canvasArea, this.scene.axes, theme);
     this.plot.ctx.restore();
 
-    const { overlay, figure } = this.elements;
-    overlay.style.cssText = `left:${this.area.left}px;top:${this.area.top}px;width:${this.area.width}px;height:${this.area.height}px`;
-    figure.dataset.drawn = String(++this.drawn);
     this.cursor.place();
     this.onDrawn?.(this.area);
   };
 
-  private options(surface: HTMLElement): uPlot.Options {
+  private placeOverlay(left: number, top: number, width: number, height: number) {
+    const { area } = this;
+    if (area.left === left && area.top === top && area.width === width && area.height === height) return;
+    area.place(left, top, width, height, 1);
+    this.elements.overlay.style.cssText = `left:${left}px;top:${top}px;width:${width}px;height:${height}px`;
+  }
+
+  private options(): uPlot.Options {
     const whole = (_plot: uPlot, min: number, max: number): [number, number] => [min, max];
     const hasTop = this.scene.axes.some((axis) => axis.side === 'top');
     const hasRight = this.scene.axes.some((axis) => axis.side === 'right');
     return {
-      width: Math.max(1, surface.clientWidth),
-      height: Math.max(1, surface.clientHeight),
+      width: Math.max(1, this.size.width),
+      height: Math.max(1, this.size.height),
       padding: [hasTop ? 0 : gutters.top, hasRight ? 0 : gutters.right, 0, 0],
       legend: { show: false },
       cursor: { show: false },

@@ -1,19 +1,22 @@
 import { useEffect, useId, useLayoutEffect, useRef, useState, type ReactNode } from 'react';
 import { IconButton, Menu, icons, useToast } from '../components/index.ts';
+import type { Live } from '../live/index.ts';
 import type { ExportFormat } from './export-plot.ts';
 import type { PlotArea } from './plot-area.ts';
 import type { PlotLink } from './plot-link.ts';
 import { PlotSurface } from './plot-surface.ts';
 import type { Scene } from './scene.ts';
 
-export interface PlotProps {
+export interface PlotProps<Data> {
   title: string;
   /** Which drawing it is; sets its height and the names of exported files. */
   kind: 'cycle' | 'error' | 'spectrum';
-  scene: Scene;
+  scene: Scene<Data>;
+  /** What the scene shows. Each change is drawn with the next frame. */
+  data: Live<Data>;
   link: PlotLink;
-  /** A new value whenever the scene holds something new. */
-  version: unknown;
+  /** A new value whenever the scene draws the same data in another way. */
+  manner?: unknown;
   hasZoom?: boolean;
   /** Stand right of the title. */
   controls?: ReactNode;
@@ -30,36 +33,32 @@ const summaryDelayMs = 400;
 const zoomStep = 1.5;
 
 /** The frame of every plot: title, read-out, drawing, tools, and its key facts in words. */
-export function Plot({
+export function Plot<Data>({
   title,
   kind,
   scene,
+  data,
   link,
-  version,
+  manner,
   hasZoom = false,
   controls,
   children,
   ...events
-}: PlotProps) {
+}: PlotProps<Data>) {
   const titleId = useId();
   const toast = useToast();
-  const figure = useRef<HTMLElement>(null);
   const surface = useRef<HTMLDivElement>(null);
   const overlay = useRef<HTMLDivElement>(null);
   const readOut = useRef<HTMLSpanElement>(null);
-  const drawing = useRef<PlotSurface>(null);
+  const drawing = useRef<PlotSurface<Data>>(null);
   const [summary, setSummary] = useState('');
 
   useLayoutEffect(() => {
-    if (!figure.current || !surface.current || !overlay.current || !readOut.current) return;
+    if (!surface.current || !overlay.current || !readOut.current) return;
     const made = new PlotSurface(
-      {
-        figure: figure.current,
-        surface: surface.current,
-        overlay: overlay.current,
-        readOut: readOut.current,
-      },
+      { surface: surface.current, overlay: overlay.current, readOut: readOut.current },
       scene,
+      data,
       link,
     );
     drawing.current = made;
@@ -67,25 +66,30 @@ export function Plot({
       made.destroy();
       drawing.current = null;
     };
-  }, [scene, link]);
+  }, [scene, data, link]);
 
   useLayoutEffect(() => {
     if (!drawing.current) return;
     drawing.current.onDrawn = events.onDrawn;
     drawing.current.renew();
-  }, [scene, link, version, events.onDrawn]);
+  }, [scene, data, link, manner, events.onDrawn]);
 
   useEffect(() => {
-    const timer = setTimeout(() => {
-      setSummary(scene.summary());
-    }, summaryDelayMs);
+    let timer: ReturnType<typeof setTimeout> | undefined;
+    const sum = () => {
+      clearTimeout(timer);
+      timer = setTimeout(() => {
+        setSummary(scene.summary());
+      }, summaryDelayMs);
+    };
+    const end = data.subscribe(sum);
+    sum();
     return () => {
+      end();
       clearTimeout(timer);
     };
-  }, [scene, version]);
+  }, [scene, data, manner]);
 
-  const zoomIn = () => drawing.current?.zoom(1 / zoomStep);
-  const zoomOut = () => drawing.current?.zoom(zoomStep);
   const save = async (format: ExportFormat) => {
     if (!surface.current) return;
     try {
@@ -100,15 +104,25 @@ export function Plot({
   };
 
   return (
-    <figure ref={figure} className={`plot plot-${kind}`} aria-labelledby={titleId}>
+    <figure className={`plot plot-${kind}`} aria-labelledby={titleId}>
       <div className="plot-head">
         <h2 id={titleId}>{title}</h2>
         {controls && <div className="plot-controls">{controls}</div>}
         <div className="plot-tools">
           {hasZoom && (
             <>
-              <IconButton size="small" label="Zoom in" icon={icons.zoomIn} onPress={zoomIn} />
-              <IconButton size="small" label="Zoom out" icon={icons.zoomOut} onPress={zoomOut} />
+              <IconButton
+                size="small"
+                label="Zoom in"
+                icon={icons.zoomIn}
+                onPress={() => drawing.current?.zoom(1 / zoomStep)}
+              />
+              <IconButton
+                size="small"
+                label="Zoom out"
+                icon={icons.zoomOut}
+                onPress={() => drawing.current?.zoom(zoomStep)}
+              />
               <IconButton
                 size="small"
                 label="Show all"

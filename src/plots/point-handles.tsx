@@ -1,4 +1,5 @@
 import { useLayoutEffect, useRef, type KeyboardEvent, type PointerEvent, type RefObject } from 'react';
+import { onEarlyMoves } from '../components/index.ts';
 import type { PlotArea } from './plot-area.ts';
 
 /** A point of the shape as it stands on the drawing. */
@@ -11,18 +12,17 @@ export interface PlotPoint {
 
 export interface PointHandlesProps {
   points: readonly PlotPoint[];
-  /** Entries of the table; one arrow key moves a point by one of them. */
-  tableLength: number;
-  /** One LSB; one arrow key moves a point by this, or by a hundredth where that is more. */
-  lsb: number;
-  /** First place on the plot's x of a place in the cycle, and back. */
-  toEntry: (x: number) => number;
-  toCycle: (entry: number) => number;
+  places: {
+    /** First place on the plot's x of a place in the cycle, and back. */
+    toEntry: (x: number) => number;
+    toCycle: (entry: number) => number;
+    /** What one arrow key moves a point by. */
+    step: () => { x: number; y: number };
+  };
   /** The plot's area, once it has been drawn. */
   area: RefObject<PlotArea | null>;
-  onMove?: (index: number, x: number, y: number) => void;
-  onRemove?: (index: number) => void;
-  onFocus?: (index: number) => void;
+  onMove?: ((index: number, x: number, y: number) => void) | undefined;
+  onRemove?: ((index: number) => void) | undefined;
   /** Called with what sets the handles where they belong, for use after each drawing. */
   onPlacer: (place: ((area: PlotArea) => void) | null) => void;
 }
@@ -33,9 +33,8 @@ const mostHandles = 256;
 const apart = 1e-4;
 
 /** Stones to drag on the cycle. Each is a button: arrows move it, Shift ten steps at a time, Delete takes it away. */
-export function PointHandles({ points, area, onPlacer, ...props }: PointHandlesProps) {
+export function PointHandles({ points, places, area, onPlacer, ...props }: PointHandlesProps) {
   const group = useRef<HTMLDivElement>(null);
-  const { toEntry, toCycle } = props;
 
   useLayoutEffect(() => {
     const place = (drawn: PlotArea) => {
@@ -43,7 +42,7 @@ export function PointHandles({ points, area, onPlacer, ...props }: PointHandlesP
       for (let index = 0; index < handles.length; index += 1) {
         const handle = handles[index] as HTMLElement;
         const point = points[index];
-        const left = drawn.x(toEntry(point.x)) - drawn.left;
+        const left = drawn.x(places.toEntry(point.x)) - drawn.left;
         handle.style.transform = `translate(${left}px, ${drawn.y(point.y) - drawn.top}px)`;
         handle.hidden = left < -1 || left > drawn.width + 1;
       }
@@ -53,7 +52,7 @@ export function PointHandles({ points, area, onPlacer, ...props }: PointHandlesP
     return () => {
       onPlacer(null);
     };
-  }, [points, toEntry, area, onPlacer]);
+  }, [points, places, area, onPlacer]);
 
   /** Hands on a new place, kept between the neighbours and inside the cycle. */
   const move = (index: number, x: number, y: number) => {
@@ -62,20 +61,34 @@ export function PointHandles({ points, area, onPlacer, ...props }: PointHandlesP
     props.onMove?.(index, Math.min(most, Math.max(least, x)), y);
   };
 
-  const onPointerMove = (index: number) => (event: PointerEvent<HTMLButtonElement>) => {
-    if (!event.currentTarget.hasPointerCapture(event.pointerId) || !area.current || !group.current) return;
+  const dragTo = (index: number, { clientX, clientY }: { clientX: number; clientY: number }) => {
+    if (!area.current || !group.current) return;
     const { left, top } = group.current.getBoundingClientRect();
     const drawn = area.current;
-    const px = drawn.left + Math.min(drawn.width, Math.max(0, event.clientX - left));
-    const py = drawn.top + Math.min(drawn.height, Math.max(0, event.clientY - top));
-    move(index, toCycle(drawn.valueAtX(px)), drawn.valueAtY(py));
+    const px = drawn.left + Math.min(drawn.width, Math.max(0, clientX - left));
+    const py = drawn.top + Math.min(drawn.height, Math.max(0, clientY - top));
+    move(index, places.toCycle(drawn.valueAtX(px)), drawn.valueAtY(py));
+  };
+  const latestDrag = useRef(dragTo);
+  useLayoutEffect(() => {
+    latestDrag.current = dragTo;
+  });
+
+  const onPointerDown = (index: number) => (event: PointerEvent<HTMLButtonElement>) => {
+    event.currentTarget.setPointerCapture(event.pointerId);
+    event.stopPropagation();
+    onEarlyMoves(event.currentTarget, event.pointerId, (early) => latestDrag.current(index, early));
+  };
+
+  const onPointerMove = (index: number) => (event: PointerEvent<HTMLButtonElement>) => {
+    if (event.currentTarget.hasPointerCapture(event.pointerId)) dragTo(index, event);
   };
 
   const onKeyDown = (index: number) => (event: KeyboardEvent<HTMLButtonElement>) => {
     const size = event.shiftKey ? 10 : 1;
     const { x, y } = points[index];
-    const stepX = size / props.tableLength;
-    const stepY = size * Math.max(props.lsb, 0.01);
+    const step = places.step();
+    const [stepX, stepY] = [size * step.x, size * step.y];
     if (event.key === 'ArrowLeft') move(index, x - stepX, y);
     else if (event.key === 'ArrowRight') move(index, x + stepX, y);
     else if (event.key === 'ArrowUp') move(index, x, y + stepY);
@@ -101,11 +114,7 @@ export function PointHandles({ points, area, onPlacer, ...props }: PointHandlesP
           className="plot-handle"
           aria-label={`Point ${index + 1} of ${points.length}: x ${short(point.x)}, y ${short(point.y)}`}
           aria-description="Arrow keys move it, Shift ten steps, Delete takes it away"
-          onFocus={() => props.onFocus?.(index)}
-          onPointerDown={(event) => {
-            event.currentTarget.setPointerCapture(event.pointerId);
-            event.stopPropagation();
-          }}
+          onPointerDown={onPointerDown(index)}
           onPointerMove={onPointerMove(index)}
           onKeyDown={onKeyDown(index)}
           onDoubleClick={(event) => {

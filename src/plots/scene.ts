@@ -20,7 +20,9 @@ export interface ReadOut {
 }
 
 /** What a plot shows: data, scales and how they are drawn. The frame around it knows no more than this. */
-export interface Scene {
+export interface Scene<Data = never> {
+  /** Takes up new data; it is drawn with the next frame. */
+  set(data: Data): void;
   readonly axes: readonly AxisSpec[];
   /** Whole range of x, in the units of the scale. */
   extent(): readonly [from: number, to: number];

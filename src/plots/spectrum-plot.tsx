@@ -1,22 +1,12 @@
-import { useLayoutEffect, useMemo, useState } from 'react';
+import { useEffect, useLayoutEffect, useMemo, useState } from 'react';
 import { ChoiceField } from '../components/index.ts';
+import { partOf, useLive, type Live } from '../live/index.ts';
 import { Plot } from './plot.tsx';
 import { createPlotLink } from './plot-link.ts';
 import { SpectrumScene, type SpectrumData, type SpectrumScale } from './spectrum-scene.ts';
 
 export interface SpectrumPlotProps {
-  /** `A_k` of what the codes stand for, bins 0…⌊N/2⌋. */
-  amplitudes: Float64Array;
-  /** `A_k` of the levelled cycle. */
-  intended: Float64Array;
-  /** `A_k` of the error. */
-  added: Float64Array;
-  /** N, in entries. */
-  tableLength: number;
-  /** K, periods of the wave in the table. */
-  cycles: number;
-  /** Where given, a second axis shows Hz: bin k lies at k·sampleRateHz/tableLength. */
-  sampleRateHz?: number;
+  data: Live<SpectrumData>;
   /** Scales, where a page keeps them (in its URL, say); the plot keeps them itself otherwise. */
   scale?: SpectrumScale;
   onScaleChange?: (scale: SpectrumScale) => void;
@@ -33,7 +23,10 @@ const frequencies = [
 ] as const;
 
 /** Levels against frequency: what was intended, and what quantising added. */
-export function SpectrumPlot({ scale, onScaleChange, ...data }: SpectrumPlotProps) {
+export function SpectrumPlot({ data, scale, onScaleChange }: SpectrumPlotProps) {
+  const hasHertz = useLive(
+    useMemo(() => partOf(data, ({ sampleRateHz }) => sampleRateHz !== undefined), [data]),
+  );
   const [own, setOwn] = useState<SpectrumScale>({ level: 'db', frequency: 'linear' });
   const shown = scale ?? own;
   const change = (part: Partial<SpectrumScale>) => {
@@ -42,39 +35,32 @@ export function SpectrumPlot({ scale, onScaleChange, ...data }: SpectrumPlotProp
   };
   return (
     // The axis of hertz comes and goes with the sample rate, and the axes of a plot are made once.
-    <SpectrumDrawing
-      key={data.sampleRateHz === undefined ? 'bins' : 'hertz'}
-      data={data}
-      shown={shown}
-      onChange={change}
-    />
+    <SpectrumDrawing key={hasHertz ? 'hertz' : 'bins'} data={data} shown={shown} onChange={change} />
   );
 }
 
 interface SpectrumDrawingProps {
-  data: SpectrumData;
+  data: Live<SpectrumData>;
   shown: SpectrumScale;
   onChange: (part: Partial<SpectrumScale>) => void;
 }
 
 function SpectrumDrawing({ data, shown, onChange }: SpectrumDrawingProps) {
-  const [scene] = useState(() => new SpectrumScene(data, shown));
+  const [scene] = useState(() => new SpectrumScene(data.now(), shown));
   const [link] = useState(createPlotLink);
-  const { amplitudes, intended, added, tableLength, cycles, sampleRateHz } = data;
   const { level, frequency } = shown;
 
   useLayoutEffect(() => {
-    scene.set({ amplitudes, intended, added, tableLength, cycles, sampleRateHz }, { level, frequency });
-  }, [scene, amplitudes, intended, added, tableLength, cycles, sampleRateHz, level, frequency]);
+    scene.show({ level, frequency });
+  }, [scene, level, frequency]);
 
-  // A place on one frequency scale is nowhere on the other.
+  // A place on one frequency scale is nowhere on the other, nor in a table of another length.
   useLayoutEffect(() => {
     link.setView(null);
-  }, [link, frequency, added.length]);
-
-  const version = useMemo(
-    () => ({ amplitudes, intended, added, tableLength, cycles, sampleRateHz, level, frequency }),
-    [amplitudes, intended, added, tableLength, cycles, sampleRateHz, level, frequency],
+  }, [link, frequency]);
+  useEffect(
+    () => partOf(data, ({ tableLength }) => tableLength).subscribe(() => link.setView(null)),
+    [data, link],
   );
 
   return (
@@ -82,8 +68,9 @@ function SpectrumDrawing({ data, shown, onChange }: SpectrumDrawingProps) {
       title="Spectrum"
       kind="spectrum"
       scene={scene}
+      data={data}
       link={link}
-      version={version}
+      manner={`${level} ${frequency}`}
       hasZoom
       controls={
         <>

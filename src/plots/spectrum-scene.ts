@@ -7,12 +7,18 @@ import { drawColumns, drawHeads, drawStems, type StemStyle } from './stems.ts';
 import { decimalTicks, logTicks, tickText, wholeTicks } from './ticks.ts';
 
 export interface SpectrumData {
+  /** `A_k` of what the codes stand for, bins 0…⌊N/2⌋. */
   amplitudes: Float64Array;
+  /** `A_k` of the levelled cycle. */
   intended: Float64Array;
+  /** `A_k` of the error. */
   added: Float64Array;
+  /** N, in entries. */
   tableLength: number;
+  /** K, periods of the wave in the table. */
   cycles: number;
-  sampleRateHz?: number;
+  /** Where given, a second axis shows Hz: bin k lies at k·sampleRateHz/tableLength. */
+  sampleRateHz?: number | undefined;
 }
 
 export interface SpectrumScale {
@@ -35,7 +41,7 @@ export function levelDb(amplitude: number): number {
 }
 
 /** Lines of the table's loop: round heads for what was intended, diamonds for what quantising added. */
-export class SpectrumScene implements Scene {
+export class SpectrumScene implements Scene<SpectrumData> {
   readonly leastSpan = 0.25;
   readonly axes: readonly AxisSpec[];
   private data: SpectrumData;
@@ -48,7 +54,7 @@ export class SpectrumScene implements Scene {
   constructor(data: SpectrumData, shown: SpectrumScale) {
     this.data = data;
     this.shown = shown;
-    this.set(data, shown);
+    this.set(data);
     this.axes = [
       this.levelAxis(),
       this.harmonicAxis(),
@@ -56,9 +62,8 @@ export class SpectrumScene implements Scene {
     ];
   }
 
-  set(data: SpectrumData, shown: SpectrumScale): void {
+  set(data: SpectrumData): void {
     this.data = data;
-    this.shown = shown;
     this.strongestAdded = strongest(data.added);
     this.strongestIntended = strongest(data.intended);
     const addedDb = levelDb(data.added[this.strongestAdded]);
@@ -69,6 +74,11 @@ export class SpectrumScene implements Scene {
       data.intended[this.strongestIntended],
       data.added[this.strongestAdded],
     );
+  }
+
+  /** Goes over to other scales. */
+  show(shown: SpectrumScale): void {
+    this.shown = shown;
   }
 
   extent(): readonly [number, number] {

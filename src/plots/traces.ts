@@ -58,43 +58,78 @@ export function traceStairs(pen: Pen, area: PlotArea, values: Numbers, crisp: nu
   }
 }
 
+/** A column that rises and falls by less than this many pixels is one corner, in the middle. */
+const flatPx = 0.5;
+
+/**
+ * One column of pixels after the other, in one corner or two: its lowest and its highest value, in the order in which
+ * they come. With `floor` the path keeps to the end that lies nearer to it, and what is beyond is left to the line. A
+ * path is as dear to draw as it has corners.
+ */
 function traceColumns(pen: Pen, area: PlotArea, values: Numbers, offset: number, floor?: number): void {
   const first = Math.max(0, Math.floor(area.from - offset));
   const last = Math.min(values.length, Math.ceil(area.to - offset) + 1);
   const scale = area.width / (area.to - area.from);
-  let isFirst = true;
+  const path = new ColumnPath(pen);
+  if (floor !== undefined) path.to(area.left + Math.floor((first + offset - area.from) * scale) + 0.5, floor);
   let k = first;
-  let x = 0;
   while (k < last) {
+    const begin = k;
     const column = Math.floor((k + offset - area.from) * scale);
     const end = Math.min(last, Math.max(k + 1, Math.ceil((column + 1) / scale + area.from - offset)));
-    const opening = values[k];
-    let low = opening;
-    let high = opening;
+    let low = k;
+    let high = k;
     for (k += 1; k < end; k += 1) {
-      const value = values[k];
-      if (value < low) low = value;
-      else if (value > high) high = value;
+      if (values[k] < values[low]) low = k;
+      else if (values[k] > values[high]) high = k;
     }
-    x = area.left + column + 0.5;
-    if (isFirst) {
-      if (floor !== undefined) pen.move(x, floor);
-      else pen.move(x, area.y(opening));
-      isFirst = false;
+    const [bottom, top] = [area.y(values[low]), area.y(values[high])];
+    const x = area.left + column + 0.5;
+    if (floor !== undefined) path.to(x, Math.min(bottom, Math.max(top, floor)));
+    else if (bottom - top < flatPx) path.to(x, (bottom + top) / 2);
+    else if (Math.abs(high - low) === end - begin - 1) {
+      // It runs from end to end, so it is drawn as the slope that it is.
+      path.to(area.x(begin + offset), area.y(values[begin]));
+      path.to(area.x(end - 1 + offset), area.y(values[end - 1]));
+    } else {
+      path.to(x, low < high ? bottom : top);
+      path.to(x, low < high ? top : bottom);
     }
-    if (floor !== undefined) {
-      pen.line(x, area.y(low));
-      continue;
-    }
-    pen.line(x, area.y(opening));
-    if (high !== low) {
-      pen.line(x, area.y(low));
-      pen.line(x, area.y(high));
-    }
-    pen.line(x, area.y(values[end - 1]));
   }
-  if (floor !== undefined && !isFirst) {
-    pen.line(x, floor);
-    pen.close();
+  path.end(floor);
+}
+
+/** A path whose level stretches have no corners inside. */
+class ColumnPath {
+  private readonly pen: Pen;
+  private x = NaN;
+  private y = NaN;
+  private isLevel = false;
+
+  constructor(pen: Pen) {
+    this.pen = pen;
+  }
+
+  to(x: number, y: number): void {
+    if (Number.isNaN(this.x)) this.pen.move(x, y);
+    else if (y === this.y) this.isLevel = true;
+    else {
+      this.endLevel();
+      this.pen.line(x, y);
+    }
+    this.x = x;
+    this.y = y;
+  }
+
+  end(floor?: number): void {
+    this.endLevel();
+    if (floor === undefined || Number.isNaN(this.x)) return;
+    this.pen.line(this.x, floor);
+    this.pen.close();
+  }
+
+  private endLevel(): void {
+    if (this.isLevel) this.pen.line(this.x, this.y);
+    this.isLevel = false;
   }
 }

@@ -15,7 +15,7 @@ export function RouteFault() {
       </p>
       <p className="slab slab-oxide">
         <icons.fault className="slab-sign" />
-        <code className="break-words">{words}</code>
+        <code className="min-w-0 wrap-anywhere">{words}</code>
       </p>
       <div className="flex flex-wrap gap-2">
         <Button

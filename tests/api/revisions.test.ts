@@ -102,8 +102,8 @@ describe('a further revision', () => {
 
 describe('the revisions of a table', () => {
   it('come newest first, page by page, and 20 of them with the table', async () => {
-    const { slug, version: first } = await saveTable(test, crew.team, crew.author, 'Many');
-    let version = first;
+    const { slug, version: one } = await saveTable(test, crew.team, crew.author, 'Many');
+    let version = one;
     for (let number = 2; number <= 23; number += 1) {
       ({ version } = (await save(crew.author, slug, `"${version}"`, { note: `no. ${number}` })).body);
     }

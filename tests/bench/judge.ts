@@ -1,9 +1,15 @@
 /** Prints a figure beside its goal and answers whether it holds. A figure of time is told, never asserted. */
-export function judge(what: string, value: number, goal: number, unit = ''): boolean {
-  const holds = value <= goal;
+export function judge(
+  what: string,
+  value: number,
+  goal: number,
+  unit = '',
+  side: 'at most' | 'at least' = 'at most',
+): boolean {
+  const holds = side === 'at most' ? value <= goal : value >= goal;
   const digits = value < 10 ? 3 : 1;
   console.log(
-    `  ${what}: ${value.toFixed(digits)}${unit} (goal: at most ${goal}${unit}) ${holds ? 'met' : 'MISSED'}`,
+    `  ${what}: ${value.toFixed(digits)}${unit} (goal: ${side} ${goal}${unit}) ${holds ? 'met' : 'MISSED'}`,
   );
   return holds;
 }

@@ -1,6 +1,6 @@
 import { sortDirections, tableSorts } from '../../shared/contract/index.ts';
 import { commonWord, states, tags, vocabulary } from './library-seed.ts';
-import { pick, rankFrom, type Random } from './random.ts';
+import { pick, pickByRank, type Random } from './random.ts';
 
 /**
  * What one member asks of the list: each filter drawn for itself, so that all pairs come up; words as often as they
@@ -13,7 +13,7 @@ export function randomListQuery(random: Random): string {
   });
   const search = randomSearch(random);
   if (search !== '') query.set('search', search);
-  if (random() < 0.25) query.set('tag', tags[rankFrom(random, tags.length)]);
+  if (random() < 0.25) query.set('tag', pickByRank(random, tags));
   if (random() < 0.25) query.set('state', pick(random, [...states, 'withdrawn']));
   if (random() < 0.1) query.set('archived', 'yes');
   return query.toString();
@@ -23,9 +23,9 @@ function randomSearch(random: Random): string {
   const kind = random();
   if (kind < 0.3) return '';
   if (kind < 0.5) return begun(random, commonWord);
-  if (kind < 0.8) return begun(random, vocabulary[rankFrom(random, vocabulary.length)]);
+  if (kind < 0.8) return begun(random, pickByRank(random, vocabulary));
   if (kind < 0.9) return String(Math.floor(100_000 * random()));
-  return `${commonWord} ${begun(random, vocabulary[rankFrom(random, vocabulary.length)])}`;
+  return `${commonWord} ${begun(random, pickByRank(random, vocabulary))}`;
 }
 
 /** The word, or in half of all cases no more of it than somebody has typed. */

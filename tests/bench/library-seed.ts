@@ -8,7 +8,7 @@ import { buildRevision } from '../../server/features/tables/build-revision.ts';
 import { signatureOf, termsOf } from '../../server/features/tables/search-terms.ts';
 import { slugFrom } from '../../server/features/tables/slugs.ts';
 import { packCodes } from '../../server/features/tables/stored-codes.ts';
-import { pick, randomFrom, rankFrom, type Random } from './random.ts';
+import { pick, pickByRank, randomFrom, type Random } from './random.ts';
 
 /** In half of all titles; the other words get rarer with their rank, the last ones stand in a handful. */
 export const commonWord = 'signal';
@@ -87,16 +87,14 @@ async function seedTeam(url: string, secret: string) {
     await db.insert(memberships).values({ teamId, userId, role: 'author' });
     const claim = { userId, sessionId: randomBytes(16).toString('base64url'), sessionVersion: 1 };
     const expiresAt = new Date(Date.now() + 3_600_000);
-    await db
-      .insert(sessions)
-      .values({
-        id: claim.sessionId,
-        userId,
-        sessionVersion: 1,
-        client: 'speed',
-        lastSeenAt: new Date(),
-        expiresAt,
-      });
+    await db.insert(sessions).values({
+      id: claim.sessionId,
+      userId,
+      sessionVersion: 1,
+      client: 'speed',
+      lastSeenAt: new Date(),
+      expiresAt,
+    });
     claims.push(claim);
   }
   await close();
@@ -192,15 +190,16 @@ async function insertRevisions(connection: Connection): Promise<void> {
 }
 
 function titleOf(random: Random, id: number): string {
-  const words = new Set(random() < 0.5 ? [commonWord] : []);
-  for (let count = 2 + 4 * random(); count > 0; count -= 1)
-    words.add(vocabulary[rankFrom(random, vocabulary.length)]);
-  return `${[...words].join(' ').slice(0, 54)} ${id}`;
+  const words = new Set<string>();
+  for (let count = 2 + 4 * random(); count > 0; count -= 1) words.add(pickByRank(random, vocabulary));
+  const list = [...words];
+  if (random() < 0.5) list.splice(Math.floor(random() * (list.length + 1)), 0, commonWord);
+  return `${list.join(' ').slice(0, 54)} ${id}`;
 }
 
 function tagsOf(random: Random): string[] {
   const chosen = new Set<string>();
-  for (let count = 4 * random(); count > 0; count -= 1) chosen.add(tags[rankFrom(random, tags.length)]);
+  for (let count = 4 * random(); count > 0; count -= 1) chosen.add(pickByRank(random, tags));
   return [...chosen].sort();
 }
 

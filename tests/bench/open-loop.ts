@@ -8,7 +8,7 @@ export interface PacedRequest {
 
 /**
  * Sends so many requests a second for so many seconds, whether earlier ones are answered or not, and answers how long
- * each took from the moment it was due, in ms, in ascending order. A stall so counts for all who would have met it.
+ * each took from the moment it was due, in ms. A stall so counts for all who would have met it.
  */
 export async function sendPaced(
   nextRequest: () => PacedRequest,
@@ -28,7 +28,7 @@ export async function sendPaced(
   }
   const latencies = await Promise.all(sent);
   agent.destroy();
-  return latencies.sort((a, b) => a - b);
+  return latencies;
 }
 
 /** Waits for the whole answer; as a browser does, the request takes it packed. */
@@ -47,7 +47,3 @@ const answered = ({ url, cookie }: PacedRequest, agent: Agent) =>
       },
     ).once('error', reject);
   });
-
-/** The value below which such a share of an ascending list lies (nearest rank). */
-export const quantile = (ascending: readonly number[], share: number): number =>
-  ascending[Math.max(0, Math.ceil(share * ascending.length) - 1)];

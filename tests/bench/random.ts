@@ -13,6 +13,8 @@ export function randomFrom(seed: string): Random {
 export const pick = <Item>(random: Random, items: readonly Item[]): Item =>
   items[Math.floor(random() * items.length)];
 
-/** A rank below `count`, the k-th about 1/k as often as the first, as words of a language are (Zipf 1935). */
-export const rankFrom = (random: Random, count: number): number =>
-  Math.min(count - 1, Math.floor(Math.exp(random() * Math.log(count + 1)) - 1));
+/** An item of a list, the k-th about 1/k as often as the first, as words of a language are (Zipf 1935). */
+export function pickByRank<Item>(random: Random, items: readonly Item[]): Item {
+  const rank = Math.floor(Math.exp(random() * Math.log(items.length + 1)) - 1);
+  return items[Math.min(items.length - 1, rank)];
+}

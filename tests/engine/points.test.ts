@@ -101,6 +101,18 @@ describe('a curve through points', () => {
     }
   });
 
+  it("monotone has the weighted harmonic mean of its neighbours' rises for a slope (Fritsch & Butland 1984)", () => {
+    const curve = curveOf('monotone', [
+      { x: 0, y: 0 },
+      { x: 0.1, y: 0.4 },
+      { x: 0.4, y: 0.7 },
+      { x: 0.7, y: -1 },
+    ]);
+    // Rises 4 over 0.1 and 1 over 0.3: (0.7 + 0.5)/(0.7/4 + 0.5/1).
+    const { slopes } = sidesAt(curve, 0.1, 1 / 4000);
+    for (const slope of slopes) expect(slope).toBeCloseTo(1.2 / (0.7 / 4 + 0.5 / 1), 6);
+  });
+
   it('spline keeps slope and bend at every point, the seam too', () => {
     holds(
       fc.property(points, (list) => {

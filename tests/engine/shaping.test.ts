@@ -62,7 +62,8 @@ describe('noise shaping', () => {
         fc.integer({ min: 1, max: 1e6 }),
         fc.constantFrom<1 | 2>(1, 2),
         (length, bits, seed, shaping) => {
-          const { codes, cycle } = buildTable(valuesOf(inside(length, seed), { bits, shaping }));
+          // At full scale, so that some codes clip.
+          const { codes, cycle, report } = buildTable(valuesOf(noise(length, seed), { bits, shaping }));
           const unit = 2n ** 24n;
           const v = Array.from(cycle, (x) => BigInt(Math.round(((x + 1) / 2) * (2 ** bits - 1) * 2 ** 24)));
           const sum = v.reduce((total, each) => total + each, 0n);
@@ -74,17 +75,22 @@ describe('noise shaping', () => {
           const floor = (value: bigint) => (value >= 0n ? value / unit : -((-value + unit - 1n) / unit));
           let [e1, e2] = [0n, 0n];
           let told: number[] = [];
+          let clipped = 0;
           for (let pass = 0; pass < 8; pass += 1) {
             const [start1, start2] = [e1, e2];
+            clipped = 0;
             told = wanted.map((position) => {
               const u = position + (shaping === 1 ? -e1 : -2n * e1 + e2);
               const p = floor(u + unit / 2n);
               [e2, e1] = [e1, p * unit - u];
-              return Math.min(Math.max(Number(p), 0), 2 ** bits - 1);
+              const code = Math.min(Math.max(Number(p), 0), 2 ** bits - 1);
+              if (code !== Number(p)) clipped += 1;
+              return code;
             });
             if (e1 === start1 && (shaping === 1 || e2 === start2)) break;
           }
           expect(Array.from(codes)).toEqual(told);
+          expect(report.clippedCodes).toBe(clipped);
         },
       ),
       100,

@@ -28,7 +28,10 @@ const sent: Readonly<Record<string, z.ZodType>> = {
 };
 
 /** Fields that take anything here, so that the engine's own parser can say what is wrong with it. */
-const definitions = new Set<unknown>([contract.definitionField, contract.renderRequestSchema.shape.definition]);
+const definitions = new Set<unknown>([
+  contract.definitionField,
+  contract.renderRequestSchema.shape.definition,
+]);
 
 type Side = 'input' | 'output';
 const named = { input: sent, output: answered };

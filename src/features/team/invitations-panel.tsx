@@ -36,23 +36,31 @@ export function InvitationsPanel({ team }: { team: string }) {
       {invitations === undefined && !error && <Waiting>Reading the invitations…</Waiting>}
       {invitations?.length === 0 && <p className="quiet">No invitation is open.</p>}
       {invitations !== undefined && invitations.length > 0 && (
-        <table className="ledger people">
+        <table role="table" className="ledger people">
           <caption>
             Open invitations, {invitations.length} of at most {teamLimits.openInvitations}. Each link works
             once, for 7 days, for its address alone.
           </caption>
-          <thead>
-            <tr>
-              <th scope="col">Address</th>
-              <th scope="col">Role</th>
-              <th scope="col">Mail</th>
-              <th scope="col">Runs out</th>
-              <th scope="col">
+          <thead role="rowgroup">
+            <tr role="row">
+              <th role="columnheader" scope="col">
+                Address
+              </th>
+              <th role="columnheader" scope="col">
+                Role
+              </th>
+              <th role="columnheader" scope="col">
+                Mail
+              </th>
+              <th role="columnheader" scope="col">
+                Runs out
+              </th>
+              <th role="columnheader" scope="col">
                 <span className="sr-only">Actions</span>
               </th>
             </tr>
           </thead>
-          <tbody>
+          <tbody role="rowgroup">
             {invitations.map((invitation) => (
               <InvitationRow key={invitation.id} team={team} invitation={invitation} />
             ))}
@@ -142,24 +150,24 @@ function InvitationRow({ team, invitation }: { team: string; invitation: Invitat
   });
   const { words, Sign } = deliveries[invitation.delivery];
   return (
-    <tr>
-      <td>
+    <tr role="row">
+      <td role="cell">
         <span className="people-name">{invitation.email}</span>
         {invitation.invitedBy !== null && (
           <span className="people-address">invited by {invitation.invitedBy}</span>
         )}
       </td>
-      <td>{invitation.role}</td>
-      <td>
+      <td role="cell">{invitation.role}</td>
+      <td role="cell">
         <span className="flex items-center gap-1">
           <Sign width="16" height="16" />
           {words}
         </span>
       </td>
-      <td>
+      <td role="cell" data-word="runs out">
         <Moment at={invitation.expiresAt} />
       </td>
-      <td>
+      <td role="cell">
         <Button
           size="small"
           isDisabled={withdrawing.isPending}

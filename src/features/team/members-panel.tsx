@@ -27,19 +27,25 @@ export function MembersPanel({ team, isAdmin, ownId }: MembersPanelProps) {
       <ProblemNotice fault={error && asProblem(error)} onTryAgain={() => void refetch()} />
       {members === undefined && !error && <Waiting>Reading the members…</Waiting>}
       {members !== undefined && (
-        <table className="ledger people">
+        <table role="table" className="ledger people">
           <caption>A team has at most {teamLimits.members} members and at least one admin.</caption>
-          <thead>
-            <tr>
-              <th scope="col">Who</th>
-              <th scope="col">Role</th>
-              <th scope="col">Since</th>
-              <th scope="col">
+          <thead role="rowgroup">
+            <tr role="row">
+              <th role="columnheader" scope="col">
+                Who
+              </th>
+              <th role="columnheader" scope="col">
+                Role
+              </th>
+              <th role="columnheader" scope="col">
+                Since
+              </th>
+              <th role="columnheader" scope="col">
                 <span className="sr-only">Actions</span>
               </th>
             </tr>
           </thead>
-          <tbody>
+          <tbody role="rowgroup">
             {members.map((member) => (
               <MemberRow
                 key={member.userId}
@@ -88,15 +94,15 @@ function MemberRow({ team, member, isAdmin, isSelf, isLastAdmin, onGo }: MemberR
   });
   const shown = changing.isPending ? changing.variables : member.role;
   return (
-    <tr>
-      <td>
+    <tr role="row">
+      <td role="cell">
         <span className="people-name">
           {member.name}
           {isSelf && ' (you)'}
         </span>
         <span className="people-address">{member.email}</span>
       </td>
-      <td>
+      <td role="cell">
         {isAdmin && !isLastAdmin ? (
           <SelectField
             label={`Role of ${member.name}`}
@@ -110,10 +116,10 @@ function MemberRow({ team, member, isAdmin, isSelf, isLastAdmin, onGo }: MemberR
           <span title={sayRole(member.role)}>{member.role}</span>
         )}
       </td>
-      <td>
+      <td role="cell" data-word="since">
         <Moment at={member.since} />
       </td>
-      <td>
+      <td role="cell">
         {(isAdmin || isSelf) && (
           <Button
             size="small"

@@ -1,47 +1,38 @@
-import { memo } from 'react';
+import { memo, useMemo } from 'react';
+import { partOf, useAsLive, type Live } from '../../../live/index.ts';
 import { CyclePlot, ErrorPlot, SpectrumPlot } from '../../../plots/index.ts';
 import type { TableAnswer } from '../../../workers/engine-messages.ts';
 import type { PointsOverlay } from '../shape/index.ts';
 import { useSpectrumScale } from '../view/use-spectrum-scale.ts';
+import { cycleData, spectrumData } from './plot-data.ts';
 
 interface DrawingsProps {
   table: TableAnswer;
   sampleRateHz: number;
-  overlay?: PointsOverlay | undefined;
 }
 
 /** The cycle, its error and its spectrum. */
-export function Drawings({ table, sampleRateHz, overlay }: DrawingsProps) {
-  return (
-    <>
-      <Cycle table={table} overlay={overlay} />
-      <ErrorPlot errorLsb={table.errorLsb} />
-      <Spectrum table={table} sampleRateHz={sampleRateHz} />
-    </>
-  );
+export function Drawings({ table, sampleRateHz }: DrawingsProps) {
+  return <LiveDrawings table={useAsLive(table)} sampleRateHz={useAsLive(sampleRateHz)} />;
 }
 
-const Cycle = memo(function Cycle({ table, overlay }: Pick<DrawingsProps, 'table' | 'overlay'>) {
-  const { bits, range, sampleAt, cycles, startPhaseDeg } = table.definition.table;
-  const { cycle, values, codes, lsb, errorLsb } = table;
-  return (
-    <CyclePlot
-      {...{ cycle, values, codes, bits, range, lsb, errorLsb, sampleAt, cycles, startPhaseDeg }}
-      {...overlay}
-    />
-  );
-});
+interface LiveDrawingsProps {
+  table: Live<TableAnswer>;
+  sampleRateHz: Live<number>;
+  overlay?: PointsOverlay | undefined;
+}
 
-const Spectrum = memo(function Spectrum({ table, sampleRateHz }: Omit<DrawingsProps, 'overlay'>) {
-  const { amplitudes, intended, added } = table.spectrum;
-  const { length, cycles } = table.definition.table;
+/** The same, drawn from each new table directly: nothing is rendered for it. */
+export const LiveDrawings = memo(function LiveDrawings({ table, sampleRateHz, overlay }: LiveDrawingsProps) {
+  const cycle = useMemo(() => partOf(table, cycleData), [table]);
+  const error = useMemo(() => partOf(table, ({ errorLsb }) => errorLsb), [table]);
+  const spectrum = useMemo(() => spectrumData(table, sampleRateHz), [table, sampleRateHz]);
   const scale = useSpectrumScale();
   return (
-    <SpectrumPlot
-      {...{ amplitudes, intended, added, cycles }}
-      {...scale}
-      tableLength={length}
-      sampleRateHz={sampleRateHz > 0 && Number.isFinite(sampleRateHz) ? sampleRateHz : undefined}
-    />
+    <>
+      <CyclePlot data={cycle} {...overlay} />
+      <ErrorPlot errorLsb={error} />
+      <SpectrumPlot data={spectrum} {...scale} />
+    </>
   );
 });

@@ -3,6 +3,7 @@ import { arrayNameFrom, targets } from '../../../../shared/firmware/index.ts';
 import { OptionField } from '../../../components/code/index.ts';
 import { SelectField } from '../../../components/index.ts';
 import { useSettled } from '../../../components/use-settled.ts';
+import { useCalmTable } from '../state/tables.ts';
 import { theBench, useBench } from '../state/use-bench.ts';
 import { ExportedFiles } from './exported-files.tsx';
 import { ExportProblems } from './export-problems.tsx';
@@ -19,10 +20,7 @@ const restMs = 150;
 const noOptions = {};
 
 export function ExportPanel({ onGoTo }: ExportPanelProps) {
-  const table = useSettled(
-    useBench((state) => state.table),
-    restMs,
-  );
+  const table = useSettled(useCalmTable(), restMs);
   const isStale = useBench(({ problems }) => problems.length > 0);
   const targetId = useBench(({ history }) => history.present.exporting.target);
   const typed = useBench(({ history }) => history.present.exporting.options[targetId]) ?? noOptions;

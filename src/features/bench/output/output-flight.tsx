@@ -2,12 +2,13 @@ import { useCallback } from 'react';
 import { formatQuantity } from '../../../../shared/quantities/index.ts';
 import { Caution, Explain } from '../../../components/index.ts';
 import { ListenPanel, type Playback } from '../listen/index.ts';
+import { useCalmTable } from '../state/tables.ts';
 import { theBench, useBench, useDefinition } from '../state/use-bench.ts';
 import { sampleRateOf, toneOf } from '../state/wave.ts';
 
 /** How the wave sounds, and what will come out of the pin. */
 export function OutputFlight() {
-  const table = useBench((state) => state.table);
+  const table = useCalmTable();
   const playback = useBench(({ history }) => history.present.playback);
   const change = useCallback(
     (next: Playback) =>

@@ -1,4 +1,4 @@
-import { useId, useRef, useState, type KeyboardEvent, type PointerEvent } from 'react';
+import { useId, useRef, useState, type KeyboardEvent } from 'react';
 import type { HarmonicsSource } from '../../../../shared/contract/index.ts';
 import { formatQuantity } from '../../../../shared/quantities/index.ts';
 import { IconButton } from '../../../components/index.ts';
@@ -9,7 +9,7 @@ import { barsOf, setBar } from './bars.ts';
 import { barShare, ceilingFor, labelEvery, relativeDb, snapToGrid, type Reach } from './bar-scale.ts';
 import type { OnChange } from './change.ts';
 import { turnIcons } from './turn-icons.tsx';
-import { useBarStrokes } from './use-bar-strokes.ts';
+import { useBarStrokes, type PointerPlace } from './use-bar-strokes.ts';
 import { useShownCells } from './use-shown-cells.ts';
 
 export interface BarFieldProps {
@@ -61,7 +61,7 @@ export function BarField({ source, onChange, shown, highestFitting, reach }: Bar
 
   // A stroke is measured from where the field stood when it began, should the page move under it.
   const heldBox = useRef<DOMRect | null>(null);
-  const placeOf = (event: PointerEvent<HTMLElement>) => {
+  const placeOf = (event: PointerPlace) => {
     const box = heldBox.current ?? boxOf(frame.current, event.currentTarget);
     const scrolled = frame.current?.scrollLeft ?? 0;
     const harmonic = 1 + Math.floor((event.clientX - box.left + scrolled) / pitch);

@@ -17,6 +17,7 @@ export interface HeightScale {
 }
 
 const asItIs: HeightScale = { toPlot: (y) => y, fromPlot: (y) => y };
+const noPoints: PointsOverlay = {};
 
 /** Props for the cycle plot where the wave is made of points; none where it is made otherwise. */
 export function pointsOverlay(
@@ -24,7 +25,7 @@ export function pointsOverlay(
   onChange: OnChange,
   scale: HeightScale = asItIs,
 ): PointsOverlay {
-  if (source.kind !== 'points') return {};
+  if (source.kind !== 'points') return noPoints;
   const { points } = source;
   const fewest = source.interpolation === 'spline' ? limits.splinePoints.min : limits.points.min;
   return {

@@ -1,7 +1,9 @@
 import { useRef, type PointerEvent } from 'react';
 import type { HarmonicsSource } from '../../../../shared/contract/index.ts';
+import { onEarlyMoves } from '../../../components/index.ts';
 import { drawBars, type BarPlace } from './bars.ts';
 import type { OnChange } from './change.ts';
+import { useLatest } from './use-latest.ts';
 
 interface Stroke {
   readonly pointerId: number;
@@ -10,6 +12,13 @@ interface Stroke {
   readonly before: HarmonicsSource;
   now: HarmonicsSource;
   last: BarPlace;
+}
+
+/** Where a pointer is, and over which element. */
+export interface PointerPlace {
+  readonly clientX: number;
+  readonly clientY: number;
+  readonly currentTarget: HTMLElement;
 }
 
 let strokesBegun = 0;
@@ -30,19 +39,22 @@ export interface BarStrokes {
 export function useBarStrokes(
   source: HarmonicsSource,
   onChange: OnChange<HarmonicsSource>,
-  placeOf: (event: PointerEvent<HTMLElement>) => BarPlace,
+  placeOf: (pointer: PointerPlace) => BarPlace,
   follow: Record<'onBegin' | 'onPass' | 'onEnd', (harmonic: number) => void>,
 ): BarStrokes {
   const stroke = useRef<Stroke | null>(null);
+  const latest = useLatest({ onChange, placeOf, follow });
 
-  const drawTo = (place: BarPlace) => {
+  const drawTo = (pointer: PointerPlace) => {
     const under = stroke.current;
     if (under === null) return;
+    const place = latest.current.placeOf(pointer);
+    if (place.harmonic !== under.last.harmonic) latest.current.follow.onPass(place.harmonic);
     const next = drawBars(under.now, under.last, place);
     under.last = place;
     if (next === under.now) return;
     under.now = next;
-    onChange(next, { coalesce: under.key });
+    latest.current.onChange(next, { coalesce: under.key });
   };
 
   const end = (event: PointerEvent<HTMLElement>) => {
@@ -54,20 +66,21 @@ export function useBarStrokes(
   return {
     onPointerDown(event) {
       if (event.button !== 0 || stroke.current !== null) return;
+      const { currentTarget, pointerId } = event;
       const place = placeOf(event);
       event.preventDefault();
       follow.onBegin(place.harmonic);
-      event.currentTarget.setPointerCapture(event.pointerId);
+      currentTarget.setPointerCapture(pointerId);
       strokesBegun += 1;
       const key = `draw:bars:${strokesBegun}`;
-      stroke.current = { pointerId: event.pointerId, key, before: source, now: source, last: place };
-      drawTo(place);
+      stroke.current = { pointerId, key, before: source, now: source, last: place };
+      drawTo(event);
+      onEarlyMoves(currentTarget, pointerId, ({ clientX, clientY }) => {
+        if (stroke.current?.key === key) drawTo({ clientX, clientY, currentTarget });
+      });
     },
     onPointerMove(event) {
-      if (stroke.current?.pointerId !== event.pointerId) return;
-      const place = placeOf(event);
-      if (place.harmonic !== stroke.current.last.harmonic) follow.onPass(place.harmonic);
-      drawTo(place);
+      if (stroke.current?.pointerId === event.pointerId) drawTo(event);
     },
     onPointerUp: end,
     onPointerCancel: end,

@@ -54,6 +54,8 @@ export interface BenchParts {
   now?: () => number;
 }
 
+const noProblems: readonly Problem[] = [];
+
 /** Writing waits this long for the next change, in milliseconds, so that a drag is not written sixty times a second. */
 const keepAfterMs = 250;
 
@@ -71,7 +73,7 @@ export function createBench({
   const kept = keep.read();
   let state: BenchState = {
     history: beginHistory(kept.kind === 'work' ? kept.work : examples[0].work),
-    problems: [],
+    problems: noProblems,
     table: null,
     isBuilding: false,
     failure: null,
@@ -141,7 +143,7 @@ export function createBench({
       case 'built':
         return set(
           isNewest
-            ? { table: reply.table, problems: [], isBuilding: false, failure: null }
+            ? { table: reply.table, problems: noProblems, isBuilding: false, failure: null }
             : { table: reply.table },
         );
       case 'refused':

@@ -1,5 +1,6 @@
 import { useSyncExternalStore } from 'react';
 import type { Definition } from '../../../../shared/contract/index.ts';
+import { partOf, type Live } from '../../../live/index.ts';
 import { createBench, type Bench, type BenchState } from './bench.ts';
 import { createKeep } from './storage.ts';
 
@@ -21,6 +22,12 @@ export function theBench(): Bench {
 export function useBench<Part>(select: (state: BenchState) => Part): Part {
   const { subscribe, getState } = theBench();
   return useSyncExternalStore(subscribe, () => select(getState()));
+}
+
+/** The same, to be followed without rendering. */
+export function liveBench<Part>(select: (state: BenchState) => Part): Live<Part> {
+  const { subscribe, getState } = theBench();
+  return partOf({ now: getState, subscribe }, select);
 }
 
 export function useDefinition<Part>(select: (definition: Definition) => Part): Part {
