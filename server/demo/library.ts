@@ -15,7 +15,8 @@ export interface DemoTable {
 }
 
 const loop = (toneHz: number) => ({ mode: 'loop', by: 'tone', toneHz, sampleRateHz: 32_000 }) as const;
-const once = (sampleRateHz: number) => ({ mode: 'once', by: 'sampleRate', toneHz: 440, sampleRateHz }) as const;
+const once = (sampleRateHz: number) =>
+  ({ mode: 'once', by: 'sampleRate', toneHz: 440, sampleRateHz }) as const;
 
 /** The made-up team's library: sounds and lights of harbour buoys. */
 export const demoTables: readonly DemoTable[] = [
@@ -25,7 +26,11 @@ export const demoTables: readonly DemoTable[] = [
     playback: loop(1000),
     revisions: [
       { by: 'author', note: 'For the output stage of the self-test.', definition: selfTestSine.first },
-      { by: 'reviewer', note: 'Sampled at the centres: no entry repeats at the seam. 12 bits.', definition: selfTestSine.centred },
+      {
+        by: 'reviewer',
+        note: 'Sampled at the centres: no entry repeats at the seam. 12 bits.',
+        definition: selfTestSine.centred,
+      },
     ],
   },
   {
@@ -43,7 +48,11 @@ export const demoTables: readonly DemoTable[] = [
     playback: once(8000),
     revisions: [
       { by: 'author', note: 'Rising, once through.', definition: lowBatteryChirp.long },
-      { by: 'author', note: 'Half as long, 6 bits: fits the small controller.', definition: lowBatteryChirp.short },
+      {
+        by: 'author',
+        note: 'Half as long, 6 bits: fits the small controller.',
+        definition: lowBatteryChirp.short,
+      },
     ],
   },
   {
@@ -51,7 +60,11 @@ export const demoTables: readonly DemoTable[] = [
     tags: ['fog', 'tone'],
     playback: loop(330),
     revisions: [
-      { by: 'author', note: 'Odd partials only, to be told from the main tone.', definition: answeringTone.first },
+      {
+        by: 'author',
+        note: 'Odd partials only, to be told from the main tone.',
+        definition: answeringTone.first,
+      },
       { by: 'reviewer', note: '10 bits for the new output stage.', definition: answeringTone.finer },
     ],
   },

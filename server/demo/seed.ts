@@ -41,13 +41,11 @@ export async function seedDemo(deps: Deps, file: string): Promise<string | undef
   const { db } = deps.database;
   if ((await db.select({ id: users.id }).from(users).limit(1)).length > 0) return undefined;
 
-  const accounts = roles.map(
-    (role): DemoAccount => ({
-      role,
-      email: `${role}@ninthfathom.example`,
-      password: randomBytes(12).toString('base64url'),
-    }),
-  );
+  const accounts = roles.map((role): DemoAccount => ({
+    role,
+    email: `${role}@ninthfathom.example`,
+    password: randomBytes(12).toString('base64url'),
+  }));
   const hashes = await Promise.all(accounts.map(({ password }) => hashPassword(password)));
   const built = await Promise.all(demoTables.map((table) => buildAll(deps, table)));
   const text = describe(accounts);
@@ -109,13 +107,18 @@ async function insertPeople(
 }
 
 async function insertTeam({ config }: Deps, transaction: Executor, people: People): Promise<number> {
-  const defaults = teamDefaultsSchema.parse({ arrayPrefix: 'nf_', licenceLine: 'SPDX-License-Identifier: CC0-1.0' });
+  const defaults = teamDefaultsSchema.parse({
+    arrayPrefix: 'nf_',
+    licenceLine: 'SPDX-License-Identifier: CC0-1.0',
+  });
   const [{ id: teamId }] = await transaction
     .insert(teams)
     .values({ slug: teamSlug, name: teamName, defaults })
     .$returningId();
   await transaction.insert(auditHeads).values({ teamId });
-  await transaction.insert(memberships).values(roles.map((role) => ({ teamId, userId: people[role].id, role })));
+  await transaction
+    .insert(memberships)
+    .values(roles.map((role) => ({ teamId, userId: people[role].id, role })));
   await appendEvent(transaction, config.auditKey, {
     teamId,
     actor: people.admin,

@@ -9,7 +9,9 @@ const textField = (min: number, max: number) => {
     .trim()
     .min(min, { error })
     .max(max, { error })
-    .refine((text) => !/\p{Surrogate}/u.test(text), { error: 'whole characters, no half of a surrogate pair' });
+    .refine((text) => !/\p{Surrogate}/u.test(text), {
+      error: 'whole characters, no half of a surrogate pair',
+    });
 };
 
 /** Lower case, as addresses are compared. 254 characters at most (RFC 5321 §4.5.3.1.3). */

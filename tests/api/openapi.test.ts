@@ -7,7 +7,10 @@ import { makeTestApp, type TestApp } from '../support/test-app.ts';
 
 interface Document {
   readonly openapi: string;
-  readonly paths: Record<string, Record<string, { operationId: string; parameters: { name: string; in: string }[] }>>;
+  readonly paths: Record<
+    string,
+    Record<string, { operationId: string; parameters: { name: string; in: string }[] }>
+  >;
   readonly components: Record<string, Record<string, unknown>>;
 }
 
@@ -55,7 +58,8 @@ describe('the OpenAPI document', () => {
   it('refers only to what is in it', () => {
     const references = [...JSON.stringify(document).matchAll(/"\$ref":"#\/components\/([\w]+)\/([\w]+)"/g)];
     expect(references.length).toBeGreaterThan(50);
-    for (const [, part, name] of references) expect(document.components[part], `${part} ${name}`).toHaveProperty(name);
+    for (const [, part, name] of references)
+      expect(document.components[part], `${part} ${name}`).toHaveProperty(name);
     expect(JSON.stringify(document)).not.toMatch(/"\$ref":"(?!#\/components\/)/);
   });
 

@@ -16,14 +16,12 @@ const onesIn = (word: number) => word.toString(2).replaceAll('0', '').length;
 
 describe('bits that change', () => {
   it('are counted at every step of the loop, the worst and first kept', () => {
-    const codes = fc
-      .integer({ min: 1, max: 16 })
-      .chain((bits) =>
-        fc.record({
-          bits: fc.constant(bits),
-          list: fc.array(fc.nat(2 ** bits - 1), { minLength: 2, maxLength: 200 }),
-        }),
-      );
+    const codes = fc.integer({ min: 1, max: 16 }).chain((bits) =>
+      fc.record({
+        bits: fc.constant(bits),
+        list: fc.array(fc.nat(2 ** bits - 1), { minLength: 2, maxLength: 200 }),
+      }),
+    );
     holds(
       fc.property(codes, ({ bits, list }) => {
         const { report, codes: built } = tableOf(list, bits);
