@@ -52,11 +52,14 @@ export function BarField({ source, onChange, shown, highestFitting, reach }: Bar
     plane.current
       ?.querySelector<HTMLElement>(`[data-harmonic="${harmonic}"]`)
       ?.focus({ preventScroll: true });
-  const focusBar = (harmonic: number) => {
+  const focusSoon = (harmonic: number) => {
     setActive(harmonic);
-    bringIntoSight(harmonic);
     // The bar may come into the page only with the next paint.
     requestAnimationFrame(() => focusNow(harmonic));
+  };
+  const focusBar = (harmonic: number) => {
+    bringIntoSight(harmonic);
+    focusSoon(harmonic);
   };
 
   // A stroke is measured from where the field stood when it began, should the page move under it.
@@ -71,12 +74,7 @@ export function BarField({ source, onChange, shown, highestFitting, reach }: Bar
       amplitude: snapToGrid(height * ceiling, ceiling),
     };
   };
-  // The focus moves before the first change and after the last: leaving a field ends a step of undo.
-  const strokes = useBarStrokes(source, onChange, placeOf, {
-    onBegin: focusNow,
-    onPass: setActive,
-    onEnd: focusBar,
-  });
+  const strokes = useBarStrokes(source, onChange, placeOf, focusSoon);
   const endStroke = () => {
     heldBox.current = null;
     setHeldCeiling(null);

@@ -40,16 +40,16 @@ export function useBarStrokes(
   source: HarmonicsSource,
   onChange: OnChange<HarmonicsSource>,
   placeOf: (pointer: PointerPlace) => BarPlace,
-  follow: Record<'onBegin' | 'onPass' | 'onEnd', (harmonic: number) => void>,
+  onReach: (harmonic: number) => void,
 ): BarStrokes {
   const stroke = useRef<Stroke | null>(null);
-  const latest = useLatest({ onChange, placeOf, follow });
+  const latest = useLatest({ onChange, placeOf, onReach });
 
   const drawTo = (pointer: PointerPlace) => {
     const under = stroke.current;
     if (under === null) return;
     const place = latest.current.placeOf(pointer);
-    if (place.harmonic !== under.last.harmonic) latest.current.follow.onPass(place.harmonic);
+    if (place.harmonic !== under.last.harmonic) latest.current.onReach(place.harmonic);
     const next = drawBars(under.now, under.last, place);
     under.last = place;
     if (next === under.now) return;
@@ -58,9 +58,7 @@ export function useBarStrokes(
   };
 
   const end = (event: PointerEvent<HTMLElement>) => {
-    if (stroke.current?.pointerId !== event.pointerId) return;
-    follow.onEnd(stroke.current.last.harmonic);
-    stroke.current = null;
+    if (stroke.current?.pointerId === event.pointerId) stroke.current = null;
   };
 
   return {
@@ -69,7 +67,7 @@ export function useBarStrokes(
       const { currentTarget, pointerId } = event;
       const place = placeOf(event);
       event.preventDefault();
-      follow.onBegin(place.harmonic);
+      onReach(place.harmonic);
       currentTarget.setPointerCapture(pointerId);
       strokesBegun += 1;
       const key = `draw:bars:${strokesBegun}`;

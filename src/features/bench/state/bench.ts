@@ -36,7 +36,7 @@ export interface Bench {
   change(update: (work: Work) => Work, how?: { coalesce?: string | undefined }): void;
   undo(): void;
   redo(): void;
-  /** Ends the open step, as leaving a field does. */
+  /** Ends the open step, as leaving a field does; a drag may move the focus and goes on all the same. */
   seal(): void;
   /** Between these the open step lasts: a pointer is held down. */
   hold(): void;
@@ -56,7 +56,7 @@ export interface BenchParts {
 
 const noProblems: readonly Problem[] = [];
 
-/** Writing waits this long for the next change, in milliseconds, so that a drag is not written sixty times a second. */
+/** Writing waits this long for the next change, in milliseconds, and for the pointer to be let go. */
 const keepAfterMs = 250;
 
 /** The bench: what is on it, its history, its table and its place in the browser's storage. */
@@ -106,9 +106,13 @@ export function createBench({
   /** Takes a history whose present is this tab's own doing, and keeps it. */
   function takeOwn(history: History<Work>): void {
     if (Object.is(history.present, state.history.present)) return set({ history });
-    clearTimeout(keepTimer);
-    keepTimer = setTimeout(keepNow, keepAfterMs);
+    keepSoon();
     take({ history, isUntouched: false, isFromOtherTab: false });
+  }
+
+  function keepSoon(): void {
+    clearTimeout(keepTimer);
+    keepTimer = setTimeout(() => (state.isHeld ? keepSoon() : keepNow()), keepAfterMs);
   }
 
   function keepNow(): void {
@@ -120,6 +124,7 @@ export function createBench({
   }
 
   function seal(): void {
+    if (state.isHeld) return;
     const history = sealStep(state.history);
     if (history !== state.history) set({ history });
   }
