@@ -1,7 +1,7 @@
 import type { Command } from 'commander';
 import { buildTable } from '../../shared/build-table.ts';
 import { Refusal, type GeneratedFile } from '../../shared/contract/index.ts';
-import { renderFiles, targetOf, targets } from '../../shared/firmware/index.ts';
+import { flagOf, optionOf, renderFiles, targetOf, targets } from '../../shared/firmware/index.ts';
 import { readTemplates } from '../tables/read-templates.ts';
 import { say, sayError } from './output.ts';
 import { readDefinition } from './read-definition.ts';
@@ -40,8 +40,9 @@ async function render(
 ) {
   const { lineComment } = targetOf(target);
   const table = buildTable(await readDefinition(file));
+  // commander hands flags over in camel case, without their hyphens.
   const options = Object.fromEntries(
-    Object.entries(flags).map(([flag, value]) => [optionNamed(flag), value]),
+    Object.entries(flags).map(([flag, value]) => [optionOf(`--${flag}`), value]),
   );
   const files = renderFiles(table, target, options, readTemplates());
   const said =
@@ -55,15 +56,6 @@ const asOneText = (files: readonly GeneratedFile[], lineComment: string) =>
   files.length === 1
     ? files[0].text
     : files.map(({ name, text }) => `${lineComment} file: ${name}\n${text}`).join('');
-
-const renamed = { arrayName: 'name' } as const;
-
-/** `arrayName` is `--name`, `highPort` is `--high-port`. */
-const flagOf = (option: string) =>
-  `--${option === 'arrayName' ? renamed.arrayName : option.replace(/[A-Z]/g, (letter) => `-${letter.toLowerCase()}`)}`;
-
-/** The option behind a flag, which commander gives in camel case. */
-const optionNamed = (flag: string) => (flag === renamed.arrayName ? 'arrayName' : flag);
 
 /** Flags of every option of every target, with what each says of itself and the targets that have it. */
 function optionFlags(): [flag: string, description: string][] {

@@ -1,5 +1,5 @@
-import { useSyncExternalStore } from 'react';
 import type { Account } from '../../shared/contract/index.ts';
+import { createLive, useLive } from '../live/index.ts';
 
 /** Who uses this page. `unknown` until the server has been asked, and where it does not answer. */
 export type AccountState =
@@ -12,25 +12,11 @@ const changeKey = 'stepwell.account-changed';
 /** A page that is come back to after so long asks again, in milliseconds. */
 const staleAfterMs = 60_000;
 
-let state: AccountState = { kind: 'unknown' };
+const state = createLive<AccountState>({ kind: 'unknown' });
 let askedAt = -Infinity;
 let asking: Promise<AccountState> | null = null;
-const listeners = new Set<() => void>();
 
-export const accountState = (): AccountState => state;
-
-function set(next: AccountState): AccountState {
-  state = next;
-  for (const listener of listeners) listener();
-  return next;
-}
-
-function subscribe(listener: () => void): () => void {
-  listeners.add(listener);
-  return () => listeners.delete(listener);
-}
-
-export const useAccountState = (): AccountState => useSyncExternalStore(subscribe, accountState);
+export const useAccountState = (): AccountState => useLive(state);
 
 /** The signed-in person's account, where there is one. */
 export function useAccount(): Account | undefined {
@@ -39,12 +25,13 @@ export function useAccount(): Account | undefined {
 }
 
 /** Takes an account that a request has answered. */
-export const takeAccount = (account: Account): AccountState => set({ kind: 'person', account });
+export const takeAccount = (account: Account): void => state.set({ kind: 'person', account });
 
 /** Asks the server who is signed in. Where it does not answer, what was known stays. */
-export function refreshAccount(): Promise<AccountState> {
+export function refreshAccount(take = state.set): Promise<AccountState> {
   asking ??= readAccount()
-    .then(set, () => state)
+    .then(take, () => undefined)
+    .then(state.now)
     .finally(() => {
       askedAt = performance.now();
       asking = null;
@@ -89,23 +76,32 @@ const isAccount = (answer: unknown): answer is Account =>
   'memberships' in answer &&
   Array.isArray(answer.memberships);
 
+/**
+ * A sign-in that has run out meanwhile is not taken away from under what somebody is typing: the next request finds it
+ * gone, and asks to sign in again on top.
+ */
+function takeQuietly(next: AccountState): void {
+  if (next.kind === 'person' || state.now().kind !== 'person') state.set(next);
+}
+
 /** Begins to keep the state fresh; answers how to stop. */
 export function watchAccount(): () => void {
   const ask = () => void refreshAccount();
+  const askQuietly = () => void refreshAccount(takeQuietly);
   const onStorage = (event: StorageEvent) => {
     if (event.key === changeKey) ask();
   };
   const onVisible = () => {
     const isStale = performance.now() - askedAt > staleAfterMs;
-    if (document.visibilityState === 'visible' && isStale && navigator.onLine) ask();
+    if (document.visibilityState === 'visible' && isStale && navigator.onLine) askQuietly();
   };
   ask();
   addEventListener('storage', onStorage);
-  addEventListener('online', ask);
+  addEventListener('online', askQuietly);
   document.addEventListener('visibilitychange', onVisible);
   return () => {
     removeEventListener('storage', onStorage);
-    removeEventListener('online', ask);
+    removeEventListener('online', askQuietly);
     document.removeEventListener('visibilitychange', onVisible);
   };
 }

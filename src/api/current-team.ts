@@ -1,12 +1,11 @@
-import { useSyncExternalStore } from 'react';
 import type { Account } from '../../shared/contract/index.ts';
+import { createLive, useLive } from '../live/index.ts';
 import { useAccount } from './account-state.ts';
 
 export type Membership = Account['memberships'][number];
 
 const storageKey = 'stepwell.team';
-const listeners = new Set<() => void>();
-let chosen = readKept();
+const chosen = createLive(readKept());
 
 function readKept(): string | null {
   try {
@@ -18,19 +17,13 @@ function readKept(): string | null {
 
 /** Makes a team the one that places lead to and new tables go into. */
 export function chooseTeam(slug: string): void {
-  if (slug === chosen) return;
-  chosen = slug;
+  if (slug === chosen.now()) return;
   try {
     localStorage.setItem(storageKey, slug);
   } catch {
     // The choice then lasts as long as the page.
   }
-  for (const listener of listeners) listener();
-}
-
-function subscribe(listener: () => void): () => void {
-  listeners.add(listener);
-  return () => listeners.delete(listener);
+  chosen.set(slug);
 }
 
 /** The chosen team among an account's, else its first. */
@@ -39,6 +32,6 @@ export const teamAmong = (memberships: readonly Membership[], slug: string | nul
 
 /** The team that is in use; none where nobody is signed in, or in no team. */
 export function useCurrentTeam(): Membership | undefined {
-  const slug = useSyncExternalStore(subscribe, () => chosen);
+  const slug = useLive(chosen);
   return teamAmong(useAccount()?.memberships ?? [], slug);
 }

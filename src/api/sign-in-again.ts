@@ -1,12 +1,8 @@
+import { createLive } from '../live/index.ts';
+
 type Answer = (hasSignedIn: boolean) => void;
 
-let waiting: readonly Answer[] = [];
-const listeners = new Set<() => void>();
-
-function publish(next: readonly Answer[]) {
-  waiting = next;
-  for (const listener of listeners) listener();
-}
+const waiting = createLive<readonly Answer[]>([]);
 
 /**
  * Asks the person to sign in, on top of whatever is on screen; answers whether they have. The shell shows the dialog,
@@ -14,19 +10,15 @@ function publish(next: readonly Answer[]) {
  */
 export const askToSignIn = (): Promise<boolean> =>
   new Promise((resolve) => {
-    publish([...waiting, resolve]);
+    waiting.set([...waiting.now(), resolve]);
   });
 
 /** What the dialog needs of those who ask. */
 export const signInRequests = {
-  subscribe(listener: () => void): () => void {
-    listeners.add(listener);
-    return () => listeners.delete(listener);
-  },
-  isAsked: () => waiting.length > 0,
+  waiting,
   answer(hasSignedIn: boolean): void {
-    const all = waiting;
-    publish([]);
+    const all = waiting.now();
+    waiting.set([]);
     for (const one of all) one(hasSignedIn);
   },
 };

@@ -2,6 +2,8 @@ import type { ReactNode } from 'react';
 
 export interface EmptyStateProps {
   title: string;
+  /** Whether it stands for the whole place, so that its title is the page's heading. */
+  isPlace?: boolean;
   /** What to do first, in a sentence or two. */
   children: ReactNode;
   /** Buttons: the first step, and one working example. */
@@ -9,7 +11,8 @@ export interface EmptyStateProps {
 }
 
 /** A place with nothing in it yet: a dry well, and what to do first. */
-export function EmptyState({ title, children, actions }: EmptyStateProps) {
+export function EmptyState({ title, isPlace = false, children, actions }: EmptyStateProps) {
+  const Heading = isPlace ? 'h1' : 'h2';
   return (
     <section className="empty-state">
       <svg viewBox="0 0 120 60" width="120" height="60" aria-hidden="true" focusable="false">
@@ -21,7 +24,7 @@ export function EmptyState({ title, children, actions }: EmptyStateProps) {
         />
         <path d="M46 52h28" stroke="var(--water)" strokeWidth="2" strokeDasharray="4 4" />
       </svg>
-      <h2>{title}</h2>
+      <Heading>{title}</Heading>
       <div>{children}</div>
       {actions && <div className="flex flex-wrap justify-center gap-2">{actions}</div>}
     </section>

@@ -5,7 +5,12 @@ export interface KeyGroup {
   /** Heading, e.g. "Drawings". */
   title: string;
   /** Each line: the caps to press together (`['Shift', '→']`) and what they do. */
-  keys: readonly { caps: readonly string[]; does: string }[];
+  keys: readonly {
+    caps: readonly string[];
+    does: string;
+    /** Acts without a modifier wherever the focus is; can be turned off. */
+    isSingle?: boolean;
+  }[];
 }
 
 let groups: readonly KeyGroup[] = [];

@@ -2,6 +2,8 @@ import { useId, useState, type KeyboardEvent, type ReactNode } from 'react';
 import { parseQuantity, quantityText, type QuantityReading } from '../../shared/quantities/index.ts';
 import { FieldFrame, describedBy, fieldIds } from './field-frame.tsx';
 import { joinClasses } from './join-classes.ts';
+import { withExponentInSight } from './number-text.ts';
+import { useUnread } from './unread-fields.ts';
 
 export interface NumberFieldProps {
   label: string;
@@ -54,6 +56,7 @@ export function NumberField({
 }: NumberFieldProps) {
   const ids = fieldIds(useId());
   const [draft, setDraft] = useState<Draft | null>(null);
+  const [hasFocus, setHasFocus] = useState(false);
   // A value from elsewhere (undo, a preset) shows as itself; a text still on its way, or refused by the owner, stays.
   const isCurrent = draft !== null && (Object.is(value, draft.meant) || Object.is(value, draft.writtenOver));
   // A text that has been left behind must not come back with its old value, by undo for instance.
@@ -64,6 +67,10 @@ export function NumberField({
   const text = isCurrent ? draft.text : quantityText(value, unit);
   const reading = parseQuantity(text, unit);
   const fault = isCurrent ? faultOf(reading, text, allowed, props) : undefined;
+  // An owner that takes refused numbers has this one, and tells of it itself.
+  const isTakenUp = reading.kind === 'number' && Object.is(reading.value, value);
+  useUnread(ids.input, label, hasFocus || isTakenUp ? undefined : fault);
+  const shown = hasFocus || isCurrent ? text : withExponentInSight(text);
 
   const write = (next: string) => {
     props.onDraft?.(next);
@@ -113,7 +120,8 @@ export function NumberField({
           autoComplete="off"
           spellCheck={false}
           disabled={props.isDisabled}
-          value={text}
+          value={shown}
+          title={shown === text ? undefined : text}
           aria-invalid={problem ? true : undefined}
           aria-describedby={
             joinClasses(unit !== '' && `${ids.input}-unit`, describedBy(ids, props.description, problem)) ||
@@ -124,7 +132,11 @@ export function NumberField({
             write(event.target.value);
           }}
           onKeyDown={onKeyDown}
+          onFocus={() => {
+            setHasFocus(true);
+          }}
           onBlur={() => {
+            setHasFocus(false);
             if (fault === undefined && Object.is(draft?.meant, value)) setDraft(null);
           }}
         />

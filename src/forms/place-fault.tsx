@@ -11,6 +11,7 @@ export function PlaceFault() {
   if (!(fault instanceof ProblemError)) return <RouteFault />;
   return (
     <EmptyState
+      isPlace
       title={fault.status === 404 ? 'This is not there, or not yours to see' : 'This could not be fetched'}
       actions={
         <>

@@ -23,6 +23,7 @@ export function WithAccount({ why, children }: WithAccountProps) {
     case 'nobody':
       return (
         <EmptyState
+          isPlace
           title="Sign in first"
           actions={
             <>

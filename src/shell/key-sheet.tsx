@@ -1,18 +1,21 @@
-import { useEffect, useState } from 'react';
+import { useState } from 'react';
 import {
   Dialog,
   IconButton,
   Kbd,
+  SwitchField,
   icons,
   useKeyGroup,
   useKeyGroups,
+  useSingleKeySetting,
+  useSingleKeys,
   type KeyGroup,
 } from '../components/index.ts';
 
 const everywhere: KeyGroup = {
   title: 'Everywhere',
   keys: [
-    { caps: ['?'], does: 'Show these keys' },
+    { caps: ['?'], does: 'Show these keys', isSingle: true },
     { caps: ['Esc'], does: 'Close what lies on top' },
     { caps: ['Tab'], does: 'Go to the next control' },
     { caps: ['Shift', 'Tab'], does: 'Go to the control before' },
@@ -29,14 +32,6 @@ const numberFields: KeyGroup = {
   ],
 };
 
-/** Whether a press of a letter belongs to what has the focus. */
-function takesLetters(target: EventTarget | null): boolean {
-  return (
-    target instanceof HTMLElement &&
-    (target.isContentEditable || target.matches('input:not([type=radio], [type=checkbox]), textarea, select'))
-  );
-}
-
 /** The `?` button and the sheet that lists the keys of all that is on screen. */
 export function KeySheet() {
   const [isOpen, setIsOpen] = useState(false);
@@ -44,18 +39,16 @@ export function KeySheet() {
   useKeyGroup(everywhere);
   useKeyGroup(numberFields);
 
-  useEffect(() => {
-    const onKeyDown = (event: KeyboardEvent) => {
-      if (event.key !== '?' || event.ctrlKey || event.metaKey || event.altKey || takesLetters(event.target))
-        return;
-      event.preventDefault();
-      setIsOpen(true);
-    };
-    addEventListener('keydown', onKeyDown);
-    return () => {
-      removeEventListener('keydown', onKeyDown);
-    };
-  }, []);
+  const [areSingleOn, setSingle] = useSingleKeySetting();
+  useSingleKeys((key) => {
+    if (key === '?') setIsOpen(true);
+    return key === '?';
+  });
+
+  // What does not act is not listed.
+  const shown = groups
+    .map(({ title, keys }) => ({ title, keys: keys.filter(({ isSingle }) => areSingleOn || !isSingle) }))
+    .filter(({ keys }) => keys.length > 0);
 
   return (
     <>
@@ -74,8 +67,14 @@ export function KeySheet() {
           setIsOpen(false);
         }}
       >
+        <SwitchField
+          label="Single-key shortcuts"
+          isOn={areSingleOn}
+          onChange={setSingle}
+          description="Letters, digits and signs that act without Ctrl, ⌘ or Alt wherever the focus is. Turn them off where speech input or a slip of the hand would set them off; this browser remembers it."
+        />
         <div className="key-groups">
-          {groups.map((group) => (
+          {shown.map((group) => (
             <section key={group.title}>
               <h3>{group.title}</h3>
               <dl>

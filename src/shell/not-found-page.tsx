@@ -7,6 +7,7 @@ export function NotFoundPage() {
   const { pathname } = useLocation();
   return (
     <EmptyState
+      isPlace
       title="Nothing at this address"
       actions={
         <Link to={paths.bench} className="button button-primary">

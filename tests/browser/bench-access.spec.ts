@@ -32,6 +32,46 @@ test('the way down all four flights goes by keyboard alone', async ({ page }) =>
   await page.keyboard.press('Escape');
 });
 
+test('single keys can be turned off, in every tab and for the next visit; the sheet stays within reach', async ({
+  page,
+  context,
+}) => {
+  await page.goto('/?open=output');
+  await expect(page.getByRole('button', { name: 'Play', exact: true })).toBeVisible();
+  const other = await context.newPage();
+  await other.goto('/');
+  await expect(figure(other, 'SNR')).toBeVisible();
+
+  await page.keyboard.press('?');
+  const sheet = page.getByRole('dialog', { name: 'Keys' });
+  await expect(sheet).toContainText('Play or stop');
+  await sheet.getByRole('switch', { name: 'Single-key shortcuts' }).uncheck();
+  await expect(sheet).not.toContainText('Play or stop');
+  await expect(sheet).toContainText('Undo');
+  await page.keyboard.press('Escape');
+
+  for (const tab of [page, other]) {
+    for (const key of ['2', 'l', 'p', '?']) await tab.keyboard.press(key);
+    await expect(flight(tab, 'Quantise')).toHaveAttribute('aria-expanded', 'false');
+    await expect(tab.getByText('Link copied')).toBeHidden();
+    await expect(tab.getByRole('dialog')).toBeHidden();
+  }
+  await expect(page.getByRole('button', { name: 'Play', exact: true })).toBeVisible();
+  await field(page, 'Name of the wave').fill('x');
+  await page.keyboard.press('Control+z');
+  await expect(field(page, 'Name of the wave')).toHaveValue('Fog-signal tone');
+
+  await page.reload();
+  await expect(figure(page, 'SNR')).toBeVisible();
+  await page.keyboard.press('2');
+  await expect(flight(page, 'Quantise')).toHaveAttribute('aria-expanded', 'false');
+  await page.getByRole('button', { name: 'Keys' }).click();
+  await sheet.getByRole('switch', { name: 'Single-key shortcuts' }).check();
+  await page.keyboard.press('Escape');
+  await page.keyboard.press('2');
+  await expect(flight(page, 'Quantise')).toHaveAttribute('aria-expanded', 'true');
+});
+
 for (const colorScheme of ['light', 'dark'] as const) {
   for (const viewport of [
     { width: 1440, height: 900 },

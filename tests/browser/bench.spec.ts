@@ -52,6 +52,22 @@ test('undo and redo take back typing as one step, by keys and by buttons', async
   await expect(figure(page, 'Size')).toContainText('514');
 });
 
+test('nothing on the page moves under the first drag', async ({ page }) => {
+  await page.goto('/');
+  await expect(figure(page, 'SNR')).toBeVisible();
+  const bars = page.getByRole('group', { name: 'Harmonics as bars' });
+  const before = await bars.boundingBox();
+  if (before === null) throw new Error('no bars');
+  await page.mouse.move(before.x + before.width * 0.4, before.y + before.height * 0.4);
+  await page.mouse.down();
+  await page.mouse.move(before.x + before.width * 0.4, before.y + before.height * 0.3, { steps: 6 });
+  expect(await bars.boundingBox()).toEqual(before);
+  await page.mouse.up();
+  expect(await bars.boundingBox()).toEqual(before);
+  await page.getByRole('button', { name: 'Put this away' }).click();
+  await expect(page.getByText('A fog-signal tone of five partials is on the bench')).toBeHidden();
+});
+
 test('a drag of a bar is one step', async ({ page }) => {
   await page.goto('/');
   const before = await figure(page, 'SNR').innerText();
@@ -139,6 +155,37 @@ test('refuses a table of one entry beside the field', async ({ page }) => {
   await page.keyboard.press('Control+z');
   await expect(field(page, 'Table length')).toHaveValue('256');
   await expect(problems(page)).toBeHidden();
+});
+
+test('a text that is no number is listed in the summary once its field is left, which leads back to it', async ({
+  page,
+}) => {
+  await page.goto('/?open=shape,quantise');
+  await field(page, 'Bit depth').fill('abc');
+  await expect(problems(page)).toBeHidden();
+  await field(page, 'Bit depth').press('Tab');
+  await expect(problems(page)).toContainText('Bit depth: “abc” is not allowed');
+  await expect(problems(page)).toContainText('a whole number from 1 to 16');
+  await expect(drawings(page)).not.toHaveAttribute('data-stale', '');
+  await flight(page, 'Quantise').click();
+  await expect(field(page, 'Bit depth')).toBeHidden();
+  await problems(page).getByRole('link', { name: 'Bit depth' }).click();
+  await expect(field(page, 'Bit depth')).toBeFocused();
+  await field(page, 'Bit depth').fill('9');
+  await expect(problems(page)).toBeHidden();
+  await expect(figure(page, 'Codes used')).toContainText('of 512');
+});
+
+test('an exponent stays in sight, and the whole number comes with the focus', async ({ page }) => {
+  await page.goto('/');
+  const amplitude = page.getByRole('textbox', { name: 'Amplitude of partial 1', exact: false });
+  await amplitude.fill('3.8981718325193755e-17');
+  await amplitude.press('Tab');
+  await expect(amplitude).toHaveValue('3.89…e-17');
+  const isWholeInSight = await amplitude.evaluate((input) => input.scrollWidth <= input.clientWidth);
+  expect(isWholeInSight).toBe(true);
+  await amplitude.focus();
+  await expect(amplitude).toHaveValue('3.8981718325193755e-17');
 });
 
 for (const text of ['NaN', 'Infinity', 'twelve', '']) {

@@ -34,7 +34,9 @@ test('from an empty bench to a fog-signal tone in C that prints the codes', asyn
   await expect(lines).toHaveCount(5);
   await expect(async () => {
     const heard = await lines.evaluateAll((rows) =>
-      rows.map((row) => [...row.querySelectorAll('td')].map((cell) => (cell.textContent ?? '').replace('−', '-'))),
+      rows.map((row) =>
+        [...row.querySelectorAll('td')].map((cell) => (cell.textContent ?? '').replace('−', '-')),
+      ),
     );
     heard.forEach(([frequency, level], rank) => {
       const [harmonic, amplitude] = partials[rank];

@@ -1,4 +1,4 @@
-import { describe, expect, it } from 'vitest';
+import { describe, expect, it, vi } from 'vitest';
 import { tabulate } from '../../shared/build-table.ts';
 import { Refusal } from '../../shared/contract/index.ts';
 import { createBench } from '../../src/features/bench/state/bench.ts';
@@ -129,6 +129,38 @@ describe('the bench', () => {
     bench.change(setBits(17));
     bench.keepNow();
     expect(bitsOf(openTab().getState().history.present)).toBe(17);
+  });
+
+  it('goes on with a step while a pointer is held, though the focus moves', () => {
+    const bench = browser().openTab();
+    bench.hold();
+    for (const bits of [9, 10, 11]) {
+      bench.change(setBits(bits), { coalesce: 'drag' });
+      bench.seal();
+    }
+    bench.release();
+    expect(bench.getState().history.past).toHaveLength(1);
+    bench.change(setBits(12), { coalesce: 'drag' });
+    bench.seal();
+    bench.change(setBits(13), { coalesce: 'drag' });
+    expect(bench.getState().history.past).toHaveLength(3);
+  });
+
+  it('writes nothing while a pointer is held, and soon after it is let go', () => {
+    vi.useFakeTimers();
+    try {
+      const { held, openTab } = browser();
+      const bench = openTab();
+      bench.hold();
+      bench.change(setBits(9), { coalesce: 'drag' });
+      vi.advanceTimersByTime(5_000);
+      expect([...held]).toEqual([]);
+      bench.release();
+      vi.advanceTimersByTime(300);
+      expect(held.get(storageKeys.bench)).toContain('"bits":9');
+    } finally {
+      vi.useRealTimers();
+    }
   });
 
   it('writes nothing before something has been changed', () => {

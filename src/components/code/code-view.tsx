@@ -1,9 +1,9 @@
 import { cpp } from '@codemirror/lang-cpp';
 import { HighlightStyle, syntaxHighlighting } from '@codemirror/language';
-import { EditorState } from '@codemirror/state';
 import { EditorView, lineNumbers } from '@codemirror/view';
 import { tags } from '@lezer/highlight';
-import { useEffect, useRef } from 'react';
+import CodeMirror from '@uiw/react-codemirror';
+import { useMemo } from 'react';
 
 const theme = EditorView.theme({
   '&': { color: 'var(--ink)', backgroundColor: 'var(--raised)', fontSize: '0.8125rem' },
@@ -39,45 +39,27 @@ function nonceOfPage(): string {
 
 /** A generated file to read, select and copy from. It takes the focus and the caret, but no changes. */
 export function CodeView({ name, text }: { name: string; text: string }) {
-  const place = useRef<HTMLDivElement>(null);
-  const view = useRef<EditorView | null>(null);
-
-  useEffect(() => {
-    if (place.current === null) return;
-    const opened = new EditorView({ parent: place.current, state: stateFor('', '') });
-    view.current = opened;
-    return () => {
-      opened.destroy();
-      view.current = null;
-    };
-  }, []);
-
-  useEffect(() => {
-    const shown = view.current;
-    if (shown === null) return;
-    const { scrollTop } = shown.scrollDOM;
-    shown.setState(stateFor(name, text));
-    shown.scrollDOM.scrollTop = scrollTop;
-  }, [name, text]);
-
-  return <div ref={place} className="code-view" />;
+  const extensions = useMemo(() => extensionsFor(name), [name]);
+  return (
+    <CodeMirror
+      // Each file is scrolled on its own.
+      key={name}
+      className="code-view"
+      value={text}
+      extensions={extensions}
+      theme="none"
+      basicSetup={false}
+      indentWithTab={false}
+      readOnly
+    />
+  );
 }
 
-function stateFor(name: string, text: string): EditorState {
-  return EditorState.create({
-    doc: text,
-    extensions: [
-      EditorView.cspNonce.of(nonceOfPage()),
-      EditorState.readOnly.of(true),
-      EditorView.contentAttributes.of({
-        'aria-label': `${name}, read-only`,
-        spellcheck: 'false',
-        tabindex: '0',
-      }),
-      lineNumbers(),
-      cpp(),
-      syntaxHighlighting(colours),
-      theme,
-    ],
-  });
-}
+const extensionsFor = (name: string) => [
+  EditorView.cspNonce.of(nonceOfPage()),
+  EditorView.contentAttributes.of({ 'aria-label': `${name}, read-only`, spellcheck: 'false', tabindex: '0' }),
+  lineNumbers(),
+  cpp(),
+  syntaxHighlighting(colours),
+  theme,
+];

@@ -12,6 +12,7 @@ export const useLinkToken = (): string => useLocation().hash.slice(1);
 export function NoToken() {
   return (
     <EmptyState
+      isPlace
       title="This link is not whole"
       actions={
         <Link to={paths.bench} className="button button-plain">

@@ -1,22 +1,16 @@
-import { Button, Caution, icons } from '../../components/index.ts';
+import { useState } from 'react';
+import { Button, Caution, IconButton, icons } from '../../components/index.ts';
 import { saveText } from '../../components/save-text.ts';
 import { theBench, useBench } from './state/use-bench.ts';
 
 /** What there is to know about where the work is kept, and how to begin. */
 export function BenchNotices() {
-  const isUntouched = useBench((state) => state.isUntouched);
   const isKept = useBench((state) => state.isKept);
   const isFromOtherTab = useBench((state) => state.isFromOtherTab);
   return (
     <>
       <SetAside />
-      {isUntouched && (
-        <p className="bench-welcome">
-          A fog-signal tone of five partials is on the bench. Drag its bars, choose depth and length, listen,
-          and take the C files with you: down the four flights, no account needed. What you make stays in this
-          browser.
-        </p>
-      )}
+      <Welcome />
       <div role="status">
         {!isKept && (
           <Caution title="Not kept">
@@ -31,6 +25,22 @@ export function BenchNotices() {
         )}
       </div>
     </>
+  );
+}
+
+/** Stays until it is put away or the page is opened again: going with the first change it would move what is dragged. */
+function Welcome() {
+  const [isShown, setIsShown] = useState(() => theBench().getState().isUntouched);
+  if (!isShown) return null;
+  return (
+    <div className="bench-welcome">
+      <p>
+        A fog-signal tone of five partials is on the bench to begin with. Drag its bars, choose depth and
+        length, listen, and take the C files with you: down the four flights, no account needed. What you make
+        stays in this browser.
+      </p>
+      <IconButton size="small" label="Put this away" icon={icons.close} onPress={() => setIsShown(false)} />
+    </div>
   );
 }
 

@@ -6,8 +6,8 @@ import { BenchNotices } from './bench-notices.tsx';
 import { BenchDrawings } from './drawings/bench-drawings.tsx';
 import { ExportFlight, ExportSummary } from './export/export-flight.tsx';
 import { OutputFlight, OutputSummary } from './output/output-flight.tsx';
-import { flightOfField } from './problems/field-names.ts';
-import { goToField } from './problems/go-to-field.ts';
+import { flightOfField, type FlightId } from './problems/field-names.ts';
+import { flightOfInput, goToField, goToInput } from './problems/go-to-field.ts';
 import { ProblemSummary } from './problems/problem-summary.tsx';
 import { QuantiseFlight, QuantiseSummary } from './quantise/quantise-flight.tsx';
 import { BenchShape, ShapeSummary } from './shape-on-bench.tsx';
@@ -45,7 +45,11 @@ export function BenchPage() {
     }
   }, [copyLink, toast]);
 
-  const goTo = useGoTo(flightState);
+  const openThen = useOpenThen(flightState);
+  const goTo = useCallback(
+    (path: string) => openThen(flightOfField(path), () => goToField(path)),
+    [openThen],
+  );
   useBenchKeys(setOpen, copy);
   useSteps();
 
@@ -74,7 +78,10 @@ export function BenchPage() {
       <div className="bench-top">
         <BenchHead onCopyLink={copy} />
         <BenchNotices />
-        <ProblemSummary onGoTo={goTo} />
+        <ProblemSummary
+          onGoTo={goTo}
+          onGoToInput={(id) => openThen(flightOfInput(id), () => goToInput(id))}
+        />
       </div>
       {isWide ? parts : parts.toReversed()}
       {linkDialog}
@@ -82,18 +89,17 @@ export function BenchPage() {
   );
 }
 
-/** Opens the flight that a field stands in, and once that is there goes to the field. */
-function useGoTo({ open, setOpen }: ReturnType<typeof useOpenFlights>): (path: string) => void {
-  const wanted = useRef<string | null>(null);
+/** Opens a flight, unless it is open or there is none, and once it is there goes on. */
+function useOpenThen({ open, setOpen }: ReturnType<typeof useOpenFlights>) {
+  const next = useRef<(() => void) | null>(null);
   useEffect(() => {
-    if (wanted.current !== null) goToField(wanted.current);
-    wanted.current = null;
+    next.current?.();
+    next.current = null;
   }, [open]);
   return useCallback(
-    (path) => {
-      const flight = flightOfField(path);
-      if (flight === null || open.includes(flight)) return goToField(path);
-      wanted.current = path;
+    (flight: FlightId | null, goOn: () => void) => {
+      if (flight === null || open.includes(flight)) return goOn();
+      next.current = goOn;
       setOpen(flight, true);
     },
     [open, setOpen],

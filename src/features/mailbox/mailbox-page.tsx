@@ -104,6 +104,7 @@ function Mail({ id }: { id: number }) {
 function NoMailbox() {
   return (
     <EmptyState
+      isPlace
       title="This server has no local mailbox"
       actions={
         <Link to={paths.bench} className="button button-plain">

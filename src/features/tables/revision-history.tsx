@@ -136,9 +136,13 @@ function Cards({ team, table, revisions, shown }: ListProps) {
 
 function NumberLink({ team, table, number }: { team: string; table: string; number: number }) {
   return (
-    <Link to={tablePath(team, table, number)} className="library-link" preventScrollReset>
+    <Link
+      to={tablePath(team, table, number)}
+      className="library-link"
+      aria-label={`Revision ${number}`}
+      preventScrollReset
+    >
       {number}
-      <span className="sr-only">, show this revision</span>
     </Link>
   );
 }

@@ -1,13 +1,20 @@
 import './tables.css';
 import { useQuery, useSuspenseQuery, type QueryClient } from '@tanstack/react-query';
-import { useEffect, useRef } from 'react';
-import { Link, useParams, useSearchParams, type LoaderFunctionArgs } from 'react-router-dom';
+import { useRef, type RefObject } from 'react';
+import {
+  Link,
+  useLocation,
+  useNavigation,
+  useParams,
+  useSearchParams,
+  type LoaderFunctionArgs,
+} from 'react-router-dom';
 import { includesRole } from '../../../shared/contract/index.ts';
 import { chooseTeam } from '../../api/current-team.ts';
 import { asProblem, ProblemError } from '../../api/problem-error.ts';
 import { tableQueries, type ListQuery } from '../../api/tables.ts';
 import { teamQueries } from '../../api/teams.ts';
-import { Page, Waiting, useKeyGroup, type KeyGroup } from '../../components/index.ts';
+import { Page, Waiting, useKeyGroup, useSingleKeys, type KeyGroup } from '../../components/index.ts';
 import { load } from '../../forms/load.ts';
 import { ProblemNotice } from '../../forms/problem-notice.tsx';
 import { paths, teamPath } from '../../paths.ts';
@@ -35,7 +42,7 @@ export const tablesLoader = (queryClient: QueryClient) => async (args: LoaderFun
 const listKeys: KeyGroup = {
   title: 'Tables',
   keys: [
-    { caps: ['/'], does: 'Go to the search' },
+    { caps: ['/'], does: 'Go to the search', isSingle: true },
     { caps: ['↑', '↓'], does: 'On a table: go to the one above or below' },
   ],
 };
@@ -50,6 +57,7 @@ function Library({ team: slug }: { team: string }) {
   const { data: team } = useSuspenseQuery(teamQueries.detail(slug));
   const [parameters, setParameters] = useSearchParams();
   const query = readListQuery(parameters);
+  const wanted = useWantedQuery() ?? query;
   const page = useRef<HTMLDivElement>(null);
   const mayEdit = includesRole(team.myRole, 'author');
   useKeyGroup(listKeys);
@@ -76,7 +84,7 @@ function Library({ team: slug }: { team: string }) {
       }
     >
       <div ref={page} className="library">
-        <Filters team={slug} query={query} onChange={change} />
+        <Filters team={slug} query={wanted} onChange={change} />
         <Found team={slug} query={query} mayEdit={mayEdit} onChange={change} />
       </div>
     </Page>
@@ -94,7 +102,8 @@ function Found({ team, query, mayEdit, onChange }: FoundProps) {
   const { data, error, refetch, isPlaceholderData } = useQuery(tableQueries.list(team, query));
   const player = useRowPlayer(team);
   const problem = error && asProblem(error);
-  if (problem !== null) return <ProblemNotice fault={problem} onTryAgain={() => void refetch()} />;
+  if (problem !== null)
+    return <ProblemNotice fault={problem} shownElsewhere={['search']} onTryAgain={() => void refetch()} />;
   if (data === undefined) return <Waiting>Reading the tables…</Waiting>;
   if (data.items.length === 0) return <NoTables {...{ team, query, mayEdit, onChange }} />;
   return (
@@ -115,19 +124,20 @@ function Found({ team, query, mayEdit, onChange }: FoundProps) {
   );
 }
 
-/** `/` goes to the search, where nothing takes it as text. */
-function useSearchKey(page: React.RefObject<HTMLDivElement | null>) {
-  useEffect(() => {
-    const press = (event: KeyboardEvent) => {
-      const takesText = event.target instanceof Element && event.target.closest('input, textarea, select');
-      if (event.key !== '/' || event.ctrlKey || event.metaKey || event.altKey || takesText) return;
-      const search = page.current?.querySelector<HTMLInputElement>('input[type=search]');
-      if (!search) return;
-      event.preventDefault();
-      search.select();
-      search.focus();
-    };
-    addEventListener('keydown', press);
-    return () => removeEventListener('keydown', press);
-  }, [page]);
+/** What is being gone to: a filter shows as chosen at once, before its tables are here. */
+function useWantedQuery(): ListQuery | undefined {
+  const { location: goal } = useNavigation();
+  const { pathname } = useLocation();
+  return goal?.pathname === pathname ? readListQuery(new URLSearchParams(goal.search)) : undefined;
+}
+
+/** `/` goes to the search. */
+function useSearchKey(page: RefObject<HTMLDivElement | null>) {
+  useSingleKeys((key) => {
+    const search = page.current?.querySelector<HTMLInputElement>('input[type=search]');
+    if (key !== '/' || !search) return false;
+    search.select();
+    search.focus();
+    return true;
+  });
 }

@@ -26,6 +26,7 @@ function InUse({ place }: { place: 'tables' | 'team' }) {
   }
   return (
     <EmptyState
+      isPlace
       title="You belong to no team yet"
       actions={
         <Link to={paths.newTeam} className="button button-primary">

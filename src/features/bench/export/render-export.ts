@@ -1,5 +1,5 @@
 import { Refusal, type GeneratedFile, type Problem } from '../../../../shared/contract/index.ts';
-import { arrayNameFrom, renderFiles } from '../../../../shared/firmware/index.ts';
+import { arrayNameFrom, flagOf, renderFiles } from '../../../../shared/firmware/index.ts';
 import { templates } from '../../../../templates/index.ts';
 import type { TableAnswer } from '../../../workers/engine-messages.ts';
 
@@ -40,13 +40,6 @@ export function commandFor(name: string, target: string, options: TypedOptions):
     ...flags,
     '--out .',
   ].join(' ');
-}
-
-/** `arrayName` is `--name`, `highPort` is `--high-port`. */
-function flagOf(option: string): string {
-  return option === 'arrayName'
-    ? '--name'
-    : `--${option.replace(/[A-Z]/g, (letter) => `-${letter.toLowerCase()}`)}`;
 }
 
 /** A word as a POSIX shell reads it back (IEEE Std 1003.1, Shell Command Language §2.2). */

@@ -1,7 +1,7 @@
 import type { Definition, Source } from '../../../../shared/contract/index.ts';
 import { significant } from '../numbers.ts';
 import { nameOfField } from '../problems/field-names.ts';
-import { sayInWords } from '../shape/index.ts';
+import { sayInWords } from '../shape/source-words.ts';
 
 /** A setting that two definitions do not share, in words. */
 export interface Difference {

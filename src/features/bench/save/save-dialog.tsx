@@ -19,11 +19,7 @@ export function SaveDialog({ onClose, onFault }: SaveDialogProps) {
   const known = useAccountState();
   const { link } = useSavedView();
   return (
-    <Dialog
-      title={link === null ? 'Save to a library' : 'Save a revision'}
-      isOpen
-      onClose={onClose}
-    >
+    <Dialog title={link === null ? 'Save to a library' : 'Save a revision'} isOpen onClose={onClose}>
       {known.kind === 'nobody' ? (
         <NeedsAccount onClose={onClose} />
       ) : (

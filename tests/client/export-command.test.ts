@@ -1,0 +1,86 @@
+import { execFile } from 'node:child_process';
+import { mkdtemp, readFile, rm, writeFile } from 'node:fs/promises';
+import { tmpdir } from 'node:os';
+import { join } from 'node:path';
+import { promisify } from 'node:util';
+import { Command } from 'commander';
+import { afterAll, beforeAll, describe, expect, it, vi } from 'vitest';
+import { z } from 'zod';
+import { tabulate } from '../../shared/build-table.ts';
+import { flagOf, optionOf, targets, type Target } from '../../shared/firmware/index.ts';
+import { addRender } from '../../server/cli/render-command.ts';
+import {
+  commandFor,
+  definitionFileName,
+  renderExport,
+} from '../../src/features/bench/export/render-export.ts';
+import { examples } from '../../src/features/bench/state/examples.ts';
+import type { TableAnswer } from '../../src/workers/engine-messages.ts';
+
+/** For each option a value that is not its default and, where it is text, one that a shell must not touch. */
+const values: Readonly<Record<string, string>> = {
+  arrayName: 'buoyTone',
+  arrayPrefix: 'nf_',
+  licenceLine: "Ninth Fathom's own; $HOME stays as it is",
+  port: 'D',
+  highPort: 'C',
+};
+
+function valueOf(option: string, schema: z.core.$ZodType): string {
+  if (option in values) return values[option];
+  if (schema instanceof z.ZodDefault || schema instanceof z.ZodOptional)
+    return valueOf(option, schema.unwrap());
+  if (schema instanceof z.ZodEnum) return String(schema.options.at(-1));
+  throw new Error(`This test needs a value for the option ${option}.`);
+}
+
+const optionsOf = ({ options }: Target) =>
+  Object.fromEntries(Object.entries(options.shape).map(([name, schema]) => [name, valueOf(name, schema)]));
+
+const name = 'Tone of 10 bits';
+const table = tabulate({
+  ...examples[0].work.definition,
+  name,
+  table: { ...examples[0].work.definition.table, bits: 10 },
+}) as TableAnswer;
+
+let folder: string;
+beforeAll(async () => {
+  folder = await mkdtemp(join(tmpdir(), 'stepwell-flags-'));
+  await writeFile(join(folder, definitionFileName(name)), JSON.stringify(table.definition));
+});
+afterAll(() => rm(folder, { recursive: true }));
+
+/** The words of a command as a POSIX shell splits it. */
+async function wordsOf(command: string): Promise<string[]> {
+  const { stdout } = await promisify(execFile)('sh', ['-c', `printf '%s\\0' ${command}`]);
+  return stdout.split('\0').slice(0, -1);
+}
+
+describe.each(targets.map((target) => [target.id, target] as const))('options of %s', (id, target) => {
+  it('each have a flag of their own that leads back to them', () => {
+    const names = Object.keys(target.options.shape);
+    const flags = names.map(flagOf);
+    expect(flags.map(optionOf)).toEqual(names);
+    expect(new Set([...flags, '--target', '--out', '--help']).size).toBe(names.length + 3);
+    for (const flag of flags) expect(flag).toMatch(/^--[a-z][a-z0-9]*(-[a-z0-9]+)*$/);
+  });
+
+  it('all reach the command line, which then writes the files of the bench', async () => {
+    const options = optionsOf(target);
+    const shown = renderExport(table, id, options);
+    if (!('files' in shown)) throw new Error(JSON.stringify(shown.problems));
+    const words = await wordsOf(commandFor(name, id, options));
+    expect(words.slice(0, 5)).toEqual(['npm', 'run', '--silent', 'stepwell', '--']);
+    const [render, file, ...flags] = words.slice(5);
+    expect([render, flags.slice(-2)]).toEqual(['render', ['--out', '.']]);
+
+    const said = vi.spyOn(process.stdout, 'write').mockReturnValue(true);
+    const command = new Command();
+    addRender(command);
+    await command.parseAsync([join(folder, file), ...flags.slice(0, -1), join(folder, id)], { from: 'user' });
+    said.mockRestore();
+    for (const { name: fileName, text } of shown.files)
+      expect(await readFile(join(folder, id, fileName), 'utf8')).toBe(text);
+  });
+});
