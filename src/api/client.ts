@@ -112,7 +112,7 @@ function refusalOf(status: number, content: unknown, rates: readonly RateStandin
   ) as Record<string, unknown>;
   const problems = Array.isArray(errors) ? errors.filter(isProblem) : [];
   const kind = typeof type === 'string' ? type.replace(/^.*\//, '') : 'refused';
-  const words = [detail, title].find((text) => typeof text === 'string' && text !== '');
+  const words = [ownWords[kind], detail, title].find((text) => typeof text === 'string' && text !== '');
   return new ProblemError({
     kind,
     status,
@@ -122,6 +122,11 @@ function refusalOf(status: number, content: unknown, rates: readonly RateStandin
     rates,
   });
 }
+
+/** Where the server's own words are for who writes programs. */
+const ownWords: Readonly<Record<string, string>> = {
+  'precondition-failed': 'Somebody else has changed this since you opened it.',
+};
 
 const isProblem = (one: unknown): one is Problem =>
   typeof one === 'object' &&

@@ -24,3 +24,15 @@ export function saySeconds(seconds: number): string {
   const whole = Math.max(1, Math.ceil(count));
   return `${whole} ${unit}${whole === 1 ? '' : 's'}`;
 }
+
+/** Tries left from which on they are told. */
+const fewTries = 5;
+
+/** Tells how many more tries are allowed, once they are few; the tightest limit counts. */
+export function sayTriesLeft(rates: readonly RateStanding[]): string | undefined {
+  const [tightest] = [...rates].sort((a, b) => a.remaining - b.remaining);
+  if (tightest === undefined || tightest.remaining === 0 || tightest.remaining > fewTries) return undefined;
+  const { remaining, resetSeconds } = tightest;
+  const tries = remaining === 1 ? 'One more try is' : `${remaining} more tries are`;
+  return `${tries} allowed in the next ${saySeconds(resetSeconds)}.`;
+}

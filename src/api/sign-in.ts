@@ -1,10 +1,7 @@
 import { accountHasChanged } from './account-state.ts';
 import { fetchOrSay } from './client.ts';
 import { ProblemError } from './problem-error.ts';
-import { readRates, saySeconds, type RateStanding } from './rate-standing.ts';
-
-/** Tries left from which on they are told. */
-const fewTries = 5;
+import { readRates, type RateStanding } from './rate-standing.ts';
 
 /**
  * Signs in by Auth.js's own protocol: it tells its outcome by an address to go on to.
@@ -67,7 +64,7 @@ function refusalOf(
       return new ProblemError({
         kind: 'wrong-sign-in',
         status,
-        message: `Address and password do not belong together.${sayTries(rates)}`,
+        message: 'Address and password do not belong together.',
         rates,
       });
     default:
@@ -78,12 +75,4 @@ function refusalOf(
         rates,
       });
   }
-}
-
-function sayTries(rates: readonly RateStanding[]): string {
-  const [tightest] = [...rates].sort((a, b) => a.remaining - b.remaining);
-  if (tightest === undefined || tightest.remaining > fewTries) return '';
-  const { remaining, resetSeconds } = tightest;
-  const tries = remaining === 1 ? 'One more try is' : `${remaining} more tries are`;
-  return ` ${tries} allowed in the next ${saySeconds(resetSeconds)}.`;
 }

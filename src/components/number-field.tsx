@@ -1,8 +1,8 @@
-import { useId, useState, type KeyboardEvent, type ReactNode } from 'react';
+import { useId, useRef, useState, type KeyboardEvent, type ReactNode } from 'react';
 import { parseQuantity, quantityText, type QuantityReading } from '../../shared/quantities/index.ts';
 import { FieldFrame, describedBy, fieldIds } from './field-frame.tsx';
 import { joinClasses } from './join-classes.ts';
-import { withExponentInSight } from './number-text.ts';
+import { useFittedText } from './number-text.ts';
 import { useUnread } from './unread-fields.ts';
 
 export interface NumberFieldProps {
@@ -70,7 +70,8 @@ export function NumberField({
   // An owner that takes refused numbers has this one, and tells of it itself.
   const isTakenUp = reading.kind === 'number' && Object.is(reading.value, value);
   useUnread(ids.input, label, hasFocus || isTakenUp ? undefined : fault);
-  const shown = hasFocus || isCurrent ? text : withExponentInSight(text);
+  const input = useRef<HTMLInputElement>(null);
+  const shown = useFittedText(input, text, hasFocus || isCurrent);
 
   const write = (next: string) => {
     props.onDraft?.(next);
@@ -114,6 +115,7 @@ export function NumberField({
     >
       <div className="number-box" data-invalid={problem ? '' : undefined}>
         <input
+          ref={input}
           id={ids.input}
           type="text"
           inputMode={unit === '' || props.isInteger ? 'decimal' : 'text'}

@@ -1,4 +1,5 @@
 import { useEffect, useRef, type ReactNode } from 'react';
+import { sayTriesLeft } from '../api/rate-standing.ts';
 import { Button, type ButtonProps } from '../components/index.ts';
 import { ProblemNotice } from './problem-notice.tsx';
 import type { Submitting } from './use-submit.ts';
@@ -34,6 +35,7 @@ export function Form({
 }: FormProps) {
   const form = useRef<HTMLFormElement>(null);
   const { isBusy, fault } = submitting;
+  const triesLeft = fault && sayTriesLeft(fault.rates);
 
   useEffect(() => {
     if (fault) form.current?.querySelector<HTMLElement>('[aria-invalid=true]')?.focus();
@@ -67,6 +69,11 @@ export function Form({
         </Button>
         {aside}
       </div>
+      {triesLeft && (
+        <p className="quiet" role="status">
+          {triesLeft}
+        </p>
+      )}
       {refusedBecause !== undefined && <p className="quiet">{refusedBecause}</p>}
     </form>
   );

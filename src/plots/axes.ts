@@ -4,8 +4,9 @@ import type { PlotTheme } from './plot-theme.ts';
 import type { AxisSpec } from './scene.ts';
 
 /** Room for each side's ticks and titles, in CSS pixels; the same for every plot, so that stacked plots line up. */
-export const gutters = { left: 46, right: 52, top: 24, bottom: 26 };
-export const tickGap = 6;
+export const gutters = { left: 50, right: 56, top: 24, bottom: 26 };
+/** From the frame to the ticks; at the sides with room for the half of a point's handle that stands over the edge. */
+export const tickGaps = { left: 10, right: 10, top: 6, bottom: 6 } as const;
 /** More room at the top where ticks stand there too. */
 export const topTicks = 18;
 
@@ -49,7 +50,6 @@ export function drawAxisTitles(pen: Pen, area: PlotArea, axes: readonly AxisSpec
 /** Lines and labels of the axes, for a file; on the screen the plotting library draws the same ticks. */
 export function drawAxes(pen: Pen, area: PlotArea, axes: readonly AxisSpec[], theme: PlotTheme): void {
   const { unit } = area;
-  const gap = tickGap * unit;
   const label = { color: theme.inkSoft, face: 'figures' } as const;
   const across = (x1: number, y1: number, x2: number, y2: number) => {
     pen.begin();
@@ -58,6 +58,7 @@ export function drawAxes(pen: Pen, area: PlotArea, axes: readonly AxisSpec[], th
     pen.stroke(theme.edge, unit);
   };
   for (const axis of axes) {
+    const gap = tickGaps[axis.side] * unit;
     if (axis.side === 'left' || axis.side === 'right') {
       for (const tick of axis.ticks(area.low, area.high, area.height / unit)) {
         const y = Math.round(area.y(tick)) + 0.5;

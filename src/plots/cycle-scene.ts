@@ -33,6 +33,8 @@ const margin = 0.07;
 /** An entry needs this much width to show where it was sampled, and this much to carry its code. */
 const dotWidth = 18;
 const codeWidth = 44;
+/** Room above and below what is in sight, as a share of its range: codes stand there. */
+const codeRoom = 0.2;
 /** CSS pixels that an axis' title needs before the end of the axis. */
 const titleRoom = 16;
 
@@ -89,7 +91,7 @@ export class CycleScene implements Scene<CycleData> {
       low = Math.min(low, cycle[k], values[k]);
       high = Math.max(high, cycle[k], values[k]);
     }
-    const room = Math.max((high - low) * 0.12, 1.5 * lsb);
+    const room = Math.max((high - low) * codeRoom, 1.5 * lsb);
     return [low - room, high + room];
   }
 
@@ -209,11 +211,18 @@ export class CycleScene implements Scene<CycleData> {
   }
 
   private drawCodes(pen: Pen, area: PlotArea, theme: PlotTheme) {
-    const { codes, values } = this.data;
+    const { codes, values, cycle } = this.data;
     const last = Math.min(this.length, Math.ceil(area.to));
-    const style = { color: theme.brick, face: 'figures', align: 'center', halo: theme.brickWash } as const;
+    const style = { color: theme.brick, face: 'figures', align: 'center' } as const;
     for (let k = Math.max(0, Math.floor(area.from)); k < last; k += 1) {
-      pen.text(String(codes[k]), area.x(k + 0.5), area.y(values[k]) + wordsPx * area.unit, style);
+      // On the side of the tread that the ideal line is not on.
+      const ideal = (cycle[k] + cycle[(k + 1) % this.length]) / 2;
+      const isAbove = ideal < values[k];
+      const y = area.y(values[k]) + (isAbove ? -1 : 1) * wordsPx * area.unit;
+      pen.text(String(codes[k]), area.x(k + 0.5), y, {
+        ...style,
+        halo: isAbove ? theme.paper : theme.brickWash,
+      });
     }
   }
 

@@ -24,10 +24,10 @@ export class ErrorScene implements Scene<Float64Array> {
       {
         side: 'left',
         title: 'error in LSB',
-        ticks: (min, max, px) => decimalTicks(min, max, Math.min(4, px / 26)),
+        ticks: (min, max, px) =>
+          max <= 1.25 ? [-0.5, 0, 0.5] : decimalTicks(min, max, Math.min(4, px / 22)),
         text: tickText,
       },
-      { side: 'right', title: 'LSB', ticks: () => [-0.5, 0.5], text: (half) => (half > 0 ? '+½' : '−½') },
       {
         side: 'bottom',
         title: 'entry',

@@ -1,6 +1,6 @@
 import uPlot from 'uplot';
 import type { Live } from '../live/index.ts';
-import { drawAxisTitles, gutters, tickGap, topTicks } from './axes.ts';
+import { drawAxisTitles, gutters, tickGaps, topTicks } from './axes.ts';
 import { CanvasPen } from './canvas-pen.ts';
 import { forgetFrame, onNextFrame } from './frame.ts';
 import { wordsPx } from './pen.ts';
@@ -143,7 +143,8 @@ export class PlotSurface<Data> {
     const { width, height } = this.size;
     if (width < gutters.left + gutters.right || height < gutters.top + gutters.bottom) return;
     const data = this.data.now();
-    if (!Object.is(data, this.shownData)) this.scene.set(data);
+    const isNew = !Object.is(data, this.shownData);
+    if (isNew) this.scene.set(data);
     this.shownData = data;
     this.shownView = this.link.view();
     const { from, to } = this.view();
@@ -152,6 +153,8 @@ export class PlotSurface<Data> {
       if (this.plot.width !== width || this.plot.height !== height) this.plot.setSize({ width, height });
       this.plot.setScale('x', { min: from, max: to });
       this.plot.setScale('y', { min: low, max: high });
+      // Ticks may say something else though the scales are the same: codes of another depth do.
+      if (isNew) this.plot.redraw(false, true);
     });
   };
 
@@ -210,7 +213,7 @@ export class PlotSurface<Data> {
       scale: isLevel ? 'y' : 'x',
       side: sides[axis.side],
       size: axis.side === 'top' ? gutters.top + topTicks : gutters[axis.side],
-      gap: tickGap,
+      gap: tickGaps[axis.side],
       labelSize: 0,
       stroke: () => plotTheme().inkSoft,
       font: `condensed 400 ${wordsPx}px ${plotTheme().figures}`,

@@ -1,9 +1,10 @@
 import { formatQuantity } from '../../shared/quantities/index.ts';
-import type { Pen } from './pen.ts';
+import { wordsPx, type Pen } from './pen.ts';
 import type { PlotArea } from './plot-area.ts';
 import type { PlotTheme } from './plot-theme.ts';
 import type { AxisSpec, ReadOut, Scene } from './scene.ts';
-import { drawColumns, drawHeads, drawStems, type StemStyle } from './stems.ts';
+import { StemRoom } from './stem-room.ts';
+import { drawColumns, drawHeads, drawStems, layHead, type StemStyle } from './stems.ts';
 import { decimalTicks, logTicks, tickText, wholeTicks } from './ticks.ts';
 
 export interface SpectrumData {
@@ -33,6 +34,9 @@ const deepFloorDb = -160;
 const topDb = 8;
 /** CSS pixels that the title of the harmonics needs before the end of its axis. */
 const titleRoom = 28;
+/** Width of a letter of a label, and of the head before it with the gap after that, in CSS pixels. */
+const letterPx = 7;
+const keyPx = 14;
 /** Lowest level written down, where a line has no amplitude at all (engine specification §4). */
 const leastDb = -200;
 
@@ -47,9 +51,9 @@ export class SpectrumScene implements Scene<SpectrumData> {
   private data: SpectrumData;
   private shown: SpectrumScale;
   private strongestAdded = 1;
-  private strongestIntended = 1;
   private top = 1;
   private floorDb = usualFloorDb;
+  private readonly room = new StemRoom();
 
   constructor(data: SpectrumData, shown: SpectrumScale) {
     this.data = data;
@@ -65,13 +69,12 @@ export class SpectrumScene implements Scene<SpectrumData> {
   set(data: SpectrumData): void {
     this.data = data;
     this.strongestAdded = strongest(data.added);
-    this.strongestIntended = strongest(data.intended);
     const addedDb = levelDb(data.added[this.strongestAdded]);
     this.floorDb = addedDb < usualFloorDb + 10 && addedDb > deepFloorDb ? deepFloorDb : usualFloorDb;
     this.top = Math.max(
       0.01,
       data.amplitudes[0],
-      data.intended[this.strongestIntended],
+      data.intended[strongest(data.intended)],
       data.added[this.strongestAdded],
     );
   }
@@ -115,7 +118,7 @@ export class SpectrumScene implements Scene<SpectrumData> {
     drawStems(pen, area, this, intended, first, firstDense, intendedStyle);
     drawHeads(pen, area, this, intended, first, firstDense, intendedStyle);
     drawHeads(pen, area, this, added, first, firstDense, addedStyle);
-    this.labels(pen, area, theme);
+    this.labels(pen, area, theme, { intended: intendedStyle, added: addedStyle });
   }
 
   /** Height of an amplitude on the scale that is shown. */
@@ -221,55 +224,47 @@ export class SpectrumScene implements Scene<SpectrumData> {
     return Math.min(count, Math.max(this.firstShown(area), Math.ceil(1 / (10 ** (spacing / perUnit) - 1))));
   }
 
-  private labels(pen: Pen, area: PlotArea, theme: PlotTheme) {
+  /** Says which lines are which, each with the head that its lines have, near its strongest line in sight. */
+  private labels(
+    pen: Pen,
+    area: PlotArea,
+    theme: PlotTheme,
+    styles: Record<'intended' | 'added', StemStyle>,
+  ) {
     const { intended, added } = this.data;
     const { unit } = area;
-    const lift = 13 * unit;
+    const level = formatQuantity(levelDb(added[this.strongestAdded]), 'dBFS', { decimals: 1 });
+    const most = area.width > 480 * unit ? `added by quantising, at most ${level}` : `added, ≤ ${level}`;
     const [low] = this.yRange();
-    const label = (
-      bin: number,
-      amplitude: number,
-      words: string,
-      color: string,
-      width: number,
-      rise: number,
-    ) => {
-      if (bin < this.items()[0] || this.heightOf(amplitude) <= low) return;
-      const x = area.x(this.placeOf(bin));
-      if (x < area.left || x > area.right) return;
-      const y = Math.max(area.top + 9 * unit, area.y(this.heightOf(amplitude)) - rise);
-      const isLate = x + width * unit > area.right;
-      const align = isLate ? 'right' : 'left';
-      pen.text(words, x + (isLate ? -1 : 1) * 8 * unit, y, { color, align, weight: 650, halo: theme.paper });
-    };
-    const worst = this.strongestAdded;
-    const level = formatQuantity(levelDb(added[worst]), 'dBFS', { decimals: 1 });
-    const told = this.lineWithRoom(area, 70 * unit);
-    label(told, intended[told], 'intended', theme.water, 70, 0);
-    const words = area.width > 480 * unit ? `added by quantising, at most ${level}` : `added, ≤ ${level}`;
-    label(worst, added[worst], words, theme.brick, words.length * 7, lift);
+    this.room.measure(area, this, [intended, added], this.items()[0]);
+    const labels = [
+      { name: 'intended', words: 'intended', lines: intended, color: theme.water },
+      { name: 'added', words: most, lines: added, color: theme.brick },
+    ] as const;
+    labels.forEach(({ name, words, lines, color }, index) => {
+      const bin = this.strongestInSight(area, lines);
+      const height = this.heightOf(lines[bin]);
+      if (!(height > low)) return;
+      const width = (words.length * letterPx + keyPx) * unit;
+      const at = { x: area.x(this.placeOf(bin)), y: area.y(height) };
+      const size = { width, height: wordsPx * unit, head: 8 * unit };
+      // Where stems fill it all, the label lies over them.
+      const spot = this.room.find(area, name, at, size) ?? {
+        left: area.right - width,
+        y: area.top + (9 + 17 * index) * unit,
+      };
+      pen.text(words, spot.left + keyPx * unit, spot.y, { color, weight: 650, halo: theme.paper });
+      pen.begin();
+      layHead(pen, styles[name], spot.left + 5 * unit, spot.y, styles[name].radius);
+      pen.fill(color);
+    });
   }
 
-  /** The strongest intended line with room for a label before the next one; the strongest of all where none has. */
-  private lineWithRoom(area: PlotArea, width: number): number {
-    const { intended } = this.data;
-    // What can be seen: over the floor of levels, or a hundredth of the scale of amplitudes.
-    const least = this.shown.level === 'db' ? 10 ** (this.floorDb / 20) : this.top / 100;
-    let best = this.strongestIntended;
-    let bestAmplitude = 0;
-    let before = -1;
-    const last = Math.min(intended.length - 1, Math.floor(this.binAt(area.to)));
-    for (let bin = this.firstShown(area); bin <= last + 1; bin += 1) {
-      const isLine = bin > last || intended[bin] > least;
-      if (!isLine) continue;
-      const hasRoom = before >= 0 && area.x(this.placeOf(bin)) - area.x(this.placeOf(before)) > width;
-      if (hasRoom && intended[before] > bestAmplitude) {
-        best = before;
-        bestAmplitude = intended[before];
-      }
-      before = bin;
-    }
-    return best;
+  private strongestInSight(area: PlotArea, lines: Float64Array): number {
+    let best = Math.max(this.firstShown(area), Math.ceil(this.binAt(area.from)), 1);
+    const last = Math.min(lines.length - 1, Math.floor(this.binAt(area.to)));
+    for (let bin = best + 1; bin <= last; bin += 1) if (lines[bin] > lines[best]) best = bin;
+    return Math.min(best, lines.length - 1);
   }
 
   private levelAxis(): AxisSpec {

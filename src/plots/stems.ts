@@ -113,7 +113,8 @@ function standsOut(amplitudes: Float64Array, bin: number, times = isolation): bo
   return here > times * (amplitudes[bin - 1] ?? 0) && here > times * (amplitudes[bin + 1] ?? 0);
 }
 
-function layHead(pen: Pen, style: StemStyle, x: number, y: number, radius: number) {
+/** Lays one head's outline. */
+export function layHead(pen: Pen, style: StemStyle, x: number, y: number, radius: number) {
   const corners = style.head === 'diamond' ? 4 : 16;
   for (let corner = 0; corner < corners; corner += 1) {
     const angle = (2 * Math.PI * corner) / corners;

@@ -31,6 +31,7 @@ export function AccountMenu({ onSignedOut }: AccountMenuProps) {
     try {
       const { signOut } = await import('../api/sign-in.ts');
       await signOut();
+      await navigate(paths.bench);
       onSignedOut();
       toast('You are signed out. What is on the bench stays in this browser.');
     } catch (error) {

@@ -3,6 +3,7 @@ import { field, saidBeside } from '../support/bench-page.ts';
 import {
   freshEmail,
   isKnown,
+  join,
   linkIn,
   mailTo,
   makePerson,
@@ -96,9 +97,8 @@ test('a wrong sign-in says so, tells when few tries are left, and keeps the addr
     const [answer] = await Promise.all([page.waitForResponse(/callback\/credentials/), send.click()]);
     await answer.finished();
   }
-  await expect(page.getByText('Address and password do not belong together.')).toContainText(
-    /5 more tries are allowed in the next 1\d minutes/,
-  );
+  await expect(page.getByText('Address and password do not belong together.')).toBeVisible();
+  await expect(page.getByText(/5 more tries are allowed in the next 1\d minutes/)).toBeVisible();
   await expect(field(page, 'E-mail address')).toHaveValue(person.email);
   await typed.fill(person.password);
   await send.click();
@@ -189,8 +189,11 @@ test('sessions are listed and ended, one or all others', async ({ page, context,
 test('signing out forgets the person and leaves the wave on the bench', async ({ page, context }) => {
   const person = await makePerson(page.request, 'Ines Marlow');
   await signIn(context, person);
+  const team = await makeTeam(page.request, 'Night shift');
   await page.goto('/');
   await field(page, 'Name of the wave').fill('Stays here');
+  await page.getByRole('link', { name: 'Tables', exact: true }).click();
+  await expect(page).toHaveURL(new RegExp(`/teams/${team}/tables`));
   await page.getByRole('button', { name: `Account of ${person.name}` }).click();
   await page.getByRole('menuitem', { name: 'Sign out' }).click();
   await expect(page.getByRole('banner').getByRole('link', { name: 'Sign in' })).toBeVisible();
@@ -220,6 +223,31 @@ test('an account is deleted once its consequences are told', async ({ page, cont
   await page.getByLabel('Password', { exact: true }).fill(person.password);
   await page.getByRole('main').getByRole('button', { name: 'Sign in' }).click();
   await expect(page.getByText('Address and password do not belong together.')).toBeVisible();
+});
+
+test('the last admin of a team with others cannot delete the account, and is told why', async ({
+  page,
+  context,
+  browser,
+}) => {
+  const [person, mate] = [
+    await makePerson(page.request, 'Ines Marlow'),
+    await makePerson(page.request, 'Vera Quill'),
+  ];
+  await signIn(context, person);
+  const team = await makeTeam(page.request, 'Two at the pier');
+  const other = await browser.newContext();
+  await signIn(other, mate);
+  await join(page.request, team, mate, 'viewer', other.request);
+  await page.goto('/account');
+  await page.getByRole('button', { name: 'Delete the account…' }).click();
+  const dialog = page.getByRole('dialog');
+  await expect(dialog).toContainText('Make somebody else an admin of Two at the pier first');
+  await expect(dialog.getByRole('button', { name: 'Delete it for good' })).toHaveAttribute(
+    'aria-disabled',
+    'true',
+  );
+  await other.close();
 });
 
 test('a place that needs an account sends to sign in and comes back, and nowhere else', async ({ page }) => {

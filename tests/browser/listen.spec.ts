@@ -1,62 +1,8 @@
 import { expect, test, type Page } from '@playwright/test';
+import { heardOf, openListening, overhear, play, stop } from '../support/listening.ts';
 
 const dB = (ratio: number) => 20 * Math.log10(ratio);
 
-/**
- * Watches from the test's side what a page sends to its loudspeaker: contexts made, and every frame that reaches one's
- * destination. The page itself knows nothing of it.
- */
-async function overhear(page: Page): Promise<void> {
-  await page.addInitScript(() => {
-    const heard = { contexts: [] as AudioContext[], blocks: [] as Float32Array[] };
-    Object.assign(window, { heard });
-    const RealContext = AudioContext;
-    window.AudioContext = class extends RealContext {
-      constructor(options?: AudioContextOptions) {
-        super(options);
-        heard.contexts.push(this);
-      }
-    };
-    const connect = AudioNode.prototype.connect;
-    AudioNode.prototype.connect = function (this: AudioNode, ...to: [never]) {
-      const target: unknown = to[0];
-      if (target instanceof AudioDestinationNode) {
-        // Deprecated, but it needs no file of its own that the content policy would have to allow.
-        const tap = (this.context as AudioContext).createScriptProcessor(4096, 1, 1);
-        tap.onaudioprocess = ({ inputBuffer }) => heard.blocks.push(inputBuffer.getChannelData(0).slice());
-        connect.call(this, tap as never);
-        connect.call(tap, target as never);
-      }
-      return connect.apply(this, to);
-    } as typeof connect;
-  });
-}
-
-interface Heard {
-  contexts: AudioContext[];
-  blocks: Float32Array[];
-}
-
-const heardOf = (page: Page) => ({
-  contexts: () =>
-    page.evaluate(() => (window as unknown as { heard: Heard }).heard.contexts.map(({ state }) => state)),
-  forget: () =>
-    page.evaluate(() => {
-      (window as unknown as { heard: Heard }).heard.blocks.length = 0;
-    }),
-  frames: () =>
-    page.evaluate(() => (window as unknown as { heard: Heard }).heard.blocks.flatMap((block) => [...block])),
-});
-
-async function openListening(page: Page): Promise<void> {
-  await page.goto('/');
-  const tread = page.locator('#output').getByRole('button').first();
-  if ((await tread.getAttribute('aria-expanded')) === 'false') await tread.click();
-  await expect(page.getByRole('heading', { name: 'Listen' })).toBeVisible();
-}
-
-const play = (page: Page) => page.getByRole('button', { name: 'Play', exact: true });
-const stop = (page: Page) => page.locator('.listen').getByRole('button', { name: 'Stop', exact: true });
 const strongestLines = (page: Page) => page.getByRole('table', { name: /Strongest lines/ });
 
 /** Sets the five partials of the fog-signal tone that stands on the bench at the first visit. */
@@ -211,37 +157,6 @@ test.describe('listening on the bench', () => {
     await page.getByRole('textbox', { name: 'Tone' }).fill('440');
     await play(page).click();
     await expect(page.getByText('The browser finds no output device')).toBeVisible();
-  });
-
-  test('says so where the browser keeps the sound back', async ({ playwright }, { project }) => {
-    // The policy that people's browsers have: a page may sound from its visitor's first gesture on.
-    const { launchOptions, baseURL } = project.use;
-    const args = [...(launchOptions?.args ?? []), '--autoplay-policy=document-user-activation-required'];
-    const browser = await playwright.chromium.launch({ ...launchOptions, args });
-    const page = await browser.newPage({ baseURL });
-    await overhear(page);
-    // Clicks by a script of the page are no gesture, so the browser leaves the context suspended.
-    await page.addInitScript(() => {
-      const timer = setInterval(() => {
-        document.querySelector<HTMLElement>('#output [aria-expanded=false]')?.click();
-        const button = [...document.querySelectorAll('button')].find(
-          ({ textContent }) => textContent === 'Play',
-        );
-        if (button === undefined) return;
-        button.click();
-        console.debug('pressed');
-        clearInterval(timer);
-      }, 100);
-    });
-    const pressed = page.waitForEvent('console', (message) => message.text() === 'pressed');
-    await page.goto('/');
-    await pressed;
-    // Asking the page anything through the test's own door would count as a gesture.
-    await page.waitForTimeout(3_000);
-    await expect(page.getByText('The browser has not started its audio')).toBeVisible({ timeout: 6_000 });
-    expect(await heardOf(page).contexts()).toEqual(['suspended']);
-    await expect(play(page)).toBeVisible();
-    await browser.close();
   });
 
   test('a stop stays in sight while the panel is not', async ({ page }) => {

@@ -32,6 +32,7 @@ test('from a wave shaped by nobody to a second person who exports it and may not
 
   await page.getByRole('button', { name: 'Save', exact: true }).click();
   await page.getByRole('dialog').getByRole('link', { name: 'Make an account' }).click();
+  await expect(page.getByRole('heading', { level: 1, name: 'Make an account' })).toBeVisible();
   await field(page, 'Name').fill('Ada Keel');
   await field(page, 'E-mail address').fill(email);
   await page.getByLabel('Password', { exact: true }).fill('nine fathoms deep');
@@ -78,6 +79,7 @@ test('from a wave shaped by nobody to a second person who exports it and may not
   await expect(other.getByRole('heading', { name: 'Join Harbour office' })).toBeVisible();
   await expect(other.getByText('as viewer')).toBeVisible();
   await other.getByRole('link', { name: 'make one with it' }).click();
+  await expect(other.getByRole('heading', { level: 1, name: 'Make an account' })).toBeVisible();
   await expect(field(other, 'E-mail address')).toHaveValue(guestEmail);
   await field(other, 'Name').fill('Vera Quill');
   await other.getByLabel('Password', { exact: true }).fill('down with the lamp');

@@ -1,6 +1,6 @@
 import { describe, expect, test } from 'vitest';
 import { teamAmong } from '../../src/api/current-team.ts';
-import { readRates, saySeconds } from '../../src/api/rate-standing.ts';
+import { readRates, sayTriesLeft, saySeconds } from '../../src/api/rate-standing.ts';
 import { sayMoment } from '../../src/components/moment.tsx';
 import { sayClient } from '../../src/features/account/say-client.ts';
 import { sectionsOf } from '../../src/features/api-page/operations.ts';
@@ -17,6 +17,15 @@ describe('RateLimit headers', () => {
     ]);
     expect(readRates(null)).toEqual([]);
     expect(readRates('limit=10, remaining=9')).toEqual([]);
+  });
+
+  test('few tries left are told, by the tightest limit', () => {
+    const standing = (remaining: number) => ({ policy: 'sign-in', remaining, resetSeconds: 840 });
+    expect(sayTriesLeft([standing(96), standing(3)])).toBe(
+      '3 more tries are allowed in the next 14 minutes.',
+    );
+    expect(sayTriesLeft([standing(1)])).toBe('One more try is allowed in the next 14 minutes.');
+    for (const rates of [[], [standing(6)], [standing(0)]]) expect(sayTriesLeft(rates)).toBeUndefined();
   });
 
   test.each([

@@ -170,6 +170,13 @@ export const readTable = (request: APIRequestContext, team: string, slug: string
     `/teams/${team}/tables/${slug}`,
   );
 
+/** Signs a page in as a new person with a team of their own. */
+export async function beginWithTeam(page: Page, name = 'Aldo Brine') {
+  const person = await makePerson(page.request, name);
+  await signIn(page.context(), person);
+  return { person, team: await makeTeam(page.request) };
+}
+
 /** Waits until the page knows who is signed in. */
 export const isKnown = (page: Page, { name }: BrowserPerson) =>
   expect(page.getByRole('button', { name: `Account of ${name}` })).toBeVisible();

@@ -15,7 +15,7 @@ interface OptionFieldProps {
 
 const labels: Readonly<Record<string, string>> = {
   arrayName: 'Array name',
-  arrayPrefix: 'Prefix of array names',
+  arrayPrefix: 'Prefix',
   licenceLine: 'Licence line',
   port: 'Port',
   highPort: 'Port of bit 8 and up',

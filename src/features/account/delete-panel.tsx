@@ -31,6 +31,8 @@ export function DeletePanel({ account }: { account: Account }) {
 
 function DeleteForm({ account }: { account: Account }) {
   const [currentPassword, setCurrentPassword] = useState('');
+  const fates = useFates(account);
+  const stuck = fates.filter(({ isStuck }) => isStuck).map(({ teamName }) => teamName);
   const navigate = useNavigate();
   const toast = useToast();
   const deleting = useSubmit(async (typed: { currentPassword: string }) => {
@@ -46,8 +48,24 @@ function DeleteForm({ account }: { account: Account }) {
       submitting={deleting}
       onSubmit={() => void deleting.submit({ currentPassword })}
       fields={['currentPassword']}
+      refusedBecause={
+        stuck.length > 0
+          ? `Make somebody else an admin of ${stuck.join(' and of ')} first, or remove the other members.`
+          : undefined
+      }
     >
-      <Consequences account={account} />
+      <p>
+        {fates.length === 0
+          ? 'You belong to no team; nothing else is deleted with the account.'
+          : 'What becomes of your teams:'}
+      </p>
+      <ul className="list-disc space-y-1 pl-5">
+        {fates.map(({ teamSlug, teamName, words }) => (
+          <li key={teamSlug}>
+            <strong className="wrap-anywhere">{teamName}</strong>: {words}
+          </li>
+        ))}
+      </ul>
       <PasswordField
         label="Current password"
         autoComplete="current-password"
@@ -59,28 +77,31 @@ function DeleteForm({ account }: { account: Account }) {
   );
 }
 
-/** What becomes of each team. */
-function Consequences({ account }: { account: Account }) {
-  const answers = useQueries({
-    queries: account.memberships.map(({ teamSlug }) => teamQueries.members(teamSlug)),
-  });
-  if (account.memberships.length === 0) return <p>You belong to no team; nothing else is deleted.</p>;
-  return (
-    <ul className="list-disc space-y-1 pl-5">
-      {account.memberships.map(({ teamSlug, teamName }, index) => (
-        <li key={teamSlug}>
-          <strong className="break-words">{teamName}</strong>: {becomes(answers[index].data, account.id)}
-        </li>
-      ))}
-    </ul>
-  );
+interface Fate {
+  readonly teamSlug: string;
+  readonly teamName: string;
+  readonly words: string;
+  /** Whether the account cannot be deleted for it. */
+  readonly isStuck: boolean;
 }
 
-function becomes(members: readonly Member[] | undefined, ownId: number): string {
-  if (members === undefined) return 'looking up who else belongs to it…';
+/** What becomes of each team. */
+function useFates({ id, memberships }: Account): Fate[] {
+  const answers = useQueries({ queries: memberships.map(({ teamSlug }) => teamQueries.members(teamSlug)) });
+  return memberships.map(({ teamSlug, teamName }, index) => ({
+    teamSlug,
+    teamName,
+    ...fateOf(answers[index].data, id),
+  }));
+}
+
+function fateOf(members: readonly Member[] | undefined, ownId: number): Pick<Fate, 'words' | 'isStuck'> {
+  if (members === undefined) return { words: 'looking up who else belongs to it…', isStuck: false };
   const others = members.filter(({ userId }) => userId !== ownId);
-  if (others.length === 0) return 'you are its only member, so it is deleted with all its tables.';
+  if (others.length === 0) {
+    return { words: 'you are its only member, so it is deleted with all its tables.', isStuck: false };
+  }
   return others.some(({ role }) => role === 'admin')
-    ? 'it stays with its other members.'
-    : 'you are its last admin; make somebody else one first, or the account cannot be deleted.';
+    ? { words: 'it stays with its other members.', isStuck: false }
+    : { words: 'you are its last admin, and it has other members.', isStuck: true };
 }

@@ -1,12 +1,16 @@
 import type { ReactNode } from 'react';
 import { Link, useLocation } from 'react-router-dom';
+import { linkTokenField } from '../../../shared/contract/index.ts';
 import { Button, EmptyState, Page } from '../../components/index.ts';
 import { ProblemNotice } from '../../forms/problem-notice.tsx';
 import { useSubmit } from '../../forms/use-submit.ts';
 import { paths } from '../../paths.ts';
 
-/** The token of a mailed link: it stands in the fragment, which is sent to no server. */
-export const useLinkToken = (): string => useLocation().hash.slice(1);
+/** The token of a mailed link: it stands in the fragment, which is sent to no server. Empty where it is not whole. */
+export function useLinkToken(): string {
+  const token = useLocation().hash.slice(1);
+  return linkTokenField.safeParse(token).success ? token : '';
+}
 
 /** What a mailed link leads to when its token is missing. */
 export function NoToken() {
@@ -21,8 +25,8 @@ export function NoToken() {
       }
     >
       <p>
-        The part behind the # is missing. Open the link from the mail itself, or copy it as a whole: some
-        programs cut long links.
+        The part behind the # is missing or has been cut. Open the link from the mail itself, or copy it as a
+        whole: some programs cut long links.
       </p>
     </EmptyState>
   );

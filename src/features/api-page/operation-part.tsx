@@ -15,7 +15,7 @@ export function OperationPart({ route, document }: { route: Route; document: Api
       </summary>
       <div className="route-body">
         <p>
-          {operation.description} {isOpen ? 'Open to anybody.' : 'Takes a signed-in person.'}
+          {operation.description} {isOpen ? 'Open to anybody.' : 'Needs a sign-in.'}
         </p>
         <Parameters route={route} document={document} />
         <Body route={route} />
@@ -42,7 +42,7 @@ function Parameters({ route: { operation }, document }: { route: Route; document
               </span>
             </dt>
             <dd>
-              {description && <span>{description}. </span>}
+              {description && <span>{description.replace(/\.?$/, '. ')}</span>}
               {schema && <SchemaView schema={schema} />}
             </dd>
           </div>

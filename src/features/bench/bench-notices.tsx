@@ -1,7 +1,8 @@
 import { useState } from 'react';
 import { Button, Caution, IconButton, icons } from '../../components/index.ts';
 import { saveText } from '../../components/save-text.ts';
-import { theBench, useBench } from './state/use-bench.ts';
+import { examples } from './state/examples.ts';
+import { theBench, useBench, useDefinition } from './state/use-bench.ts';
 
 /** What there is to know about where the work is kept, and how to begin. */
 export function BenchNotices() {
@@ -28,10 +29,14 @@ export function BenchNotices() {
   );
 }
 
-/** Stays until it is put away or the page is opened again: going with the first change it would move what is dragged. */
+/**
+ * Tells how to begin. It stays until it is put away, the wave goes by another name or the page is opened again: going
+ * with the first change it would move what is dragged.
+ */
 function Welcome() {
   const [isShown, setIsShown] = useState(() => theBench().getState().isUntouched);
-  if (!isShown) return null;
+  const isItsWave = useDefinition(({ name }) => name === examples[0].work.definition.name);
+  if (!isShown || !isItsWave) return null;
   return (
     <div className="bench-welcome">
       <p>

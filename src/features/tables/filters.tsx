@@ -5,6 +5,7 @@ import { ProblemError } from '../../api/problem-error.ts';
 import { tableQueries, type ListQuery } from '../../api/tables.ts';
 import { Button, ChoiceField, SelectField, TextField } from '../../components/index.ts';
 import { changedQuery, isFiltered, isSort, sortedBy, unfiltered, viewOf } from './list-query.ts';
+import type { ChangeQuery } from './use-list-query.ts';
 import { sortWords } from './sort-words.ts';
 import { stateLooks } from './state-word.tsx';
 import { useIsNarrow } from './use-is-narrow.ts';
@@ -12,7 +13,7 @@ import { useIsNarrow } from './use-is-narrow.ts';
 interface FiltersProps {
   team: string;
   query: ListQuery;
-  onChange: (next: Record<string, string>, how?: { replace?: boolean }) => void;
+  onChange: ChangeQuery;
 }
 
 /** A typed search goes into the address once it rests, in milliseconds. */
@@ -23,7 +24,7 @@ export function Filters({ team, query, onChange }: FiltersProps) {
   const view = viewOf(query);
   const { data: tags = [] } = useQuery(tableQueries.tags(team));
   const isNarrow = useIsNarrow();
-  const set = (part: Record<string, string | undefined>) => onChange(changedQuery(query, part));
+  const set = (part: Record<string, string | undefined>) => onChange((before) => changedQuery(before, part));
   const known = tags.map(({ tag, tables }) => ({ value: tag, label: `${tag} (${tables})` }));
   const tagOptions =
     view.tag === undefined || tags.some(({ tag }) => tag === view.tag)
@@ -61,11 +62,11 @@ export function Filters({ team, query, onChange }: FiltersProps) {
           label="Sorted by"
           value={view.sort}
           options={Object.entries(sortWords).map(([value, label]) => ({ value, label }))}
-          onChange={(sort) => isSort(sort) && onChange(sortedBy(query, sort))}
+          onChange={(sort) => isSort(sort) && onChange((before) => sortedBy(before, sort))}
         />
       )}
       {isFiltered(query) && (
-        <Button variant="quiet" onPress={() => onChange(unfiltered(query))}>
+        <Button variant="quiet" onPress={() => onChange(unfiltered)}>
           Clear the filters
         </Button>
       )}
@@ -87,7 +88,7 @@ function SearchField({ team, query, onChange }: FiltersProps) {
     if (text === kept) return;
     const timer = setTimeout(() => {
       setTyped((before) => ({ ...before, over: text }));
-      onChange(changedQuery(query, { search: text }), { replace: true });
+      onChange((before) => changedQuery(before, { search: text }), { replace: true });
     }, restMs);
     return () => clearTimeout(timer);
     // A new address brings new functions; only what was typed is to start the clock.

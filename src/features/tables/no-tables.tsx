@@ -9,12 +9,13 @@ import { useSubmit } from '../../forms/use-submit.ts';
 import { paths, tablePath } from '../../paths.ts';
 import { workingExample } from './example.ts';
 import { changedQuery, isFiltered, unfiltered } from './list-query.ts';
+import type { ChangeQuery } from './use-list-query.ts';
 
 interface NoTablesProps {
   team: string;
   query: ListQuery;
   mayEdit: boolean;
-  onChange: (next: Record<string, string>) => void;
+  onChange: ChangeQuery;
 }
 
 /** An empty list: by its filters, behind its last page, or because nothing has been saved yet. */
@@ -23,7 +24,7 @@ export function NoTables({ team, query, mayEdit, onChange }: NoTablesProps) {
     return (
       <EmptyState
         title="Nothing more on this page"
-        actions={<Button onPress={() => onChange(changedQuery(query, {}))}>First page</Button>}
+        actions={<Button onPress={() => onChange((before) => changedQuery(before, {}))}>First page</Button>}
       >
         <p>What stood here has moved or gone meanwhile.</p>
       </EmptyState>
@@ -35,7 +36,7 @@ export function NoTables({ team, query, mayEdit, onChange }: NoTablesProps) {
         title={
           query.archived === 'yes' ? 'Nothing in the archive that fits' : 'No table passes these filters'
         }
-        actions={<Button onPress={() => onChange(unfiltered(query))}>Clear the filters</Button>}
+        actions={<Button onPress={() => onChange(unfiltered)}>Clear the filters</Button>}
       >
         <p>The search looks for beginnings of words in names and tags; case and accents do not count.</p>
       </EmptyState>

@@ -72,7 +72,7 @@ function RenameForm({ team, table, onClose, onChanged }: Omit<RenameDialogProps,
       {theirs !== null && (
         <section className="slab slab-saffron" aria-label="Both sides">
           <div className="min-w-0 grow">
-            <p>
+            <p role="alert">
               <strong>The table has changed meanwhile.</strong> Nothing you typed is lost.
             </p>
             <table className="ledger">

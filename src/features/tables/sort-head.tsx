@@ -2,11 +2,12 @@ import type { ListQuery } from '../../api/tables.ts';
 import { icons } from '../../components/index.ts';
 import { sortedBy, viewOf, type Sort } from './list-query.ts';
 import { sortWords } from './sort-words.ts';
+import type { ChangeQuery } from './use-list-query.ts';
 
 interface SortHeadProps {
   sort: Sort;
   query: ListQuery;
-  onChange: (next: Record<string, string>) => void;
+  onChange: ChangeQuery;
   isNumber?: boolean;
 }
 
@@ -21,7 +22,11 @@ export function SortHead({ sort, query, onChange, isNumber = false }: SortHeadPr
       aria-sort={isSorted ? (view.direction === 'asc' ? 'ascending' : 'descending') : undefined}
       className={isNumber ? 'is-number' : undefined}
     >
-      <button type="button" className="sort-head" onClick={() => onChange(sortedBy(query, sort))}>
+      <button
+        type="button"
+        className="sort-head"
+        onClick={() => onChange((before) => sortedBy(before, sort))}
+      >
         {sortWords[sort]}
         <span className="sort-arrow">{isSorted && <Arrow width="14" height="14" />}</span>
       </button>

@@ -12,6 +12,7 @@ import { sayBytes, saySize, saySnr } from './say-figures.ts';
 import { SortHead } from './sort-head.tsx';
 import { StateWord } from './state-word.tsx';
 import { useIsNarrow } from './use-is-narrow.ts';
+import type { ChangeQuery } from './use-list-query.ts';
 
 interface TablesListProps {
   team: string;
@@ -19,7 +20,7 @@ interface TablesListProps {
   isArchived: boolean;
   query: ListQuery;
   player: RowPlayer;
-  onChange: (next: Record<string, string>) => void;
+  onChange: ChangeQuery;
 }
 
 /** The tables that were found: rows, or cards where there is no room for rows. */

@@ -1,14 +1,7 @@
 import './tables.css';
 import { useQuery, useSuspenseQuery, type QueryClient } from '@tanstack/react-query';
 import { useRef, type RefObject } from 'react';
-import {
-  Link,
-  useLocation,
-  useNavigation,
-  useParams,
-  useSearchParams,
-  type LoaderFunctionArgs,
-} from 'react-router-dom';
+import { Link, useParams, type LoaderFunctionArgs } from 'react-router-dom';
 import { includesRole } from '../../../shared/contract/index.ts';
 import { chooseTeam } from '../../api/current-team.ts';
 import { asProblem, ProblemError } from '../../api/problem-error.ts';
@@ -25,6 +18,7 @@ import { Pager } from './pager.tsx';
 import { PlayingBar } from './play-button.tsx';
 import { useRowPlayer } from './row-player.ts';
 import { TablesList } from './tables-list.tsx';
+import { useListQuery, type ChangeQuery } from './use-list-query.ts';
 
 export const tablesLoader = (queryClient: QueryClient) => async (args: LoaderFunctionArgs) => {
   const team = args.params.team ?? '';
@@ -55,16 +49,12 @@ export function TablesPage() {
 
 function Library({ team: slug }: { team: string }) {
   const { data: team } = useSuspenseQuery(teamQueries.detail(slug));
-  const [parameters, setParameters] = useSearchParams();
-  const query = readListQuery(parameters);
-  const wanted = useWantedQuery() ?? query;
+  const { query, wanted, change } = useListQuery();
   const page = useRef<HTMLDivElement>(null);
   const mayEdit = includesRole(team.myRole, 'author');
   useKeyGroup(listKeys);
   useSearchKey(page);
 
-  const change = (next: Record<string, string>, how: { replace?: boolean } = {}) =>
-    setParameters(next, { ...how, preventScrollReset: true });
   return (
     <Page
       title="Tables"
@@ -95,7 +85,7 @@ interface FoundProps {
   team: string;
   query: ListQuery;
   mayEdit: boolean;
-  onChange: (next: Record<string, string>) => void;
+  onChange: ChangeQuery;
 }
 
 function Found({ team, query, mayEdit, onChange }: FoundProps) {
@@ -122,13 +112,6 @@ function Found({ team, query, mayEdit, onChange }: FoundProps) {
       <PlayingBar player={player} />
     </>
   );
-}
-
-/** What is being gone to: a filter shows as chosen at once, before its tables are here. */
-function useWantedQuery(): ListQuery | undefined {
-  const { location: goal } = useNavigation();
-  const { pathname } = useLocation();
-  return goal?.pathname === pathname ? readListQuery(new URLSearchParams(goal.search)) : undefined;
 }
 
 /** `/` goes to the search. */

@@ -7,7 +7,7 @@ export function BothSides({ mine, theirs }: { mine: TeamDefaults; theirs: TeamDe
   return (
     <section className="slab slab-saffron" aria-label="Both sides">
       <div className="min-w-0 grow">
-        <p>
+        <p role="alert">
           <strong>Somebody else has kept other defaults meanwhile.</strong>{' '}
           {differing.length === 0
             ? 'They are the same as yours.'

@@ -21,7 +21,7 @@ export function Conflict({ link, theirs }: ConflictProps) {
   if (number === link.newest) {
     return (
       <section className="slab slab-saffron" aria-label="Both sides">
-        <p>
+        <p role="alert">
           <strong>{theirs.changedBy.name} has changed the table’s name or tags meanwhile.</strong> It is now{' '}
           {theirs.title}; revision {number} is still the newest. Nothing stands in the way of yours.
         </p>
@@ -31,7 +31,7 @@ export function Conflict({ link, theirs }: ConflictProps) {
   return (
     <section className="slab slab-saffron" aria-label="Both sides">
       <div className="min-w-0 grow space-y-3">
-        <p>
+        <p role="alert">
           <strong>Somebody else was faster.</strong> Revision {number} was saved while you worked on revision{' '}
           {link.revision}. Save yours as the next one, or look at theirs first; nothing of yours is lost.
         </p>

@@ -174,7 +174,8 @@ const PartialRow = memo(function PartialRow(props: PartialRowProps) {
 
 function LevelTold({ amplitude, strongest }: { amplitude: number; strongest: number }) {
   if (amplitude === 0) return '−∞ dB';
-  return formatQuantity(relativeDb(amplitude, strongest), 'dB', { decimals: 1 });
+  const level = relativeDb(amplitude, strongest);
+  return formatQuantity(level, 'dB', { decimals: level > -100 ? 1 : 0 });
 }
 
 function LeftOut() {
