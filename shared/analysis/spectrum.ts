@@ -1,4 +1,4 @@
-import { transformOf } from './transform.ts';
+import { transformOf } from '../dft/index.ts';
 
 /** One-sided spectra of a table of N entries, bins 0…⌊N/2⌋ (engine specification §4). */
 export interface Spectrum {

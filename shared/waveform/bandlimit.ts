@@ -1,4 +1,4 @@
-import type { Lines } from '../analysis/index.ts';
+import type { Lines } from '../dft/index.ts';
 import type { TableSettings } from '../contract/index.ts';
 import { addHarmonics, type HarmonicLine } from './harmonic-sum.ts';
 

@@ -1,4 +1,4 @@
-import { transformOf } from '../analysis/index.ts';
+import { transformOf } from '../dft/index.ts';
 import type { TableSettings } from '../contract/index.ts';
 import { stepFraction } from './phases.ts';
 

@@ -1,4 +1,4 @@
-import { lowLinesOf } from '../analysis/index.ts';
+import { lowLinesOf } from '../dft/index.ts';
 import type { PointsSource, TableSettings } from '../contract/index.ts';
 import { bandlimitedCycle, nyquistHarmonic } from './bandlimit.ts';
 import { closedCurve } from './interpolate.ts';

@@ -1,4 +1,4 @@
-import { linesOf } from '../analysis/index.ts';
+import { linesOf } from '../dft/index.ts';
 import type { SamplesSource, TableSettings } from '../contract/index.ts';
 import { bandlimitedCycle, nyquistHarmonic } from './bandlimit.ts';
 import { phasesOf, stepFraction } from './phases.ts';

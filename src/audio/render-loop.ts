@@ -1,4 +1,4 @@
-import { transformOf, type Lines } from '../../shared/analysis/index.ts';
+import { transformOf, type Lines } from '../../shared/dft/index.ts';
 import type { LoopPlan } from './loop-plan.ts';
 
 const taps = 8;

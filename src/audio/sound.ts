@@ -1,4 +1,4 @@
-import { linesOf } from '../../shared/analysis/index.ts';
+import { linesOf } from '../../shared/dft/index.ts';
 import { longestPreviewSeconds, planLoop, type LoopPlan } from './loop-plan.ts';
 import { renderLoop } from './render-loop.ts';
 import { renderOnce } from './render-once.ts';

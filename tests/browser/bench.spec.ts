@@ -52,6 +52,29 @@ test('undo and redo take back typing as one step, by keys and by buttons', async
   await expect(figure(page, 'Size')).toContainText('514');
 });
 
+test('the code axis goes with the bit depth, though the scale stays the same', async ({ page }) => {
+  await page.addInitScript(() => {
+    const words: string[] = [];
+    Object.assign(globalThis, { drawnWords: words });
+    const { prototype } = CanvasRenderingContext2D;
+    const fillText = prototype.fillText;
+    prototype.fillText = function (text: string, ...place: [number, number]) {
+      words.push(text);
+      fillText.call(this, text, ...place);
+    };
+  });
+  const drawn = () =>
+    page.evaluate(() => (globalThis as unknown as { drawnWords: string[] }).drawnWords.splice(0));
+  await page.goto('/?open=quantise');
+  await expect(figure(page, 'Codes used')).toContainText('of 256');
+  expect(await drawn()).toContain('255');
+  await field(page, 'Bit depth').fill('12');
+  await expect(figure(page, 'Codes used')).toContainText('of 4,096');
+  const words = await drawn();
+  expect(words).toContain('4095');
+  expect(words.slice(words.lastIndexOf('4095'))).not.toContain('255');
+});
+
 test('nothing on the page moves under the first drag', async ({ page }) => {
   await page.goto('/');
   await expect(figure(page, 'SNR')).toBeVisible();

@@ -1,4 +1,4 @@
-import { linesOf } from '../../shared/analysis/index.ts';
+import { linesOf } from '../../shared/dft/index.ts';
 import { buildGraph } from '../../src/audio/graph.ts';
 import { outputGain } from '../../src/audio/levels.ts';
 import { glideFromSilence, glideSeconds } from '../../src/audio/ramps.ts';

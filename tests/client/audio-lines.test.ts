@@ -1,6 +1,6 @@
 import { describe, expect, test } from 'vitest';
 import fc from 'fast-check';
-import { linesOf } from '../../shared/analysis/index.ts';
+import { linesOf } from '../../shared/dft/index.ts';
 import { strongestLines } from '../../src/audio/strongest-lines.ts';
 
 const frames = 16_384;

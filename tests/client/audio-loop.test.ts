@@ -1,6 +1,6 @@
 import { describe, expect, test } from 'vitest';
 import fc from 'fast-check';
-import { linesOf } from '../../shared/analysis/index.ts';
+import { linesOf } from '../../shared/dft/index.ts';
 import { planLoop } from '../../src/audio/loop-plan.ts';
 import { renderLoop } from '../../src/audio/render-loop.ts';
 import { sampleRateOfTone, toneOfSampleRate } from '../../src/audio/playback-rate.ts';

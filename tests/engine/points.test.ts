@@ -1,7 +1,7 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { buildTable } from '../../shared/build-table.ts';
-import { linesOf } from '../../shared/analysis/index.ts';
+import { linesOf } from '../../shared/dft/index.ts';
 import {
   parseDefinition,
   type DefinitionInput,

@@ -1,6 +1,6 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import { linesOf } from '../../shared/analysis/index.ts';
+import { linesOf } from '../../shared/dft/index.ts';
 import { parseDefinition, type DefinitionInput, type SamplesSource } from '../../shared/contract/index.ts';
 import { phasesOf, synthesise } from '../../shared/waveform/index.ts';
 import { holds } from './support/seeded.ts';

@@ -1,7 +1,8 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { buildTable } from '../../shared/build-table.ts';
-import { dbfsOf, linesOf, phasesDegOf } from '../../shared/analysis/index.ts';
+import { dbfsOf } from '../../shared/analysis/index.ts';
+import { linesOf, phasesDegOf } from '../../shared/dft/index.ts';
 import { anyDefinition } from './support/definitions.ts';
 import { examplesOf, holds, noise } from './support/seeded.ts';
 import { valuesOf, waveOf } from './support/waves.ts';

@@ -1,6 +1,6 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import { linesOf, lowLinesOf, transformOf } from '../../shared/analysis/index.ts';
+import { linesOf, lowLinesOf, transformOf } from '../../shared/dft/index.ts';
 import { holds, noise } from './support/seeded.ts';
 
 const largeSizes = [4096, 32_749, 65_521, 65_535, 65_536];

@@ -1,6 +1,6 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import { transformOf } from '../../shared/analysis/index.ts';
+import { transformOf } from '../../shared/dft/index.ts';
 import type { Point } from '../../shared/contract/index.ts';
 import { closedCurve } from '../../shared/waveform/index.ts';
 import { examplesOf, noise } from '../engine/support/seeded.ts';

@@ -1,6 +1,6 @@
 import { FFT } from 'ml-fft';
 import { describe, expect, it } from 'vitest';
-import { transformOf } from '../../shared/analysis/index.ts';
+import { transformOf } from '../../shared/dft/index.ts';
 import { noise } from '../engine/support/seeded.ts';
 
 // Source: the npm package ml-fft 1.3.5, which shares no code with the package the engine uses. It takes powers

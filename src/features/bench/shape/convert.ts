@@ -1,4 +1,4 @@
-import { linesOf } from '../../../../shared/analysis/index.ts';
+import { linesOf } from '../../../../shared/dft/index.ts';
 import type { HarmonicsSource, Partial, PointsSource } from '../../../../shared/contract/index.ts';
 import { closedCurve } from '../../../../shared/waveform/index.ts';
 

@@ -1,0 +1,2 @@
+export { linesOf, lowLinesOf, phasesDegOf, type Lines } from './lines.ts';
+export { transformOf, type Transform } from './transform.ts';
