@@ -1,3 +1,4 @@
+import { CredentialsSignin } from '@auth/core/errors';
 import { ExpressAuth, type ExpressAuthConfig } from '@auth/express';
 import Credentials from '@auth/express/providers/credentials';
 import express, { type RequestHandler } from 'express';
@@ -56,9 +57,9 @@ function authConfig(deps: ServerDeps): ExpressAuthConfig {
     session: { strategy: 'jwt', maxAge: sessionSeconds },
     pages: { signIn: '/sign-in', error: '/sign-in', signOut: '/sign-in' },
     logger: {
-      // A wrong password is no error of ours.
+      // A wrong password or an address not yet verified is no error of ours.
       error: (error) =>
-        logger[error.name === 'CredentialsSignin' ? 'debug' : 'error']({ err: error }, 'sign-in'),
+        logger[error instanceof CredentialsSignin ? 'debug' : 'error']({ err: error }, 'sign-in'),
       warn: (code) => logger.warn({ code }, 'sign-in'),
       debug: () => undefined,
     },
