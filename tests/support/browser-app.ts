@@ -7,6 +7,17 @@ import { projectFolder } from '../../server/project-folder.ts';
 import { withLock } from '../../server/setup/lock.mjs';
 import { holdTestServer, makeTestDatabase } from './databases.ts';
 
+/** The built application on this machine alone: private database, mailbox; port 0 is any free one. */
+export const startBuiltApp = (databaseUrl: string, data: string, port = '0') =>
+  startApp([join(projectFolder, 'dist', 'server', 'main.js')], {
+    HOST: '127.0.0.1',
+    PORT: port,
+    DATABASE_URL: '',
+    PRIVATE_DATABASE_URL: databaseUrl,
+    AUTH_SECRET: 'for the tests only, and known to everybody',
+    STEPWELL_DATA: data,
+  });
+
 /** Playwright's global set-up: the built application, as people run it, on a database of its own and a free port. */
 export default async function setup(): Promise<() => Promise<void>> {
   await withLock(`set-up ${projectFolder}`, () =>
@@ -15,14 +26,7 @@ export default async function setup(): Promise<() => Promise<void>> {
   const server = await holdTestServer();
   const database = await makeTestDatabase(server, { migrated: false });
   const data = await mkdtemp(join(tmpdir(), 'stepwell-browser-'));
-  const app = startApp([join(projectFolder, 'dist', 'server', 'main.js')], {
-    HOST: '127.0.0.1',
-    PORT: '0',
-    DATABASE_URL: '',
-    PRIVATE_DATABASE_URL: database.url,
-    AUTH_SECRET: 'for the tests only, and known to everybody',
-    STEPWELL_DATA: data,
-  });
+  const app = startBuiltApp(database.url, data);
   process.env.STEPWELL_TEST_ADDRESS = await app.ready;
   return async () => {
     await app.stop();
