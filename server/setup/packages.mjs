@@ -15,6 +15,8 @@ const isHere = {
   'libc6-dev': file('/usr/include/stdio.h'),
   'gcc-avr': program('avr-gcc'),
   'avr-libc': file('/usr/lib/avr/include/avr/pgmspace.h'),
+  'apache2-bin': program('apache2'),
+  openssl: program('openssl'),
   python3: file('/usr/bin/python3'),
   'python3-numpy': file('/usr/lib/python3/dist-packages/numpy/__init__.py'),
   'python3-scipy': file('/usr/lib/python3/dist-packages/scipy/__init__.py'),
@@ -29,6 +31,8 @@ export const testPackages = [
   'libc6-dev',
   'gcc-avr',
   'avr-libc',
+  'apache2-bin',
+  'openssl',
   ...numpyPackages,
   'python3-scipy',
 ];
