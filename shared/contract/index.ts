@@ -16,3 +16,7 @@ export * from './library.ts';
 export * from './mailbox.ts';
 export * from './teams.ts';
 export * from './rendering.ts';
+export * from './audit.ts';
+export * from './notices.ts';
+export * from './reviews.ts';
+export * from './vetting-limits.ts';

@@ -23,7 +23,7 @@ const wholeNumber = (min: number, max: number) => {
 };
 
 /** The same in an address, where all is text. */
-const wholeNumberText = (min: number, max: number) => {
+export const wholeNumberText = (min: number, max: number) => {
   const error = `a whole number from ${min} to ${max}`;
   return z
     .string({ error })
@@ -60,7 +60,7 @@ export const drawingSchema = z.strictObject({
 });
 export type Drawing = z.infer<typeof drawingSchema>;
 
-const personSchema = z.strictObject({ id: z.int().nullable(), name: z.string() });
+export const personSchema = z.strictObject({ id: z.int().nullable(), name: z.string() });
 
 /** A row of the tables list: the table with its latest revision. */
 export const tableSummarySchema = z.strictObject({

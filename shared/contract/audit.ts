@@ -1,0 +1,47 @@
+import { z } from 'zod';
+import { cursorField, momentField, pageOf } from './fields.ts';
+import { wholeNumberText } from './library.ts';
+
+const dayError = 'a day, as 2026-03-31';
+
+/** All filters hold together. Days are UTC, both included. */
+export const auditFiltersSchema = z.strictObject({
+  /** Id of the member who did it. */
+  actor: z
+    .string({ error: 'the id of a person' })
+    .regex(/^\d{1,15}$/, { error: 'the id of a person' })
+    .transform(Number)
+    .optional(),
+  /** A whole action, `revision.vetted`, or what it begins with, `revision.`. */
+  action: z
+    .string({ error: 'an action, as revision.vetted' })
+    .regex(/^[a-z-]+(\.[a-z-]*)?$/, { error: 'an action, as revision.vetted' })
+    .max(60, { error: 'at most 60 characters' })
+    .optional(),
+  /** What it was done to: `table:fog-signal`. */
+  subject: z
+    .string({ error: 'text' })
+    .min(1, { error: 'a subject, as table:fog-signal' })
+    .max(160, { error: 'at most 160 characters' })
+    .optional(),
+  from: z.iso.date({ error: dayError }).optional(),
+  to: z.iso.date({ error: dayError }).optional(),
+});
+export type AuditFilters = z.infer<typeof auditFiltersSchema>;
+export const auditQuerySchema = auditFiltersSchema.extend({
+  cursor: cursorField.optional(),
+  limit: wholeNumberText(1, 100).default(50),
+});
+export type AuditQuery = z.infer<typeof auditQuerySchema>;
+
+export const auditEventSchema = z.strictObject({
+  sequence: z.int(),
+  at: momentField,
+  actor: z.strictObject({ id: z.int(), name: z.string() }),
+  action: z.string(),
+  subject: z.string(),
+  details: z.record(z.string(), z.unknown()),
+});
+export type AuditEvent = z.infer<typeof auditEventSchema>;
+/** Newest first. */
+export const auditPageSchema = pageOf(auditEventSchema);

@@ -1,0 +1,1 @@
+export { checkLimits, limitSetsFor } from './check-limits.ts';
