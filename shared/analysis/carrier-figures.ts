@@ -1,6 +1,6 @@
 import type { Report, TableSettings } from '../contract/index.ts';
 
-type CarrierFigures = Pick<Report, 'sinadDb' | 'enobBits' | 'thdDb' | 'thdPercent' | 'sfdrDb'>;
+export type CarrierFigures = Pick<Report, 'sinadDb' | 'enobBits' | 'thdDb' | 'thdPercent' | 'sfdrDb'>;
 
 const none: CarrierFigures = { sinadDb: null, enobBits: null, thdDb: null, thdPercent: null, sfdrDb: null };
 

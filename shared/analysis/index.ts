@@ -1,2 +1,3 @@
 export { analyseTable, type TableAnalysis } from './analyse-table.ts';
+export { carrierFigures, type CarrierFigures } from './carrier-figures.ts';
 export { dbfsOf, floorDbfs, spectrumOf, type Spectrum } from './spectrum.ts';
