@@ -4,12 +4,17 @@ import { measureDrag } from './drag.ts';
 import { measureEngine } from './engine.ts';
 import { measureFirstPage } from './first-page.ts';
 import { measureLibrary } from './library.ts';
+import { measureOutputStage } from './output-stage.ts';
 
 // npm run speed [-- PART …]: figures of time, told beside their goals and never asserted. Other work on the machine
 // shows in them: run it alone.
 
 const parts: Record<string, { title: string; measure: () => boolean | Promise<boolean> }> = {
   engine: { title: 'buildTable beside vectorised NumPy', measure: measureEngine },
+  'output-stage': {
+    title: 'Ladders and tolerance trials beside vectorised NumPy',
+    measure: measureOutputStage,
+  },
   cli: { title: 'The command line', measure: measureCommandLine },
   bench: {
     title: 'The bench in Chromium',

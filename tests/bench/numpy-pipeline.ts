@@ -10,23 +10,24 @@ export interface NumpyTable {
   spectrum: number[];
 }
 
-/** pipeline.py in a process of its own, asked line by line. */
-export class NumpyPipeline {
-  readonly #process = spawn(
-    pythonPath,
-    [...pythonFlags, fileURLToPath(new URL('pipeline.py', import.meta.url))],
-    {
-      stdio: ['pipe', 'pipe', 'inherit'],
-    },
-  );
-  readonly #answers = createInterface({ input: this.#process.stdout })[Symbol.asyncIterator]();
+/** A NumPy program of this folder in a process of its own, asked line by line. */
+export class NumpyPipeline<Result = NumpyTable> {
+  readonly #process;
+  readonly #answers;
 
-  /** Takes a definition and answers its table. */
-  open(definition: unknown): Promise<NumpyTable> {
-    return this.#ask<NumpyTable>({ open: definition });
+  constructor(program = 'pipeline.py') {
+    this.#process = spawn(pythonPath, [...pythonFlags, fileURLToPath(new URL(program, import.meta.url))], {
+      stdio: ['pipe', 'pipe', 'inherit'],
+    });
+    this.#answers = createInterface({ input: this.#process.stdout })[Symbol.asyncIterator]();
   }
 
-  /** Milliseconds of each of `count` runs of the definition taken last. */
+  /** Takes a task, a definition or another, and answers its result. */
+  open(task: unknown): Promise<Result> {
+    return this.#ask<Result>({ open: task });
+  }
+
+  /** Milliseconds of each of `count` runs of the task taken last. */
   run(count: number): Promise<number[]> {
     return this.#ask<number[]>({ run: count });
   }

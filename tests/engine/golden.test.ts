@@ -2,6 +2,7 @@ import { createHash } from 'node:crypto';
 import { readFileSync } from 'node:fs';
 import { describe, expect, it } from 'vitest';
 import { buildTable } from '../../shared/build-table.ts';
+import { analyseAccumulator, type Accumulator } from '../../shared/playback/index.ts';
 
 // Results of an independent model of the engine specification (NumPy, SciPy). The copy is held to its digest.
 const folder = new URL('./golden/', import.meta.url);
@@ -15,7 +16,18 @@ interface GoldenTable {
   spectrum: number[];
   cycle: number[];
 }
-const golden = JSON.parse(bytes.toString('utf8')) as { tables: GoldenTable[] };
+interface GoldenAccumulator extends Accumulator {
+  definition: { table: { length: number } };
+  period: number;
+  carrierBin: number;
+  worstOtherDbc: number;
+  worstOtherBin: number;
+  snrDb: number;
+}
+const golden = JSON.parse(bytes.toString('utf8')) as {
+  tables: GoldenTable[];
+  accumulators: GoldenAccumulator[];
+};
 
 /** 1e-6 relative or 1e-7 absolute. */
 function isClose(actual: number, wanted: number): boolean {
@@ -52,4 +64,16 @@ describe('golden tables', () => {
     });
     expect(off).toEqual([]);
   });
+});
+
+describe('golden accumulators', () => {
+  it.each(golden.accumulators)(
+    '$definition.table.length entries, $accumulatorBits bits, step word $stepWord',
+    ({ definition, accumulatorBits, stepWord, period, carrierBin, worstOtherDbc, worstOtherBin, snrDb }) => {
+      const figures = analyseAccumulator(buildTable(definition).values, { accumulatorBits, stepWord });
+      expect(figures).toMatchObject({ period, carrierBin, worstOtherBin });
+      expect(figures.worstOtherDbc).toBeCloseTo(worstOtherDbc, 6);
+      expect(figures.snrDb).toBeCloseTo(snrDb, 6);
+    },
+  );
 });
