@@ -13,6 +13,18 @@ const commands = {
     summary: 'say how good a table is',
     load: async () => (await import('./report-command.ts')).addReport,
   },
+  ladder: {
+    summary: 'say what a resistor ladder puts out',
+    load: async () => (await import('./ladder-command.ts')).addLadder,
+  },
+  spurs: {
+    summary: 'say what a phase accumulator makes of a table',
+    load: async () => (await import('./spurs-command.ts')).addSpurs,
+  },
+  'audit-verify': {
+    summary: 'say whether the audit trail in the database is whole',
+    load: async () => (await import('./audit-verify-command.ts')).addAuditVerify,
+  },
 } as const;
 
 /** Input or usage is wrong. */

@@ -3,8 +3,8 @@ import { writeSync } from 'node:fs';
 // Node's stream objects for pipes and terminals load its whole network code first: as much time again as the engine
 // takes for a table. A command line that writes once does without them.
 
-/** Writes all of a text to standard output. Whoever reads it may stop early, as `head` does: then we end quietly. */
-export function say(text: string): void {
+/** Writes all of a text, or of bytes, to standard output. Whoever reads it may stop early, as `head` does: then we end quietly. */
+export function say(text: string | Uint8Array): void {
   writeWhole(1, text);
 }
 
@@ -13,8 +13,8 @@ export function sayError(line: string): void {
   writeWhole(2, `${line}\n`);
 }
 
-function writeWhole(descriptor: 1 | 2, text: string): void {
-  const bytes = Buffer.from(text);
+function writeWhole(descriptor: 1 | 2, content: string | Uint8Array): void {
+  const bytes = typeof content === 'string' ? Buffer.from(content) : content;
   for (let start = 0; start < bytes.length;) {
     try {
       start += writeSync(descriptor, bytes, start);

@@ -1,6 +1,5 @@
 import { readFileSync } from 'node:fs';
-import { limits, Refusal } from '../../shared/contract/index.ts';
-import { findJsonFault } from './json-fault.ts';
+import { findJsonFault, limits, Refusal } from '../../shared/contract/index.ts';
 
 /**
  * Reads a JSON document from a file, or from standard input where its name is `-`.

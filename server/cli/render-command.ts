@@ -1,7 +1,7 @@
 import type { Command } from 'commander';
 import { buildTable } from '../../shared/build-table.ts';
 import { Refusal, type GeneratedFile } from '../../shared/contract/index.ts';
-import { flagOf, optionOf, renderFiles, targetOf, targets } from '../../shared/firmware/index.ts';
+import { contentOf, flagOf, optionOf, renderFiles, targetOf, targets } from '../../shared/firmware/index.ts';
 import { readTemplates } from '../tables/read-templates.ts';
 import { say, sayError } from './output.ts';
 import { readDefinition } from './read-definition.ts';
@@ -38,24 +38,34 @@ async function render(
   out: string | undefined,
   flags: Readonly<Record<string, string>>,
 ) {
-  const { lineComment } = targetOf(target);
+  const { commentOf } = targetOf(target);
   const table = buildTable(await readDefinition(file));
   // commander hands flags over in camel case, without their hyphens.
   const options = Object.fromEntries(
     Object.entries(flags).map(([flag, value]) => [optionOf(`--${flag}`), value]),
   );
   const files = renderFiles(table, target, options, readTemplates());
-  const said =
-    out === undefined ? asOneText(files, lineComment) : `${(await writeFiles(out, files)).join('\n')}\n`;
+  const said = out === undefined ? asOne(files, commentOf) : `${(await writeFiles(out, files)).join('\n')}\n`;
   say(said);
   for (const { path, message } of table.warnings) sayError(onOneLine(`warning: ${path}: ${message}`));
 }
 
-/** One file as it is; several one after the other, each below a comment line that names it: `// file: tone.h`. */
-const asOneText = (files: readonly GeneratedFile[], lineComment: string) =>
-  files.length === 1
-    ? files[0].text
-    : files.map(({ name, text }) => `${lineComment} file: ${name}\n${text}`).join('');
+/**
+ * One file as it is; several texts one after the other, each below a comment line that names it: `// file: tone.h`.
+ *
+ * @throws {Refusal} where several files cannot be told apart in one stream
+ */
+function asOne(files: readonly GeneratedFile[], commentOf?: (text: string) => string): string | Uint8Array {
+  if (files.length === 1) return contentOf(files[0]);
+  if (commentOf === undefined) {
+    throw new Refusal({
+      path: '--out',
+      value: 'nothing',
+      allowed: `a folder, as this export has ${files.length} files and no comments to part them`,
+    });
+  }
+  return files.map(({ name, text }) => `${commentOf(`file: ${name}`)}\n${text}`).join('');
+}
 
 /** Flags of every option of every target, with what each says of itself and the targets that have it. */
 function optionFlags(): [flag: string, description: string][] {

@@ -1,27 +1,13 @@
 import type { BuiltTable } from '../../shared/build-table.ts';
+import { alignedBlocks, type Row } from './columns.ts';
 import { onOneLine } from './terminal.ts';
-
-/** Label, figure, unit and what else there is to say; a figure that does not exist is a dash. */
-type Row = readonly [label: string, figure: string, unit?: string, note?: string];
 
 /** The report for reading: a figure a line, in aligned columns. */
 export function reportText(table: BuiltTable): string {
   const { definition, warnings } = table;
   const { length, bits } = definition.table;
   const title = `${onOneLine(definition.name)}: ${length} entries of ${bits} ${bits === 1 ? 'bit' : 'bits'}`;
-  const blocks = [againstSignal(table), againstCarrier(table), ofCodes(table)];
-  const rows = blocks.flat();
-  const widthOf = (column: 0 | 1 | 2) => Math.max(...rows.map((row) => (row[column] ?? '').length));
-  const [label, figure, unit] = [widthOf(0), widthOf(1), widthOf(2)];
-  const lines = blocks.map((block) =>
-    block
-      .map((row) =>
-        [row[0].padEnd(label), row[1].padStart(figure), (row[2] ?? '').padEnd(unit), row[3] ?? '']
-          .join('  ')
-          .trimEnd(),
-      )
-      .join('\n'),
-  );
+  const lines = alignedBlocks([againstSignal(table), againstCarrier(table), ofCodes(table)]);
   const notices = warnings.map(({ path, message }) => onOneLine(`Warning: ${path}: ${message}`)).join('\n');
   return `${[title, ...lines, notices].filter(Boolean).join('\n\n')}\n`;
 }

@@ -2,6 +2,7 @@ import { randomBytes } from 'node:crypto';
 import { lstat, mkdir, open, rename, rm, stat } from 'node:fs/promises';
 import { basename, dirname, join, resolve } from 'node:path';
 import { Refusal, showValue, type GeneratedFile } from '../../shared/contract/index.ts';
+import { contentOf } from '../../shared/firmware/index.ts';
 import { reasonOf } from './read-definition.ts';
 
 /**
@@ -13,15 +14,20 @@ import { reasonOf } from './read-definition.ts';
  * @throws {Refusal} where the folder cannot be written to; then nothing in it has changed.
  */
 export async function writeFiles(folder: string, files: readonly GeneratedFile[]): Promise<string[]> {
-  const places = files.map(({ name, text }) => {
+  const places = files.map((file) => {
+    const { name } = file;
     if (basename(name) !== name || name.startsWith('.')) throw new Error(`${name} is no plain file name.`);
     const suffix = randomBytes(6).toString('hex');
-    return { text, path: join(folder, name), temporary: join(folder, `.${name}.${suffix}.tmp`) };
+    return {
+      content: contentOf(file),
+      path: join(folder, name),
+      temporary: join(folder, `.${name}.${suffix}.tmp`),
+    };
   });
   try {
     await makeFolder(folder);
     for (const { path } of places) await refuseFolder(path);
-    for (const { temporary, text } of places) await writeWhole(temporary, text);
+    for (const { temporary, content } of places) await writeWhole(temporary, content);
     for (const { temporary, path } of places) await rename(temporary, path);
   } catch (error) {
     await Promise.all(places.map(({ temporary }) => rm(temporary, { force: true }).catch(() => undefined)));
@@ -66,10 +72,10 @@ async function refuseFolder(path: string): Promise<void> {
   }
 }
 
-async function writeWhole(path: string, text: string): Promise<void> {
+async function writeWhole(path: string, content: Uint8Array): Promise<void> {
   const file = await open(path, 'wx');
   try {
-    await file.writeFile(text);
+    await file.writeFile(content);
     // On the disk before it gets its name: after a loss of power, too, there is the old file or the new one.
     await file.sync();
   } finally {

@@ -13,3 +13,12 @@ export function localSecret(folder) {
   }
   return readFileSync(file, 'utf8');
 }
+
+/** That secret if there is one. */
+export function keptSecret(folder) {
+  try {
+    return readFileSync(join(folder, 'auth-secret'), 'utf8');
+  } catch {
+    return undefined;
+  }
+}

@@ -1,6 +1,6 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import { findJsonFault } from '../../server/cli/json-fault.ts';
+import { findJsonFault } from '../../shared/contract/index.ts';
 
 const isJson = (text: string) => {
   try {

@@ -30,11 +30,16 @@ export const fogJson = (change: object = {}) => JSON.stringify({ ...fogSignal, .
 /** Runs the command line as `npm run stepwell -- …` does, with a text on its standard input. */
 export function stepwell(
   args: readonly string[],
-  { input = '', folder = projectFolder } = {},
+  {
+    input = '',
+    folder = projectFolder,
+    env = {},
+  }: { input?: string; folder?: string; env?: NodeJS.ProcessEnv } = {},
 ): Promise<CommandResult> {
   return new Promise((resolve, reject) => {
     const child = spawn(process.execPath, [join(projectFolder, 'server', 'setup', 'stepwell.mjs'), ...args], {
       cwd: folder,
+      env: { ...process.env, ...env },
     });
     const parts = { stdout: [] as Buffer[], stderr: [] as Buffer[] };
     child.stdout.on('data', (part: Buffer) => parts.stdout.push(part));
