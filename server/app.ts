@@ -4,14 +4,19 @@ import { authRoutes } from './auth/auth-routes.ts';
 import { readSignIn } from './auth/sign-in-state.ts';
 import type { Feature, ServerDeps } from './feature.ts';
 import { account } from './features/account/routes.ts';
+import { audit } from './features/audit/routes.ts';
 import { health } from './features/health/routes.ts';
 import { invitations } from './features/invitations/routes.ts';
+import { limitSets } from './features/limit-sets/routes.ts';
 import { mailbox } from './features/mailbox/routes.ts';
+import { notices } from './features/notices/routes.ts';
 import { openapi } from './features/openapi/routes.ts';
 import { rendering } from './features/rendering/routes.ts';
+import { reviews } from './features/reviews/routes.ts';
 import { tables } from './features/tables/routes.ts';
 import { teams } from './features/teams/routes.ts';
 import { errorTranslator } from './http/error-translator.ts';
+import { formBody } from './http/form-body.ts';
 import { generalLimit } from './http/general-limit.ts';
 import { hostGate } from './http/host-gate.ts';
 import { jsonBody } from './http/json-body.ts';
@@ -25,10 +30,14 @@ import { cspNonce, securityHeaders } from './http/security-headers.ts';
 /** Every resource of the API, the most asked for first: a request goes through their routes in this order. */
 const features: readonly Feature[] = [
   tables,
+  reviews,
   health,
   account,
   teams,
+  limitSets,
   invitations,
+  notices,
+  audit,
   mailbox,
   rendering,
   openapi,
@@ -63,6 +72,7 @@ export function buildApp(deps: AppDeps): Express {
   const known = [readSignIn(deps), generalLimit(rateLimiter(deps))];
   app.use('/auth', noStore, ...known, ...authRoutes(deps));
   const routers = buildRouters(deps);
+  app.use('/api/v1/notices/unsubscribe', formBody);
   app.use('/api/v1', noStore, originGate(origins), ...known, jsonBody, ...routers, noSuchRoute(routers));
   app.use('/api', nothingHere);
 

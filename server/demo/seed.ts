@@ -10,8 +10,12 @@ import { auditHeads, memberships, teams, users } from '../db/schema/index.ts';
 import { withTransaction } from '../db/transaction.ts';
 import type { ServerDeps } from '../feature.ts';
 import type { BuiltRevision } from '../features/tables/build-revision.ts';
-import { addRevision, createTable, type Command } from '../features/tables/commands.ts';
+import { createLimitSet } from '../features/limit-sets/commands.ts';
+import type { Command } from '../features/reviews/commands.ts';
+import { addRevision, createTable } from '../features/tables/commands.ts';
 import { demoTables, type DemoTable } from './library.ts';
+import { demoLimits } from './limits.ts';
+import { playReview } from './vetting.ts';
 
 type Deps = Pick<ServerDeps, 'config' | 'database' | 'jobs'>;
 
@@ -33,8 +37,8 @@ interface DemoAccount {
 }
 
 /**
- * Fills a database that nobody has an account in with the made-up team Ninth Fathom: people by role, and tables saved
- * by the same commands as everybody's. Passwords are random; they are kept in `file`, which only its owner can read,
+ * Fills a database that nobody has an account in with the made-up team Ninth Fathom: people by role, limits, and tables
+ * saved, submitted and judged by the same commands as everybody's. Passwords are random; they are kept in `file`, which only its owner can read,
  * and answered as text to show. Answers nothing where there are people already.
  */
 export async function seedDemo(deps: Deps, file: string): Promise<string | undefined> {
@@ -55,13 +59,15 @@ export async function seedDemo(deps: Deps, file: string): Promise<string | undef
       // Whoever comes second has been stopped by the unique addresses, and leaves the first one's file alone.
       await keepSecret(file, text);
       const teamId = await insertTeam(deps, transaction, people);
-      for (const [index, table] of demoTables.entries()) {
-        await saveTable(table, built[index], (by) => ({
-          transaction,
-          auditKey: deps.config.auditKey,
-          scope: { teamId, user: people[by] },
-        }));
-      }
+      const commandBy = (by: Role) => ({
+        transaction,
+        auditKey: deps.config.auditKey,
+        scope: { teamId, teamSlug, role: by, user: people[by] },
+        // What happened before anybody was there is no news.
+        tell: () => Promise.resolve(),
+      });
+      for (const limits of demoLimits) await createLimitSet(commandBy('admin'), limits);
+      for (const [index, table] of demoTables.entries()) await saveTable(table, built[index], commandBy);
     });
   } catch (error) {
     if (errnoOf(error) === errno.duplicate) return undefined;
@@ -132,16 +138,18 @@ async function insertTeam({ config }: Deps, transaction: Executor, people: Peopl
 async function saveTable(
   { title, tags, playback, revisions }: DemoTable,
   built: readonly BuiltRevision[],
-  commandBy: (role: Role) => Command,
+  commandBy: (role: Role) => Omit<Command, 'slug' | 'number'>,
 ): Promise<void> {
   const unhindered = { holds: () => true };
   let slug = '';
-  for (const [index, { by, note }] of revisions.entries()) {
+  for (const [index, revision] of revisions.entries()) {
+    const { by, note } = revision;
     const input = { playback, note };
     const table =
       index === 0
         ? await createTable(commandBy(by), { title, tags: [...tags], ...input }, built[index])
         : await addRevision(commandBy(by), slug, unhindered, input, built[index]);
     slug = table.slug;
+    await playReview(revision, (role) => ({ ...commandBy(role), slug, number: table.latestRevision }));
   }
 }

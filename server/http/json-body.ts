@@ -14,7 +14,7 @@ const hasBody: RequestHandler = (request, _response, next) => {
   const length = request.headers['content-length'];
   const carriesBody =
     request.headers['transfer-encoding'] !== undefined || (length !== undefined && length !== '0');
-  if (carriesBody && !request.is('application/json')) {
+  if (carriesBody && request.body === undefined && !request.is('application/json')) {
     throw new Problem('unsupported-media-type', {
       detail: `${request.headers['content-type'] ?? 'A body without Content-Type'} is not taken; send application/json.`,
     });
@@ -54,5 +54,5 @@ function isDeeperThan(value: unknown, limit: number): boolean {
   return false;
 }
 
-/** Reads a JSON body of bounded size and depth; any other content is refused (415). Uploads come before it. */
+/** Reads a JSON body of bounded size and depth; any other content is refused (415). What reads another comes before it. */
 export const jsonBody: RequestHandler[] = [hasBody, parser, depthGate];

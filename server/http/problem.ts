@@ -6,6 +6,7 @@ export const problemKinds = {
   'malformed-request': { status: 400, title: 'The request cannot be read' },
   unauthorized: { status: 401, title: 'Sign in first' },
   forbidden: { status: 403, title: 'Not allowed' },
+  'two-person-rule': { status: 403, title: 'Somebody else has to do this' },
   'foreign-origin': { status: 403, title: 'The request comes from another site' },
   'not-found': { status: 404, title: 'Not found' },
   'method-not-allowed': { status: 405, title: 'This address does not take that method' },

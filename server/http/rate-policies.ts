@@ -32,6 +32,10 @@ export const ratePolicies = {
   'link-use': { quota: 120, seconds: hour },
   /** Invitations by one team. */
   invitations: { quota: 100, seconds: day },
+  /** Revisions that one person submits: each sends mail to every reviewer. */
+  submissions: { quota: 200, seconds: hour },
+  /** Comments by one person: each sends mail. */
+  comments: { quota: 200, seconds: hour },
 } as const satisfies Readonly<Record<string, RatePolicy>>;
 
 export type RatePolicyName = keyof typeof ratePolicies;

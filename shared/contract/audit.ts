@@ -3,6 +3,7 @@ import { cursorField, momentField, pageOf } from './fields.ts';
 import { wholeNumberText } from './library.ts';
 
 const dayError = 'a day, as 2026-03-31';
+const actionError = 'an action, as revision.vetted, or its beginning, as revision.';
 
 /** All filters hold together. Days are UTC, both included. */
 export const auditFiltersSchema = z.strictObject({
@@ -12,10 +13,10 @@ export const auditFiltersSchema = z.strictObject({
     .regex(/^\d{1,15}$/, { error: 'the id of a person' })
     .transform(Number)
     .optional(),
-  /** A whole action, `revision.vetted`, or what it begins with, `revision.`. */
+  /** A whole action, `revision.vetted`, or with its dot what it begins with, `revision.`. */
   action: z
-    .string({ error: 'an action, as revision.vetted' })
-    .regex(/^[a-z-]+(\.[a-z-]*)?$/, { error: 'an action, as revision.vetted' })
+    .string({ error: actionError })
+    .regex(/^[a-z-]+\.[a-z-]*$/, { error: actionError })
     .max(60, { error: 'at most 60 characters' })
     .optional(),
   /** What it was done to: `table:fog-signal`. */

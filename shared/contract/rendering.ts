@@ -1,12 +1,16 @@
 import { z } from 'zod';
 import { reportSchema, warningSchema } from './report.ts';
 
+export const fileEncodings = ['utf-8', 'base64'] as const;
+
 /** A file of an export. */
 export const generatedFileSchema = z.strictObject({
   /** Its name, without a folder. */
   name: z.string(),
-  /** Its content; lines end in LF. */
+  /** Its content; lines end in LF unless another line end was asked for. */
   text: z.string(),
+  /** How bytes become of the text: `base64` (RFC 4648 §4) where the file is no text. */
+  encoding: z.enum(fileEncodings),
 });
 
 /** Put before array names that are made from definitions' names; empty, or a C identifier's beginning. */

@@ -60,6 +60,8 @@ export const teamsPageSchema = pageOf(teamSummarySchema);
 
 export const teamSchema = teamSummarySchema.extend({
   defaults: teamDefaultsSchema,
+  /** Whether nobody vets, returns or withdraws a revision that they made or submitted. */
+  twoPersonRule: z.boolean(),
   /** Limits of size, told before they are hit. */
   usage: z.strictObject({ tables: z.int(), tablesAtMost: z.int() }),
   /** Compared by If-Match on a change. */
@@ -72,6 +74,7 @@ export const createTeamSchema = z.strictObject({ name: teamNameField, slug: slug
 export const changeTeamSchema = z.strictObject({
   name: teamNameField.optional(),
   defaults: z.strictObject(defaultFields).partial().optional(),
+  twoPersonRule: z.boolean({ error: 'true or false' }).optional(),
 });
 
 export const memberSchema = z.strictObject({

@@ -1,12 +1,22 @@
 import { mkdtempSync, readFileSync, rmSync, statSync, writeFileSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
+import { asc, eq } from 'drizzle-orm';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { verifyChain } from '../../server/audit/verify-chain.ts';
 import { checkPassword } from '../../server/auth/passwords.ts';
 import { readConfig } from '../../server/config.ts';
 import { openDatabase, type OpenDatabase } from '../../server/db/client.ts';
-import { revisions, teams, users, waveTables } from '../../server/db/schema/index.ts';
+import {
+  comments,
+  mailOutbox,
+  reviews,
+  revisions,
+  teamLimits,
+  teams,
+  users,
+  waveTables,
+} from '../../server/db/schema/index.ts';
 import { seedDemo } from '../../server/demo/seed.ts';
 import { createJobPool } from '../../server/jobs/pool.ts';
 import { digestOf } from '../../shared/firmware/index.ts';
@@ -93,7 +103,42 @@ describe('demo data', () => {
       expect(note).not.toBe('');
     }
     expect(new Set(saved.map(({ madeBy }) => madeBy)).size).toBe(3);
-    expect(await verifyChain(db, config.auditKey, team.id)).toEqual({ events: 12 });
+    expect(await verifyChain(db, config.auditKey, team.id)).toMatchObject({ events: 30 });
+  });
+
+  it('shows the whole way of review: one table in each state, limits, reasons, comments, and no mail about it', async () => {
+    const { db } = database;
+    const tables = await db.select({ slug: waveTables.slug, state: waveTables.state }).from(waveTables);
+    expect(Object.fromEntries(tables.map(({ slug, state }) => [slug, state]))).toEqual({
+      'fog-signal-main-tone': 'draft',
+      'low-battery-chirp': 'in-review',
+      'self-test-sine': 'vetted',
+      'fog-signal-answering-tone': 'returned',
+      'lamp-fade': 'withdrawn',
+    });
+    expect((await db.select().from(teamLimits)).map(({ tag }) => tag).sort()).toEqual(['', 'alarm']);
+    expect(await db.select().from(comments)).toHaveLength(4);
+
+    const people = new Map((await db.select().from(users)).map(({ id, email }) => [id, email.split('@')[0]]));
+    const all = await db
+      .select()
+      .from(reviews)
+      .innerJoin(revisions, eq(revisions.id, reviews.revisionId))
+      .orderBy(asc(reviews.id));
+    const waiting = all.filter(({ reviews: { verdict } }) => verdict === null);
+    expect(waiting.map(({ reviews: { submittedBy } }) => people.get(submittedBy ?? 0))).toEqual(['author']);
+    expect(waiting[0].reviews.failedLimits).toBe(1);
+    for (const { reviews: review, revisions: revision } of all) {
+      // The team's two-person rule is on, and held here too.
+      expect(review.decidedBy === null || review.decidedBy !== revision.madeBy).toBe(true);
+      expect(review.decidedBy === null || review.decidedBy !== review.submittedBy).toBe(true);
+      if (review.verdict === 'returned') expect(review.note).not.toBe('');
+      if (review.verdict === 'vetted') expect(review.failedLimits).toBe(0);
+    }
+    expect(all.filter(({ revisions: { state } }) => state === 'withdrawn')).toMatchObject([
+      { reviews: { verdict: 'vetted', reason: expect.stringContaining('threshold') } },
+    ]);
+    expect(await db.select().from(mailOutbox)).toEqual([]);
   });
 });
 

@@ -47,7 +47,7 @@ describe('the chain of audit events', () => {
     const pools = [openDatabase(inject('databaseUrl')), openDatabase(inject('databaseUrl')), test.database];
     await Promise.all(Array.from({ length: 50 }, (_none, index) => append(pools[index % 3].db, { index })));
     await Promise.all([pools[0].close(), pools[1].close()]);
-    expect(await verify()).toEqual({ events: 50 });
+    expect(await verify()).toMatchObject({ events: 50 });
     const rows = await test.database.db.select().from(auditEvents).where(eq(auditEvents.teamId, team.id));
     expect(rows.map(({ sequence }) => sequence).sort((a, b) => a - b)).toEqual(
       Array.from({ length: 50 }, (_none, index) => index + 1),
@@ -64,7 +64,7 @@ describe('the chain of audit events', () => {
       }),
     ).rejects.toThrow('after all not');
     await append();
-    expect(await verify()).toEqual({ events: 2 });
+    expect(await verify()).toMatchObject({ events: 2 });
   });
 
   it('holds for any text and number in its details', async () => {
@@ -73,7 +73,7 @@ describe('the chain of audit events', () => {
       number: 0.1 + 0.2,
       deep: [{ b: 1, a: [null] }],
     });
-    expect(await verify()).toEqual({ events: 1 });
+    expect(await verify()).toMatchObject({ events: 1 });
   });
 
   it.each([
@@ -90,7 +90,7 @@ describe('the chain of audit events', () => {
       .update(auditEvents)
       .set(change)
       .where(and(eq(auditEvents.teamId, team.id), eq(auditEvents.sequence, 3)));
-    expect(await verify()).toEqual({ brokenAt: 3 });
+    expect(await verify()).toMatchObject({ brokenAt: 3, kind: 'changed' });
   });
 
   it('shows a missing event, in the middle and at the end', async () => {
@@ -100,9 +100,9 @@ describe('the chain of audit events', () => {
         .delete(auditEvents)
         .where(and(eq(auditEvents.teamId, team.id), eq(auditEvents.sequence, sequence)));
     await remove(5);
-    expect(await verify()).toEqual({ brokenAt: 5 });
+    expect(await verify()).toMatchObject({ brokenAt: 5, kind: 'cut-off' });
     await remove(2);
-    expect(await verify()).toEqual({ brokenAt: 2 });
+    expect(await verify()).toMatchObject({ brokenAt: 2, kind: 'removed' });
   });
 
   it('shows an event written without the key', async () => {
@@ -115,7 +115,7 @@ describe('the chain of audit events', () => {
         subject: 'table:fog-signal',
       }),
     );
-    expect(await verify()).toEqual({ brokenAt: 2 });
+    expect(await verify()).toMatchObject({ brokenAt: 2, kind: 'foreign' });
   });
 
   it('shows rows moved to another team', async () => {
@@ -130,13 +130,13 @@ describe('the chain of audit events', () => {
       .update(auditHeads)
       .set({ lastSequence: head.lastSequence, lastMac: head.lastMac })
       .where(eq(auditHeads.teamId, other.id));
-    expect(await verifyChain(test.database.db, key, other.id)).toEqual({ brokenAt: 1 });
+    expect(await verifyChain(test.database.db, key, other.id)).toMatchObject({ brokenAt: 1, kind: 'foreign' });
   });
 
   it('outlives the account of who acted', async () => {
     await append();
     await test.database.db.delete(users).where(eq(users.id, admin.id));
-    expect(await verify()).toEqual({ events: 1 });
+    expect(await verify()).toMatchObject({ events: 1 });
   });
 });
 
@@ -160,6 +160,6 @@ describe('what is done to a team', () => {
       ['member.invited', 'Ada Keel'],
       ['invitation.withdrawn', 'Ada Keel'],
     ]);
-    expect(await verifyChain(test.database.db, key, crewTeam.id)).toEqual({ events: 6 });
+    expect(await verifyChain(test.database.db, key, crewTeam.id)).toMatchObject({ events: 6 });
   });
 });

@@ -25,6 +25,7 @@ describe('POST /teams', () => {
       name,
       myRole: 'admin',
       defaults: { arrayPrefix: '', licenceLine: '', bits: 8, length: 256, target: 'c99' },
+      twoPersonRule: true,
       usage: { tables: 0, tablesAtMost: 200_000 },
       version: 1,
     });

@@ -3,9 +3,13 @@ import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { buildRouters } from '../../server/app.ts';
 import {
   auditEvents,
+  comments,
   memberships,
   oneTimeLinks,
+  reviews,
+  revisions,
   sessions,
+  teamLimits,
   teams,
   users,
   waveTables,
@@ -16,6 +20,7 @@ import { makeOwnTestApp, type OwnTestApp } from '../support/own-database.ts';
 import { asPerson, makeCrew, makePerson, makeSession, makeTeam, type TestPerson } from '../support/people.ts';
 import {
   freshInvitation,
+  freshLimits,
   freshMember,
   freshTable,
   routeCases,
@@ -29,7 +34,7 @@ let target: Target;
 /** Another team, with things of every kind, that none of ours belongs to. */
 let other: Target;
 let senders: Record<string, TestPerson | undefined>;
-let foreign: { table: string; userId: number; id: number; sessionId: string };
+let foreign: { table: string; userId: number; id: number; limitsId: number; sessionId: string };
 
 beforeAll(async () => {
   test = await makeOwnTestApp();
@@ -48,6 +53,7 @@ beforeAll(async () => {
     table,
     userId: (await freshMember(other)).id,
     id: await freshInvitation(other),
+    limitsId: await freshLimits(other),
     sessionId: stranger.sessionId,
   };
 
@@ -89,7 +95,7 @@ function expected({ access }: RouteCase, sender: string, status: number): number
 }
 
 function send(person: TestPerson | undefined, route: string, { path, body, headers = {} }: Attempt) {
-  const method = route.split(' ')[0].toLowerCase() as 'get' | 'post' | 'patch' | 'delete';
+  const method = route.split(' ')[0].toLowerCase() as 'get' | 'post' | 'patch' | 'put' | 'delete';
   const request =
     method === 'get' ? asPerson(test, person).get(path) : asPerson(test, person)[method](path, body);
   return request.set(headers);
@@ -127,6 +133,13 @@ async function stateOfOther() {
   return {
     team: await db.select().from(teams).where(eq(teams.id, teamId)),
     tables: await db.select().from(waveTables).where(eq(waveTables.teamId, teamId)),
+    revisions: await db
+      .select({ id: revisions.id, state: revisions.state })
+      .from(revisions)
+      .where(eq(revisions.teamId, teamId)),
+    reviews: await db.select().from(reviews).where(eq(reviews.teamId, teamId)),
+    comments: await db.select().from(comments).where(eq(comments.teamId, teamId)),
+    limits: await db.select().from(teamLimits).where(eq(teamLimits.teamId, teamId)),
     members: await db.select().from(memberships).where(eq(memberships.teamId, teamId)),
     links: await db.select().from(oneTimeLinks).where(eq(oneTimeLinks.teamId, teamId)),
     events: await db.select().from(auditEvents).where(eq(auditEvents.teamId, teamId)),
@@ -147,13 +160,17 @@ describe('an admin who names another team’s things', () => {
   it.each(named)('is told that they do not exist: %s', async (route) => {
     const before = await stateOfOther();
     const { body, headers } = await routeCases[route].attempt(target, target.admin);
-    const isSession = route.includes('/account/sessions');
+    const id = route.includes('/account/sessions')
+      ? foreign.sessionId
+      : route.includes('/limit-sets')
+        ? foreign.limitsId
+        : foreign.id;
     const path = route
       .split(' ')[1]
       .replace(':team', target.team.slug)
       .replace(':table', foreign.table)
       .replace(':userId', String(foreign.userId))
-      .replace(':id', isSession ? foreign.sessionId : String(foreign.id))
+      .replace(':id', String(id))
       .replace(':number', '1');
     const response = await send(target.admin, route, {
       path: `${path}${/export$/.test(path) ? '?target=c99' : ''}`,
@@ -215,7 +232,7 @@ describe('an admin who names another team’s things', () => {
   });
 
   const writing = Object.keys(routeCases).filter(
-    (route) => /^(POST|PATCH)/.test(route) && route.includes(':team'),
+    (route) => /^(POST|PATCH|PUT)/.test(route) && route.includes(':team'),
   );
   it.each(writing)('cannot smuggle them into a body: %s', async (route) => {
     const before = await stateOfOther();

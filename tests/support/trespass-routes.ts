@@ -32,17 +32,17 @@ export interface RouteCase {
 const built = buildRevision(sineDefinition('Trespass'));
 
 /** A new table of the team, with one revision and version 1; answers its address. */
-export const freshTable = ({ test, team, admin }: Target): Promise<string> =>
+export const freshTable = ({ test, team, admin }: Target, maker = admin): Promise<string> =>
   insertTable(
     test.database.db,
-    { teamId: team.id, userId: admin.id },
+    { teamId: team.id, userId: maker.id },
     { title: 'Trespass', tags: ['trespass'] },
     { built, playback: null, note: '' },
   );
 
-export async function freshMember({ test, team }: Target): Promise<TestPerson> {
+export async function freshMember({ test, team }: Target, role: Role = 'viewer'): Promise<TestPerson> {
   const member = await makePerson(test, 'Somebody Else');
-  await join(test, team.id, member, 'viewer');
+  await join(test, team.id, member, role);
   return member;
 }
 
@@ -77,6 +77,32 @@ const ofTable =
   });
 
 const seen = { 'If-Match': '"1"' };
+const ofRevision = (status: number, below: string, body?: object): RouteCase['attempt'] =>
+  ofTable(status, `/revisions/1${below}`, body);
+
+export async function freshLimits({ test, team, admin }: Target): Promise<number> {
+  const limits = { tag: `tag ${randomBytes(6).toString('hex')}`, limits: { maxTableBytes: 512 } };
+  const response = await asPerson(test, admin).post(`/teams/${team.slug}/limit-sets`, limits);
+  if (response.status !== 201) throw new Error(response.text);
+  return response.body.id;
+}
+
+/** A revision by somebody who asks for nothing else, brought so far that the attempt is the next thing to do with it. */
+const ofReview =
+  (below: 'verdict' | 'withdraw', body: object): RouteCase['attempt'] =>
+  async (target) => {
+    const { test, team, admin } = target;
+    const maker = await freshMember(target, 'author');
+    const revision = `/teams/${team.slug}/tables/${await freshTable(target, maker)}/revisions/1`;
+    await asPerson(test, maker).post(`${revision}/submit`, { message: 'Please look.' });
+    if (below === 'withdraw') {
+      await asPerson(test, admin)
+        .post(`${revision}/verdict`, { verdict: 'vetted', note: 'Right.' })
+        .set('If-Match', '"2"');
+    }
+    const headers = { 'If-Match': below === 'verdict' ? '"2"' : '"3"' };
+    return { path: `${revision}/${below}`, body, headers, status: 200 };
+  };
 const saved = { definition: sineDefinition('Trespass') };
 
 /** Every route there is. A link's token that nobody was sent is 404 to everybody; an empty body is 422 to who may. */
@@ -103,6 +129,57 @@ export const routeCases: Readonly<Record<string, RouteCase>> = {
   'GET /teams/:team/tables/:table/revisions/:number/export': {
     access: 'viewer',
     attempt: ofTable(200, '/revisions/1/export?target=c99'),
+  },
+  'GET /teams/:team/tables/:table/revisions/:number/review': {
+    access: 'viewer',
+    attempt: ofRevision(200, '/review'),
+  },
+  'POST /teams/:team/tables/:table/revisions/:number/submit': {
+    access: 'author',
+    attempt: ofRevision(200, '/submit', { message: 'Please look.' }),
+  },
+  'POST /teams/:team/tables/:table/revisions/:number/verdict': {
+    access: 'reviewer',
+    attempt: ofReview('verdict', { verdict: 'vetted', note: 'Right.' }),
+  },
+  'POST /teams/:team/tables/:table/revisions/:number/withdraw': {
+    access: 'reviewer',
+    attempt: ofReview('withdraw', { reason: 'Wrong after all.' }),
+  },
+  'GET /teams/:team/tables/:table/revisions/:number/comments': {
+    access: 'viewer',
+    attempt: ofRevision(200, '/comments'),
+  },
+  'POST /teams/:team/tables/:table/revisions/:number/comments': {
+    access: 'author',
+    attempt: ofRevision(201, '/comments', { text: 'Why so?' }),
+  },
+  'GET /teams/:team/reviews': { access: 'viewer', attempt: inTeam(200, '/reviews') },
+  'GET /teams/:team/limit-sets': { access: 'viewer', attempt: inTeam(200, '/limit-sets') },
+  'POST /teams/:team/limit-sets': {
+    access: 'admin',
+    attempt: (target) =>
+      inTeam(201, '/limit-sets', {
+        tag: `tag ${randomBytes(6).toString('hex')}`,
+        limits: { maxTableBytes: 512 },
+      })(target, undefined),
+  },
+  'PUT /teams/:team/limit-sets/:id': {
+    access: 'admin',
+    attempt: async (target) => ({
+      path: `/teams/${target.team.slug}/limit-sets/${await freshLimits(target)}`,
+      body: { limits: { maxTableBytes: 256 } },
+      headers: seen,
+      status: 200,
+    }),
+  },
+  'DELETE /teams/:team/limit-sets/:id': {
+    access: 'admin',
+    attempt: async (target) => ({
+      path: `/teams/${target.team.slug}/limit-sets/${await freshLimits(target)}`,
+      headers: seen,
+      status: 204,
+    }),
   },
   'GET /teams/:team/tags': { access: 'viewer', attempt: inTeam(200, '/tags') },
 
@@ -204,6 +281,19 @@ export const routeCases: Readonly<Record<string, RouteCase>> = {
       status: 204,
     }),
   },
+
+  'GET /account/notices': { access: 'signed-in', attempt: always(200, '/account/notices') },
+  'PATCH /account/notices': {
+    access: 'signed-in',
+    attempt: always(200, '/account/notices', { comment: true }),
+  },
+  'POST /notices/unsubscribe': { access: 'anyone', attempt: always(404, '/notices/unsubscribe', noToken()) },
+  'GET /notices/unsubscribe': {
+    access: 'anyone',
+    attempt: always(303, `/notices/unsubscribe?token=${noToken().token}`),
+  },
+  'GET /teams/:team/audit': { access: 'reviewer', attempt: inTeam(200, '/audit') },
+  'GET /teams/:team/audit.csv': { access: 'reviewer', attempt: inTeam(200, '/audit.csv') },
 
   'POST /report': { access: 'anyone', attempt: always(200, '/report', saved.definition) },
   'POST /render': { access: 'anyone', attempt: always(200, '/render', { ...saved, target: 'c99' }) },

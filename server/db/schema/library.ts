@@ -138,6 +138,8 @@ export const revisions = mysqlTable(
     unique('revisions_number').on(table.teamId, table.tableId, table.number),
     unique('revisions_team_id').on(table.teamId, table.id),
     index('revisions_digest').on(table.teamId, table.digest),
+    // The last vetted one of a table, without reading any other.
+    index('revisions_state').on(table.teamId, table.tableId, table.state, table.number),
     foreignKey({
       name: 'revisions_table_fk',
       columns: [table.teamId, table.tableId],

@@ -15,6 +15,8 @@ export const mailOutbox = mysqlTable(
     /** Both bodies are erased once it is delivered or given up: they may hold a link. */
     textBody: text('text_body'),
     htmlBody: text('html_body'),
+    /** Where one request ends mail of its kind (RFC 8058); erased like the bodies. Null: it cannot be ended. */
+    unsubscribeUrl: varchar('unsubscribe_url', { length: 500 }),
     state: mysqlEnum(mailStates).notNull().default('waiting'),
     failures: tinyint({ unsigned: true }).notNull().default(0),
     lastError: varchar('last_error', { length: 500 }),

@@ -1,4 +1,13 @@
-import { index, int, json, mysqlEnum, mysqlTable, primaryKey, varchar } from 'drizzle-orm/mysql-core';
+import {
+  boolean,
+  index,
+  int,
+  json,
+  mysqlEnum,
+  mysqlTable,
+  primaryKey,
+  varchar,
+} from 'drizzle-orm/mysql-core';
 import { createdAt, exactText, id, reference } from './columns.ts';
 import { users } from './users.ts';
 
@@ -9,6 +18,8 @@ export const teams = mysqlTable('teams', {
   name: varchar({ length: 100 }).notNull(),
   /** What new tables begin with, as the contract has it. */
   defaults: json().notNull(),
+  /** Whether nobody judges a revision that is their own. */
+  twoPersonRule: boolean('two_person_rule').notNull().default(true),
   /** Raised by each change; what If-Match is compared with. */
   version: int({ unsigned: true }).notNull().default(1),
   createdAt: createdAt(),

@@ -15,6 +15,7 @@ import type { TeamScope } from '../../auth/team-scope.ts';
 import type { Executor } from '../../db/client.ts';
 import { lostRace, type Precondition } from '../../http/preconditions.ts';
 import { Problem } from '../../http/problem.ts';
+import { noRevision, noTable } from '../../tables/not-there.ts';
 import type { BuiltRevision } from './build-revision.ts';
 import { drawingOf } from './drawing.ts';
 import { presentTable } from './presenter.ts';
@@ -132,12 +133,6 @@ export async function duplicateTable(
     digest: original.digest,
   });
 }
-
-export const noTable = (slug: string) =>
-  new Problem('not-found', { detail: `The team has no table named ${slug}.` });
-
-export const noRevision = (slug: string, number: number | string) =>
-  new Problem('not-found', { detail: `The team's table ${slug} has no revision ${number}.` });
 
 const placeOf = ({ scope }: Command): Place => ({ teamId: scope.teamId, userId: scope.user.id });
 

@@ -11,7 +11,12 @@ export interface RevisionPlace {
 
 const exportable = once((db: Database) =>
   db
-    .select({ id: revisions.id, digest: revisions.digest, teamDefaults: teams.defaults })
+    .select({
+      id: revisions.id,
+      digest: revisions.digest,
+      state: revisions.state,
+      teamDefaults: teams.defaults,
+    })
     .from(waveTables)
     .innerJoin(revisions, and(eq(revisions.teamId, waveTables.teamId), eq(revisions.tableId, waveTables.id)))
     .innerJoin(teams, eq(teams.id, waveTables.teamId))

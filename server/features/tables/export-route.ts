@@ -10,15 +10,15 @@ import {
   type GeneratedFile,
   type Report,
 } from '../../../shared/contract/index.ts';
-import { targetOf } from '../../../shared/firmware/index.ts';
+import { contentOf, targetOf } from '../../../shared/firmware/index.ts';
 import { requireTeam, teamOf } from '../../auth/team-scope.ts';
 import type { ServerDeps } from '../../feature.ts';
 import { parseInput } from '../../http/parse-input.ts';
 import { Problem } from '../../http/problem.ts';
+import { noRevision } from '../../tables/not-there.ts';
+import { numberOf } from '../../tables/revision-number.ts';
 import { BoundedCache } from './bounded-cache.ts';
-import { noRevision } from './commands.ts';
 import { findExportable, findExportContent } from './export-queries.ts';
-import { numberOf } from './revision-number.ts';
 import { unpackCodes } from './stored-codes.ts';
 
 type RevisionRequest = Request<{ team: string; table: string; number: string }>;
@@ -29,6 +29,7 @@ const capacity = 32 * 1024 * 1024;
 /** An answer as it is sent, with its strong entity tag (RFC 9110 §8.8.3). */
 interface Content {
   readonly bytes: Buffer;
+  readonly type: string;
   readonly etag: string;
 }
 
@@ -58,6 +59,8 @@ export function addExportRoute(router: Router, { database, jobs }: ServerDeps): 
     const key = `${revision.digest} ${target} ${canonicalize(options)}`;
     const rendered = cache.get(key) ?? (await render(revision.id, revision.digest, target, options));
     cache.set(key, rendered);
+    // The state is not in the files, so that their bytes stay the same whatever becomes of the revision.
+    response.set('Stepwell-Revision-State', revision.state);
     if (file === undefined) sendContent(response.type('application/json'), rendered.whole);
     else sendFile(response, rendered, file);
   });
@@ -115,15 +118,16 @@ const inQuery = ({ problems }: Refusal) =>
   });
 
 function pack(files: readonly GeneratedFile[], digest: string): Rendered {
-  const contents = new Map(files.map(({ name, text }) => [name, contentOf(Buffer.from(text))]));
-  const whole = contentOf(Buffer.from(JSON.stringify({ files, digest })));
+  const contents = new Map(files.map((file) => [file.name, tagged(contentOf(file), file.encoding)]));
+  const whole = tagged(Buffer.from(JSON.stringify({ files, digest })), 'utf-8');
   const size = [whole, ...contents.values()].reduce((sum, { bytes }) => sum + bytes.length, 0);
   return { files: contents, whole, size };
 }
 
-const contentOf = (bytes: Buffer): Content => ({
-  bytes,
-  etag: `"${createHash('sha256').update(bytes).digest('base64url')}"`,
+const tagged = (content: Uint8Array, encoding: GeneratedFile['encoding']): Content => ({
+  bytes: Buffer.from(content),
+  type: encoding === 'utf-8' ? 'text/plain' : 'application/octet-stream',
+  etag: `"${createHash('sha256').update(content).digest('base64url')}"`,
 });
 
 function sendFile(response: Response, { files }: Rendered, name: string): void {
@@ -132,7 +136,7 @@ function sendFile(response: Response, { files }: Rendered, name: string): void {
     const allowed = `one of ${[...files.keys()].map((known) => `"${known}"`).join(', ')}`;
     throw new Problem('validation', { errors: [{ path: 'file', value: showValue(name), allowed }] });
   }
-  sendContent(response.attachment(name).type('text/plain'), content);
+  sendContent(response.attachment(name).type(content.type), content);
 }
 
 /** A strong tag stands for these very bytes: nothing between here and there may pack them otherwise. */

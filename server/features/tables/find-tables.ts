@@ -2,7 +2,7 @@ import { and, sql, type SQL } from 'drizzle-orm';
 import type { TablesQuery } from '../../../shared/contract/index.ts';
 import type { Database } from '../../db/client.ts';
 import { waveTables } from '../../db/schema/index.ts';
-import { readCursor, writeCursor, type Position } from './list-cursor.ts';
+import { readCursor, writeCursor, type Position } from '../../http/list-cursor.ts';
 import { orderOf } from './list-order.ts';
 import { filtersOf, type Filter, type Scope } from './list-filters.ts';
 

@@ -2,7 +2,7 @@ import { sql, type SQL } from 'drizzle-orm';
 import type { MySqlColumn } from 'drizzle-orm/mysql-core';
 import type { TablesQuery } from '../../../shared/contract/index.ts';
 import { waveTables } from '../../db/schema/index.ts';
-import type { Position } from './list-cursor.ts';
+import type { Position } from '../../http/list-cursor.ts';
 
 const columns: Readonly<Record<TablesQuery['sort'], MySqlColumn>> = {
   changed: waveTables.changedAt,

@@ -8,12 +8,10 @@ import type {
   Warning,
 } from '../../../shared/contract/index.ts';
 import { limits } from '../../../shared/contract/index.ts';
+import { presentPerson } from '../../auth/present-person.ts';
 import { presentDrawing } from './drawing.ts';
 import type { RevisionRow, RevisionSummaryRow, SummaryRow, TableRow } from './queries.ts';
 import { unpackCodes } from './stored-codes.ts';
-
-/** Whose account is gone keeps no name here; the audit trail has it. */
-const person = (id: number | null, name: string | null) => ({ id, name: name ?? 'Somebody who has left' });
 
 export const presentSummary = (row: Omit<SummaryRow, 'id'>): TableSummary => ({
   slug: row.slug,
@@ -27,7 +25,7 @@ export const presentSummary = (row: Omit<SummaryRow, 'id'>): TableSummary => ({
   snrDb: row.snrDb,
   tableBytes: row.tableBytes,
   drawing: presentDrawing(row.drawing),
-  changedBy: person(row.changedById, row.changedByName),
+  changedBy: presentPerson(row.changedById, row.changedByName),
   changedAt: row.changedAt.toISOString(),
 });
 
@@ -35,7 +33,7 @@ export const presentSummary = (row: Omit<SummaryRow, 'id'>): TableSummary => ({
 export const presentTable = (row: TableRow, newest: readonly RevisionSummaryRow[]): LibraryTable => ({
   ...presentSummary(row),
   createdAt: row.createdAt.toISOString(),
-  createdBy: person(row.createdById, row.createdByName),
+  createdBy: presentPerson(row.createdById, row.createdByName),
   version: row.version,
   revisions: newest.map(presentRevisionSummary),
   moreRevisions: (newest.at(-1)?.number ?? 1) > 1,
@@ -52,7 +50,7 @@ export const presentRevisionSummary = (row: RevisionSummaryRow): RevisionSummary
   tableBytes: row.tableBytes,
   digest: row.digest,
   engineVersion: row.engineVersion,
-  madeBy: person(row.madeById, row.madeByName),
+  madeBy: presentPerson(row.madeById, row.madeByName),
   madeAt: row.madeAt.toISOString(),
 });
 

@@ -13,15 +13,16 @@ import type { Executor } from '../../db/client.ts';
 import { withTransaction } from '../../db/transaction.ts';
 import type { Feature } from '../../feature.ts';
 import { answerOnce, type Answer } from '../../http/idempotency.ts';
+import { readCursor, writeCursor } from '../../http/list-cursor.ts';
 import { parseInput } from '../../http/parse-input.ts';
 import { etagOf, preconditionOf } from '../../http/preconditions.ts';
+import { noRevision, noTable } from '../../tables/not-there.ts';
+import { numberOf } from '../../tables/revision-number.ts';
 import {
   addRevision,
   changeTable,
   createTable,
   duplicateTable,
-  noRevision,
-  noTable,
   readTable,
   setArchived,
   type Command,
@@ -29,9 +30,7 @@ import {
 import { computeRevision } from './compute.ts';
 import { addExportRoute } from './export-route.ts';
 import { findTables } from './find-tables.ts';
-import { readCursor, writeCursor } from './list-cursor.ts';
 import { presentRevision, presentRevisionSummary, presentSummary } from './presenter.ts';
-import { numberOf } from './revision-number.ts';
 import { findRevision, findTable, listRevisions, listTags, readSummaries } from './queries.ts';
 
 type TableRequest = Request<{ team: string; table: string }>;

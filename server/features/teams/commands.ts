@@ -59,7 +59,7 @@ export async function createTeam(
     subject: `team:${slug}`,
     details: { name: typed.name },
   });
-  return presentTeam({ ...team, slug, version: 1 }, 'admin', 0);
+  return presentTeam({ ...team, slug, twoPersonRule: true, version: 1 }, 'admin', 0);
 }
 
 type NewTeam = typeof teams.$inferInsert;
@@ -102,11 +102,17 @@ export const changeTeam = (
       ...before,
       name: typed.name ?? before.name,
       defaults: { ...before.defaults, ...typed.defaults },
+      twoPersonRule: typed.twoPersonRule ?? before.twoPersonRule,
       version: before.version + 1,
     };
     await transaction
       .update(teams)
-      .set({ name: after.name, defaults: after.defaults, version: after.version })
+      .set({
+        name: after.name,
+        defaults: after.defaults,
+        twoPersonRule: after.twoPersonRule,
+        version: after.version,
+      })
       .where(eq(teams.id, team.id));
     await appendEvent(transaction, config.auditKey, {
       teamId: team.id,

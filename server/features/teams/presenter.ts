@@ -8,7 +8,7 @@ import {
 import type { MemberRow, TeamRow } from './queries.ts';
 
 export const presentTeam = (
-  team: Pick<TeamRow, 'slug' | 'name' | 'defaults' | 'version'>,
+  team: Pick<TeamRow, 'slug' | 'name' | 'defaults' | 'twoPersonRule' | 'version'>,
   myRole: Role,
   tables: number,
 ): Team => ({
@@ -16,6 +16,7 @@ export const presentTeam = (
   name: team.name,
   myRole,
   defaults: teamDefaultsSchema.parse(team.defaults),
+  twoPersonRule: team.twoPersonRule,
   usage: { tables, tablesAtMost: teamLimits.tables },
   version: team.version,
 });

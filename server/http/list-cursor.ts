@@ -1,6 +1,6 @@
 import { createHash } from 'node:crypto';
 import { z } from 'zod';
-import { Problem } from '../../http/problem.ts';
+import { Problem } from './problem.ts';
 
 /** Where a page ends: the last row's place in the order. */
 const positionSchema = z.tuple([z.string(), z.union([z.string(), z.number(), z.null()]), z.int().positive()]);

@@ -1,0 +1,1 @@
+ALTER TABLE `mail_outbox` ADD `unsubscribe_url` varchar(500);

@@ -1,0 +1,1 @@
+ALTER TABLE `teams` ADD `two_person_rule` boolean DEFAULT true NOT NULL;

@@ -1,0 +1,1 @@
+CREATE INDEX `revisions_state` ON `revisions` (`team_id`,`table_id`,`state`,`number`);
