@@ -6,6 +6,8 @@ export interface Letter {
   readonly action?: { readonly label: string; readonly url: string };
   /** Said after the action, such as how long it works. */
   readonly afterwards?: readonly string[];
+  /** Said at the very end, with an address of its own: how to get no more of these. */
+  readonly last?: { readonly words: string; readonly url: string };
 }
 
 export interface WrittenLetter {
@@ -38,9 +40,14 @@ const escapeHtml = (text: string) => text.replace(/[&<>"']/g, (character) => esc
 const signature = 'Stepwell sends this because of something done at its address; nobody reads answers to it.';
 
 /** Writes a letter out as plain text and as HTML, where every text is escaped. */
-export function writeLetter({ subject, paragraphs, action, afterwards = [] }: Letter): WrittenLetter {
+export function writeLetter({ subject, paragraphs, action, afterwards = [], last }: Letter): WrittenLetter {
   const after = [...afterwards, signature];
-  const text = [...paragraphs, ...(action ? [`${action.label}:\n${action.url}`] : []), ...after].join('\n\n');
+  const text = [
+    ...paragraphs,
+    ...(action ? [`${action.label}:\n${action.url}`] : []),
+    ...after,
+    ...(last ? [`${last.words}\n${last.url}`] : []),
+  ].join('\n\n');
   const html = [
     '<!doctype html><html lang="en"><head><meta charset="utf-8"><title>Stepwell</title></head>',
     '<body style="font-family:sans-serif;line-height:1.5;max-width:36em">',
@@ -52,6 +59,9 @@ export function writeLetter({ subject, paragraphs, action, afterwards = [] }: Le
         ]
       : []),
     ...after.map((line) => `<p>${escapeHtml(line)}</p>`),
+    ...(last
+      ? [`<p>${escapeHtml(last.words)}<br><a href="${escapeHtml(last.url)}">${escapeHtml(last.url)}</a></p>`]
+      : []),
     '</body></html>',
   ].join('');
   return { subject: oneLine(subject).slice(0, 200), text: `${text}\n`, html };

@@ -29,6 +29,9 @@ const minutesToWait = (failures: number) => 2 ** (failures - 1) * 60_000;
 
 type Mail = typeof mailOutbox.$inferSelect;
 
+/** What may hold a link is not kept once it is of no more use. */
+const erased = { textBody: null, htmlBody: null, unsubscribeUrl: null } as const;
+
 /**
  * Sends what is in the outbox, one mail after the other, until closed. Any number of workers may run, in any number
  * of processes: each mail is claimed in a short transaction, sent outside of one, and marked afterwards. A worker that
@@ -45,9 +48,9 @@ export function startMailWorker({
   const stop = new AbortController();
 
   async function deliver(mail: Mail): Promise<void> {
-    const { id, messageId, recipient: to, subject, textBody, htmlBody } = mail;
+    const { id, messageId, recipient: to, subject, textBody, htmlBody, unsubscribeUrl } = mail;
     try {
-      await send({ messageId, to, subject, text: textBody ?? '', html: htmlBody ?? '' });
+      await send({ messageId, to, subject, text: textBody ?? '', html: htmlBody ?? '', unsubscribeUrl });
     } catch (error) {
       await noteFailure(mail, error);
       return;
@@ -55,8 +58,7 @@ export function startMailWorker({
     await ifStillOurs(mail, {
       state: 'sent',
       sentAt: new Date(),
-      textBody: null,
-      htmlBody: null,
+      ...erased,
       claimedUntil: null,
     });
     logger.debug({ mail: id }, 'mail sent');
@@ -71,7 +73,7 @@ export function startMailWorker({
       lastError: reason.slice(0, 500),
       claimedUntil: null,
       ...(isGivenUp
-        ? { state: 'undelivered', textBody: null, htmlBody: null }
+        ? { state: 'undelivered', ...erased }
         : { dueAt: new Date(Date.now() + backOff(failures)) }),
     });
     const code = error instanceof Error && 'code' in error ? error.code : undefined;

@@ -7,6 +7,8 @@ export interface OutgoingMail {
   readonly subject: string;
   readonly text: string;
   readonly html: string;
+  /** Where one request ends mail of its kind; null for mail about the person's own account, which cannot be ended. */
+  readonly unsubscribeUrl: string | null;
 }
 
 /** Hands a mail to the next server; rejects where that one did not take it. */
@@ -29,17 +31,31 @@ export function smtpSender(url: string, origin: string, from = `no-reply@${mailD
     disableFileAccess: true,
     disableUrlAccess: true,
   });
-  return async ({ to, ...mail }) => {
+  return async ({ to, unsubscribeUrl, ...mail }) => {
     const sending = transport.sendMail({
       ...mail,
       from: { name: 'Stepwell', address: from },
       to: { name: '', address: to },
       // RFC 3834 §5: no out-of-office answers, please.
-      headers: { 'Auto-Submitted': 'auto-generated' },
+      headers: { 'Auto-Submitted': 'auto-generated', ...unsubscribeHeaders(unsubscribeUrl) },
     });
     await inTime(sending);
   };
 }
+
+/**
+ * What a mail program's own "unsubscribe" button uses: the address (RFC 2369 §3.2), and that a POST to it does it at
+ * once (RFC 8058 §3.1). `prepared`: an address must not be folded.
+ */
+const unsubscribeHeaders = (
+  url: string | null,
+): Record<string, string | { prepared: boolean; value: string }> =>
+  url === null
+    ? {}
+    : {
+        'List-Unsubscribe': { prepared: true, value: `<${url}>` },
+        'List-Unsubscribe-Post': 'List-Unsubscribe=One-Click',
+      };
 
 /** The timeouts above are for single steps: a server that answers one byte at a time would hold a worker for ever. */
 async function inTime(sending: Promise<unknown>): Promise<void> {

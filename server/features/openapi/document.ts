@@ -1,4 +1,5 @@
 import type { z } from 'zod';
+import { revisionStateField } from '../../../shared/contract/index.ts';
 import { problemKinds } from '../../http/problem.ts';
 import { componentSchemas, jsonSchemaOf, type JsonSchema } from './json-schema.ts';
 import type { Answer, Operation, Section } from './operation.ts';
@@ -95,14 +96,17 @@ function queryParameter(name: string, schema: z.ZodType) {
   return { name, in: 'query', required: !schema.safeParse(undefined).success, description, schema: shape };
 }
 
-function answerObject({ description, schema, alsoAs, headers = [] }: Answer) {
+function answerObject({ description, schema, alsoAs, textAs, headers = [] }: Answer) {
+  const text = { schema: { type: 'string' } };
   return {
     description,
     headers: Object.fromEntries([...headers, 'RateLimit'].map((name) => [name, reference('headers', name)])),
-    content: schema && {
-      'application/json': { schema: jsonSchemaOf(schema, 'output') },
-      ...(alsoAs ? { [alsoAs]: { schema: { type: 'string' } } } : {}),
-    },
+    content: textAs
+      ? { [textAs]: text }
+      : schema && {
+          'application/json': { schema: jsonSchemaOf(schema, 'output') },
+          ...(alsoAs ? { [alsoAs]: text } : {}),
+        },
   };
 }
 
@@ -156,6 +160,10 @@ const sharedParameters = {
 const sharedHeaders = {
   ETag: { description: 'Names the state that is answered.', schema: { type: 'string' } },
   Location: { description: 'Where the new thing is.', schema: { type: 'string' } },
+  'Stepwell-Revision-State': {
+    description: 'The state of the revision as it is exported; its files are the same in every state.',
+    schema: jsonSchemaOf(revisionStateField, 'output'),
+  },
   RateLimit: { description: 'How many requests are left, and for how long.', schema: { type: 'string' } },
 };
 

@@ -4,7 +4,7 @@ import type { Role } from '../../../shared/contract/index.ts';
 /** What one route does, as the document describes it. Schemas are those that the routes parse and answer by. */
 export interface Operation {
   readonly id: string;
-  readonly method: 'get' | 'post' | 'patch' | 'delete';
+  readonly method: 'get' | 'post' | 'patch' | 'put' | 'delete';
   /** As the router has it: `/teams/:team`. */
   readonly path: string;
   readonly summary: string;
@@ -25,12 +25,14 @@ export interface Operation {
 }
 
 export interface Answer {
-  readonly status: 200 | 201 | 202 | 204;
+  readonly status: 200 | 201 | 202 | 204 | 303;
   readonly description: string;
   readonly schema?: z.ZodType;
   /** Another form of the answer, by its media type. */
   readonly alsoAs?: string;
-  readonly headers?: readonly ('ETag' | 'Location')[];
+  /** Its only form, by its media type, where it is no JSON. */
+  readonly textAs?: string;
+  readonly headers?: readonly ('ETag' | 'Location' | 'Stepwell-Revision-State')[];
   /** Whether If-None-Match is honoured with 304. */
   readonly cacheable?: boolean;
 }

@@ -6,7 +6,10 @@ import type { Feature } from '../../feature.ts';
 import { hasReadableMailbox } from '../../mail/local-mailbox.ts';
 import { openApiDocument } from './document.ts';
 import { account } from './operations/account.ts';
+import { audit } from './operations/audit.ts';
 import { library } from './operations/library.ts';
+import { notices } from './operations/notices.ts';
+import { limitSets, reviews } from './operations/reviews.ts';
 import { mailbox, rendering, service } from './operations/service.ts';
 import { invitations, teams } from './operations/teams.ts';
 
@@ -14,9 +17,13 @@ import { invitations, teams } from './operations/teams.ts';
 export const openapi: Feature = (deps) => {
   const sections = [
     library,
+    reviews,
+    limitSets,
     teams,
     invitations,
     account,
+    notices,
+    audit,
     rendering,
     service,
     ...(hasReadableMailbox(deps.config) ? [mailbox] : []),

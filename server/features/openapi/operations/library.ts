@@ -149,7 +149,7 @@ export const library: Section = {
         description: 'The files, the same bytes for the same request',
         schema: renderAnswerSchema,
         alsoAs: 'text/plain',
-        headers: ['ETag'],
+        headers: ['ETag', 'Stepwell-Revision-State'],
         cacheable: true,
       },
     },

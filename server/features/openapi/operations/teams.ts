@@ -49,7 +49,7 @@ export const teams: Section = {
       id: 'changeTeam',
       method: 'patch',
       path: '/teams/:team',
-      summary: "Change a team's name or defaults",
+      summary: "Change a team's name, defaults or two-person rule",
       access: 'admin',
       body: changeTeamSchema,
       conditional: true,
