@@ -4,12 +4,12 @@ import { takenBy } from './c-words.ts';
 const significantCharacters = 63;
 
 /** The longest ending that templates put behind an array's name; what comes of it stays significant to its end. */
-const longestEnding = '_MAX_WORD'.length;
+const longestEnding = '_STEP_FOR_MILLIHZ'.length;
 
 export const arrayNameLength = { min: 1, max: significantCharacters - longestEnding } as const;
 
 /**
- * Why a name cannot be an array's in C and C++: what is allowed, in words; `undefined` where it can.
+ * Why a name cannot be an array's in every target's language: what is allowed, in words; `undefined` where it can.
  *
  * Allowed is an ASCII letter, then letters, digits and single underscores, not ending in one. A leading underscore is
  * reserved at file scope in C, two in a row anywhere in C++, and a trailing one would make two in `NAME__LENGTH`.

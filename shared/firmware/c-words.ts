@@ -1,4 +1,6 @@
-// Names that an array may not have in C or C++, because the language, its library or a compiler has taken them.
+// Names that an array may not have, because a language, its library or a compiler has taken them.
+
+import { pythonKeywords, rustKeywords } from './other-words.ts';
 
 const wordsIn = (text: string) => text.trim().split(/\s+/);
 
@@ -71,9 +73,11 @@ const avrLibcName =
 /** Reserved names of devices on Windows file systems: `aux.h` cannot be stored there. */
 const deviceName = /^(?:aux|con|nul|prn|com\d|lpt\d)$/i;
 
-/** Why a well-formed identifier is not free in C and C++, said as what would be allowed instead; or nothing. */
+/** Why a well-formed identifier is not free in some target's language, said as what would be allowed; or nothing. */
 export function takenBy(name: string): string | undefined {
   if (keywords.has(name)) return 'a name that is no keyword of C or C++';
+  if (rustKeywords.has(name)) return 'a name that is no keyword of Rust';
+  if (pythonKeywords.has(name)) return 'a name that is no keyword of Python';
   if (stdintName.test(name)) return 'a name that <stdint.h> does not use';
   const isMath = mathFunctions.has(name) || mathFunctions.has(name.replace(mathSuffix, ''));
   if (libraryNames.has(name) || isMath || avrLibcName.test(name)) {

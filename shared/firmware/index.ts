@@ -1,8 +1,11 @@
 export { arrayNameFault, arrayNameFrom, arrayNameLength } from './c-identifier.ts';
 export { canonicalJson, digestOf, type DigestInput } from './digest.ts';
+export { contentOf, readableContent } from './file-content.ts';
 export { inertText } from './inert-text.ts';
 export { decimal } from './key-figures.ts';
 export { flagOf, optionOf } from './option-flags.ts';
+export { optionGroups } from './options.ts';
+export { parsePortMap, portMapTexts, type PortMapTexts } from './port-map.ts';
 export { renderFiles, targetOf, type TemplateTexts } from './render-files.ts';
 export type { ExportableTable, Target } from './target.ts';
 export { targets } from './targets/index.ts';

@@ -18,13 +18,14 @@ const isUnseen = (codePoint: number) => unseen.some(([from, to]) => codePoint >=
 
 /**
  * What a person typed, as it may stand in a comment of any target's language: it cannot end or open a comment, splice
- * lines, form a trigraph (C17 §5.2.1.1), break the line or hide what follows. What cannot stay becomes a space, a
+ * lines, form a trigraph (C17 §5.2.1.1), hold what begins another (MISRA C:2012 rule 3.1), break the line or hide
+ * what follows. What cannot stay becomes a space, a
  * backslash a slash, and a space parts the pairs that mean something; nothing else changes.
  */
 export function inertText(text: string): string {
   return Array.from(text, (character) => (isUnseen(character.codePointAt(0) ?? 0) ? ' ' : character))
     .join('')
     .replaceAll('\\', '/')
-    .replace(/\*(?=\/)|\/(?=\*)|\?(?=\?)/g, '$& ')
+    .replace(/\*(?=\/)|\/(?=[*/])|\?(?=\?)/g, '$& ')
     .trim();
 }

@@ -1,5 +1,6 @@
 import type { Definition, Report } from '../contract/index.ts';
-import type { WordType } from './word-type.ts';
+import type { Layout } from './layout.ts';
+import { portMapTexts } from './port-map.ts';
 
 /** A line of a file's comment block: what it is about and what is said of it, in ASCII. */
 export interface KeyFigure {
@@ -10,10 +11,11 @@ export interface KeyFigure {
 export interface FiguresInput {
   readonly definition: Definition;
   readonly report: Report;
-  readonly wordType: WordType;
-  readonly storedCount: number;
-  readonly minWord: number;
-  readonly maxWord: number;
+  /** How many words of what, and the bytes they take. */
+  readonly storage: string;
+  /** The least and the most of the words. */
+  readonly words: { readonly min: number; readonly max: number };
+  readonly layout: Layout;
   readonly engineVersion: string;
   readonly digest: string;
 }
@@ -23,8 +25,8 @@ export function keyFigures(input: FiguresInput): KeyFigure[] {
   return [...settingFigures(input), ...qualityFigures(input), ...originFigures(input)];
 }
 
-function settingFigures({ definition: { level, table }, report, ...input }: FiguresInput): KeyFigure[] {
-  const { wordType, storedCount, minWord, maxWord } = input;
+function settingFigures({ definition: { level, table }, ...input }: FiguresInput): KeyFigure[] {
+  const { storage, words, layout } = input;
   const extras = [
     table.dither === 'none' ? '' : `${table.dither} dither, seed ${table.seed}`,
     table.shaping === 0 ? '' : `error feedback of order ${table.shaping}`,
@@ -47,9 +49,14 @@ function settingFigures({ definition: { level, table }, report, ...input }: Figu
     },
     {
       label: 'Words',
-      text: `${storedCount} of ${wordType.name}, ${minWord} to ${maxWord}, ${report.tableBytes} bytes`,
+      text: `${words.min} to ${words.max}; ${storage}`,
     },
   ];
+  if (layout.map !== undefined) {
+    const { portMap, reservedPins, reservedBy } = portMapTexts(layout.map);
+    figures.push({ label: 'Port map', text: portMap });
+    if (reservedPins !== '') figures.push({ label: 'Reserved', text: `${reservedPins}, ${reservedBy}` });
+  }
   if (table.fold === 'quarter') {
     figures.push({
       label: 'Fold',

@@ -1,14 +1,15 @@
 import { Liquid } from 'liquidjs';
 import { Refusal, showValue, type GeneratedFile } from '../contract/index.ts';
 import { engineVersion as thisEngine } from '../engine-version.ts';
+import { toBase64 } from './base64.ts';
 import { arrayNameFrom } from './c-identifier.ts';
 import { digestOf } from './digest.ts';
 import { inertText } from './inert-text.ts';
-import { codingNames, keyFigures } from './key-figures.ts';
-import type { ExportableTable, Facts, Target } from './target.ts';
+import { layOut } from './layout.ts';
+import { wordsToPlayOnce } from './once.ts';
+import { sharedFacts } from './shared-facts.ts';
+import type { ExportableTable, Target } from './target.ts';
 import { targets } from './targets/index.ts';
-import { wordLiteral, wordRows, wordSpan } from './word-rows.ts';
-import { wordTypeOf } from './word-type.ts';
 
 /** Text of each template by its path below `templates/`, the ending `.liquid` included. */
 export type TemplateTexts = Readonly<Record<string, string>>;
@@ -22,7 +23,7 @@ export function targetOf(id: string): Target {
 }
 
 /**
- * Files of one export. The same table, options and templates give the same bytes on every machine; lines end in LF.
+ * Files of one export. The same table, options and templates give the same bytes on every machine.
  *
  * @param options by the target's own schema; `{}` takes every default
  * @throws {Refusal} naming what the target cannot take: an option as `options.NAME`, a field of the definition as such.
@@ -34,11 +35,20 @@ export function renderFiles(
   templates: TemplateTexts,
 ): GeneratedFile[] {
   const target = targetOf(targetId);
-  const { licenceLine, arrayPrefix, ...given } = target.parseOptions(options);
-  const arrayName = given.arrayName ?? arrayNameFrom(table.definition.name, arrayPrefix);
-  const licence = inertText(licenceLine);
-  const top = licence === '' ? '' : `${target.lineComment} ${licence}\n`;
-  const facts = { ...sharedFacts(table, arrayName), ...target.factsOf(table, options) };
+  const given = target.parseOptions(options);
+  const { definition, codes, engineVersion = thisEngine } = table;
+  const played = given.playback === 'once' ? { ...table, stored: wordsToPlayOnce(table, given) } : table;
+  const input = {
+    table: played,
+    options: given,
+    arrayName: given.arrayName ?? arrayNameFrom(definition.name, given.arrayPrefix),
+    layout: (target.layOut ?? layOut)(played, given),
+    digest: digestOf({ definition, engineVersion, codes }),
+  };
+  const licence = inertText(given.licenceLine ?? '');
+  const top = licence === '' || target.commentOf === undefined ? '' : `${target.commentOf(licence)}\n`;
+  const files = target.filesOf(input);
+  const facts = sharedFacts(input, target.numbers);
   const liquid = new Liquid({
     templates: templates as Record<string, string>,
     extname: '.liquid',
@@ -46,49 +56,10 @@ export function renderFiles(
     strictFilters: true,
     ownPropertyOnly: true,
   });
-  return target.files.map(({ template, ending }) => ({
-    name: `${arrayName}${ending}`,
-    text: top + String(liquid.renderFileSync(template, facts)),
-  }));
-}
-
-/** Facts that every target's templates can print. */
-function sharedFacts(table: ExportableTable, arrayName: string): Facts {
-  const { definition, codes, stored, report, engineVersion = thisEngine } = table;
-  const { bits, coding, complement, fold, length, range, scale, levels } = definition.table;
-  const wordType = wordTypeOf(definition.table);
-  const words = wordSpan(stored);
-  const digest = digestOf({ definition, engineVersion, codes });
-  return {
-    title: inertText(definition.name) || arrayName,
-    arrayName,
-    macro: arrayName.toUpperCase(),
-    storedCount: stored.length,
-    tableLength: length,
-    bits,
-    levelCount: 2 ** bits,
-    halfLevels: 2 ** (bits - 1),
-    topCode: 2 ** bits - 1,
-    coding: codingNames[coding],
-    twosComplement: coding === 'twos-complement',
-    complement,
-    folded: fold === 'quarter',
-    range,
-    scale: levels === undefined ? scale : 'measured',
-    wordType: wordType.name,
-    wordBytes: wordType.bytes,
-    minWordLiteral: wordLiteral(words.min, wordType),
-    maxWordLiteral: wordLiteral(words.max, wordType),
-    rows: wordRows(stored),
-    figures: keyFigures({
-      definition,
-      report,
-      wordType,
-      storedCount: stored.length,
-      minWord: words.min,
-      maxWord: words.max,
-      engineVersion,
-      digest,
-    }),
-  };
+  return files.map((file): GeneratedFile => {
+    const name = `${input.arrayName}${file.ending}`;
+    if ('bytes' in file) return { name, text: toBase64(file.bytes), encoding: 'base64' };
+    const text = top + String(liquid.renderFileSync(file.template, { ...facts, ...file.facts }));
+    return { name, text: given.lineEnding === 'crlf' ? text.replaceAll('\n', '\r\n') : text, encoding: 'utf-8' };
+  });
 }

@@ -1,5 +1,7 @@
 import type { z } from 'zod';
 import { problemsIn, Refusal, type Definition, type Report } from '../contract/index.ts';
+import type { Layout, LayoutOptions } from './layout.ts';
+import type { NumberStyle } from './word-rows.ts';
 
 /** A table as it is exported: freshly built, or a saved revision with the figures and engine version stored then. */
 export interface ExportableTable {
@@ -13,33 +15,57 @@ export interface ExportableTable {
   readonly engineVersion?: string;
 }
 
-export interface TargetFile {
-  /** Below `templates/`, without its ending: `c99/header.h` is the file `c99/header.h.liquid`. */
-  readonly template: string;
-  /** What follows the array's name in the file's: `.h`. */
-  readonly ending: string;
-}
-
 /** Facts a template can print. Texts are inert already; numbers print as they are. */
 export type Facts = Readonly<Record<string, unknown>>;
 
-/** What every target can be told. */
-export interface SharedOptions {
+/** A file as a target describes it: a template, with facts beyond the shared ones, or bytes. */
+export type TargetFile = {
+  /** What follows the array's name in the file's: `.h`. */
+  readonly ending: string;
+} & (
+  | {
+      /** Below `templates/`, without its ending: `c99/header.h` is the file `c99/header.h.liquid`. */
+      readonly template: string;
+      readonly facts?: Facts;
+    }
+  | { readonly bytes: Uint8Array }
+);
+
+/** What targets can be told; each has the names, and of the others those that mean something to it. */
+export interface SharedOptions extends LayoutOptions {
   /** Made from the definition's name where left out. */
   readonly arrayName?: string;
   /** Put before a name that is made. */
   readonly arrayPrefix: string;
   /** Stands as a comment at the top of each file; empty for none. */
-  readonly licenceLine: string;
+  readonly licenceLine?: string;
+  readonly lineEnding?: 'lf' | 'crlf';
+  readonly playback?: string;
+  readonly idleCode?: number;
+  readonly rampWords?: number;
+  readonly numberBase?: NumberStyle['base'];
+  readonly columns?: number;
+}
+
+/** One export on its way: what a target makes files of. */
+export interface ExportInput<Options> {
+  readonly table: ExportableTable;
+  readonly layout: Layout;
+  readonly options: Options;
+  readonly arrayName: string;
+  readonly digest: string;
 }
 
 export interface Target {
   readonly id: string;
   /** What the export is, in a few words, for lists. */
   readonly title: string;
-  /** What begins a comment that ends with its line, in the files' language. */
-  readonly lineComment: string;
-  readonly files: readonly TargetFile[];
+  /** A comment of one line in the files' language; absent where that has none. */
+  readonly commentOf?: (text: string) => string;
+  /** How numbers are written where not in the way of C. */
+  readonly numbers?: Partial<NumberStyle>;
+  /** How words lie in storage, where not as `layOut` has it. @throws {Refusal} where they cannot. */
+  readonly layOut?: (table: ExportableTable, options: SharedOptions) => Layout;
   readonly options: z.ZodObject & z.ZodType<SharedOptions>;
   /**
    * Parses options by the target's schema.
@@ -48,30 +74,30 @@ export interface Target {
    */
   readonly parseOptions: (input: unknown) => SharedOptions;
   /**
-   * What the target's own templates need beyond the facts that all share.
+   * The files of an export, in the order of lists.
    *
    * @throws {Refusal} where the target cannot take the table.
    */
-  readonly factsOf: (table: ExportableTable, input: unknown) => Facts;
+  readonly filesOf: (input: ExportInput<SharedOptions>) => readonly TargetFile[];
 }
 
 interface TargetDescriptor<Options extends Target['options']> extends Omit<
   Target,
-  'options' | 'parseOptions' | 'factsOf'
+  'options' | 'parseOptions' | 'filesOf'
 > {
   readonly options: Options;
-  readonly factsOf: (table: ExportableTable, options: z.output<Options>) => Facts;
+  readonly filesOf: (input: ExportInput<z.output<Options>>) => readonly TargetFile[];
 }
 
 /** Makes a target of its descriptor: the small part of an export that is not a template. */
 export function defineTarget<const Options extends Target['options']>(
   descriptor: TargetDescriptor<Options>,
 ): Target {
-  const parseOptions = (input: unknown) => parse(descriptor.options, input);
   return {
     ...descriptor,
-    parseOptions,
-    factsOf: (table, input) => descriptor.factsOf(table, parseOptions(input)),
+    parseOptions: (input) => parse(descriptor.options, input),
+    // Options reach `filesOf` only as `parseOptions` of the same target has made them.
+    filesOf: (input) => descriptor.filesOf(input as ExportInput<z.output<Options>>),
   };
 }
 

@@ -1,73 +1,67 @@
 import { z } from 'zod';
-import { Refusal, showValue } from '../../contract/index.ts';
-import { portOption, sharedOptions } from '../options.ts';
-import { defineTarget, type ExportableTable } from '../target.ts';
-import { wordTypeOf } from '../word-type.ts';
+import { avrFiles } from '../avr/files.ts';
+import { layOutForAvr } from '../avr/ports.ts';
+import {
+  numberOptions,
+  packedOption,
+  portMapOptions,
+  portOption,
+  sharedOptions,
+  storageOptions,
+  wholeNumberOption,
+  wordOption,
+} from '../options.ts';
+import { playbackOptions } from '../playback-options.ts';
+import { defineTarget } from '../target.ts';
 
-/** avr-gcc's largest object: sizes and differences of pointers are 16-bit, signed. */
-const largestObject = 32_767;
+export const avrPlaybacks = [
+  'loop',
+  'timer',
+  'accumulator',
+  'timer-accumulator',
+  'two-accumulators',
+  'once',
+  'none',
+] as const;
 
-/** A table in program memory for avr-gcc, and a main that writes it to one port, or to two above 8 bits, for ever. */
-export const avr = defineTarget({
-  id: 'avr',
-  title: 'AVR program memory and port loop',
-  lineComment: '//',
-  files: [
-    { template: 'avr/header.h', ending: '.h' },
-    { template: 'avr/source.c', ending: '.c' },
-    { template: 'avr/main.c', ending: '_main.c' },
-  ],
-  options: z.strictObject({
-    ...sharedOptions,
-    arrayName: sharedOptions.arrayName.refine((name) => name === undefined || /[a-z]/.test(name), {
-      error: 'a name with a lower-case letter: avr-libc names registers in capitals',
-    }),
-    port: portOption.default('B').describe('port that the words go to, bit 0 on pin 0'),
-    highPort: portOption
-      .optional()
-      .describe('port of bit 8 and up, above 8 bits; D, or B where D is taken, if not given'),
+const options = z.strictObject({
+  ...sharedOptions,
+  arrayName: sharedOptions.arrayName.refine((name) => name === undefined || /[a-z]/.test(name), {
+    error: 'a name with a lower-case letter: avr-libc names registers in capitals',
   }),
-  factsOf: (table, { port, highPort }) => {
-    const { bits } = table.definition.table;
-    refuseUnplayable(table);
-    const upperPort = highPort ?? (port === 'D' ? 'B' : 'D');
-    if (bits > 8 && upperPort === port) {
-      throw new Refusal({
-        path: 'options.highPort',
-        value: showValue(highPort),
-        allowed: `a port letter other than options.port, ${port}`,
-      });
-    }
-    return {
-      port,
-      highPort: bits > 8 ? upperPort : false,
-      portMask: pinMask(Math.min(bits, 8)),
-      highPortMask: pinMask(bits - 8),
-      topBit: bits - 1,
-      topPinOfPort: Math.min(bits, 8) - 1,
-      topPinOfHighPort: bits - 9,
-    };
-  },
+  ...numberOptions,
+  ...storageOptions,
+  packed: packedOption,
+  port: portOption.default('B').describe('port that the words go to, bit 0 on pin 0, without a port map'),
+  highPort: portOption
+    .optional()
+    .describe('port of bit 8 and up, above 8 bits; D, or B where D is taken, if not given'),
+  ...portMapOptions,
+  playback: wordOption(avrPlaybacks)
+    .default('loop')
+    .describe(
+      'what plays: a free-running loop, a timer interrupt, a loop or interrupts with a phase accumulator, two summed, the wave once, or nothing',
+    ),
+  unroll: wordOption(['none', 'two', 'whole'])
+    .default('none')
+    .describe('loop: words in a turn; whole takes a few instructions a word and is the fastest'),
+  ...playbackOptions,
+  prescaler: wordOption(['1', '8', '64', '256', '1024'])
+    .default('1')
+    .describe('division of the clock before the timer'),
+  compare: wholeNumberOption(0, 65_535)
+    .default(499)
+    .describe('compare register of the timer: a word each prescaler × (compare + 1) cycles'),
 });
 
-/** Pins 0…count−1 of a port, in hexadecimal. */
-const pinMask = (count: number) =>
-  `0x${(2 ** Math.max(count, 0) - 1).toString(16).toUpperCase().padStart(2, '0')}`;
+export type AvrOptions = z.output<typeof options>;
 
-function refuseUnplayable({ definition: { table }, stored }: ExportableTable): void {
-  if (table.fold !== 'none') {
-    throw new Refusal({
-      path: 'table.fold',
-      value: showValue(table.fold),
-      allowed: '"none" for the target avr',
-    });
-  }
-  const most = Math.floor(largestObject / wordTypeOf(table).bytes);
-  if (stored.length > most) {
-    throw new Refusal({
-      path: 'table.length',
-      value: showValue(stored.length),
-      allowed: `at most ${most} entries of ${table.bits} bits for the target avr, whose arrays end at ${largestObject} bytes`,
-    });
-  }
-}
+/** A table in program memory for avr-gcc, and code that plays it on one port, or on two. */
+export const avr = defineTarget({
+  id: 'avr',
+  title: 'AVR program memory and playback',
+  commentOf: (text) => `// ${text}`,
+  options,
+  layOut: (table, given) => layOutForAvr(table, given as AvrOptions),
+  filesOf: avrFiles,
+});
