@@ -8,11 +8,16 @@ export const paths = {
 
   /** These lead to the team in use, or say what to do first. */
   anyTables: '/tables',
+  anyReviews: '/reviews',
   anyTeam: '/team',
   newTeam: '/new-team',
   team: '/teams/:team',
   tables: '/teams/:team/tables',
   table: '/teams/:team/tables/:table',
+  reviews: '/teams/:team/reviews',
+  review: '/teams/:team/tables/:table/revisions/:number/review',
+  /** Two revisions side by side: `?a=slug:3&b=slug:5`. */
+  compare: '/teams/:team/compare',
   /** Puts a revision on the bench. */
   openRevision: '/teams/:team/tables/:table/revisions/:number/bench',
 
@@ -39,6 +44,19 @@ export const tablePath = (team: string, table: string, revision?: number) =>
 
 export const openRevisionPath = (team: string, table: string, revision: number) =>
   `${tablesPath(team)}/${part(table)}/revisions/${revision}/bench`;
+
+export const reviewsPath = (team: string) => `${teamPath(team)}/reviews`;
+
+export const reviewPath = (team: string, table: string, revision: number) =>
+  `${tablesPath(team)}/${part(table)}/revisions/${revision}/review`;
+
+/** A revision in an address: `fog-signal:3`. */
+export const revisionText = (table: string, revision: number) => `${table}:${revision}`;
+
+export const comparePath = (team: string, a?: string, b?: string) => {
+  const query = [a && `a=${a}`, b && `b=${b}`].filter(Boolean).join('&');
+  return `${teamPath(team)}/compare${query && `?${query}`}`;
+};
 
 /** The sign-in page, which goes on to `to`. */
 export const signInPath = (to: string) => `${paths.signIn}?${new URLSearchParams({ to })}`;

@@ -17,7 +17,12 @@ export function createRouter(queryClient: QueryClient) {
       children: [
         {
           ErrorBoundary: RouteFault,
-          children: [...benchRoutes(queryClient), ...libraryRoutes(queryClient), ...accountRoutes()],
+          children: [
+            ...benchRoutes(queryClient),
+            ...libraryRoutes(queryClient),
+            ...reviewRoutes(queryClient),
+            ...accountRoutes(),
+          ],
         },
         {
           path: paths.mailbox,
@@ -86,12 +91,14 @@ function libraryRoutes(queryClient: QueryClient): RouteObject[] {
     {
       path: paths.table,
       lazy: async () => {
-        const [{ TablePage, tableLoader }, { RevisionView }, ErrorBoundary] = await Promise.all([
-          import('./features/tables/table-page.tsx'),
-          import('./features/bench/save/revision-view.tsx'),
-          placeFault(),
-        ]);
-        const element = <TablePage RevisionView={RevisionView} />;
+        const [{ TablePage, tableLoader }, { RevisionView }, { RevisionReview }, ErrorBoundary] =
+          await Promise.all([
+            import('./features/tables/table-page.tsx'),
+            import('./features/bench/save/revision-view.tsx'),
+            import('./features/reviews/revision-review.tsx'),
+            placeFault(),
+          ]);
+        const element = <TablePage RevisionView={RevisionView} RevisionReview={RevisionReview} />;
         return { element, loader: tableLoader(queryClient), ErrorBoundary };
       },
     },
@@ -109,13 +116,54 @@ function libraryRoutes(queryClient: QueryClient): RouteObject[] {
       path: paths.newTeam,
       lazy: async () => ({ Component: (await import('./features/team/new-team-page.tsx')).NewTeamPage }),
     },
-    ...(['tables', 'team'] as const).map((place): RouteObject => ({
-      path: place === 'tables' ? paths.anyTables : paths.anyTeam,
+    ...(['tables', 'reviews', 'team'] as const).map((place): RouteObject => ({
+      path: { tables: paths.anyTables, reviews: paths.anyReviews, team: paths.anyTeam }[place],
       lazy: async () => {
         const { AnyTeamPage } = await import('./features/team/any-team-page.tsx');
         return { element: <AnyTeamPage place={place} /> };
       },
     })),
+  ];
+}
+
+function reviewRoutes(queryClient: QueryClient): RouteObject[] {
+  return [
+    {
+      path: paths.reviews,
+      lazy: async () => {
+        const [{ ReviewsPage, reviewsLoader }, ErrorBoundary] = await Promise.all([
+          import('./features/reviews/reviews-page.tsx'),
+          placeFault(),
+        ]);
+        return { Component: ReviewsPage, loader: reviewsLoader(queryClient), ErrorBoundary };
+      },
+    },
+    {
+      path: paths.review,
+      lazy: async () => {
+        const [{ ReviewPage, reviewLoader }, { RevisionView }, { figureGroupsOf }, ErrorBoundary] =
+          await Promise.all([
+            import('./features/reviews/review-page.tsx'),
+            import('./features/bench/save/revision-view.tsx'),
+            import('./features/bench/figures/figures.ts'),
+            placeFault(),
+          ]);
+        const element = <ReviewPage RevisionView={RevisionView} figuresOf={figureGroupsOf} />;
+        return { element, loader: reviewLoader(queryClient), ErrorBoundary };
+      },
+    },
+    {
+      path: paths.compare,
+      lazy: async () => {
+        const [{ ComparePage, compareLoader }, { figureGroupsOf }, ErrorBoundary] = await Promise.all([
+          import('./features/reviews/compare-page.tsx'),
+          import('./features/bench/figures/figures.ts'),
+          placeFault(),
+        ]);
+        const element = <ComparePage figuresOf={figureGroupsOf} />;
+        return { element, loader: compareLoader(queryClient), ErrorBoundary };
+      },
+    },
   ];
 }
 

@@ -4,7 +4,7 @@ import { readRates, type RateStanding } from './rate-standing.ts';
 import { askToSignIn } from './sign-in-again.ts';
 
 export interface Ask<Data> {
-  readonly method?: 'GET' | 'POST' | 'PATCH' | 'DELETE';
+  readonly method?: 'GET' | 'POST' | 'PUT' | 'PATCH' | 'DELETE';
   readonly body?: object;
   /** Entity tag of the state that the change was made from. */
   readonly ifMatch?: string;

@@ -1,5 +1,5 @@
 import { useCurrentTeam } from '../api/current-team.ts';
-import { paths, tablesPath, teamPath } from '../paths.ts';
+import { paths, reviewsPath, tablesPath, teamPath } from '../paths.ts';
 
 /** One entry of the header's navigation. */
 export interface Place {
@@ -7,6 +7,8 @@ export interface Place {
   to: string;
   /** Whether places below it count as others. */
   isExact: boolean;
+  /** The team whose waiting reviews are counted beside the label. */
+  countsFor?: string | undefined;
 }
 
 /** Places in the header, in order. Those of a team lead to the one in use, or to where it is said what to do first. */
@@ -15,6 +17,12 @@ export function usePlaces(): readonly Place[] {
   return [
     { label: 'Bench', to: paths.bench, isExact: true },
     { label: 'Tables', to: team === undefined ? paths.anyTables : tablesPath(team), isExact: false },
+    {
+      label: 'Reviews',
+      to: team === undefined ? paths.anyReviews : reviewsPath(team),
+      isExact: false,
+      countsFor: team,
+    },
     { label: 'Team', to: team === undefined ? paths.anyTeam : teamPath(team), isExact: true },
   ];
 }

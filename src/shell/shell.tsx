@@ -1,3 +1,4 @@
+import { lazy, Suspense } from 'react';
 import { Link, NavLink, Outlet, ScrollRestoration, useNavigation } from 'react-router-dom';
 import { engineVersion } from '../../shared/engine-version.ts';
 import { ToastRegion } from '../components/index.ts';
@@ -9,6 +10,14 @@ import { SignInAgain } from './sign-in-again.tsx';
 import { TeamSwitcher } from './team-switcher.tsx';
 import { ThemeSwitch } from './theme-switch.tsx';
 import { WordMark } from './word-mark.tsx';
+
+/** Not worth a fault of the whole page where its program cannot be fetched. */
+const WaitingCount = lazy(() =>
+  import('./waiting-count.tsx').then(
+    ({ WaitingCount }) => ({ default: WaitingCount }),
+    () => ({ default: () => null }),
+  ),
+);
 
 /** Where mail is not sent on, but kept to be read on this machine. */
 const mayHaveMailbox = /^(localhost|127\.|\[::1\])/.test(location.hostname);
@@ -30,6 +39,11 @@ export function Shell({ onSignedOut }: AccountMenuProps) {
           {places.map((place) => (
             <NavLink key={place.label} to={place.to} end={place.isExact} className="shell-place">
               {place.label}
+              {place.countsFor !== undefined && (
+                <Suspense fallback={null}>
+                  <WaitingCount team={place.countsFor} />
+                </Suspense>
+              )}
             </NavLink>
           ))}
         </nav>

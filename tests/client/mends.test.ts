@@ -4,7 +4,10 @@ import { checkDefinition, Refusal, type Definition, type Problem } from '../../s
 import { mendsFor } from '../../src/features/bench/problems/mends.ts';
 import { examples } from '../../src/features/bench/state/examples.ts';
 
-const [fogSignal, , lampFade] = examples.map(({ work }) => work.definition);
+const [fogSignal, , lampFade, selfTest] = examples.map(({ work }) => work.definition);
+
+/** Voltages of 8 bits, evenly stepped but for the middle. */
+const levels = Array.from({ length: 256 }, (_, code) => code * 0.02 + (code === 128 ? 0.015 : 0));
 
 const withTable = (table: Partial<Definition['table']>, of = fogSignal): Definition => ({
   ...of,
@@ -45,16 +48,63 @@ describe('a mend', () => {
     [
       'mid-tread, unipolar',
       withTable({ scale: 'mid-tread', range: 'unipolar' }),
-      ['Use full span', 'Go back to bipolar'],
+      ['Use full span', 'Make the range bipolar'],
     ],
     ['a level of 3', withLevel({ level: 3 }), ['Use 1']],
     ['a level below 0', withLevel({ level: -0.5 }), ['Use 0']],
     [
       'a bent lamp fade made bipolar',
       withTable({ range: 'bipolar' }, lampFade),
-      ['Use no transfer curve', 'Go back to unipolar'],
+      ['Use no transfer curve', 'Make the range unipolar'],
     ],
     ['a zero signal', silent, ['Do not normalise']],
+    ['a seed of −1', withTable({ dither: 'triangular', seed: -1 }), ['Use 0']],
+    [
+      'a quarter of 254 entries',
+      withTable({ fold: 'quarter', sampleAt: 'centre', length: 254 }),
+      ['Use 256', 'Store the whole table'],
+    ],
+    [
+      'a quarter of 2 cycles',
+      withTable({ fold: 'quarter', sampleAt: 'centre', cycles: 2 }),
+      ['Use 1', 'Store the whole table'],
+    ],
+    [
+      'a quarter sampled at the start',
+      withTable({ fold: 'quarter' }),
+      ['Sample at the centre', 'Store the whole table'],
+    ],
+    [
+      'a quarter rounded down',
+      withTable({ fold: 'quarter', sampleAt: 'centre', rounding: 'down' }),
+      ['Round half up', 'Store the whole table'],
+    ],
+    [
+      'a quarter of a dithered sine',
+      withTable({ fold: 'quarter', sampleAt: 'centre', dither: 'triangular' }, selfTest),
+      ['Store the whole table', 'Use neither dither nor shaping'],
+    ],
+    [
+      'dither with measured levels',
+      withTable({ levels, dither: 'triangular' }),
+      ['Use no dither', 'Clear the measured levels'],
+    ],
+    [
+      'shaping with measured levels',
+      withTable({ levels, shaping: 2 }),
+      ['Use no shaping', 'Clear the measured levels'],
+    ],
+    [
+      'rounding down with measured levels',
+      withTable({ levels, rounding: 'down' }),
+      ['Round half up', 'Clear the measured levels'],
+    ],
+    [
+      '128 levels for 8 bits',
+      withTable({ levels: levels.slice(0, 128) }),
+      ['Clear the measured levels', 'Use 7 bits'],
+    ],
+    ['equal levels', withTable({ levels: levels.map(() => 1) }), ['Clear the measured levels']],
   ])('puts %s right, whichever is taken', (_what, draft, labels) => {
     const [problem] = problemsOf(draft);
     const mends = mendsFor(problem, draft);

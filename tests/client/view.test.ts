@@ -52,7 +52,15 @@ describe('fields by their paths', () => {
     ['level.transfer.gamma', 'Gamma', 'quantise'],
     ['source.partials[2].amplitude', 'Partial 3, amplitude', 'shape'],
     ['source.points[0].x', 'Point 1, place in the cycle', 'shape'],
-    ['source.parts[1].source', 'source.parts[1].source', 'shape'],
+    ['source.parts[1].source', 'Part 2', 'shape'],
+    ['source.parts[0].gain', 'Part 1, gain', 'shape'],
+    [
+      'source.parts[1].source.parts[0].source.partials[2].phaseDeg',
+      'Part 2: Part 1: Partial 3, phase',
+      'shape',
+    ],
+    ['source.values[4]', 'Sample 5', 'shape'],
+    ['table.levels[3]', 'Measured level of code 3', 'quantise'],
     ['name', 'Name of the wave', null],
     ['definition', 'definition', null],
   ])('%s is “%s”', (path, name, flight) => {

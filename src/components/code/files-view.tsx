@@ -1,5 +1,6 @@
 import type { ReactNode } from 'react';
 import type { GeneratedFile } from '../../../shared/contract/index.ts';
+import { readableContent } from '../../../shared/firmware/index.ts';
 import { Button } from '../button.tsx';
 import { icons } from '../icons.tsx';
 import { TabPanel, TabRow } from '../tab-row.tsx';
@@ -30,11 +31,11 @@ export function FilesView({ files, selected, onSelect, downloads }: FilesViewPro
           onSelect={onSelect}
         />
         <TabPanel id={shown.name} group="export">
-          <CodeView {...shown} />
+          <CodeView name={shown.name} text={readableContent(shown)} />
         </TabPanel>
       </div>
       <div className="flex flex-wrap gap-2">
-        <Button size="small" icon={icons.copy} onPress={() => void copy(shown.text, shown.name)}>
+        <Button size="small" icon={icons.copy} onPress={() => void copy(readableContent(shown), shown.name)}>
           Copy {shown.name}
         </Button>
         {downloads(shown)}

@@ -11,6 +11,7 @@ import { flightOfInput, goToField, goToInput } from './problems/go-to-field.ts';
 import { ProblemSummary } from './problems/problem-summary.tsx';
 import { QuantiseFlight, QuantiseSummary } from './quantise/quantise-flight.tsx';
 import { BenchShape, ShapeSummary } from './shape-on-bench.tsx';
+import { DefinitionText } from './source-text/index.ts';
 import { useCopyLink } from './share/use-copy-link.tsx';
 import { theBench } from './state/use-bench.ts';
 import { useBenchKeys } from './view/use-bench-keys.ts';
@@ -70,6 +71,7 @@ export function BenchPage() {
           </Flight>
         ))}
       </Flights>
+      <DefinitionText />
     </div>,
     <BenchDrawings key="drawings" onGoTo={goTo} />,
   ];

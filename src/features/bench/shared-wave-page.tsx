@@ -12,7 +12,7 @@ import { theSavedLinks } from './save/use-saved-links.ts';
 import { sayInWords } from './shape/index.ts';
 import { useCopyLink } from './share/use-copy-link.tsx';
 import { useSharedWave } from './share/use-shared-wave.ts';
-import { useTable } from './share/use-table.ts';
+import { useTable } from '../../workers/use-table.ts';
 import { sampleRateOf, toneOf, type Wave } from './state/wave.ts';
 
 /** A wave that a link carries: to be seen and heard, and put on the bench. */

@@ -7,7 +7,7 @@ import { Button, ChoiceField, SelectField, TextField } from '../../components/in
 import { changedQuery, isFiltered, isSort, sortedBy, unfiltered, viewOf } from './list-query.ts';
 import type { ChangeQuery } from './use-list-query.ts';
 import { sortWords } from './sort-words.ts';
-import { stateLooks } from './state-word.tsx';
+import { stateLooks } from '../../components/state-word.tsx';
 import { useIsNarrow } from './use-is-narrow.ts';
 
 interface FiltersProps {

@@ -5,9 +5,9 @@ import { asProblem } from '../../api/problem-error.ts';
 import { tableQueries, type TaggedTable } from '../../api/tables.ts';
 import { Button, Moment, Panel, Waiting } from '../../components/index.ts';
 import { ProblemNotice } from '../../forms/problem-notice.tsx';
-import { openRevisionPath, tablePath } from '../../paths.ts';
+import { comparePath, openRevisionPath, revisionText, tablePath } from '../../paths.ts';
 import { sayBytes, saySize, saySnr } from './say-figures.ts';
-import { StateWord } from './state-word.tsx';
+import { StateWord } from '../../components/state-word.tsx';
 import { useIsNarrow } from './use-is-narrow.ts';
 
 interface RevisionHistoryProps {
@@ -100,7 +100,10 @@ function Rows({ team, table, revisions, shown }: ListProps) {
               <span className="quiet">{revision.madeBy.name}</span>
             </td>
             <td>
-              <OpenOnBench team={team} table={table} number={revision.number} />
+              <span className="revision-actions">
+                <Compare team={team} table={table} number={revision.number} shown={shown} />
+                <OpenOnBench team={team} table={table} number={revision.number} />
+              </span>
             </td>
           </tr>
         ))}
@@ -128,6 +131,9 @@ function Cards({ team, table, revisions, shown }: ListProps) {
           <p className="quiet">
             <Moment at={revision.madeAt} />, {revision.madeBy.name}
           </p>
+          <p>
+            <Compare team={team} table={table} number={revision.number} shown={shown} />
+          </p>
         </li>
       ))}
     </ul>
@@ -149,6 +155,28 @@ function NumberLink({ team, table, number }: { team: string; table: string; numb
 
 function Note({ note }: { note: string }) {
   return note === '' ? <span className="quiet">no note</span> : <p className="revision-note">{note}</p>;
+}
+
+interface CompareProps {
+  team: string;
+  table: string;
+  number: number;
+  shown: number;
+}
+
+/** Side by side with the revision in sight, the earlier one first. */
+function Compare({ team, table, number, shown }: CompareProps) {
+  if (number === shown) return null;
+  const [first, second] = [Math.min(number, shown), Math.max(number, shown)];
+  return (
+    <Link
+      to={comparePath(team, revisionText(table, first), revisionText(table, second))}
+      className="button button-plain button-small"
+      aria-label={`Compare revision ${number} with revision ${shown}`}
+    >
+      Compare
+    </Link>
+  );
 }
 
 function OpenOnBench({ team, table, number }: { team: string; table: string; number: number }) {

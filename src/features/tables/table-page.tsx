@@ -5,6 +5,7 @@ import { Link, useParams, useSearchParams, type LoaderFunctionArgs } from 'react
 import { includesRole, type Revision } from '../../../shared/contract/index.ts';
 import { chooseTeam } from '../../api/current-team.ts';
 import { asProblem } from '../../api/problem-error.ts';
+import type { RevisionAt } from '../../api/reviews.ts';
 import { tableQueries, type TaggedTable } from '../../api/tables.ts';
 import { teamQueries } from '../../api/teams.ts';
 import { Moment, Page, Waiting } from '../../components/index.ts';
@@ -13,12 +14,14 @@ import { ProblemNotice } from '../../forms/problem-notice.tsx';
 import { openRevisionPath, tablesPath, teamPath } from '../../paths.ts';
 import { ExportSection } from './export-section.tsx';
 import { RevisionHistory } from './revision-history.tsx';
-import { StateWord } from './state-word.tsx';
+import { StateWord } from '../../components/state-word.tsx';
 import { TableActions } from './table-actions.tsx';
 
 export interface TablePageProps {
   /** Drawings, figures and sound of a revision; they are the bench's own. */
   RevisionView: ComponentType<{ revision: Revision }>;
+  /** How a revision stands in review, and what can be done about it. */
+  RevisionReview: ComponentType<{ at: RevisionAt }>;
 }
 
 const shownNumber = (parameters: URLSearchParams, newest: number): number => {
@@ -43,7 +46,7 @@ export const tableLoader = (queryClient: QueryClient) => async (args: LoaderFunc
 };
 
 /** One table: a revision of it to see, hear and export, and all the others. */
-export function TablePage({ RevisionView }: TablePageProps) {
+export function TablePage({ RevisionView, RevisionReview }: TablePageProps) {
   const { team: teamSlug = '', table: slug = '' } = useParams();
   const { data: table } = useSuspenseQuery(tableQueries.detail(teamSlug, slug));
   const { data: team } = useSuspenseQuery(teamQueries.detail(teamSlug));
@@ -72,7 +75,7 @@ export function TablePage({ RevisionView }: TablePageProps) {
       }
     >
       <div className="table-parts">
-        <Shown {...{ teamSlug, slug, number, RevisionView }} newest={table.latestRevision} />
+        <Shown {...{ teamSlug, slug, number, RevisionView, RevisionReview }} newest={table.latestRevision} />
         <ExportSection key={number} team={teamSlug} table={slug} number={number} defaults={team.defaults} />
         <RevisionHistory team={teamSlug} table={table} shown={number} />
       </div>
@@ -123,7 +126,7 @@ interface ShownProps extends TablePageProps {
   newest: number;
 }
 
-function Shown({ teamSlug, slug, number, newest, RevisionView }: ShownProps) {
+function Shown({ teamSlug, slug, number, newest, RevisionView, RevisionReview }: ShownProps) {
   const { data: revision, error, refetch } = useQuery(tableQueries.revision(teamSlug, slug, number));
   return (
     <section className="space-y-3" aria-labelledby="shown-revision">
@@ -131,6 +134,7 @@ function Shown({ teamSlug, slug, number, newest, RevisionView }: ShownProps) {
         Revision {number}
         {number === newest ? ', the newest' : ` of ${newest}`}
       </h2>
+      <RevisionReview key={`${slug} ${number}`} at={{ team: teamSlug, table: slug, number }} />
       <ProblemNotice fault={error && asProblem(error)} onTryAgain={() => void refetch()} />
       {revision === undefined && !error && <Waiting>Reading revision {number}…</Waiting>}
       {revision !== undefined && (

@@ -10,7 +10,7 @@ import { PlayButton } from './play-button.tsx';
 import type { RowPlayer } from './row-player.ts';
 import { sayBytes, saySize, saySnr } from './say-figures.ts';
 import { SortHead } from './sort-head.tsx';
-import { StateWord } from './state-word.tsx';
+import { StateWord } from '../../components/state-word.tsx';
 import { useIsNarrow } from './use-is-narrow.ts';
 import type { ChangeQuery } from './use-list-query.ts';
 

@@ -10,7 +10,7 @@ import { teamQueries } from '../../api/teams.ts';
 import { Page, Waiting, useKeyGroup, useSingleKeys, type KeyGroup } from '../../components/index.ts';
 import { load } from '../../forms/load.ts';
 import { ProblemNotice } from '../../forms/problem-notice.tsx';
-import { paths, teamPath } from '../../paths.ts';
+import { comparePath, paths, teamPath } from '../../paths.ts';
 import { Filters } from './filters.tsx';
 import { readListQuery, viewOf } from './list-query.ts';
 import { NoTables } from './no-tables.tsx';
@@ -66,11 +66,16 @@ function Library({ team: slug }: { team: string }) {
         )
       }
       actions={
-        mayEdit && (
-          <Link to={paths.bench} className="button button-plain">
-            Go to the bench
+        <>
+          <Link to={comparePath(slug)} className="button button-plain">
+            Compare two
           </Link>
-        )
+          {mayEdit && (
+            <Link to={paths.bench} className="button button-plain">
+              Go to the bench
+            </Link>
+          )}
+        </>
       }
     >
       <div ref={page} className="library">

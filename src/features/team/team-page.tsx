@@ -11,8 +11,10 @@ import { sayRole } from '../../forms/say-role.ts';
 import { tablesPath } from '../../paths.ts';
 import { DefaultsPanel } from './defaults-panel.tsx';
 import { InvitationsPanel } from './invitations-panel.tsx';
+import { LimitsPanel } from './limits-panel.tsx';
 import { MembersPanel } from './members-panel.tsx';
 import { NamePanel } from './name-panel.tsx';
+import { TwoPersonPanel } from './two-person-panel.tsx';
 
 export const teamLoader = (queryClient: QueryClient) => async (args: LoaderFunctionArgs) => {
   const team = args.params.team ?? '';
@@ -52,6 +54,8 @@ function TeamParts({ slug }: { slug: string }) {
       <MembersPanel team={slug} isAdmin={isAdmin} ownId={account?.id} />
       {isAdmin && <InvitationsPanel team={slug} />}
       <DefaultsPanel team={team} isAdmin={isAdmin} />
+      <LimitsPanel team={slug} isAdmin={isAdmin} />
+      <TwoPersonPanel team={team} isAdmin={isAdmin} />
       {isAdmin && <NamePanel team={team} />}
     </Page>
   );

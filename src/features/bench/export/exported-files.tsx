@@ -1,6 +1,7 @@
 import type { GeneratedFile } from '../../../../shared/contract/index.ts';
 import { FilesView, useCopy } from '../../../components/code/index.ts';
 import { Button, icons } from '../../../components/index.ts';
+import { saveFile } from '../../../components/save-file.ts';
 import { saveText } from '../../../components/save-text.ts';
 import type { TableAnswer } from '../../../workers/engine-messages.ts';
 import { commandFor, definitionFileName, type TypedOptions } from './render-export.ts';
@@ -33,14 +34,14 @@ export function ExportedFiles({ table, targetId, options, files, selected, onSel
             <Button
               size="small"
               icon={icons.download}
-              onPress={() => saveText(shown.name, shown.text, 'text/x-c')}
+              onPress={() => saveFile(shown)}
             >
               Download {shown.name}
             </Button>
             <Button
               size="small"
               icon={icons.download}
-              onPress={() => files.forEach((file) => saveText(file.name, file.text, 'text/x-c'))}
+              onPress={() => files.forEach(saveFile)}
             >
               Download each file
             </Button>

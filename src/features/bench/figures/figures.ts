@@ -1,6 +1,7 @@
 import type { Report } from '../../../../shared/contract/index.ts';
 import type { TableAnswer } from '../../../workers/engine-messages.ts';
 import { fixed, significant } from '../numbers.ts';
+import { lowBandNoise } from './low-band.ts';
 
 /** A figure as it is shown, with what explains it in place. */
 export interface ShownFigure {
@@ -38,13 +39,20 @@ export function countOwnLines(intended: Float64Array): number {
   return lines;
 }
 
-export function figureGroupsOf({ report, definition, spectrum }: TableAnswer): FigureGroup[] {
+export function figureGroupsOf(table: TableAnswer): FigureGroup[] {
+  const { report, definition, spectrum } = table;
   const lines = countOwnLines(spectrum.intended);
   const several = lines > 1;
   return [
     {
       title: 'What quantising added',
-      figures: [snr(report, lines > 0), unwanted(report, lines > 0), ...errors(report), clipped(report)],
+      figures: [
+        snr(report, lines > 0),
+        unwanted(report, lines > 0),
+        lowBandNoise(table),
+        ...errors(report),
+        clipped(report),
+      ],
     },
     {
       title: 'Measured as a converter',

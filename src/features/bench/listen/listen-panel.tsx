@@ -9,8 +9,8 @@ import type { Playback } from './playback.ts';
 import { PlayingFlag } from './playing-flag.tsx';
 import { useBeyond } from './use-beyond.ts';
 import { usePlayKey } from './use-play-key.ts';
-import { usePreview } from './use-preview.ts';
-import { VolumeField } from './volume-field.tsx';
+import { usePreview } from '../../../audio/use-preview.ts';
+import { VolumeField } from '../../../audio/volume-field.tsx';
 import './listen.css';
 
 export interface ListenPanelProps {

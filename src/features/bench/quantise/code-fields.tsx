@@ -1,11 +1,5 @@
 import type { TableSettings } from '../../../../shared/contract/index.ts';
-import {
-  ChoiceField,
-  Explain,
-  SelectField,
-  SwitchField,
-  type SelectOption,
-} from '../../../components/index.ts';
+import { ChoiceField, Explain, SelectField, type SelectOption } from '../../../components/index.ts';
 import { Spot } from '../problems/field-problem.tsx';
 import { FieldGroup } from './field-group.tsx';
 import { useTableField } from './fields.ts';
@@ -42,21 +36,11 @@ const roundings: readonly SelectOption<TableSettings['rounding']>[] = [
   { value: 'down', label: 'Down', hint: 'To the code below, as a shift does: a mean error of half an LSB.' },
 ];
 
-const codings: readonly SelectOption<TableSettings['coding']>[] = [
-  {
-    value: 'offset-binary',
-    label: 'Offset binary',
-    hint: 'Stored as 0…2^b − 1, as ladders and PWM take it.',
-  },
-  { value: 'twos-complement', label: 'Two’s complement', hint: 'Stored signed, −2^(b−1)…2^(b−1) − 1.' },
-];
-
+/** Which signals there are codes for, and how a signal between two codes comes to one of them. */
 export function CodeFields() {
   const range = useTableField('range');
   const scale = useTableField('scale');
   const rounding = useTableField('rounding');
-  const coding = useTableField('coding');
-  const complement = useTableField('complement');
   return (
     <FieldGroup title="Codes">
       <Spot path="table.range">
@@ -76,17 +60,22 @@ export function CodeFields() {
         />
       </Spot>
       <Spot path="table.rounding">
-        <SelectField label="Rounding" options={roundings} {...rounding} />
-      </Spot>
-      <Spot path="table.coding">
-        <SelectField label="Coding" options={codings} {...coding} />
-      </Spot>
-      <Spot path="table.complement">
-        <SwitchField
-          label="Invert every code"
-          isOn={complement.value}
-          onChange={complement.onChange}
-          description="For drivers that are active low: code c is stored as 2^b − 1 − c."
+        <SelectField
+          label="Rounding"
+          options={roundings}
+          aside={
+            <Explain title="Rounding">
+              <p>
+                How a position v between two codes becomes one of them: half up is ⌊v + ½⌋, down is ⌊v⌋. Half
+                to even differs only where v lies exactly between two codes.
+              </p>
+              <p>
+                Take half up unless the table must match what other firmware computes. Half to even keeps a
+                symmetrical wave free of DC; down copies a right shift.
+              </p>
+            </Explain>
+          }
+          {...rounding}
         />
       </Spot>
     </FieldGroup>

@@ -32,6 +32,16 @@ const transfers: readonly SelectOption<TransferKind>[] = [
   { value: 'gamma', label: 'Gamma', hint: 'The signal to a power.' },
 ];
 
+/** A level has a sign, a luminance has none. */
+const transfersOfBipolar = transfers.map((transfer) =>
+  transfer.value === 'none'
+    ? {
+        ...transfer,
+        hint: 'The signal goes to the codes as it is. Curves are for unipolar waves, as lamps’ are.',
+      }
+    : transfer,
+);
+
 export function LevelFields() {
   const normalise = useLevelField('normalise');
   const level = useLevelField('level');
@@ -79,19 +89,31 @@ function LevelInDb() {
   return `${(20 * Math.log10(level)).toFixed(1)} dB of full scale`;
 }
 
-/** A curve for lamps. Only unipolar waves take one, so the field shows where it is of use or stands in the way. */
+/** A curve for lamps; bipolar waves are told that it is not for them, and what makes it so. */
 function TransferFields() {
   const range = useDefinition(({ table }) => table.range);
   const { value, onChange, problem } = useLevelField('transfer');
   const gammaProblem = useFieldProblem('level.transfer.gamma');
-  if (range !== 'unipolar' && value === 'none') return null;
   const kind = typeof value === 'string' ? value : 'gamma';
   return (
     <>
       <Spot path="level.transfer">
         <SelectField
           label="Transfer curve"
-          options={transfers}
+          options={range === 'unipolar' ? transfers : transfersOfBipolar}
+          aside={
+            <Explain title="Transfer curve">
+              <p>
+                The eye does not see light in proportion. A transfer curve bends the levelled signal x before
+                it is quantised: <code>x^γ</code>, or lightness L* = 100x to luminance,{' '}
+                <code>((L* + 16)/116)³</code> above 8, else <code>L*/903.3</code> (CIE 1976).
+              </p>
+              <p>
+                It makes a lamp’s fade look even. Only unipolar waves take one, as a duty or a luminance has
+                no sign. Dark ends want many bits: the curve is flat there.
+              </p>
+            </Explain>
+          }
           value={kind}
           onChange={(next) => onChange(next === 'gamma' ? { gamma: 2.2 } : next)}
           problem={problem}

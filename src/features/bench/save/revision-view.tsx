@@ -7,9 +7,9 @@ import { Drawings } from '../drawings/drawings.tsx';
 import { FigureStrips } from '../figures/figure-strips.tsx';
 import { Warnings } from '../figures/warnings.tsx';
 import { ListenPanel } from '../listen/index.ts';
-import { useTable } from '../share/use-table.ts';
+import { useTable } from '../../../workers/use-table.ts';
 import { sampleRateOf, type Playback } from '../state/wave.ts';
-import { asStored } from './as-stored.ts';
+import { asStored } from '../../../workers/as-stored.ts';
 
 /** How a wave is listened to that was saved without saying so. */
 const plainPlayback: Playback = { mode: 'loop', by: 'tone', toneHz: 220, sampleRateHz: 32_000 };

@@ -15,6 +15,7 @@ import type { OnChange } from './change.ts';
 import { PartialsTable } from './partials-table.tsx';
 import { problemAt } from './problems.ts';
 import { ShapeStarts } from './shape-starts.tsx';
+import { usePathTo } from './source-path.ts';
 
 interface HarmonicsEditorProps {
   source: HarmonicsSource;
@@ -43,6 +44,7 @@ const reachOptions: readonly SelectOption<Reach>[] = [
 
 /** A wave as a sum of sines: shapes to start from, bars to draw on, exact numbers. */
 export function HarmonicsEditor({ source, onChange, problems, tableLength, cycles }: HarmonicsEditorProps) {
+  const pathTo = usePathTo();
   const [extent, setExtent] = useState<Extent>('16');
   const [reach, setReach] = useState<Reach>('all');
   const fitting = highestOf(tableLength, cycles);
@@ -78,7 +80,7 @@ export function HarmonicsEditor({ source, onChange, problems, tableLength, cycle
         </div>
       )}
       <PartialsTable source={source} onChange={onChange} problems={problems} highestFitting={fitting} />
-      <div data-path="source.offset">
+      <div data-path={pathTo('.offset')}>
         <NumberField
           label="Offset"
           step={0.01}

@@ -12,6 +12,7 @@ import { relativeDb } from './bar-scale.ts';
 import type { OnChange } from './change.ts';
 import { Pager, lastPage, rowsOfPage } from './pager.tsx';
 import { problemAt, rowsAtFault } from './problems.ts';
+import { usePathTo } from './source-path.ts';
 import { useLatest } from './use-latest.ts';
 
 interface PartialsTableProps {
@@ -24,6 +25,7 @@ interface PartialsTableProps {
 /** The partials in exact numbers, a page at a time. Rows keep the order of the definition while they are edited. */
 export function PartialsTable({ source, onChange, problems, highestFitting }: PartialsTableProps) {
   const { partials } = source;
+  const pathTo = usePathTo();
   const [wantedPage, setPage] = useState(0);
   const page = Math.min(wantedPage, lastPage(partials.length));
   const latest = useLatest({ source, onChange });
@@ -43,7 +45,7 @@ export function PartialsTable({ source, onChange, problems, highestFitting }: Pa
   const isFull = partials.length >= limits.partials.max;
 
   return (
-    <div className="exact-list" data-path="source.partials">
+    <div className="exact-list" data-path={pathTo('.partials')}>
       <table className="exact-table partials-table">
         <caption className="sr-only">Partials in exact numbers</caption>
         <thead>
@@ -118,7 +120,7 @@ interface PartialRowProps {
 const PartialRow = memo(function PartialRow(props: PartialRowProps) {
   const { index, partial, strongest, isLeftOut, isOnly, onSet, onRemove } = props;
   const { harmonic, amplitude, phaseDeg } = partial;
-  const path = `source.partials[${index}]`;
+  const path = usePathTo()(`.partials[${index}]`);
   return (
     <tr data-path={path}>
       <td data-path={`${path}.harmonic`}>

@@ -4,6 +4,7 @@ import type { OnChange } from './change.ts';
 import { PointsTable } from './points-table.tsx';
 import { problemAt } from './problems.ts';
 import { Sketch } from './sketches.tsx';
+import { usePathTo } from './source-path.ts';
 import { pointStarts, pointsStart, type PointStart, type TableFrame } from './starts.ts';
 
 interface PointsEditorProps extends TableFrame {
@@ -36,6 +37,7 @@ const interpolations: readonly SelectOption<PointsSource['interpolation']>[] = [
 
 /** A wave as a closed curve through points. */
 export function PointsEditor({ source, onChange, problems, range, tableLength, cycles }: PointsEditorProps) {
+  const pathTo = usePathTo();
   return (
     <div className="space-y-4">
       <div className="start-stones" role="group" aria-label="Curves to start from">
@@ -51,7 +53,7 @@ export function PointsEditor({ source, onChange, problems, range, tableLength, c
           </button>
         ))}
       </div>
-      <div data-path="source.interpolation">
+      <div data-path={pathTo('.interpolation')}>
         <SelectField
           label="Between the points"
           options={interpolations}
@@ -67,8 +69,10 @@ export function PointsEditor({ source, onChange, problems, range, tableLength, c
         description="Takes away the harmonics that the table cannot hold, so that corners and steps do not fold back as wrong tones. Edges then ring a little."
       />
       <p className="field-description">
-        Drag the points on the drawing of the cycle, or set them here. The curve closes: after the last point
-        it goes on to the first.
+        {pathTo('') === 'source'
+          ? 'Drag the points on the drawing of the cycle, or set them here.'
+          : 'Set the points here; the drawing of the cycle shows the whole mix.'}{' '}
+        The curve closes: after the last point it goes on to the first.
       </p>
       <PointsTable source={source} onChange={onChange} problems={problems} />
     </div>

@@ -5,6 +5,7 @@ import type { OnChange } from './change.ts';
 import { Pager, lastPage, rowsOfPage } from './pager.tsx';
 import { canBePutInOrder, insertAfter, putPointsInOrder, removePoint, setPoint } from './points.ts';
 import { problemAt, rowsAtFault } from './problems.ts';
+import { usePathTo } from './source-path.ts';
 import { useLatest } from './use-latest.ts';
 
 interface PointsTableProps {
@@ -16,6 +17,7 @@ interface PointsTableProps {
 /** The points in exact numbers, a page at a time; x in cycles and, the same again, in degrees. */
 export function PointsTable({ source, onChange, problems }: PointsTableProps) {
   const { points } = source;
+  const pathTo = usePathTo();
   const [wantedPage, setPage] = useState(0);
   const page = Math.min(wantedPage, lastPage(points.length));
   const latest = useLatest({ source, onChange });
@@ -36,7 +38,7 @@ export function PointsTable({ source, onChange, problems }: PointsTableProps) {
   const isFull = points.length >= limits.points.max;
 
   return (
-    <div className="exact-list" data-path="source.points">
+    <div className="exact-list" data-path={pathTo('.points')}>
       <table className="exact-table points-table">
         <caption className="sr-only">Points in exact numbers</caption>
         <thead>
@@ -110,7 +112,7 @@ const xAllowed = 'a number from 0 up to, not including, 1, more than the x befor
 
 const PointRow = memo(function PointRow(props: PointRowProps) {
   const { index, point, isFull, isNeeded, fewest, onSet, onInsert, onRemove } = props;
-  const path = `source.points[${index}]`;
+  const path = usePathTo()(`.points[${index}]`);
   const name = `point ${index + 1}`;
   return (
     <tr data-path={path}>

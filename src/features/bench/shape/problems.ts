@@ -7,10 +7,10 @@ export function problemAt(problems: readonly Problem[], path: string): string | 
 }
 
 /** Indices of the rows of a list that have something wrong with them. */
-export function rowsAtFault(problems: readonly Problem[], list: 'partials' | 'points'): number[] {
+export function rowsAtFault(problems: readonly Problem[], list: 'partials' | 'points' | 'values'): number[] {
   const rows = new Set<number>();
   for (const { path } of problems) {
-    const found = /^source\.(partials|points)\[(\d+)\]/.exec(path);
+    const found = /^source\.(partials|points|values)\[(\d+)\]/.exec(path);
     if (found?.[1] === list) rows.add(Number(found[2]));
   }
   return [...rows].sort((one, other) => one - other);

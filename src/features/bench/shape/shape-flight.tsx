@@ -6,8 +6,8 @@ import type { OnChange } from './change.ts';
 import { HarmonicsEditor } from './harmonics-editor.tsx';
 import { PointsEditor } from './points-editor.tsx';
 import { problemAt } from './problems.ts';
-import { sayInWords } from './source-words.ts';
 import { useKeptWork, type Kind } from './use-kept-work.ts';
+import { later } from '../view/later.tsx';
 import './shape.css';
 
 export interface ShapeFlightProps {
@@ -31,16 +31,19 @@ const kinds: Record<Kind, SelectOption<Kind>> = {
     label: 'Points',
     hint: 'A curve through points: for ramps, fades and waves drawn by hand.',
   },
-  samples: { value: 'samples', label: 'Samples' },
-  mix: { value: 'mix', label: 'Mix' },
+  samples: { value: 'samples', label: 'Samples', hint: 'One recorded cycle, value by value.' },
+  mix: { value: 'mix', label: 'Mix', hint: 'Several of these, added or multiplied.' },
 };
+
+const MixEditor = later('the mix', async () => (await import('./mix/mix-editor.tsx')).MixEditor);
+const SamplesEditor = later(
+  'the samples',
+  async () => (await import('./samples/samples-editor.tsx')).SamplesEditor,
+);
 
 /** The first flight: what the wave is made of. */
 export function ShapeFlight({ source, onChange, problems, tableLength, cycles, range }: ShapeFlightProps) {
-  const kept = useKeptWork(onChange);
-  const others: Kind[] = (['samples', 'mix'] as const).filter(
-    (kind) => kind === source.kind || kept.kinds.includes(kind),
-  );
+  const kept = useKeptWork(source, onChange);
   const isSound = !problems.some(({ path }) => path.startsWith('source'));
   const wholeProblem = problemAt(problems, 'source');
   const change: OnChange = (next, how) => kept.change(source, next, how);
@@ -51,7 +54,7 @@ export function ShapeFlight({ source, onChange, problems, tableLength, cycles, r
       <ChoiceField
         label="Made of"
         value={source.kind}
-        options={(['harmonics', 'points', ...others] as const).map((kind) => kinds[kind])}
+        options={Object.values(kinds)}
         onChange={(kind) => kept.goTo(source, kind, highestFitting(tableLength, cycles), isSound)}
       />
       <div aria-live="polite">
@@ -59,15 +62,8 @@ export function ShapeFlight({ source, onChange, problems, tableLength, cycles, r
       </div>
       {source.kind === 'harmonics' && <HarmonicsEditor {...frame} source={source} onChange={change} />}
       {source.kind === 'points' && <PointsEditor {...frame} source={source} onChange={change} />}
-      {(source.kind === 'samples' || source.kind === 'mix') && (
-        <div className="shape-note">
-          <p>
-            This wave is {source.kind === 'samples' ? 'one recorded cycle' : 'a mix'}: {sayInWords(source)}.
-            It is kept, built and exported as it is; its parts cannot be changed here. Going over to harmonics
-            or points sets it aside, and one press or undo brings it back.
-          </p>
-        </div>
-      )}
+      {source.kind === 'samples' && <SamplesEditor source={source} onChange={change} problems={problems} />}
+      {source.kind === 'mix' && <MixEditor {...frame} source={source} onChange={change} />}
     </div>
   );
 }

@@ -1,5 +1,5 @@
-import type { RevisionState } from '../../../shared/contract/index.ts';
-import { icons, type Icon } from '../../components/index.ts';
+import type { RevisionState } from '../../shared/contract/index.ts';
+import { icons, type Icon } from './icons.tsx';
 
 interface StateLook {
   readonly words: string;

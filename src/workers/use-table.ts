@@ -1,7 +1,7 @@
 import { useEffect, useState } from 'react';
-import { sayProblem, type Definition } from '../../../../shared/contract/index.ts';
-import { createEngine } from '../../../workers/engine-client.ts';
-import type { EngineReply, TableAnswer } from '../../../workers/engine-messages.ts';
+import { sayProblem, type Definition } from '../../shared/contract/index.ts';
+import { createEngine } from './engine-client.ts';
+import type { EngineReply, TableAnswer } from './engine-messages.ts';
 
 type Built = { table: TableAnswer } | { fault: string };
 

@@ -1,6 +1,6 @@
-import type { Revision } from '../../../../shared/contract/index.ts';
-import { analyseTable } from '../../../../shared/analysis/index.ts';
-import type { TableAnswer } from '../../../workers/engine-messages.ts';
+import type { Revision } from '../../shared/contract/index.ts';
+import { analyseTable } from '../../shared/analysis/index.ts';
+import type { TableAnswer } from './engine-messages.ts';
 
 /**
  * A built table with the codes and figures that were stored. They are the same, as long as the engine is; a revision

@@ -5,7 +5,7 @@ import {
   type Hearing,
   type PreviewState,
   type Sound,
-} from '../../../audio/index.ts';
+} from './index.ts';
 
 const silent: PreviewState = { status: 'silent', trouble: null };
 const noListeners = () => () => undefined;
@@ -71,7 +71,7 @@ async function openPreview(): Promise<AudioPreview> {
   if (context === null)
     throw new Error('This browser cannot play: it has no Web Audio, or too many pages use it already.');
   try {
-    const { AudioPreview } = await import('../../../audio/player.ts');
+    const { AudioPreview } = await import('./player.ts');
     return new AudioPreview(context);
   } catch {
     void context.close();

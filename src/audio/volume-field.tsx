@@ -1,6 +1,6 @@
 import { useId } from 'react';
-import { formatQuantity } from '../../../../shared/quantities/index.ts';
-import { loudestDbfs, volumeRangeDb } from '../../../audio/index.ts';
+import { formatQuantity } from '../../shared/quantities/index.ts';
+import { loudestDbfs, volumeRangeDb } from './index.ts';
 
 /** Volume in dB below the loudest that the preview plays. It starts quiet with every visit. */
 export function VolumeField({ value, onChange }: { value: number; onChange: (db: number) => void }) {

@@ -1,0 +1,1 @@
+export { LevelsFields } from './levels-fields.tsx';

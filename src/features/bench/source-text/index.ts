@@ -1,0 +1,1 @@
+export { DefinitionText } from './definition-text.tsx';

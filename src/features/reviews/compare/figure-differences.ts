@@ -1,0 +1,153 @@
+import type { Definition, Report } from '../../../../shared/contract/index.ts';
+import { formatQuantity } from '../../../../shared/quantities/index.ts';
+
+export type Judgement = 'better' | 'worse' | 'same' | 'other';
+
+/** One figure of both tables, for reading. */
+export interface FigureDifference {
+  /** As the figures of the bench are called, so that its explanation can stand here too. */
+  readonly id: string;
+  readonly label: string;
+  readonly before: string;
+  readonly after: string;
+  /** With its sign; empty where there is none to tell. */
+  readonly difference: string;
+  /** `other`: it differs, and neither is better of itself. */
+  readonly judgement: Judgement;
+}
+
+interface Row {
+  readonly id: string;
+  readonly label: string;
+  readonly unit: string;
+  readonly decimals?: number;
+  readonly of: (report: Report) => number | null;
+  /** Which way is better: more, less, nearer to zero, or neither. */
+  readonly better: 'more' | 'less' | 'nearer' | 'neither';
+  /** Counts the wave's own partials as distortion, so that it judges single sines only. */
+  readonly forSines?: boolean;
+}
+
+/** An exact table has no noise to measure, and so more than any SNR. */
+const snrOf = ({ snrDb, exact }: Report) => (snrDb === null && exact ? Infinity : snrDb);
+const unwantedOf = ({ unwantedDb, exact }: Report) => (unwantedDb === null && exact ? -Infinity : unwantedDb);
+
+const rows: readonly Row[] = [
+  { id: 'snrDb', label: 'SNR', unit: 'dB', decimals: 1, of: snrOf, better: 'more' },
+  { id: 'unwantedDb', label: 'Unwanted line', unit: 'dB', decimals: 1, of: unwantedOf, better: 'less' },
+  { id: 'peakErrorLsb', label: 'Peak error', unit: 'LSB', of: (r) => r.peakErrorLsb, better: 'less' },
+  { id: 'rmsErrorLsb', label: 'RMS error', unit: 'LSB', of: (r) => r.rmsErrorLsb, better: 'less' },
+  { id: 'meanErrorLsb', label: 'Mean error', unit: 'LSB', of: (r) => r.meanErrorLsb, better: 'nearer' },
+  {
+    id: 'clipped',
+    label: 'Clipped',
+    unit: 'entries',
+    of: (r) => r.clippedSamples + r.clippedCodes,
+    better: 'less',
+  },
+  {
+    id: 'sinadDb',
+    label: 'SINAD',
+    unit: 'dB',
+    decimals: 1,
+    of: (r) => r.sinadDb,
+    better: 'more',
+    forSines: true,
+  },
+  {
+    id: 'enobBits',
+    label: 'ENOB',
+    unit: 'bits',
+    decimals: 2,
+    of: (r) => r.enobBits,
+    better: 'more',
+    forSines: true,
+  },
+  { id: 'thdDb', label: 'THD', unit: 'dB', decimals: 1, of: (r) => r.thdDb, better: 'less', forSines: true },
+  {
+    id: 'sfdrDb',
+    label: 'SFDR',
+    unit: 'dB',
+    decimals: 1,
+    of: (r) => r.sfdrDb,
+    better: 'more',
+    forSines: true,
+  },
+  { id: 'mean', label: 'Mean', unit: 'of full scale', of: (r) => r.mean, better: 'neither' },
+  { id: 'rms', label: 'RMS', unit: 'of full scale', of: (r) => r.rms, better: 'neither' },
+  { id: 'crestFactor', label: 'Crest factor', unit: '', of: (r) => r.crestFactor, better: 'neither' },
+  { id: 'usedCodes', label: 'Codes used', unit: 'codes', of: (r) => r.usedCodes, better: 'neither' },
+  { id: 'tableBytes', label: 'Size', unit: 'bytes', of: (r) => r.tableBytes, better: 'less' },
+  { id: 'meanToggles', label: 'Mean toggles', unit: 'bits a step', of: (r) => r.meanToggles, better: 'less' },
+  { id: 'worstToggle', label: 'Worst toggle', unit: 'bits', of: (r) => r.worstToggle.bits, better: 'less' },
+];
+
+interface Measured {
+  readonly definition: Definition;
+  readonly report: Report;
+}
+
+/** Every figure of the report, before and after, with the difference and whether that is better. */
+export function compareFigures(before: Measured, after: Measured): FigureDifference[] {
+  const areSines = isSine(before.definition) && isSine(after.definition);
+  return rows.map((row) => {
+    const [old, fresh] = [row.of(before.report), row.of(after.report)];
+    return {
+      id: row.id,
+      label: row.label,
+      before: say(row, old),
+      after: say(row, fresh),
+      difference: sayDifference(row, old, fresh),
+      judgement: judge(row, old, fresh, areSines),
+    };
+  });
+}
+
+/** Whether a wave has one partial and no other, so that all else in its spectrum is unwanted. */
+function isSine({ source }: Definition): boolean {
+  return (
+    source.kind === 'harmonics' && source.partials.filter(({ amplitude }) => amplitude !== 0).length === 1
+  );
+}
+
+/** Figures nearer than this, as a share of the larger, are told as the same. */
+const leastShare = 1e-9;
+
+function judge(
+  { better, forSines = false }: Row,
+  before: number | null,
+  after: number | null,
+  areSines: boolean,
+): Judgement {
+  if (before === after) return 'same';
+  if (before === null || after === null) return 'other';
+  const isFinite = Number.isFinite(after - before);
+  if (isFinite && Math.abs(after - before) <= leastShare * Math.max(Math.abs(after), Math.abs(before)))
+    return 'same';
+  if (better === 'neither' || (forSines && !areSines)) return 'other';
+  const gain = { more: after - before, less: before - after, nearer: Math.abs(before) - Math.abs(after) }[
+    better
+  ];
+  return gain > 0 ? 'better' : gain < 0 ? 'worse' : 'other';
+}
+
+function say({ unit, decimals }: Row, value: number | null): string {
+  if (value === null) return '–';
+  if (!Number.isFinite(value)) return 'exact';
+  const number = formatQuantity(value, '', decimals === undefined ? { significant: 4 } : { decimals });
+  return unit === '' ? number : `${number} ${unit}`;
+}
+
+function sayDifference(row: Row, before: number | null, after: number | null): string {
+  if (before === null || after === null) return '';
+  const difference = after - before;
+  if (!Number.isFinite(difference)) return '';
+  if (difference === 0) return '0';
+  const { decimals } = row;
+  const size = formatQuantity(
+    Math.abs(difference),
+    '',
+    decimals === undefined ? { significant: 3 } : { decimals },
+  );
+  return `${difference > 0 ? '+' : '−'}${size}`;
+}

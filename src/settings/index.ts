@@ -1,0 +1,4 @@
+export { changedSettings, type SettingChange } from './changes.ts';
+export { listSettings, type SettingInWords } from './list.ts';
+export { nameOfSetting } from './names.ts';
+export { saySource, sayValue } from './values.ts';
