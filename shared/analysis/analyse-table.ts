@@ -1,6 +1,7 @@
 import type { Report, TableSettings } from '../contract/index.ts';
 import { levelsOf, lsbOf, tableBytesOf, valuesOf, type QuantisedCycle } from '../quantiser/index.ts';
 import type { LevelledCycle } from '../waveform/index.ts';
+import { againstSignal, isConstant, strongestOf } from './against-signal.ts';
 import { carrierFigures } from './carrier-figures.ts';
 import { momentsOf } from './moments.ts';
 import { spectrumOf, type Spectrum } from './spectrum.ts';
@@ -13,9 +14,6 @@ export interface TableAnalysis {
   readonly values: Float64Array;
 }
 
-/** Error power up to which the codes count as exact. */
-const exactPower = 1e-24;
-
 /** Figures and spectra of a table against the levelled cycle it stands for (§4). */
 export function analyseTable(
   { cycle, clippedSamples }: Pick<LevelledCycle, 'cycle' | 'clippedSamples'>,
@@ -24,15 +22,21 @@ export function analyseTable(
 ): TableAnalysis {
   const lsb = lsbOf(table);
   const values = valuesOf(codes, table);
-  const { wanted, result, error } = momentsOf(cycle, values);
-  const exact = error.variance <= exactPower;
-  // A constant's variance is rounding noise, that of a very small signal may come out as 0.
-  const isConstant = wanted.variance === 0 || cycle.every((r) => r === cycle[0]);
-  const spectrum = spectrumOf(cycle, values, { cyclePeak: wanted.peak, errorPeak: error.peak });
+  const errorSignal = differenceOf(values, cycle);
+  const wanted = momentsOf(cycle);
+  const result = momentsOf(values);
+  const error = momentsOf(errorSignal);
+  const spectrum = spectrumOf(cycle, errorSignal);
+  const signal = {
+    variance: wanted.variance,
+    isConstant: isConstant(cycle, wanted.variance),
+    strongest: strongestOf(spectrum.intended),
+  };
   const storedCount = table.fold === 'quarter' ? codes.length / 4 : codes.length;
 
+  const { exact, snrDb, unwantedDb } = againstSignal(signal, error.variance, strongestOf(spectrum.added));
   const report: Report = {
-    snrDb: exact || isConstant ? null : 10 * Math.log10(wanted.variance / error.variance),
+    snrDb,
     idealSnrDb: 6.02 * table.bits + 1.76,
     exact,
     meanErrorLsb: error.mean / lsb,
@@ -45,11 +49,17 @@ export function analyseTable(
     clippedSamples,
     clippedCodes,
     ...carrierFigures(spectrum.amplitudes, table),
-    unwantedDb: exact || isConstant ? null : unwantedDbOf(spectrum),
+    unwantedDb,
     tableBytes: tableBytesOf(storedCount, table.bits),
     ...toggleFigures(codes),
   };
   return { report, spectrum, values };
+}
+
+function differenceOf(values: Float64Array, cycle: Float64Array): Float64Array {
+  const difference = new Float64Array(cycle.length);
+  for (let k = 0; k < cycle.length; k += 1) difference[k] = values[k] - cycle[k];
+  return difference;
 }
 
 function codeFigures(codes: Uint16Array, bits: number): Pick<Report, 'minCode' | 'maxCode' | 'usedCodes'> {
@@ -65,16 +75,4 @@ function codeFigures(codes: Uint16Array, bits: number): Pick<Report, 'minCode' |
     used[code] = 1;
   }
   return { minCode, maxCode, usedCodes };
-}
-
-/** The strongest line that quantising added, against the strongest intended one; DC left out. */
-function unwantedDbOf({ intended, added }: Spectrum): number | null {
-  let strongestAdded = 0;
-  let strongestIntended = 0;
-  for (let k = 1; k < intended.length; k += 1) {
-    if (added[k] > strongestAdded) strongestAdded = added[k];
-    if (intended[k] > strongestIntended) strongestIntended = intended[k];
-  }
-  const ratio = strongestAdded / strongestIntended;
-  return ratio > 0 && Number.isFinite(ratio) ? 20 * Math.log10(ratio) : null;
 }

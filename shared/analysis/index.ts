@@ -1,3 +1,5 @@
+export { againstSignal, isConstant, type SignalFacts } from './against-signal.ts';
 export { analyseTable, type TableAnalysis } from './analyse-table.ts';
 export { carrierFigures, type CarrierFigures } from './carrier-figures.ts';
-export { dbfsOf, floorDbfs, spectrumOf, type Spectrum } from './spectrum.ts';
+export { momentsOf, type Moments } from './moments.ts';
+export { dbfsOf, floorDbfs, spectrumOf, strongestLineOf, type Spectrum } from './spectrum.ts';

@@ -8,47 +8,65 @@ export interface Moments {
   readonly peak: number;
 }
 
-/** Moments of a cycle r, of the values q that its codes stand for, and of the error `q − r`, in two passes. */
-export function momentsOf(
-  cycle: Float64Array,
-  values: Float64Array,
-): { wanted: Moments; result: Moments; error: Moments } {
-  const count = cycle.length;
-  let wantedSum = 0;
-  let resultSum = 0;
-  let errorSum = 0;
-  for (let k = 0; k < count; k += 1) {
-    wantedSum += cycle[k];
-    resultSum += values[k];
-    errorSum += values[k] - cycle[k];
-  }
-  const wantedMean = wantedSum / count;
-  const resultMean = resultSum / count;
-  const errorMean = errorSum / count;
+/**
+ * Moments of a signal in two passes. Four sums run side by side, as each addition waits for the one before it; their
+ * order is fixed, so that a signal has the same moments wherever they are asked for.
+ */
+export function momentsOf(signal: Float64Array): Moments {
+  const count = signal.length;
+  const inFours = count - (count % 4);
+  const mean = sumOf(signal, inFours) / count;
 
-  let wantedSquares = 0;
-  let resultSquares = 0;
-  let errorSquares = 0;
-  let wantedPeak = 0;
-  let resultPeak = 0;
-  let errorPeak = 0;
-  for (let k = 0; k < count; k += 1) {
-    const r = cycle[k];
-    const q = values[k];
-    wantedPeak = Math.max(wantedPeak, Math.abs(r));
-    resultPeak = Math.max(resultPeak, Math.abs(q));
-    errorPeak = Math.max(errorPeak, Math.abs(q - r));
-    wantedSquares += (r - wantedMean) * (r - wantedMean);
-    resultSquares += (q - resultMean) * (q - resultMean);
-    errorSquares += (q - r - errorMean) * (q - r - errorMean);
+  let a = 0;
+  let b = 0;
+  let c = 0;
+  let d = 0;
+  let lowest = signal[0];
+  let highest = signal[0];
+  for (let k = 0; k < inFours; k += 4) {
+    const x0 = signal[k];
+    const x1 = signal[k + 1];
+    const x2 = signal[k + 2];
+    const x3 = signal[k + 3];
+    a += (x0 - mean) * (x0 - mean);
+    b += (x1 - mean) * (x1 - mean);
+    c += (x2 - mean) * (x2 - mean);
+    d += (x3 - mean) * (x3 - mean);
+    if (x0 > highest) highest = x0;
+    if (x0 < lowest) lowest = x0;
+    if (x1 > highest) highest = x1;
+    if (x1 < lowest) lowest = x1;
+    if (x2 > highest) highest = x2;
+    if (x2 < lowest) lowest = x2;
+    if (x3 > highest) highest = x3;
+    if (x3 < lowest) lowest = x3;
   }
+  for (let k = inFours; k < count; k += 1) {
+    const x = signal[k];
+    a += (x - mean) * (x - mean);
+    if (x > highest) highest = x;
+    if (x < lowest) lowest = x;
+  }
+  const variance = (a + b + (c + d)) / count;
   return {
-    wanted: momentsFrom(wantedMean, wantedSquares / count, wantedPeak),
-    result: momentsFrom(resultMean, resultSquares / count, resultPeak),
-    error: momentsFrom(errorMean, errorSquares / count, errorPeak),
+    mean,
+    variance,
+    rms: Math.sqrt(variance + mean * mean),
+    peak: Math.max(Math.abs(lowest), Math.abs(highest)),
   };
 }
 
-function momentsFrom(mean: number, variance: number, peak: number): Moments {
-  return { mean, variance, rms: Math.sqrt(variance + mean * mean), peak };
+function sumOf(signal: Float64Array, inFours: number): number {
+  let a = 0;
+  let b = 0;
+  let c = 0;
+  let d = 0;
+  for (let k = 0; k < inFours; k += 4) {
+    a += signal[k];
+    b += signal[k + 1];
+    c += signal[k + 2];
+    d += signal[k + 3];
+  }
+  for (let k = inFours; k < signal.length; k += 1) a += signal[k];
+  return a + b + (c + d);
 }

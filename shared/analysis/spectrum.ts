@@ -1,4 +1,4 @@
-import { transformOf } from '../dft/index.ts';
+import { realTransformOf } from '../dft/index.ts';
 
 /** One-sided spectra of a table of N entries, bins 0…⌊N/2⌋ (engine specification §4). */
 export interface Spectrum {
@@ -14,45 +14,27 @@ export interface Spectrum {
 export const floorDbfs = -200;
 
 /**
- * Spectra of a cycle r, of what the codes stand for, q, and of the error `e = q − r`: `A_0 = |X_0|/N`,
- * `A_k = 2|X_k|/N`, `A_{N/2} = |X_{N/2}|/N`.
- *
- * One complex transform gives both: of `x = r/r̂ + i·e/ê` the lines are `R_k/r̂ = (X_k + conj X_{N−k})/2` and
- * `E_k/ê = (X_k − conj X_{N−k})/2i`. Each carries the rounding noise of the other, so both are brought to one size
- * first, by their peaks r̂ and ê. The lines of q are the sum of both.
+ * Spectra of a cycle r, of the error `e = q − r` and of what the codes stand for, q: `A_0 = |X_0|/N`,
+ * `A_k = 2|X_k|/N`, `A_{N/2} = |X_{N/2}|/N`. The lines of q are the sum of the lines of both. Each has a transform of
+ * its own, so that the small error carries no rounding noise of the cycle.
  */
-export function spectrumOf(
-  cycle: Float64Array,
-  values: Float64Array,
-  { cyclePeak, errorPeak }: { cyclePeak: number; errorPeak: number },
-): Spectrum {
+export function spectrumOf(cycle: Float64Array, error: Float64Array): Spectrum {
   const size = cycle.length;
-  const { data, out, forward } = transformOf(size);
-  const cycleUnit = cyclePeak === 0 ? 1 : cyclePeak;
-  const errorUnit = errorPeak === 0 ? 1 : errorPeak;
-  for (let n = 0; n < size; n += 1) {
-    data[2 * n] = cycle[n] / cycleUnit;
-    data[2 * n + 1] = (values[n] - cycle[n]) / errorUnit;
-  }
-  forward(out, data);
-
-  const bins = Math.floor(size / 2) + 1;
+  const { bins, lines, otherLines, forward } = realTransformOf(size);
+  forward(lines, cycle);
+  forward(otherLines, error);
   const amplitudes = new Float64Array(bins);
   const intended = new Float64Array(bins);
   const added = new Float64Array(bins);
-  const cycleScale = cycleUnit / size;
-  const errorScale = errorUnit / size;
+  const scale = 2 / size;
   for (let k = 0; k < bins; k += 1) {
-    const mirror = k === 0 ? 0 : size - k;
-    const re = out[2 * k] + out[2 * mirror];
-    const im = out[2 * k + 1] - out[2 * mirror + 1];
-    const errorRe = out[2 * k + 1] + out[2 * mirror + 1];
-    const errorIm = out[2 * mirror] - out[2 * k];
-    intended[k] = Math.sqrt(re * re + im * im) * cycleScale;
-    added[k] = Math.sqrt(errorRe * errorRe + errorIm * errorIm) * errorScale;
-    const sumRe = re * cycleScale + errorRe * errorScale;
-    const sumIm = im * cycleScale + errorIm * errorScale;
-    amplitudes[k] = Math.sqrt(sumRe * sumRe + sumIm * sumIm);
+    const re = lines[2 * k];
+    const im = lines[2 * k + 1];
+    const errorRe = otherLines[2 * k];
+    const errorIm = otherLines[2 * k + 1];
+    intended[k] = Math.sqrt(re * re + im * im) * scale;
+    added[k] = Math.sqrt(errorRe * errorRe + errorIm * errorIm) * scale;
+    amplitudes[k] = Math.sqrt((re + errorRe) * (re + errorRe) + (im + errorIm) * (im + errorIm)) * scale;
   }
   // DC and N/2 have no line on the other side to share with.
   for (const list of [amplitudes, intended, added]) {
@@ -60,6 +42,25 @@ export function spectrumOf(
     if (size % 2 === 0) list[size / 2] /= 2;
   }
   return { amplitudes, intended, added };
+}
+
+/**
+ * The strongest line `A_k`, k ≥ 1, of one signal: the same number, to the last bit, as the largest of its amplitudes,
+ * with one root instead of one a line.
+ */
+export function strongestLineOf(signal: Float64Array): number {
+  const size = signal.length;
+  const { bins, lines, forward } = realTransformOf(size);
+  forward(lines, signal);
+  const atHalf = size % 2 === 0 ? size : 2 * bins;
+  let strongest = 0;
+  for (let i = 2; i < atHalf; i += 2) {
+    const power = lines[i] * lines[i] + lines[i + 1] * lines[i + 1];
+    if (power > strongest) strongest = power;
+  }
+  const scale = 2 / size;
+  const most = Math.sqrt(strongest) * scale;
+  return size % 2 === 0 ? Math.max(most, (Math.abs(lines[size]) * scale) / 2) : most;
 }
 
 /** 20·log10 of an amplitude, not below −200 dB. An amplitude-1 sine is 0 dBFS. */

@@ -1,3 +1,4 @@
+import { realTransformOf } from './real-transform.ts';
 import { transformOf } from './transform.ts';
 
 /** The lines `X_k` of a real signal of N entries, k = 0…⌊N/2⌋, unscaled. */
@@ -8,19 +9,14 @@ export interface Lines {
 
 /** DFT of one real signal of any length. */
 export function linesOf(signal: Float64Array): Lines {
-  const size = signal.length;
-  const { data, out, forward } = transformOf(size);
-  for (let n = 0; n < size; n += 1) {
-    data[2 * n] = signal[n];
-    data[2 * n + 1] = 0;
-  }
-  forward(out, data);
-  const bins = Math.floor(size / 2) + 1;
+  const { bins, forward } = realTransformOf(signal.length);
+  const lines = new Float64Array(2 * bins);
+  forward(lines, signal);
   const re = new Float64Array(bins);
   const im = new Float64Array(bins);
   for (let k = 0; k < bins; k += 1) {
-    re[k] = out[2 * k];
-    im[k] = out[2 * k + 1];
+    re[k] = lines[2 * k];
+    im[k] = lines[2 * k + 1];
   }
   return { re, im };
 }

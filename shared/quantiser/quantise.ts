@@ -1,7 +1,7 @@
 import type { TableSettings, Warning } from '../contract/index.ts';
 import { ditherOf } from './dither.ts';
 import { nearestLevels } from './measured-levels.ts';
-import { rounderOf, type Rounder } from './round.ts';
+import { rounderOf } from './round.ts';
 import { levelsOf, positionsOf, snappedLine, snapSteps } from './scaling.ts';
 import { shapeNoise } from './shape-noise.ts';
 
@@ -18,12 +18,14 @@ export function quantise(cycle: Float64Array, table: TableSettings): QuantisedCy
   if (table.levels !== undefined) {
     return { codes: nearestLevels(cycle, table.levels, table.range), clippedCodes: 0, warnings: [] };
   }
-  const topCode = levelsOf(table.bits) - 1;
   const dither = ditherOf(cycle.length, table);
-  const round = rounderOf(table.rounding);
-  if (table.shaping === 0) return { ...roundEach(cycle, table, dither, round), warnings: [] };
-
+  if (table.shaping === 0) {
+    const codes = new Uint16Array(cycle.length);
+    return { codes, clippedCodes: roundInto(codes, cycle, table, dither), warnings: [] };
+  }
+  const topCode = levelsOf(table.bits) - 1;
   const positions = positionsOf(cycle, table);
+  const round = rounderOf(table.rounding);
   const { codes, clippedCodes, isClosed } = shapeNoise(positions, dither, table.shaping, round, topCode);
   const warnings: Warning[] = [];
   if (table.shaping === 1 && !isClosed) {
@@ -36,19 +38,27 @@ export function quantise(cycle: Float64Array, table: TableSettings): QuantisedCy
   return { codes, clippedCodes, warnings };
 }
 
-/** Position, dither, rounding and clip in one pass: long tables are bound by memory. */
-function roundEach(
+/**
+ * Codes of a levelled cycle without shaping: position, dither, rounding and clip in one pass, as long tables are bound
+ * by memory.
+ *
+ * @param codes filled, as many as the cycle has entries
+ * @param dither one value an entry, in LSB, or null
+ * @returns how many codes the clip to 0…L−1 changed
+ */
+export function roundInto(
+  codes: Uint16Array,
   cycle: Float64Array,
   table: TableSettings,
   dither: Float64Array | null,
-  round: Rounder,
-): { codes: Uint16Array; clippedCodes: number } {
+): number {
   const { gain, offset } = snappedLine(table);
   const topCode = levelsOf(table.bits) - 1;
-  const codes = new Uint16Array(cycle.length);
+  const round = rounderOf(table.rounding);
+  const steps = snapSteps;
   let clippedCodes = 0;
   for (let k = 0; k < cycle.length; k += 1) {
-    const position = Math.floor(cycle[k] * gain + offset) / snapSteps;
+    const position = Math.floor(cycle[k] * gain + offset) / steps;
     let code = round(dither === null ? position : position + dither[k]);
     if (code < 0 || code > topCode) {
       clippedCodes += 1;
@@ -56,5 +66,5 @@ function roundEach(
     }
     codes[k] = code;
   }
-  return { codes, clippedCodes };
+  return clippedCodes;
 }

@@ -37,10 +37,9 @@ export function positionsOf(cycle: Float64Array, scaling: Scaling): Float64Array
   return positions;
 }
 
-/** Values q of codes in signal units (§3.5), for tables without measured levels. */
-export function valuesOfCodes(codes: Uint16Array, { bits, range, scale }: Scaling): Float64Array {
+/** Fills `values` with what codes stand for in signal units, q (§3.5), in tables without measured levels. */
+export function valuesInto(values: Float64Array, codes: Uint16Array, { bits, range, scale }: Scaling): void {
   const levels = levelsOf(bits);
-  const values = new Float64Array(codes.length);
   if (range === 'unipolar') {
     for (let k = 0; k < codes.length; k += 1) values[k] = codes[k] / (levels - 1);
   } else if (scale === 'mid-tread') {
@@ -48,5 +47,4 @@ export function valuesOfCodes(codes: Uint16Array, { bits, range, scale }: Scalin
   } else {
     for (let k = 0; k < codes.length; k += 1) values[k] = (2 * codes[k]) / (levels - 1) - 1;
   }
-  return values;
 }

@@ -1,8 +1,7 @@
-import { analyseTable } from '../analysis/index.ts';
 import { brokenRules, Refusal, showValue, type Definition, type Problem } from '../contract/index.ts';
-import { quantise, storedWords } from '../quantiser/index.ts';
-import { levelCycle, synthesise, type LevelledCycle } from '../waveform/index.ts';
+import { levelCycle, synthesise } from '../waveform/index.ts';
 import { usualAxes, type SizeAxes } from './axes.ts';
+import { Depths } from './depths.ts';
 
 /** One size of a definition's table and its figures, the same as `tabulate` gives (§4). */
 export interface SizeCell {
@@ -36,34 +35,33 @@ export function* sizeSearch(
   }
   for (const tableLength of lengths) {
     const row = { ...definition, table: { ...definition.table, length: tableLength } };
-    const cycle = cycleOf(row);
-    for (const depth of bits) yield cellOf(row, cycle, depth);
+    const depths = depthsOf(row);
+    for (const depth of bits) yield cellOf(tableLength, depth, depths);
   }
 }
 
 /** The cycle is the same at every depth; a length that the definition cannot have has a problem instead. */
-function cycleOf(definition: Definition): LevelledCycle | Problem {
+function depthsOf(definition: Definition): Depths | Problem {
   const [broken] = brokenRules(definition);
   if (broken !== undefined) return broken;
-  return orProblem(() => levelCycle(synthesise(definition), definition));
+  return orProblem(() => new Depths(levelCycle(synthesise(definition), definition).cycle, definition.table));
 }
 
-function cellOf(definition: Definition, levelled: LevelledCycle | Problem, bits: number): SizeCell {
-  const table = { ...definition.table, bits };
-  const size = { tableLength: table.length, bits };
-  const figures =
-    'allowed' in levelled
-      ? levelled
-      : orProblem(() => {
-          const quantised = quantise(levelled.cycle, table);
-          storedWords(quantised.codes, table);
-          return analyseTable(levelled, quantised, table).report;
-        });
+function cellOf(tableLength: number, bits: number, depths: Depths | Problem): SizeCell {
+  const figures = depths instanceof Depths ? orProblem(() => depths.at(bits)) : depths;
   if ('allowed' in figures) {
-    return { ...size, snrDb: null, unwantedDb: null, exact: false, tableBytes: 0, problem: figures };
+    return {
+      tableLength,
+      bits,
+      snrDb: null,
+      unwantedDb: null,
+      exact: false,
+      tableBytes: 0,
+      problem: figures,
+    };
   }
   const { snrDb, unwantedDb, exact, tableBytes } = figures;
-  return { ...size, snrDb, unwantedDb, exact, tableBytes, problem: null };
+  return { tableLength, bits, snrDb, unwantedDb, exact, tableBytes, problem: null };
 }
 
 function orProblem<Result>(work: () => Result): Result | Problem {

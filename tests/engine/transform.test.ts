@@ -1,6 +1,6 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import { linesOf, lowLinesOf, transformOf } from '../../shared/dft/index.ts';
+import { linesOf, lowLinesOf, realTransformOf, transformOf } from '../../shared/dft/index.ts';
 import { holds, noise } from './support/seeded.ts';
 
 const largeSizes = [4096, 32_749, 65_521, 65_535, 65_536];
@@ -99,6 +99,19 @@ describe('the transform of any length', () => {
         const twice = transformed(transformed(data));
         const back = data.map((_, i) => twice[(2 * (size - (i >> 1)) + (i & 1)) % (2 * size)] / size);
         expect(distance(back, data)).toBeLessThan(rounding);
+      },
+    ],
+    [
+      'of a real signal is the lower half of the complex one',
+      (size, seed) => {
+        const signal = noise(size, seed);
+        const { bins, forward } = realTransformOf(size);
+        const lines = new Float64Array(2 * bins);
+        forward(lines, signal);
+        const whole = transformed(
+          Float64Array.from({ length: 2 * size }, (_, i) => (i % 2 ? 0 : signal[i / 2])),
+        );
+        expect(distance(lines, whole.slice(0, 2 * bins))).toBeLessThan(rounding);
       },
     ],
     [
