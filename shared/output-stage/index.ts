@@ -15,3 +15,39 @@ export { drawsOf, type Draws } from './draws.ts';
 export { histogramOf, nearestRank, type Histogram } from './percentiles.ts';
 export { type PlayedTable } from './table-through.ts';
 export { Trials, type Percentiles, type TrialFigures, type TrialSummary } from './trials.ts';
+export { boardOhms, boardVolts, ladderOf, stagePartsOf } from './board-levels.ts';
+export { filterGain, holdGain, rcCutoffHz, stageGain, type StageParts } from './filter.ts';
+export { glitchesOf, type Glitch, type Glitches } from './glitches.ts';
+export { firstImageOf, outputLines, type FirstImage, type OutputLine } from './images.ts';
+export {
+  portWordsOf,
+  registerWordsOf,
+  serialBytesOf,
+  serialWordsOf,
+  type MappedWords,
+  type PortWords,
+} from './port-words.ts';
+export { pwmCarrierHz, pwmDuty, pwmHarmonicVolts, pwmRippleVolts, pwmVolts } from './pwm.ts';
+export {
+  fullPowerBandwidthHz,
+  largestStepOf,
+  settlingOf,
+  slewTimeS,
+  type Settling,
+  type TableStep,
+} from './settling.ts';
+export { stageWaveform, type StageInput, type StageWaveform } from './stage-waveform.ts';
+export { assignResistors, type Assignment, type ResistorBag } from './assign-resistors.ts';
+export { sinadAgainstBits, type BitsThatMatter, type SinadOfBits } from './bits-that-matter.ts';
+export { fitLevels, levelsFromWeights, type ChangedField, type FittedTable } from './fit-levels.ts';
+export { opAmpFollows, type OpAmpAnswer } from './op-amp-follows.ts';
+export {
+  decadeOf,
+  ladderValues,
+  partsOf,
+  resistorSeries,
+  standardValues,
+  type LadderValues,
+  type ResistorSeries,
+} from './standard-values.ts';
+export { markedTolerances, toleranceForYield, type ToleranceForYield } from './tolerance-for-yield.ts';

@@ -7,6 +7,8 @@ export interface PlayedTable {
   readonly codes: Uint16Array;
   readonly cycle: Float64Array;
   readonly range: TableSettings['range'];
+  /** What follows the converter does to each line, bins 0…⌊N/2⌋; nothing where absent. */
+  readonly gains?: Float64Array;
 }
 
 /** Figures of one table through one converter; NaN where a figure does not exist. */
@@ -39,8 +41,8 @@ export class TableThrough {
     const { re, im } = this.#wanted;
     let strongest = 0;
     for (let k = 1; k < re.length; k += 1) {
-      const own = re[k] ** 2 + im[k] ** 2;
-      strongest = Math.max(strongest, 2 * k === size ? own / 4 : own);
+      const own = (re[k] ** 2 + im[k] ** 2) * (table.gains?.[k] ?? 1) ** 2;
+      strongest = Math.max(strongest, 2 * k === size ? own : 4 * own);
     }
     // A constant's lines are rounding noise.
     const isConstant = table.cycle.every((value) => value === table.cycle[0]);
@@ -82,6 +84,7 @@ export class TableThrough {
     const amplitudes = this.#amplitudes;
     const size = this.#table.codes.length;
     const { re: wantedRe, im: wantedIm } = this.#wanted;
+    const { gains } = this.#table;
     let strongestAdded = 0;
     amplitudes[0] = 0;
     for (let k = 1; k < amplitudes.length; k += 1) {
@@ -91,10 +94,10 @@ export class TableThrough {
       const im = (part === 0 ? out[a + 1] - out[b + 1] : out[b] - out[a]) / 2;
       const addedRe = re - wantedRe[k];
       const addedIm = im - wantedIm[k];
-      const isHalf = a === size;
-      const added = (addedRe * addedRe + addedIm * addedIm) / (isHalf ? 4 : 1);
+      const scale = (a === size ? 1 : 2) * (gains === undefined ? 1 : gains[k]);
+      const added = (addedRe * addedRe + addedIm * addedIm) * scale * scale;
       if (added > strongestAdded) strongestAdded = added;
-      amplitudes[k] = (Math.sqrt(re * re + im * im) * (isHalf ? 1 : 2)) / size;
+      amplitudes[k] = (Math.sqrt(re * re + im * im) * scale) / size;
     }
     const { sinadDb } = carrierFigures(amplitudes, { length: size, range: this.#table.range });
     const ratio = strongestAdded / this.#strongestWanted;
