@@ -46,6 +46,18 @@ export const playbackSettingsSchema = z.strictObject({
   by: oneOf(['tone', 'sampleRate']),
   toneHz: frequencyField,
   sampleRateHz: frequencyField,
+  /** The timer settings that the sample rate was chosen by: `clock/(prescaler·(compare + 1))`. */
+  timer: z
+    .strictObject({
+      clockHz: frequencyField,
+      prescaler: wholeNumber(1, 65_536),
+      compare: wholeNumber(0, 2 ** 32 - 1),
+    })
+    .optional(),
+  /** Bits and step word of the phase accumulator that plays the table. */
+  accumulator: z
+    .strictObject({ accumulatorBits: wholeNumber(1, 48), stepWord: wholeNumber(1, 2 ** 48 - 1) })
+    .optional(),
 });
 
 /** A definition on its way in: `parseDefinition` says precisely what is wrong with it. */

@@ -37,7 +37,9 @@ export type WithdrawRevision = z.infer<typeof withdrawRevisionSchema>;
 const hindranceField = z
   .enum(['state', 'role', 'own-revision'])
   .nullable()
-  .describe('state: the revision is not in the state for it; own-revision: the two-person rule');
+  .describe(
+    'state: the revision is not in the state for it, or its table is archived; own-revision: the two-person rule',
+  );
 export type Hindrance = z.infer<typeof hindranceField>;
 
 /** How a revision stands in review. The ETag of this answer is what If-Match wants of verdict and withdrawal. */

@@ -24,7 +24,10 @@ export function reviewOf(test: TestApp, team: TestTeam, slug: string, number = 1
     comment: (person: TestPerson, body: object) => post(person, 'comments', body),
     read: async (person: TestPerson): Promise<Review> =>
       done(await asPerson(test, person).get(`${revision}/review`)),
-    comments: async (person: TestPerson, query = ''): Promise<{ items: Comment[]; nextCursor: string | null }> =>
+    comments: async (
+      person: TestPerson,
+      query = '',
+    ): Promise<{ items: Comment[]; nextCursor: string | null }> =>
       done(await asPerson(test, person).get(`${revision}/comments${query}`)),
   };
 }

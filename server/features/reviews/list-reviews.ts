@@ -33,13 +33,14 @@ export async function findReviews(
   asker: Asker,
   { show, cursor, limit }: ReviewsQuery,
 ): Promise<FoundPage> {
-  if (show === 'for-me' && !mayJudgeAny(asker)) return { ids: [], nextCursor: null };
   const question = ['reviews', teamId, show, show === 'for-me' || show === 'mine' ? asker.userId : null];
   const order = orders[show];
+  const further = beyond(question, order, cursor);
+  if (show === 'for-me' && !mayJudgeAny(asker)) return { ids: [], nextCursor: null };
   const rows = await db
     .select({ id: reviews.id, moment: order.moment })
     .from(reviews, { forceIndex: [order.index] })
-    .where(and(eq(reviews.teamId, teamId), shown(show, asker), beyond(question, order, cursor)))
+    .where(and(eq(reviews.teamId, teamId), shown(show, asker), further))
     .orderBy(...[order.moment, reviews.id].map(order.isNewestFirst ? desc : asc))
     .limit(limit + 1);
   const page = rows.slice(0, limit);

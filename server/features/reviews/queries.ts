@@ -87,6 +87,9 @@ export async function lockTable(db: Executor, teamId: number, slug: string): Pro
   return rows.length > 0;
 }
 
+/** Leaves the optimiser no way but from the reviews found to what is theirs; it likes to begin with all of a team's tables. */
+const byNumber = { forceIndex: ['PRIMARY'] };
+
 /** Rows of the list, in the order of their ids. */
 export async function readSummaries(db: Executor, teamId: number, ids: readonly number[]) {
   if (ids.length === 0) return [];
@@ -108,9 +111,9 @@ export async function readSummaries(db: Executor, teamId: number, ids: readonly 
       decidedByName: decider.name,
       decidedAt: reviews.decidedAt,
     })
-    .from(reviews)
-    .innerJoin(revisions, ofItsRevision)
-    .innerJoin(waveTables, ofItsTable)
+    .from(reviews, byNumber)
+    .innerJoin(revisions, ofItsRevision, byNumber)
+    .innerJoin(waveTables, ofItsTable, byNumber)
     .leftJoin(submitter, eq(submitter.id, reviews.submittedBy))
     .leftJoin(decider, eq(decider.id, reviews.decidedBy))
     .where(and(eq(reviews.teamId, teamId), inArray(reviews.id, [...ids])));
