@@ -112,7 +112,7 @@ export const optionGroups: readonly { readonly title: string; readonly options: 
   },
   {
     title: 'Pins',
-    options: ['port', 'highPort', 'portMap', 'reservedPins', 'reservedBy', 'portAddress', 'highPortAddress'],
+    options: ['port', 'highPort', 'portMap', 'reservedPins', 'reservedBy', 'portAddress'],
   },
   {
     title: 'Playback',
@@ -122,11 +122,15 @@ export const optionGroups: readonly { readonly title: string; readonly options: 
       'clockHz',
       'prescaler',
       'compare',
+      'countsPerWord',
       'accumulatorBits',
+      'toneMilliHz',
+      'secondToneMilliHz',
       'idleCode',
       'rampWords',
+      'dmaBits',
+      'timeAddress',
       'compareAddress',
-      'timerHz',
     ],
   },
 ];

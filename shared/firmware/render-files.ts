@@ -48,7 +48,7 @@ export function renderFiles(
   const licence = inertText(given.licenceLine ?? '');
   const top = licence === '' || target.commentOf === undefined ? '' : `${target.commentOf(licence)}\n`;
   const files = target.filesOf(input);
-  const facts = sharedFacts(input, target.numbers);
+  const facts = sharedFacts(input, target.numbersOf);
   const liquid = new Liquid({
     templates: templates as Record<string, string>,
     extname: '.liquid',
@@ -59,7 +59,9 @@ export function renderFiles(
   return files.map((file): GeneratedFile => {
     const name = `${input.arrayName}${file.ending}`;
     if ('bytes' in file) return { name, text: toBase64(file.bytes), encoding: 'base64' };
-    const text = top + String(liquid.renderFileSync(file.template, { ...facts, ...file.facts }));
+    const body = String(liquid.renderFileSync(file.template, { ...facts, ...file.facts }));
+    // Parts that a file leaves out leave no more than one empty line.
+    const text = top + body.replace(/\n{3,}/g, '\n\n');
     return { name, text: given.lineEnding === 'crlf' ? text.replaceAll('\n', '\r\n') : text, encoding: 'utf-8' };
   });
 }

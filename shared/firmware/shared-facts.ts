@@ -2,12 +2,15 @@ import { codingNames, keyFigures } from './key-figures.ts';
 import { engineVersion as thisEngine } from '../engine-version.ts';
 import { inertText } from './inert-text.ts';
 import type { Layout, StoredArray } from './layout.ts';
-import type { ExportInput, Facts, SharedOptions } from './target.ts';
+import type { ExportInput, Facts, SharedOptions, Target } from './target.ts';
 import { plainStyle, wordLiteral, wordRows, wordSpan, type NumberStyle } from './word-rows.ts';
 import { wordTypeOf } from './word-type.ts';
 
 /** Facts that every target's templates can print. */
-export function sharedFacts(input: ExportInput<SharedOptions>, numbers: Partial<NumberStyle> = {}): Facts {
+export function sharedFacts(
+  input: ExportInput<SharedOptions>,
+  numbersOf: Target['numbersOf'] = () => ({}),
+): Facts {
   const { table, layout, options, arrayName, digest } = input;
   const { definition, stored, report, engineVersion = thisEngine } = table;
   const { bits, coding, complement, fold, length, range, scale, levels } = definition.table;
@@ -35,13 +38,18 @@ export function sharedFacts(input: ExportInput<SharedOptions>, numbers: Partial<
     scale: levels === undefined ? scale : 'measured',
     wordType: wordType.name,
     wordBytes: wordType.bytes,
+    minWord: words.min,
+    maxWord: words.max,
     minWordLiteral: wordLiteral(words.min, wordType),
     maxWordLiteral: wordLiteral(words.max, wordType),
     offsetType: layout.byteCount > 65_535 ? 'uint32_t' : 'uint16_t',
     once: false,
+    dma: false,
     extraInclude: false,
     attribute: '',
     stepWord: false,
+    readerStart: arrayName,
+    readerEnd: '_word',
     fetchOpen: '',
     fetchClose: '',
     readCast: '',
@@ -52,7 +60,7 @@ export function sharedFacts(input: ExportInput<SharedOptions>, numbers: Partial<
         base,
         columns,
         hexDigits: 2 * array.bytes,
-        ...numbers,
+        ...numbersOf(array.bytes),
       }),
     ),
     figures: keyFigures({
@@ -91,6 +99,7 @@ function arrayFacts({ suffix, elements, bytes, signed, ports }: StoredArray, nam
     rustType: `${signed ? 'i' : 'u'}${8 * bytes}`,
     ports: portFacts,
     port: ports.length > 0 && portFacts[0],
+    isKept: ports.some(({ isKept }) => isKept),
     /** Turns a word of mapped ports upside down. */
     flip: hex(ports.reduce((mask, { driven }, k) => mask + driven * 2 ** (8 * k), 0)),
     get rows() {

@@ -62,8 +62,8 @@ export interface Target {
   readonly title: string;
   /** A comment of one line in the files' language; absent where that has none. */
   readonly commentOf?: (text: string) => string;
-  /** How numbers are written where not in the way of C. */
-  readonly numbers?: Partial<NumberStyle>;
+  /** How elements of so many bytes are written, where not in the way of C. */
+  readonly numbersOf?: (bytes: 1 | 2 | 4) => Partial<NumberStyle>;
   /** How words lie in storage, where not as `layOut` has it. @throws {Refusal} where they cannot. */
   readonly layOut?: (table: ExportableTable, options: SharedOptions) => Layout;
   readonly options: z.ZodObject & z.ZodType<SharedOptions>;
