@@ -10,6 +10,8 @@ export class Macros {
   private readonly known = new Map<string, Macro>();
   /** A table may name a macro a hundred thousand times. */
   readonly numbers = new Map<string, number>();
+  /** Those that are being looked into just now. */
+  readonly open = new Set<string>();
 
   get(name: string): Macro | undefined {
     return this.known.get(name);

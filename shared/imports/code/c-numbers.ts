@@ -113,16 +113,25 @@ function readMacro(lexer: CLexer, macros: Macros, depth: number): EntryNumber {
   body.next();
   if (body.kind === 'end')
     refuseAt(text, start, `${quote(name)}, a macro of nothing,`, 'a macro of a plain number');
-  const number = readNumberIn(body, macros, depth + 1);
-  if (!body.isKind('end')) {
-    refuseAt(
-      text,
-      start,
-      `${quote(name)}, a macro of more than a plain number,`,
-      'a macro of a plain number',
-    );
+  if (macros.open.has(name)) {
+    refuseAt(text, start, `${quote(name)}, which leads back to itself,`, 'a macro of a plain number');
   }
-  return number;
+  macros.open.add(name);
+  try {
+    const number = readNumberIn(body, macros, depth + 1);
+    if (!body.isKind('end')) {
+      refuseAt(
+        text,
+        start,
+        `${quote(name)}, a macro of more than a plain number,`,
+        'a macro of a plain number',
+      );
+    }
+    if (!number.isHighCharacter) macros.numbers.set(name, number.value);
+    return number;
+  } finally {
+    macros.open.delete(name);
+  }
 }
 
 const quote = (name: string) => quoted(name, 0, name.length);

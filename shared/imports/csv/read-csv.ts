@@ -170,15 +170,16 @@ function askedForColumn(columns: readonly CsvColumn[], reading: CsvReading): Csv
 
 /**
  * `0,5` on each line is one column with decimal commas or two columns of whole numbers. Asked about where every line
- * has an even number of cells, each second one of digits alone.
+ * holds one whole number or two, the second of digits alone.
  */
 function askedAsPairs(rows: readonly (readonly string[])[], delimiter: Delimiter): CsvQuestion | undefined {
   if (delimiter !== ',') return undefined;
-  const isPair = (row: readonly string[]) =>
-    row.length === 2 && /^\s*[-+]?\d+$/.test(row[0]) && /^\d+\s*$/.test(row[1]);
-  const body = rows.length > 1 && !isPair(rows[0]) ? rows.slice(1) : rows;
-  if (!body.every(isPair)) return undefined;
-  const cell = body[0].join(',').trim();
+  const isWhole = (row: readonly string[]) => /^\s*[-+]?\d+\s*$/.test(row[0]);
+  const isPair = (row: readonly string[]) => row.length === 2 && isWhole(row) && /^\d+\s*$/.test(row[1]);
+  const body = rows.length > 1 && !isWhole(rows[0]) ? rows.slice(1) : rows;
+  const pair = body.find(isPair);
+  if (!pair || !body.every((row) => isPair(row) || (row.length === 1 && isWhole(row)))) return undefined;
+  const cell = pair.join(',').trim();
   return {
     about: 'decimal',
     cell,
@@ -241,12 +242,10 @@ function faultAt(text: string, delimiter: Delimiter, row: number, column: number
     },
   });
   const line = text.slice(at, at + 100_000);
-  const lead = /^\s*/.exec(line)?.[0].length ?? 0;
+  const lead = /^ */.exec(line)?.[0].length ?? 0;
   const cells = line.slice(lead).split(delimiter === ' ' ? /[ \t]+/ : delimiter);
   const before = cells.slice(0, column).reduce((sum, cell) => sum + cell.length + 1, 0);
-  const blanks = /^\s*/.exec((cells[column] as string | undefined) ?? '')?.[0].length ?? 0;
-  const place = sayPlace(
-    placeOf(text, Math.min(text.length, at + (delimiter === '\t' ? 0 : lead) + before + blanks)),
-  );
+  const blanks = /^ */.exec((cells[column] as string | undefined) ?? '')?.[0].length ?? 0;
+  const place = sayPlace(placeOf(text, Math.min(text.length, at + lead + before + blanks)));
   return new Refusal({ path: place, value, allowed: 'a number' });
 }

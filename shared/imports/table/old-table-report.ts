@@ -38,9 +38,6 @@ export interface OldTable {
   readonly wordBits: number;
 }
 
-/** What one entry less must gain in the criterion, an entry, to count. */
-const leastGain = 0.1;
-
 /** What is left beside a table's harmonics counts as nothing below this, in codes squared: rounding of the transform. */
 const noPower = 1e-18;
 
@@ -126,7 +123,7 @@ const snrDbOf = ({ power, restPower, count }: HarmonicModel): number | null =>
 function repeatsFirst(codes: Uint16Array, whole: HarmonicModel): boolean {
   const last = codes.length - 1;
   if (codes.length < 8 || Math.abs(codes[last] - codes[0]) > 1) return false;
-  return harmonicModelOf(codes.subarray(0, last)).cost < whole.cost - leastGain;
+  return harmonicModelOf(codes.subarray(0, last)).cost < whole.cost;
 }
 
 /** The entries that make one cycle of a table. */
