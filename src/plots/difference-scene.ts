@@ -4,7 +4,7 @@ import type { Pen } from './pen.ts';
 import type { PlotArea } from './plot-area.ts';
 import type { PlotTheme } from './plot-theme.ts';
 import type { AxisSpec, ReadOut, Scene } from './scene.ts';
-import { decimalTicks, tickText } from './ticks.ts';
+import { tickText } from './ticks.ts';
 import { isDense, traceStairs } from './traces.ts';
 
 export interface DifferenceData {
@@ -27,7 +27,7 @@ export class DifferenceScene implements Scene<DifferenceData> {
       {
         side: 'left',
         title: `difference in ${data.unit}`,
-        ticks: (min, max, px) => decimalTicks(min, max, Math.min(4, px / 22)),
+        ticks: (_min, max) => [-roundBelow(max), 0, roundBelow(max)],
         text: tickText,
       },
       {
@@ -114,4 +114,11 @@ export class DifferenceScene implements Scene<DifferenceData> {
     const sign = differences[item] > 0 ? '+' : '';
     return sign + formatQuantity(differences[item], unit, { significant: 4 });
   }
+}
+
+/** The largest 1, 2 or 5 times a power of ten that is at most `value`. */
+function roundBelow(value: number): number {
+  const power = 10 ** Math.floor(Math.log10(value));
+  const lead = value / power;
+  return power * (lead >= 5 ? 5 : lead >= 2 ? 2 : 1);
 }

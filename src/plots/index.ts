@@ -1,7 +1,13 @@
 export { CyclePlot, type CyclePlotProps, type PlotPoint } from './cycle-plot.tsx';
 export type { CycleData } from './cycle-scene.ts';
 export { ErrorPlot, type ErrorPlotProps } from './error-plot.tsx';
+export { Plot, type PlotProps } from './plot.tsx';
 export { createPlotLink, PlotLinkProvider, type PlotLink } from './plot-link.ts';
 export { SpectrumPlot, type SpectrumPlotProps } from './spectrum-plot.tsx';
 export type { SpectrumData } from './spectrum-scene.ts';
+export type { Pen } from './pen.ts';
+export type { PlotArea } from './plot-area.ts';
+export type { PlotTheme } from './plot-theme.ts';
+export type { AxisSpec, ReadOut, Scene } from './scene.ts';
+export { decimalTicks, tickText } from './ticks.ts';
 export { StairDrawing, type StairDrawingProps } from './stair-drawing.tsx';

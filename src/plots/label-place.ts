@@ -23,6 +23,11 @@ export class LabelRoom {
   measure(area: PlotArea, values: ArrayLike<number>, offset: number): void {
     this.top.fill(Infinity);
     this.bottom.fill(-Infinity);
+    this.include(area, values, offset);
+  }
+
+  /** Counts one more curve in. */
+  include(area: PlotArea, values: ArrayLike<number>, offset: number): void {
     const first = Math.max(0, Math.floor(area.from - offset));
     const last = Math.min(values.length - 1, Math.ceil(area.to - offset));
     const scale = buckets / (area.to - area.from);

@@ -181,6 +181,7 @@ export class OverlayScene implements Scene<OverlayData> {
     const { unit } = area;
     const line = 22 * unit;
     this.room.measure(area, b.values, 0.5);
+    this.room.include(this.stretch(area), a.values, 0.5);
     const labels = [
       { name: a.name, side: 'above', color: theme.ink, halo: theme.paper, dash: [6 * unit, 4 * unit] },
       { name: b.name, side: 'below', color: theme.brick, halo: theme.brickWash, dash: [] },

@@ -1,3 +1,4 @@
+import { useMatch } from 'react-router-dom';
 import { useCurrentTeam } from '../api/current-team.ts';
 import { paths, reviewsPath, tablesPath, teamPath } from '../paths.ts';
 
@@ -7,6 +8,8 @@ export interface Place {
   to: string;
   /** Whether places below it count as others. */
   isExact: boolean;
+  /** Whether it is the place in sight, where its own address does not tell. */
+  isHere?: boolean | undefined;
   /** The team whose waiting reviews are counted beside the label. */
   countsFor?: string | undefined;
 }
@@ -14,13 +17,21 @@ export interface Place {
 /** Places in the header, in order. Those of a team lead to the one in use, or to where it is said what to do first. */
 export function usePlaces(): readonly Place[] {
   const team = useCurrentTeam()?.teamSlug;
+  // A review has the address of its table.
+  const isReview = useMatch(paths.review) !== null;
   return [
     { label: 'Bench', to: paths.bench, isExact: true },
-    { label: 'Tables', to: team === undefined ? paths.anyTables : tablesPath(team), isExact: false },
+    {
+      label: 'Tables',
+      to: team === undefined ? paths.anyTables : tablesPath(team),
+      isExact: false,
+      isHere: isReview ? false : undefined,
+    },
     {
       label: 'Reviews',
       to: team === undefined ? paths.anyReviews : reviewsPath(team),
       isExact: false,
+      isHere: isReview ? true : undefined,
       countsFor: team,
     },
     { label: 'Team', to: team === undefined ? paths.anyTeam : teamPath(team), isExact: true },

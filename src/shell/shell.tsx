@@ -5,7 +5,7 @@ import { ToastRegion } from '../components/index.ts';
 import { paths } from '../paths.ts';
 import { AccountMenu, type AccountMenuProps } from './account-menu.tsx';
 import { KeySheet } from './key-sheet.tsx';
-import { usePlaces } from './places.ts';
+import { usePlaces, type Place } from './places.ts';
 import { SignInAgain } from './sign-in-again.tsx';
 import { TeamSwitcher } from './team-switcher.tsx';
 import { ThemeSwitch } from './theme-switch.tsx';
@@ -22,6 +22,32 @@ const WaitingCount = lazy(() =>
 /** Where mail is not sent on, but kept to be read on this machine. */
 const mayHaveMailbox = /^(localhost|127\.|\[::1\])/.test(location.hostname);
 
+/** A link of the navigation. A place that takes in an address of another one is marked there in its stead. */
+function PlaceLink({ place: { label, to, isExact, isHere, countsFor } }: { place: Place }) {
+  const words = (
+    <>
+      {label}
+      {countsFor !== undefined && (
+        <Suspense fallback={null}>
+          <WaitingCount team={countsFor} />
+        </Suspense>
+      )}
+    </>
+  );
+  if (isHere === undefined) {
+    return (
+      <NavLink to={to} end={isExact} className="shell-place">
+        {words}
+      </NavLink>
+    );
+  }
+  return (
+    <Link to={to} className="shell-place" aria-current={isHere ? 'page' : undefined}>
+      {words}
+    </Link>
+  );
+}
+
 /** What stands around every place: name, places, team, account, theme, keys, messages. */
 export function Shell({ onSignedOut }: AccountMenuProps) {
   const isGoing = useNavigation().state !== 'idle';
@@ -37,14 +63,7 @@ export function Shell({ onSignedOut }: AccountMenuProps) {
         </NavLink>
         <nav aria-label="Places" className="shell-places">
           {places.map((place) => (
-            <NavLink key={place.label} to={place.to} end={place.isExact} className="shell-place">
-              {place.label}
-              {place.countsFor !== undefined && (
-                <Suspense fallback={null}>
-                  <WaitingCount team={place.countsFor} />
-                </Suspense>
-              )}
-            </NavLink>
+            <PlaceLink key={place.label} place={place} />
           ))}
         </nav>
         <TeamSwitcher />

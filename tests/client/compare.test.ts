@@ -69,13 +69,24 @@ describe('figures of two tables', () => {
     );
     expect(snrDb).toMatchObject({ judgement: 'better', difference: expect.stringMatching(/^\+1\d\.\d$/) });
     expect(tableBytes).toMatchObject({
-      before: '256 bytes',
-      after: '512 bytes',
+      before: '256',
+      after: '512',
+      unit: 'bytes',
       difference: '+256',
       judgement: 'worse',
     });
     expect(enobBits.judgement).toBe('better');
     expect(crestFactor.judgement).toBe('other');
+  });
+
+  test('tell what computing alone leaves as nothing', () => {
+    const sine = built({ length: 64, bits: 8 });
+    const withMean = (meanErrorLsb: number) => ({ ...sine, report: { ...sine.report, meanErrorLsb } });
+    expect(judged(withMean(1e-15), withMean(-2e-16)).meanErrorLsb).toMatchObject({
+      after: '0',
+      difference: '0',
+      judgement: 'same',
+    });
   });
 
   test('leave distortion unjudged where the wave has partials of its own', () => {

@@ -11,7 +11,7 @@ export function CommentsPanel({ shownElsewhere }: { shownElsewhere: ReadonlySet<
   const elsewhere = comments.length - here.length;
   return (
     <Panel title="Comments">
-      <CommentList comments={here} label="Comments on the revision" />
+      <CommentList comments={here} label="Comments on the revision" hasPaths />
       {here.length === 0 && <p className="quiet">Nobody has commented on the revision as a whole.</p>}
       {elsewhere > 0 && (
         <p className="quiet">

@@ -1,4 +1,5 @@
 import { useState } from 'react';
+import type { RevisionState } from '../../../shared/contract/index.ts';
 import type { RevisionAt, TaggedReview } from '../../api/reviews.ts';
 import { Moment, Panel, icons } from '../../components/index.ts';
 import { useKeptText } from '../../forms/use-kept-text.ts';
@@ -14,7 +15,7 @@ export function DecisionPanel({ at, review }: { at: RevisionAt; review: TaggedRe
   // Whoever came second, or whose sign-in ran out, still has what was typed.
   const hasForm = hindrance === null || note.trim() !== '' || beatenBy !== null;
   return (
-    <Panel title={review.verdict === null ? 'Verdict' : sayVerdict(review)}>
+    <Panel title={titles[review.state]}>
       <Withdrawal review={review} />
       <Decided review={review} />
       {beatenBy !== null && <Beaten by={beatenBy} />}
@@ -39,7 +40,13 @@ export function DecisionPanel({ at, review }: { at: RevisionAt; review: TaggedRe
   );
 }
 
-const sayVerdict = ({ verdict }: TaggedReview) => (verdict?.verdict === 'returned' ? 'Returned' : 'Vetted');
+const titles: Readonly<Record<RevisionState, string>> = {
+  draft: 'Verdict',
+  'in-review': 'Verdict',
+  vetted: 'Vetted',
+  returned: 'Returned',
+  withdrawn: 'Withdrawn',
+};
 
 function Decided({ review: { verdict } }: { review: TaggedReview }) {
   if (verdict === null) return null;

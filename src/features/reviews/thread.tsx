@@ -9,8 +9,16 @@ import { useKeptText } from '../../forms/use-kept-text.ts';
 import { useSubmit } from '../../forms/use-submit.ts';
 import { nameOfSetting } from '../../settings/index.ts';
 
+interface CommentListProps {
+  comments: readonly Comment[];
+  /** Spoken name. */
+  label: string;
+  /** Whether each says which setting it is about. */
+  hasPaths?: boolean;
+}
+
 /** Comments, oldest first. */
-export function CommentList({ comments, label }: { comments: readonly Comment[]; label: string }) {
+export function CommentList({ comments, label, hasPaths = false }: CommentListProps) {
   if (comments.length === 0) return null;
   return (
     <ol className="comment-list" aria-label={label}>
@@ -18,7 +26,7 @@ export function CommentList({ comments, label }: { comments: readonly Comment[];
         <li key={id} className="comment">
           <p className="quiet">
             <strong>{by.name}</strong>, <Moment at={at} />
-            {path !== null && `, on ${nameOfSetting(path)}`}
+            {hasPaths && path !== null && `, on ${nameOfSetting(path)}`}
           </p>
           <p className="comment-text">{text}</p>
         </li>

@@ -75,7 +75,13 @@ export function VerdictForm({ at, review, hindrance, note, onNote, onBeaten }: V
       }
     >
       {hindrance === null && (
-        <ChoiceField<Verdict | ''> label="Verdict" value={verdict} options={choices} onChange={setVerdict} />
+        <ChoiceField<Verdict | ''>
+          label="Verdict"
+          hideLabel
+          value={verdict}
+          options={choices}
+          onChange={setVerdict}
+        />
       )}
       <TextField
         label="Reasons"

@@ -20,11 +20,11 @@ interface WithdrawProps {
   review: TaggedReview;
 }
 
-/** Opens the dialog that withdraws a vetted revision. Only where there is something to withdraw. */
+/** Opens the dialog that withdraws a vetted revision. Only where there is one, and for those who may withdraw. */
 export function WithdrawButton({ at, review }: WithdrawProps) {
   const [isOpen, setIsOpen] = useState(false);
   const { withdraw } = review.hindrances;
-  if (withdraw === 'state' && !isOpen) return null;
+  if ((withdraw === 'state' || withdraw === 'role') && !isOpen) return null;
   const hindrance = sayHindrance('withdraw', withdraw, review.state);
   return (
     <>

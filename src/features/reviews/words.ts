@@ -26,6 +26,7 @@ export function sayHindrance(act: Act, hindrance: Hindrance, state: RevisionStat
     case 'own-revision':
       return `The two-person rule: somebody else must ${act} what you made.`;
     case 'state':
+      if (act === 'submit' && state === 'draft') return 'The table is archived: restore it first.';
       return `This revision ${stateWords[state]}; only ${rules[act].wanted} can be ${pastOf[act]}.`;
   }
 }

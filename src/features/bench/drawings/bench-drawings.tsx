@@ -1,6 +1,7 @@
 import { PlotLinkProvider } from '../../../plots/index.ts';
 import { FigureStrips } from '../figures/figure-strips.tsx';
 import { Warnings } from '../figures/warnings.tsx';
+import { LimitsSlot } from '../limits/limits-slot.tsx';
 import { liveTable, useCalmTable, useIsLate } from '../state/tables.ts';
 import { useBench } from '../state/use-bench.ts';
 import { useSightInUrl } from '../view/use-sight-in-url.ts';
@@ -55,6 +56,7 @@ function Figures({ onGoTo }: { onGoTo: (path: string) => void }) {
   return (
     <>
       <Warnings warnings={table.warnings} onGoTo={onGoTo} />
+      <LimitsSlot table={table} />
       <FigureStrips table={table} />
     </>
   );

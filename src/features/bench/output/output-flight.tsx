@@ -2,6 +2,7 @@ import { useCallback } from 'react';
 import { formatQuantity } from '../../../../shared/quantities/index.ts';
 import { Caution, Explain } from '../../../components/index.ts';
 import { ListenPanel, type Playback } from '../listen/index.ts';
+import { RatesRecesses } from '../rates/index.ts';
 import { useCalmTable } from '../state/tables.ts';
 import { theBench, useBench, useDefinition } from '../state/use-bench.ts';
 import { sampleRateOf, toneOf } from '../state/wave.ts';
@@ -27,6 +28,7 @@ export function OutputFlight() {
           tableCycles={table.definition.table.cycles}
         />
       )}
+      <RatesRecesses />
       <AtThePin />
     </div>
   );

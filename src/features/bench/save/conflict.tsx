@@ -22,8 +22,8 @@ export function Conflict({ link, theirs }: ConflictProps) {
     return (
       <section className="slab slab-saffron" aria-label="Both sides">
         <p role="alert">
-          <strong>{theirs.changedBy.name} has changed the table’s name or tags meanwhile.</strong> It is now{' '}
-          {theirs.title}; revision {number} is still the newest. Nothing stands in the way of yours.
+          <strong>{theirs.changedBy.name} has changed the table’s name, tags or state meanwhile.</strong> It
+          is now {theirs.title}; revision {number} is still the newest. Nothing stands in the way of yours.
         </p>
       </section>
     );

@@ -26,8 +26,8 @@ export function placeOfPath(tree: Tree, text: string, path: string): TextRange {
 
 /** A whole object underlined would hide what in it is meant: its name, or its opening bracket. */
 function openingOf(node: SyntaxNode): TextRange {
-  const name = node.prevSibling;
-  return name?.name === 'PropertyName' ? rangeOf(name) : { from: node.from, to: node.from + 1 };
+  const name = node.parent?.name === 'Property' ? node.parent.firstChild : null;
+  return name === null ? { from: node.from, to: node.from + 1 } : rangeOf(name);
 }
 
 const rangeOf = ({ from, to }: SyntaxNode): TextRange => ({ from, to });

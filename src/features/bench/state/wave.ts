@@ -4,14 +4,24 @@ import { sampleRateOfTone, toneOfSampleRate } from '../../../audio/playback-rate
 
 const frequencyError = 'a finite number of hertz';
 
+/** A timer whose overflow makes the sample rate: `clock/(prescaler·(compare + 1))`. */
+const timerSchema = z.strictObject({ clockHz: z.number(), prescaler: z.int(), compare: z.int() });
+
+/** A phase accumulator over the table: bits M and step word W of engine specification §5. */
+const accumulatorSchema = z.strictObject({ accumulatorBits: z.int(), stepWord: z.number() });
+
 /** How a wave is listened to. It travels with the wave but is no part of the table. */
 export const playbackSchema = z.strictObject({
   mode: z.enum(['loop', 'once']),
   by: z.enum(['tone', 'sampleRate']),
   toneHz: z.number({ error: frequencyError }),
   sampleRateHz: z.number({ error: frequencyError }),
+  /** The timer settings that the sample rate was chosen by, if it was. */
+  timer: timerSchema.optional(),
+  accumulator: accumulatorSchema.optional(),
 });
 
+export type TimerSettings = z.infer<typeof timerSchema>;
 export type Playback = z.infer<typeof playbackSchema>;
 
 /** What a read-only link carries: everything that is needed to see and hear the wave. */
@@ -50,4 +60,10 @@ export function toneOf({ by, sampleRateHz, toneHz }: Playback, { length, cycles 
   return by === 'tone'
     ? toneHz
     : toneOfSampleRate(sampleRateHz, { tableLength: length, tableCycles: cycles });
+}
+
+/** The timer that makes the sample rate; none where the rate has been set otherwise since one was chosen. */
+export function timerOf({ by, sampleRateHz, timer }: Playback): TimerSettings | undefined {
+  if (timer === undefined || by !== 'sampleRate') return undefined;
+  return timer.clockHz / (timer.prescaler * (timer.compare + 1)) === sampleRateHz ? timer : undefined;
 }

@@ -1,5 +1,14 @@
 /** Parts of the flights that open in place, by their names in the URL. */
-export const recessIds = ['noise', 'sampling', 'storage', 'levels', 'text', 'rates', 'accumulator'] as const;
+export const recessIds = [
+  'noise',
+  'sampling',
+  'storage',
+  'levels',
+  'text',
+  'rates',
+  'accumulator',
+  'two-tones',
+] as const;
 export type RecessId = (typeof recessIds)[number];
 
 /** Reads which recesses are open from the URL's `more`: names parted by commas; unknown ones are passed over. */

@@ -16,8 +16,8 @@ export function CodesPart({ pair, names, compared }: CodesPartProps) {
     return (
       <Panel title="The tables have different lengths">
         <p>
-          {names.a} has {before.toLocaleString('en')} entries, {names.b} {after.toLocaleString('en')}: no code
-          of one has its fellow in the other. The drawing lays both over the same width.
+          {before.toLocaleString('en')} entries in {names.a}, {after.toLocaleString('en')} in {names.b}: no
+          code of one has its fellow in the other. The drawing lays both over the same width.
         </p>
       </Panel>
     );

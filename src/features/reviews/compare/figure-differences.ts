@@ -8,6 +8,8 @@ export interface FigureDifference {
   /** As the figures of the bench are called, so that its explanation can stand here too. */
   readonly id: string;
   readonly label: string;
+  /** Unit of all three; empty for a ratio. */
+  readonly unit: string;
   readonly before: string;
   readonly after: string;
   /** With its sign; empty where there is none to tell. */
@@ -73,8 +75,8 @@ const rows: readonly Row[] = [
     better: 'more',
     forSines: true,
   },
-  { id: 'mean', label: 'Mean', unit: 'of full scale', of: (r) => r.mean, better: 'neither' },
-  { id: 'rms', label: 'RMS', unit: 'of full scale', of: (r) => r.rms, better: 'neither' },
+  { id: 'mean', label: 'Mean', unit: 'FS', of: (r) => r.mean, better: 'neither' },
+  { id: 'rms', label: 'RMS', unit: 'FS', of: (r) => r.rms, better: 'neither' },
   { id: 'crestFactor', label: 'Crest factor', unit: '', of: (r) => r.crestFactor, better: 'neither' },
   { id: 'usedCodes', label: 'Codes used', unit: 'codes', of: (r) => r.usedCodes, better: 'neither' },
   { id: 'tableBytes', label: 'Size', unit: 'bytes', of: (r) => r.tableBytes, better: 'less' },
@@ -95,6 +97,7 @@ export function compareFigures(before: Measured, after: Measured): FigureDiffere
     return {
       id: row.id,
       label: row.label,
+      unit: row.unit,
       before: say(row, old),
       after: say(row, fresh),
       difference: sayDifference(row, old, fresh),
@@ -110,9 +113,6 @@ function isSine({ source }: Definition): boolean {
   );
 }
 
-/** Figures nearer than this, as a share of the larger, are told as the same. */
-const leastShare = 1e-9;
-
 function judge(
   { better, forSines = false }: Row,
   before: number | null,
@@ -121,9 +121,7 @@ function judge(
 ): Judgement {
   if (before === after) return 'same';
   if (before === null || after === null) return 'other';
-  const isFinite = Number.isFinite(after - before);
-  if (isFinite && Math.abs(after - before) <= leastShare * Math.max(Math.abs(after), Math.abs(before)))
-    return 'same';
+  if (Math.abs(after - before) < leastShown) return 'same';
   if (better === 'neither' || (forSines && !areSines)) return 'other';
   const gain = { more: after - before, less: before - after, nearer: Math.abs(before) - Math.abs(after) }[
     better
@@ -131,18 +129,21 @@ function judge(
   return gain > 0 ? 'better' : gain < 0 ? 'worse' : 'other';
 }
 
-function say({ unit, decimals }: Row, value: number | null): string {
+/** What computing alone leaves where a figure is zero. */
+const leastShown = 1e-9;
+
+function say({ decimals }: Row, value: number | null): string {
   if (value === null) return '–';
   if (!Number.isFinite(value)) return 'exact';
-  const number = formatQuantity(value, '', decimals === undefined ? { significant: 4 } : { decimals });
-  return unit === '' ? number : `${number} ${unit}`;
+  const shown = Math.abs(value) < leastShown ? 0 : value;
+  return formatQuantity(shown, '', decimals === undefined ? { significant: 4 } : { decimals });
 }
 
 function sayDifference(row: Row, before: number | null, after: number | null): string {
   if (before === null || after === null) return '';
   const difference = after - before;
   if (!Number.isFinite(difference)) return '';
-  if (difference === 0) return '0';
+  if (Math.abs(difference) < leastShown) return '0';
   const { decimals } = row;
   const size = formatQuantity(
     Math.abs(difference),

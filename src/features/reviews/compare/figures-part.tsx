@@ -61,7 +61,6 @@ export function FiguresPart({ pair: { a, b }, names, figuresOf }: FiguresPartPro
             <th scope="col" className="is-number">
               Difference
             </th>
-            <th scope="col">Which is</th>
           </tr>
         </thead>
         <tbody>
@@ -75,13 +74,15 @@ export function FiguresPart({ pair: { a, b }, names, figuresOf }: FiguresPartPro
 }
 
 function FigureRow({ row, explained }: { row: FigureDifference; explained: ExplainedFigure | undefined }) {
-  const { label, before, after, difference, judgement } = row;
+  const { label, unit, before, after, difference, judgement } = row;
   const { words, Sign } = looks[judgement];
   return (
     <tr data-judgement={judgement}>
       <th scope="row">
         <span className="figure-name">
-          {label}
+          <span>
+            {label} {unit !== '' && <span className="quiet">{unit}</span>}
+          </span>
           {explained !== undefined && (
             <Explain title={label}>
               <p>{explained.meaning}</p>
@@ -97,11 +98,13 @@ function FigureRow({ row, explained }: { row: FigureDifference; explained: Expla
       </th>
       <td className="is-number">{before}</td>
       <td className="is-number">{after}</td>
-      <td className="is-number">{difference}</td>
-      <td>
-        <span className="judgement" data-judgement={judgement}>
-          {Sign !== null && <Sign width="16" height="16" />}
-          {words}
+      <td className="is-number">
+        <span className="figure-change">
+          {difference}
+          <span className="judgement" data-judgement={judgement}>
+            {Sign !== null && <Sign width="16" height="16" />}
+            {words}
+          </span>
         </span>
       </td>
     </tr>

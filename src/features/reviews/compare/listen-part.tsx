@@ -80,7 +80,7 @@ function Player({ sound, names, turnedDownDb, toneHz }: PlayerProps) {
           <p>
             Both are played as loops of the same tone, {formatQuantity(toneHz, 'Hz')}, without their mean. The
             one with the larger effective value (RMS) is turned down to that of the other; nothing is turned
-            up. {sayTurnedDown(turnedDownDb, names)}
+            up.
           </p>
           <p>
             Equal RMS is close to equal loudness for waves of like spectra; a wave with stronger high partials
@@ -91,6 +91,9 @@ function Player({ sound, names, turnedDownDb, toneHz }: PlayerProps) {
       <div role="status">
         {status === 'starting' && <p className="field-description">Starting…</p>}
         {status === 'playing' && <p className="field-description">Playing {heard} as a loop.</p>}
+        {status === 'silent' && (
+          <p className="field-description">Brought to equal RMS. {sayTurnedDown(turnedDownDb, names)}</p>
+        )}
         {trouble !== null && <FieldProblem id="compare-trouble">{trouble}</FieldProblem>}
       </div>
       <VolumeField value={volumeDb} onChange={setVolumeDb} />
@@ -106,5 +109,5 @@ function sayTurnedDown({ a, b }: { a: number; b: number }, names: { a: string; b
   const most = Math.max(a, b);
   if (most < 0.05) return 'The two are equally strong, so neither is changed.';
   const by = formatQuantity(most, 'dB', { decimals: 1 });
-  return `Here ${a > b ? names.a : names.b} is turned down by ${by}.`;
+  return `For that, ${a > b ? names.a : names.b} is turned down by ${by}.`;
 }

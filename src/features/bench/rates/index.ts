@@ -1,0 +1,1 @@
+export { RatesRecesses } from './rates-recesses.tsx';

@@ -1,0 +1,67 @@
+import { z } from 'zod';
+import { createLive } from '../../../live/index.ts';
+
+const wishesSchema = z.strictObject({
+  /** Tone as typed; empty for the one that is set on the bench. */
+  tone: z.string(),
+  clockHz: z.number().positive(),
+  prescalers: z.string(),
+  compareBits: z.enum(['8', '16', '32']),
+  tolerancePpm: z.number().min(0),
+  costCycles: z.number().min(0),
+  lengths: z.enum(['this', 'others']),
+  accumulatorTone: z.string(),
+  firstTone: z.string(),
+  secondTone: z.string(),
+  longest: z.number(),
+  withinCents: z.number(),
+});
+
+/** What is known of the part and asked of it. It is no part of the wave, so undo leaves it alone. */
+export type RateWishes = z.infer<typeof wishesSchema>;
+
+const atFirst: RateWishes = {
+  tone: '',
+  clockHz: 16e6,
+  prescalers: '1, 8, 64, 256, 1024',
+  compareBits: '16',
+  tolerancePpm: 50,
+  costCycles: 40,
+  lengths: 'this',
+  accumulatorTone: '',
+  firstTone: 'A4',
+  secondTone: 'C#5',
+  longest: 1024,
+  withinCents: 5,
+};
+
+const storageKey = 'stepwell.bench.rates';
+
+function readKept(): RateWishes {
+  try {
+    return wishesSchema.parse(JSON.parse(localStorage.getItem(storageKey) ?? 'null'));
+  } catch {
+    return atFirst;
+  }
+}
+
+export const rateWishes = createLive<RateWishes>(readKept());
+
+export function wish(part: Partial<RateWishes>): void {
+  const next = { ...rateWishes.now(), ...part };
+  rateWishes.set(next);
+  try {
+    localStorage.setItem(storageKey, JSON.stringify(next));
+  } catch {
+    // It then lasts as long as the page.
+  }
+}
+
+/** Whole numbers parted by commas or blanks, and what of them is none. */
+export function readPrescalers(text: string): { prescalers: number[] } | { fault: string } {
+  const words = text.split(/[\s,;]+/).filter((word) => word !== '');
+  const wrong = words.find((word) => !/^\d{1,5}$/.test(word) || Number(word) < 1);
+  if (wrong !== undefined || words.length === 0)
+    return { fault: `“${wrong ?? text}” is not allowed. Allowed: whole numbers from 1, as 1, 8, 64.` };
+  return { prescalers: words.map(Number) };
+}
