@@ -1,7 +1,7 @@
 import type { Report } from '../contract/index.ts';
 
 /** Error power up to which the codes count as exact. */
-const exactPower = 1e-24;
+export const exactPower = 1e-24;
 
 /** What a signal is like, whatever it is quantised to. */
 export interface SignalFacts {

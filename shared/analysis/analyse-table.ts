@@ -3,7 +3,7 @@ import { levelsOf, lsbOf, tableBytesOf, valuesOf, type QuantisedCycle } from '..
 import type { LevelledCycle } from '../waveform/index.ts';
 import { againstSignal, isConstant, strongestOf } from './against-signal.ts';
 import { carrierFigures } from './carrier-figures.ts';
-import { momentsOf } from './moments.ts';
+import { peakOf, spreadOf } from './moments.ts';
 import { spectrumOf, type Spectrum } from './spectrum.ts';
 import { toggleFigures } from './toggles.ts';
 
@@ -23,9 +23,9 @@ export function analyseTable(
   const lsb = lsbOf(table);
   const values = valuesOf(codes, table);
   const errorSignal = differenceOf(values, cycle);
-  const wanted = momentsOf(cycle);
-  const result = momentsOf(values);
-  const error = momentsOf(errorSignal);
+  const wanted = spreadOf(cycle);
+  const result = spreadOf(values);
+  const error = spreadOf(errorSignal);
   const spectrum = spectrumOf(cycle, errorSignal);
   const signal = {
     variance: wanted.variance,
@@ -41,10 +41,10 @@ export function analyseTable(
     exact,
     meanErrorLsb: error.mean / lsb,
     rmsErrorLsb: error.rms / lsb,
-    peakErrorLsb: error.peak / lsb,
+    peakErrorLsb: peakOf(errorSignal) / lsb,
     mean: result.mean,
     rms: result.rms,
-    crestFactor: result.rms === 0 ? null : result.peak / result.rms,
+    crestFactor: result.rms === 0 ? null : peakOf(values) / result.rms,
     ...codeFigures(codes, table.bits),
     clippedSamples,
     clippedCodes,

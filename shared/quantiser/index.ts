@@ -1,5 +1,5 @@
 export { ditherOf } from './dither.ts';
-export { quantise, roundInto, type QuantisedCycle } from './quantise.ts';
-export { levelsOf, lsbOf, valuesInto } from './scaling.ts';
+export { errorInto, quantise, type QuantisedCycle } from './quantise.ts';
+export { levelsOf, lsbOf } from './scaling.ts';
 export { storedWords, tableBytesOf } from './stored-words.ts';
 export { valuesOf } from './values.ts';

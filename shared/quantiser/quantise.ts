@@ -2,7 +2,7 @@ import type { TableSettings, Warning } from '../contract/index.ts';
 import { ditherOf } from './dither.ts';
 import { nearestLevels } from './measured-levels.ts';
 import { rounderOf } from './round.ts';
-import { levelsOf, positionsOf, snappedLine, snapSteps } from './scaling.ts';
+import { levelsOf, positionsOf, snappedLine, snapSteps, valueLine } from './scaling.ts';
 import { shapeNoise } from './shape-noise.ts';
 
 export interface QuantisedCycle {
@@ -38,15 +38,8 @@ export function quantise(cycle: Float64Array, table: TableSettings): QuantisedCy
   return { codes, clippedCodes, warnings };
 }
 
-/**
- * Codes of a levelled cycle without shaping: position, dither, rounding and clip in one pass, as long tables are bound
- * by memory.
- *
- * @param codes filled, as many as the cycle has entries
- * @param dither one value an entry, in LSB, or null
- * @returns how many codes the clip to 0…L−1 changed
- */
-export function roundInto(
+/** Position, dither, rounding and clip in one pass: long tables are bound by memory. */
+function roundInto(
   codes: Uint16Array,
   cycle: Float64Array,
   table: TableSettings,
@@ -67,4 +60,31 @@ export function roundInto(
     codes[k] = code;
   }
   return clippedCodes;
+}
+
+/**
+ * Fills `error` with `e = q − r` of a levelled cycle without shaping or measured levels: what its codes' values are
+ * off, to the last bit, without the codes. A search over many sizes asks for no more.
+ *
+ * @param dither one value an entry, in LSB, or null
+ */
+export function errorInto(
+  error: Float64Array,
+  cycle: Float64Array,
+  table: TableSettings,
+  dither: Float64Array | null,
+): void {
+  const { gain, offset } = snappedLine(table);
+  const { multiplier, less, divisor, minus } = valueLine(table);
+  const topCode = levelsOf(table.bits) - 1;
+  const round = rounderOf(table.rounding);
+  const steps = snapSteps;
+  for (let k = 0; k < cycle.length; k += 1) {
+    const r = cycle[k];
+    const position = Math.floor(r * gain + offset) / steps;
+    let code = round(dither === null ? position : position + dither[k]);
+    if (code < 0) code = 0;
+    else if (code > topCode) code = topCode;
+    error[k] = (multiplier * code - less) / divisor - minus - r;
+  }
 }

@@ -37,14 +37,23 @@ export function positionsOf(cycle: Float64Array, scaling: Scaling): Float64Array
   return positions;
 }
 
-/** Fills `values` with what codes stand for in signal units, q (§3.5), in tables without measured levels. */
-export function valuesInto(values: Float64Array, codes: Uint16Array, { bits, range, scale }: Scaling): void {
+/** The line of §3.5 from a code to its value: `(multiplier·c − less)/divisor − minus`, exact in every step but one. */
+export function valueLine({ bits, range, scale }: Scaling): {
+  multiplier: number;
+  less: number;
+  divisor: number;
+  minus: number;
+} {
   const levels = levelsOf(bits);
-  if (range === 'unipolar') {
-    for (let k = 0; k < codes.length; k += 1) values[k] = codes[k] / (levels - 1);
-  } else if (scale === 'mid-tread') {
-    for (let k = 0; k < codes.length; k += 1) values[k] = (codes[k] - levels / 2) / (levels / 2);
-  } else {
-    for (let k = 0; k < codes.length; k += 1) values[k] = (2 * codes[k]) / (levels - 1) - 1;
-  }
+  if (range === 'unipolar') return { multiplier: 1, less: 0, divisor: levels - 1, minus: 0 };
+  if (scale === 'mid-tread') return { multiplier: 1, less: levels / 2, divisor: levels / 2, minus: 0 };
+  return { multiplier: 2, less: 0, divisor: levels - 1, minus: 1 };
+}
+
+/** Values q of codes in signal units (§3.5), for tables without measured levels. */
+export function valuesOfCodes(codes: Uint16Array, scaling: Scaling): Float64Array {
+  const { multiplier, less, divisor, minus } = valueLine(scaling);
+  const values = new Float64Array(codes.length);
+  for (let k = 0; k < codes.length; k += 1) values[k] = (multiplier * codes[k] - less) / divisor - minus;
+  return values;
 }

@@ -50,17 +50,19 @@ function bestOfEachSize(cells: Iterable<SizeCell>, figure: SizeFigure): SizeCell
   return [...best.values()];
 }
 
-/** The smallest cell that keeps all limits; of one size the coarsest, then the shortest. `null` where none does. */
-export function smallestThatMeets(
-  cells: Iterable<SizeCell>,
-  { snrDb = -Infinity, unwantedDb = Infinity, tableBytes = Infinity }: SizeLimits,
-): SizeCell | null {
+/**
+ * The smallest cell that keeps all limits; of one size the coarsest, then the shortest. `null` where none does: a
+ * figure that does not exist keeps no limit.
+ */
+export function smallestThatMeets(cells: Iterable<SizeCell>, limits: SizeLimits): SizeCell | null {
+  const { snrDb, unwantedDb, tableBytes } = limits;
   let smallest: SizeCell | null = null;
   for (const cell of cells) {
     const meets =
-      goodnessOf(cell, 'snrDb') >= snrDb &&
-      goodnessOf(cell, 'unwantedDb') >= -unwantedDb &&
-      cell.tableBytes <= tableBytes;
+      cell.problem === null &&
+      (snrDb === undefined || goodnessOf(cell, 'snrDb') >= snrDb) &&
+      (unwantedDb === undefined || goodnessOf(cell, 'unwantedDb') >= -unwantedDb) &&
+      (tableBytes === undefined || cell.tableBytes <= tableBytes);
     if (meets && (smallest === null || bySize(cell, smallest) < 0)) smallest = cell;
   }
   return smallest;

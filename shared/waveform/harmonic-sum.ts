@@ -13,7 +13,7 @@ type Sampling = Pick<TableSettings, 'length' | 'cycles' | 'startPhaseDeg' | 'sam
 
 /** Sine and cosine of one period in N steps, interleaved; kept for the last few lengths. */
 const unitCircles = new Map<number, Float64Array>();
-const unitCirclesKept = 8;
+const unitCirclesKept = 16;
 
 function unitCircle(length: number): Float64Array {
   const known = unitCircles.get(length);

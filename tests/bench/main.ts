@@ -5,6 +5,7 @@ import { measureEngine } from './engine.ts';
 import { measureFirstPage } from './first-page.ts';
 import { measureLibrary } from './library.ts';
 import { measureOutputStage } from './output-stage.ts';
+import { measurePlayback } from './playback.ts';
 
 // npm run speed [-- PART …]: figures of time, told beside their goals and never asserted. Other work on the machine
 // shows in them: run it alone.
@@ -14,6 +15,10 @@ const parts: Record<string, { title: string; measure: () => boolean | Promise<bo
   'output-stage': {
     title: 'Ladders and tolerance trials beside vectorised NumPy',
     measure: measureOutputStage,
+  },
+  playback: {
+    title: 'The search over sizes beside vectorised NumPy, and phase accumulators',
+    measure: measurePlayback,
   },
   cli: { title: 'The command line', measure: measureCommandLine },
   bench: {
