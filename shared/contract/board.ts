@@ -65,6 +65,7 @@ const pwmOutputSchema = z.strictObject({
   outputOhms: seriesOhms.default(0),
 });
 
+/** What smooths the output; takes no current from what is before it. */
 const filterSchema = z.discriminatedUnion(
   'kind',
   [

@@ -26,16 +26,17 @@ export interface Assignment {
   readonly tried: number;
 }
 
-/** Most arrangements that are all tried. */
-const mostTried = 200_000;
 const searchStarts = 8;
 const stepsPerStart = 40_000;
 
-/** Places a measured resistor each on the ladder's places so that the largest |DNL| is small. */
-export function assignResistors(bag: ResistorBag, seed = 1): Assignment {
+/**
+ * Places a measured resistor each on the ladder's places so that the largest |DNL| is small.
+ *
+ * @param options.mostTried arrangements up to which all are tried; beyond, a search that a seed makes repeatable
+ */
+export function assignResistors(bag: ResistorBag, { seed = 1, mostTried = 200_000 } = {}): Assignment {
   const arrangement = new Arrangement(bag);
-  const count = arrangementsOf(bag);
-  if (count <= mostTried) {
+  if (arrangementsOf(bag) <= mostTried) {
     arrangement.tryAll();
     return arrangement.best('exhaustive');
   }

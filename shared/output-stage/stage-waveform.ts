@@ -24,7 +24,10 @@ export interface StageWaveform {
   readonly pin: Float64Array;
   readonly buffer: Float64Array;
   readonly output: Float64Array;
-  /** Whether the period ends as it begins; false where the op-amp has not come to rest in many periods. */
+  /**
+   * Whether the period ends as it begins. False where the op-amp has not come to rest in many periods: one that slews
+   * all the time keeps where it began, so that such a loop has no one steady state.
+   */
   readonly isSteady: boolean;
   /** Share of the time in which the op-amp slews, 0…1. */
   readonly slewingShare: number;

@@ -1,4 +1,4 @@
-import { carrierFigures } from '../analysis/index.ts';
+import { carrierFigures, exactPower } from '../analysis/index.ts';
 import type { TableSettings } from '../contract/index.ts';
 import { linesOf, transformOf } from '../dft/index.ts';
 
@@ -86,6 +86,7 @@ export class TableThrough {
     const { re: wantedRe, im: wantedIm } = this.#wanted;
     const { gains } = this.#table;
     let strongestAdded = 0;
+    let addedPower = 0;
     amplitudes[0] = 0;
     for (let k = 1; k < amplitudes.length; k += 1) {
       const a = 2 * k;
@@ -97,10 +98,12 @@ export class TableThrough {
       const scale = (a === size ? 1 : 2) * (gains === undefined ? 1 : gains[k]);
       const added = (addedRe * addedRe + addedIm * addedIm) * scale * scale;
       if (added > strongestAdded) strongestAdded = added;
+      addedPower += a === size ? added : added / 2;
       amplitudes[k] = (Math.sqrt(re * re + im * im) * scale) / size;
     }
     const { sinadDb } = carrierFigures(amplitudes, { length: size, range: this.#table.range });
-    const ratio = strongestAdded / this.#strongestWanted;
+    const isExact = addedPower <= exactPower * size * size;
+    const ratio = isExact ? 0 : strongestAdded / this.#strongestWanted;
     save(sinadDb ?? NaN, ratio > 0 && Number.isFinite(ratio) ? 10 * Math.log10(ratio) : NaN);
   }
 }

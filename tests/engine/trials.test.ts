@@ -129,6 +129,22 @@ describe('trials', () => {
     for (const value of trials.figures().maxDnl) expect(value).toBeCloseTo(maxDnl, 12);
   });
 
+  it('have no unwanted line where the codes are exact', () => {
+    const ramp = buildTable(
+      waveOf({
+        source: { kind: 'samples', resampling: 'hold', values: [0, 1, 2, 3] },
+        level: { normalise: 'span' },
+        table: { bits: 2, length: 4 },
+      }),
+    );
+    const exact = { codes: ramp.codes, cycle: ramp.cycle, range: 'bipolar' as const };
+    const trials = new Trials(ladderWith({ bits: 2 }), settingsOf({ tolerancePercent: 0, trials: 3 }), exact);
+    trials.run(3);
+    expect(ramp.report.unwantedDb).toBeNull();
+    expect(Array.from(trials.figures().unwantedDb)).toEqual([NaN, NaN, NaN]);
+    expect(trials.summary().unwantedDb).toEqual({ p50: null, p95: null, p99: null });
+  });
+
   it.each([
     [{ tolerancePercent: 100 }, /^tolerancePercent: 100 is not allowed/],
     [
