@@ -17,24 +17,55 @@ const isHere = {
   'avr-libc': file('/usr/lib/avr/include/avr/pgmspace.h'),
   'apache2-bin': program('apache2'),
   openssl: program('openssl'),
+  ngspice: program('ngspice'),
   python3: file('/usr/bin/python3'),
+  clang: program('clang'),
+  'gcc-arm-none-eabi': program('arm-none-eabi-gcc'),
+  'qemu-system-arm': program('qemu-system-arm'),
+  'gcc-riscv64-unknown-elf': program('riscv64-unknown-elf-gcc'),
+  'qemu-system-misc': program('qemu-system-riscv32'),
+  rustc: program('rustc'),
+  iverilog: program('iverilog'),
   'python3-numpy': file('/usr/lib/python3/dist-packages/numpy/__init__.py'),
+  sox: program('sox'),
+  srecord: program('srec_cat'),
+  'espeak-ng': program('espeak-ng'),
   'python3-scipy': file('/usr/lib/python3/dist-packages/scipy/__init__.py'),
 };
 
 export const databasePackages = ['mariadb-server-core', 'mariadb-client-core'];
 export const numpyPackages = ['python3', 'python3-numpy'];
-export const testPackages = [
-  'chromium',
+/** Compilers, simulators and readers that judge the firmware targets. */
+export const proofPackages = [
   'gcc',
   'g++',
   'libc6-dev',
+  'clang',
   'gcc-avr',
   'avr-libc',
-  'apache2-bin',
-  'openssl',
-  ...numpyPackages,
-  'python3-scipy',
+  'gcc-arm-none-eabi',
+  'qemu-system-arm',
+  'gcc-riscv64-unknown-elf',
+  'qemu-system-misc',
+  'rustc',
+  'iverilog',
+  'srecord',
+  'sox',
+  'python3',
+];
+export const testPackages = [
+  ...new Set([
+    'chromium',
+    ...proofPackages,
+    'apache2-bin',
+    'openssl',
+    'ngspice',
+    ...numpyPackages,
+    'python3-scipy',
+    'sox',
+    'srecord',
+    'espeak-ng',
+  ]),
 ];
 
 const missingOf = (names) => names.filter((name) => !isHere[name]());

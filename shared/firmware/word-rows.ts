@@ -26,29 +26,26 @@ export const plainStyle: NumberStyle = {
   rowEnd: ',',
 };
 
+/** Values that texts are kept for: all of a table's, none of a wide port's. */
+const mostKept = 2 ** 16;
+
 /** Numbers in rows, right-aligned, so that an entry is found by its index. No line end follows the last. */
 export function wordRows(words: ArrayLike<number>, style: NumberStyle = plainStyle): string {
   const { indent, separator, rowEnd } = style;
-  const texts = new Array<string>(words.length);
-  const known = new Map<number, string>();
-  let width = 1;
-  for (let k = 0; k < words.length; k += 1) {
-    let text = known.get(words[k]);
-    if (text === undefined) {
-      text = numberText(words[k], style);
-      known.set(words[k], text);
-      width = Math.max(width, text.length);
-    }
-    texts[k] = text;
-  }
-  const padded = new Map(Array.from(known.values(), (text) => [text, text.padStart(width)]));
+  const { min, max } = wordSpan(words);
+  const width = Math.max(numberText(min, style).length, numberText(max, style).length);
   const columns = style.columns || (width <= 4 ? 16 : 8);
-  const rows: string[] = [];
-  for (let start = 0; start < texts.length; start += columns) {
-    const row = texts.slice(start, start + columns).map((text) => padded.get(text));
-    rows.push(indent + row.join(separator));
+  // A value that comes again is written once: a table has at most 65,536 different ones.
+  const kept: (string | undefined)[] = new Array(max - min < mostKept ? max - min + 1 : 0);
+  let text = '';
+  for (let k = 0; k < words.length; k += 1) {
+    const known = kept[words[k] - min] ?? numberText(words[k], style).padStart(width);
+    if (kept.length > 0) kept[words[k] - min] = known;
+    if (k % columns !== 0) text += separator;
+    else text += k === 0 ? indent : `${rowEnd}\n${indent}`;
+    text += known;
   }
-  return rows.join(`${rowEnd}\n`);
+  return text;
 }
 
 function numberText(word: number, { base, hexPrefix, hexDigits }: NumberStyle): string {
@@ -58,12 +55,12 @@ function numberText(word: number, { base, hexPrefix, hexDigits }: NumberStyle): 
 }
 
 /** Smallest and largest of the words; a table has at least one. */
-export function wordSpan(words: Int32Array): { min: number; max: number } {
-  let [min] = words;
+export function wordSpan(words: ArrayLike<number>): { min: number; max: number } {
+  let min = words[0];
   let max = min;
-  for (const word of words) {
-    if (word < min) min = word;
-    if (word > max) max = word;
+  for (let k = 1; k < words.length; k += 1) {
+    if (words[k] < min) min = words[k];
+    if (words[k] > max) max = words[k];
   }
   return { min, max };
 }

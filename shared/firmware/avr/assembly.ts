@@ -9,19 +9,26 @@ const cyclesOf: Readonly<Record<string, number>> = {
   adc: 1,
   add: 1,
   andi: 1,
+  cpc: 1,
+  cpi: 1,
   dec: 1,
   in: 1,
   ld: 2,
   ldi: 1,
+  lds: 2,
   lpm: 3,
   lsr: 1,
   mov: 1,
   nop: 1,
   or: 1,
   out: 1,
+  pop: 2,
+  push: 2,
+  reti: 4,
   rjmp: 2,
   ror: 1,
   sbci: 1,
+  sts: 2,
   subi: 1,
 };
 
@@ -31,6 +38,9 @@ export function line(instruction: string, operands = ''): Line {
 
 /** A branch back that is taken, or one that falls through. */
 export const taken = (label: string): Line => ({ text: `brne ${label}`, cycles: 2 });
+
+/** A line off the longest way, which cycles are counted on. */
+export const aside = ({ text }: Line): Line => ({ text, cycles: 0 });
 
 /** Lines that only take time, as few words as they can be. */
 export function wait(cycles: number): Line[] {

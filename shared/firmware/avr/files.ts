@@ -5,6 +5,14 @@ import type { ExportInput, Facts, TargetFile } from '../target.ts';
 import type { AvrOptions } from '../targets/avr.ts';
 import { accumulatorLoop, alignmentOf, type AccumulatorShape } from './accumulator-loop.ts';
 import type { Line } from './assembly.ts';
+import {
+  handlerAlignment,
+  onceHandler,
+  phaseHandler,
+  sumHandler,
+  tableHandler,
+  type PhaseShape,
+} from './handler.ts';
 import { portLoop, wholeLoopWords, type PortLoop } from './port-loop.ts';
 import { loopPorts } from './ports.ts';
 import { keepsFlags, type LoopPort, type LoopShape } from './sample.ts';
@@ -99,22 +107,50 @@ function freeAccumulator(input: ExportInput<AvrOptions>, ports: readonly LoopPor
   };
 }
 
+/** Cycles of the response to an interrupt by the data sheets, and of the jump that a vector is on parts up to 8 KiB. */
+const responseCycles = 4;
+const vectorCycles = 2;
+
 function onInterrupts(input: ExportInput<AvrOptions>, ports: readonly LoopPort[]): Playback {
   const { table, layout, options } = input;
-  const { playback, prescaler, compare } = options;
-  const [{ bytes }] = layout.arrays;
+  const { playback, prescaler, compare, accumulatorBits } = options;
+  const { bits, coding } = table.definition.table;
   const cyclesPerWord = Number(prescaler) * (compare + 1);
   if (playback === 'two-accumulators' && layout.map !== undefined) {
     refuse('options.portMap', options.portMap, 'nothing with options.playback "two-accumulators": sums have no map');
   }
-  const accumulator = playback === 'timer-accumulator' || playback === 'two-accumulators';
+  const isSum = playback === 'two-accumulators';
   const count = table.stored.length;
+  const accumulator =
+    isSum || playback === 'timer-accumulator' ? accumulatorFacts(table.definition, options, cyclesPerWord) : undefined;
+  const shape: PhaseShape = {
+    ...shapeOf(input, ports),
+    count,
+    accumulatorBytes: (Number(accumulatorBits) / 8) as 2 | 3 | 4,
+    indexBits: accumulator?.indexBits ?? 0,
+  };
+  const handler = isSum
+    ? sumHandler(shape, { bits, isSigned: coding === 'twos-complement' })
+    : accumulator !== undefined
+      ? phaseHandler(shape)
+      : playback === 'once'
+        ? onceHandler(shape)
+        : tableHandler(shape);
+  const handlerCycles = responseCycles + vectorCycles + handler.cycles;
+  if (cyclesPerWord < handlerCycles + 2) {
+    refuse(
+      'options.compare',
+      compare,
+      `at least ${Math.ceil((handlerCycles + 2) / Number(prescaler)) - 1}: the handler takes ${handlerCycles} cycles of ${cyclesPerWord}`,
+    );
+  }
   return {
     template: 'avr/interrupt.c',
-    alignment: 0,
+    alignment: accumulator === undefined ? 0 : handlerAlignment(shape),
     facts: {
       ...portFacts(ports),
       once: playback === 'once',
+      isSum,
       rampWords: options.rampWords,
       playback,
       clockHz: options.clockHz,
@@ -122,11 +158,12 @@ function onInterrupts(input: ExportInput<AvrOptions>, ports: readonly LoopPort[]
       clockSelect: ['1', '8', '64', '256', '1024'].indexOf(prescaler) + 1,
       compare,
       cyclesPerWord,
-      storageType: bytes === 1 ? 'uint8_t' : 'uint16_t',
-      sumType: bytes === 1 ? 'uint16_t' : 'uint32_t',
-      indexType: count <= 256 ? 'uint8_t' : 'uint16_t',
-      wrapsByItself: count === 256,
-      ...(accumulator ? accumulatorFacts(table.definition, options, cyclesPerWord) : {}),
+      handlerCycles,
+      wordFetch: options.storage === 'ram' ? '' : layout.arrays[0].bytes === 1 ? 'pgm_read_byte' : 'pgm_read_word',
+      halfWord: coding === 'twos-complement' ? 2 ** (bits - 1) : 0,
+      assembly: handler.lines.map(inC).join('\n'),
+      accumulatorBytes: shape.accumulatorBytes,
+      ...accumulator,
     },
   };
 }

@@ -42,7 +42,8 @@ const sourcesOf = (cases: readonly Exported[], ending: string) =>
 /** c99: two compilers, three dialects of C, and C++ through the same headers. */
 export async function proveC99(): Promise<Proof[]> {
   const proofs: Proof[] = [];
-  for (const extra of [{}, { numberBase: 'hexadecimal', storage: 'ram', alignment: '64', lineEnding: 'crlf' }]) {
+  const settings: Record<string, string>[] = [{}, { numberBase: 'hexadecimal', storage: 'ram', alignment: '64', lineEnding: 'crlf' }];
+  for (const extra of settings) {
     const cases = exportCases('c99', extra);
     const print = printer(cases);
     const files = [

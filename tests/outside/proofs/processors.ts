@@ -250,7 +250,7 @@ int main(void) {
 }
 `;
 
-const instructionLine = /^\s+([0-9a-f]+):\s+(\S+)\s*(.*)$/gm;
+const instructionLine = /^\s*([0-9a-f]+):\s+(\S+)\s*(.*)$/gm;
 
 function instructionsOf(disassembly: string, name: string) {
   const start = disassembly.indexOf(`<${name}>:`);

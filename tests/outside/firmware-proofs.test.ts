@@ -1,0 +1,20 @@
+import { describe, expect, it } from 'vitest';
+import { targets } from '../../shared/firmware/index.ts';
+import { differencesFrom, provers, storedProofs } from './proofs/matrix.ts';
+
+// The same proofs that `npm run proof` prints: compilers, simulators and readers that are not ours judge each target.
+// Cycles are measured anew; `npm run proof -- --store` keeps what is found.
+
+describe('proofs of targets', () => {
+  it('cover every target, and no other', () => {
+    const ids = targets.map(({ id }) => id).sort();
+    expect(Object.keys(provers).sort()).toEqual(ids);
+    expect(Object.keys(storedProofs).sort()).toEqual(ids);
+  });
+
+  it.each(Object.keys(provers))('of %s find what is stored', async (target) => {
+    const proofs = await provers[target]();
+    expect(proofs.length).toBeGreaterThanOrEqual(5);
+    expect(differencesFrom(storedProofs[target], proofs)).toEqual([]);
+  });
+});

@@ -1,0 +1,46 @@
+import stored from '../../../shared/firmware/proofs.json' with { type: 'json' };
+import { proveAvr } from './avr.ts';
+import { proveC99Playback } from './c-playback.ts';
+import { proveAsm, proveC99, proveCpp17 } from './c-programs.ts';
+import {
+  proveBinary,
+  proveCsv,
+  proveIntelHex,
+  proveJson,
+  provePython,
+  proveVerilogMemh,
+  proveWav,
+} from './data-files.ts';
+import { proveCortexM, proveRiscv } from './processors.ts';
+import type { Proof } from './proof.ts';
+import { proveRust } from './rust.ts';
+
+/** Each target with the proof of it. What is proven of one is stored in the repository, cycles and all. */
+export const provers: Readonly<Record<string, () => Promise<Proof[]>>> = {
+  c99: async () => [...(await proveC99()), ...(await proveC99Playback())],
+  avr: proveAvr,
+  cpp17: proveCpp17,
+  'cortex-m': proveCortexM,
+  riscv: proveRiscv,
+  asm: proveAsm,
+  rust: proveRust,
+  python: provePython,
+  'verilog-memh': proveVerilogMemh,
+  'intel-hex': proveIntelHex,
+  binary: proveBinary,
+  csv: proveCsv,
+  json: proveJson,
+  wav: proveWav,
+};
+
+export const storedProofs: Readonly<Record<string, readonly Proof[]>> = stored;
+
+/** Where the proofs differ from what is stored: a line each. */
+export function differencesFrom(kept: readonly Proof[] = [], proofs: readonly Proof[]): string[] {
+  const count = Math.max(kept.length, proofs.length);
+  return Array.from({ length: count }, (_, k) => [show(kept[k]), show(proofs[k])])
+    .filter(([before, now]) => before !== now)
+    .map(([before, now]) => `stored: ${before}; found: ${now}`);
+}
+
+const show = (proof: Proof | undefined) => (proof === undefined ? 'nothing' : JSON.stringify(proof));
