@@ -15,7 +15,9 @@ import { rendering } from './features/rendering/routes.ts';
 import { reviews } from './features/reviews/routes.ts';
 import { tables } from './features/tables/routes.ts';
 import { teams } from './features/teams/routes.ts';
+import { uploads } from './features/uploads/routes.ts';
 import { errorTranslator } from './http/error-translator.ts';
+import { fileBody } from './http/file-body.ts';
 import { formBody } from './http/form-body.ts';
 import { generalLimit } from './http/general-limit.ts';
 import { hostGate } from './http/host-gate.ts';
@@ -31,6 +33,7 @@ import { cspNonce, securityHeaders } from './http/security-headers.ts';
 const features: readonly Feature[] = [
   tables,
   reviews,
+  uploads,
   health,
   account,
   teams,
@@ -73,6 +76,7 @@ export function buildApp(deps: AppDeps): Express {
   app.use('/auth', noStore, ...known, ...authRoutes(deps));
   const routers = buildRouters(deps);
   app.use('/api/v1/notices/unsubscribe', formBody);
+  app.use('/api/v1/teams/:team/tables/:table/revisions/:number/originals', originGate(origins), fileBody);
   app.use('/api/v1', noStore, originGate(origins), ...known, jsonBody, ...routers, noSuchRoute(routers));
   app.use('/api', nothingHere);
 

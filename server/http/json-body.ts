@@ -24,7 +24,8 @@ const hasBody: RequestHandler = (request, _response, next) => {
 
 const depthGate: RequestHandler = (request, _response, next) => {
   const body: unknown = request.body;
-  if (isDeeperThan(body, depthLimit)) {
+  // A file's bytes were read before; they nest nowhere.
+  if (!Buffer.isBuffer(body) && isDeeperThan(body, depthLimit)) {
     throw new Problem('validation', {
       errors: [
         {

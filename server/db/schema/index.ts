@@ -7,4 +7,5 @@ export * from './reviews.ts';
 export * from './sessions.ts';
 export * from './team-limits.ts';
 export * from './teams.ts';
+export * from './uploads.ts';
 export * from './users.ts';

@@ -43,7 +43,7 @@ export function openApiDocument(sections: readonly Section[], { cookieName }: Su
 }
 
 function operationObject(operation: Operation, tag: string) {
-  const { id, summary, description, access, body, bodyOptional = false, answer } = operation;
+  const { id, summary, description, access, answer } = operation;
   const role =
     access === 'anyone' || access === 'signed-in'
       ? undefined
@@ -55,12 +55,20 @@ function operationObject(operation: Operation, tag: string) {
     description: [description, role].filter(Boolean).join(' ') || undefined,
     security: access === 'anyone' ? [] : [{ session: [] }],
     parameters: parametersOf(operation),
-    requestBody: body && {
-      required: !bodyOptional,
-      content: { 'application/json': { schema: jsonSchemaOf(body, 'input') } },
-    },
+    requestBody: bodyObject(operation),
     responses: { [answer.status]: answerObject(answer), ...refusalsOf(operation) },
   };
+}
+
+function bodyObject({ body, fileBody, bodyOptional = false }: Operation) {
+  // A file has no schema: its media type says it all (OpenAPI 3.1, "Considerations for File Uploads").
+  if (fileBody) return { required: true, content: { 'application/octet-stream': {} } };
+  return (
+    body && {
+      required: !bodyOptional,
+      content: { 'application/json': { schema: jsonSchemaOf(body, 'input') } },
+    }
+  );
 }
 
 function parametersOf({ path, query, conditional, repeatable, answer }: Operation) {
@@ -110,14 +118,23 @@ function answerObject({ description, schema, alsoAs, textAs, headers = [] }: Ans
   };
 }
 
-function refusalsOf({ access, query, body, conditional, repeatable, answer, refusals = [] }: Operation) {
+function refusalsOf({
+  access,
+  query,
+  body,
+  fileBody,
+  conditional,
+  repeatable,
+  answer,
+  refusals = [],
+}: Operation) {
   const isTeams = access !== 'anyone' && access !== 'signed-in';
   const statuses = [
     ...(access === 'anyone' ? [] : [401]),
     ...(isTeams ? [404] : []),
     ...(isTeams && access !== 'viewer' ? [403] : []),
     ...(query || repeatable ? [422] : []),
-    ...(body ? [400, 413, 415, 422] : []),
+    ...(body || fileBody ? [400, 413, 415, 422] : []),
     ...(conditional ? [412, 428] : []),
     429,
     ...refusals,

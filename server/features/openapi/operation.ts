@@ -13,6 +13,8 @@ export interface Operation {
   readonly access: 'anyone' | 'signed-in' | Role;
   readonly query?: z.ZodObject;
   readonly body?: z.ZodType;
+  /** The body is the bytes of a file, application/octet-stream. */
+  readonly fileBody?: boolean;
   /** Whether the body may be left out. */
   readonly bodyOptional?: boolean;
   readonly answer: Answer;

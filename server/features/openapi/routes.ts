@@ -9,6 +9,7 @@ import { account } from './operations/account.ts';
 import { audit } from './operations/audit.ts';
 import { library } from './operations/library.ts';
 import { notices } from './operations/notices.ts';
+import { originals } from './operations/originals.ts';
 import { limitSets, reviews } from './operations/reviews.ts';
 import { mailbox, rendering, service } from './operations/service.ts';
 import { invitations, teams } from './operations/teams.ts';
@@ -17,6 +18,7 @@ import { invitations, teams } from './operations/teams.ts';
 export const openapi: Feature = (deps) => {
   const sections = [
     library,
+    originals,
     reviews,
     limitSets,
     teams,

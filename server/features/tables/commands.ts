@@ -156,7 +156,7 @@ async function lockUnchanged(
 async function concluded(
   { transaction, auditKey, scope }: Command,
   slug: string,
-  action: string,
+  action: AuditEntry['action'],
   details: AuditEntry['details'],
 ): Promise<LibraryTable> {
   const table = await readTable(transaction, scope.teamId, slug);
