@@ -1,4 +1,5 @@
 export { decodeText } from './decode-text.ts';
+export { readAny, type AnyFile } from './read-any.ts';
 export { importLimits } from './limits.ts';
 export { readCode, type CodeLanguage, type ReadCode } from './code/read-code.ts';
 export type { CodeArray, FoundArrays, RefusedArray } from './code/code-array.ts';

@@ -5,6 +5,10 @@ export type TokenKind = 'end' | 'word' | 'number' | 'character' | 'string' | 'si
 const isDigit = (unit: number) => unit >= 48 && unit <= 57;
 const isLetter = (unit: number) =>
   (unit >= 97 && unit <= 122) || (unit >= 65 && unit <= 90) || unit === 95 || unit === 36 || unit > 127;
+const hexLetter = (unit: number) => {
+  const lower = unit | 32;
+  return lower >= 97 && lower <= 102 ? lower - 87 : -1;
+};
 const isLineEnd = (unit: number) => unit === 10 || unit === 13;
 const backslash = 92;
 
@@ -36,6 +40,25 @@ export class CLexer {
   /** Whether it stands on a token of this kind. */
   isKind(kind: TokenKind): boolean {
     return this.kind === kind;
+  }
+
+  /**
+   * The number that the token stands for where it is decimal or hexadecimal and nothing more, as nearly all entries
+   * are; −1 where it has to be looked at closely.
+   */
+  get plainNumber(): number {
+    const { text, start, end } = this;
+    const isHex = text.charCodeAt(start) === 48 && (text.charCodeAt(start + 1) | 32) === 120;
+    if (end - start > 10 || (isHex && end - start < 3)) return -1;
+    if (!isHex && text.charCodeAt(start) === 48 && end - start > 1) return -1;
+    let value = 0;
+    for (let at = isHex ? start + 2 : start; at < end; at += 1) {
+      const unit = text.charCodeAt(at);
+      const digit = isDigit(unit) ? unit - 48 : isHex ? hexLetter(unit) : -1;
+      if (digit < 0) return -1;
+      value = value * (isHex ? 16 : 10) + digit;
+    }
+    return value;
   }
 
   get word(): string {

@@ -26,6 +26,11 @@ export function readNumberIn(lexer: CLexer, macros: Macros, depth = 0): EntryNum
     refuseAt(text, start, 'deeper brackets or macros', `at most ${deepest} of them in each other`);
   switch (lexer.kind) {
     case 'number': {
+      const plain = lexer.plainNumber;
+      if (plain >= 0) {
+        lexer.next();
+        return { value: plain, isHighCharacter: false };
+      }
       const read = cInteger(lexer.word);
       if ('fault' in read)
         refuseAt(text, start, `${quoted(text, start, end)}, ${read.fault},`, literalsAllowed);

@@ -70,11 +70,11 @@ export function oldTableOf({ values, isSigned, wordBits }: CodeArray): OldTable 
     const [from, to] = isSigned ? [-(2 ** (bits - 1)), 2 ** (bits - 1) - 1] : [0, 2 ** bits - 1];
     return lowest / step >= from && highest / step <= to;
   };
-  while (!fits()) bits += 1;
+  while (bits <= limits.bits.max && !fits()) bits += 1;
   if (bits > limits.bits.max) {
     throw new Refusal({
       path: 'array',
-      value: `entries of ${bits} bits`,
+      value: `entries of ${bits} bits or more`,
       allowed: `at most ${limits.bits.max} bits`,
     });
   }

@@ -1,4 +1,4 @@
-import { avrInstruction, CPU } from 'avr8js';
+import { avrInstruction, AVRTimer, CPU, timer1Config } from 'avr8js';
 import type { AvrPart } from './compilers.ts';
 
 /** One write to an I/O register, in the order they happened. */
@@ -13,6 +13,23 @@ export interface RegisterWrite {
 /** I/O registers begin behind the 32 general ones; avr8js keeps 256 bytes for both, RAM's first bytes included. */
 const registerSpace = 0x100;
 
+/** What a run of a program came to. */
+export interface SimulatedRun {
+  readonly writes: readonly RegisterWrite[];
+  /** Cycles of each pass of the timer's handler, from the processor's response to the end of the return. */
+  readonly handlerCycles: readonly number[];
+  /** Cycles from the response to the first write of a port in it. */
+  readonly writeDelays: readonly number[];
+}
+
+/** Names that a part's timer 1 is known by, for `avrValues`. */
+export const timerNames = [
+  ...['TIFR', 'OCR1A', 'OCR1B', 'ICR1', 'TCNT1', 'TCCR1A', 'TCCR1B', 'TCCR1C', 'TIMSK'],
+  ...['TOV1', 'OCF1A', 'OCF1B', 'TOIE1', 'OCIE1A', 'OCIE1B', 'TIMER1_COMPA_vect_num'],
+];
+
+const returnFromInterrupt = 0x9518;
+
 /**
  * Runs a program instruction by instruction (package avr8js) from reset until its ports were written so many times.
  *
@@ -24,25 +41,87 @@ export function portWrites(
   wantedPortWrites: number,
   cycleLimit = 10_000_000,
 ): RegisterWrite[] {
+  return [...simulate(program, part, { wantedPortWrites, cycleLimit }).writes];
+}
+
+/** The same with the part's timer 1, by its names' values, where the program waits for its interrupt. */
+export function simulate(
+  program: Uint8Array,
+  part: AvrPart,
+  wanted: {
+    readonly wantedPortWrites: number;
+    readonly cycleLimit?: number;
+    readonly timer?: Readonly<Record<string, number>>;
+  },
+): SimulatedRun {
+  const { wantedPortWrites, cycleLimit = 10_000_000, timer } = wanted;
   if (program.length > part.flashEnd + 1)
     throw new Error(`${program.length} bytes do not fit the part's memory.`);
   const memory = new Uint8Array(part.flashEnd + 1).fill(0xff);
   memory.set(program);
   const cpu = new CPU(new Uint16Array(memory.buffer), part.ramEnd + 1 - registerSpace);
+  const vector = timer && addTimer(cpu, timer);
   const writes: RegisterWrite[] = [];
+  const handlerCycles: number[] = [];
+  const writeDelays: number[] = [];
   let portWriteCount = 0;
+  let responseAt: number | undefined;
+  let hasWritten = false;
   for (const [letter, { port, ddr }] of Object.entries(part.ports)) {
     cpu.writeHooks[port] = (value) => {
       portWriteCount += 1;
       writes.push({ register: `PORT${letter}`, value, cycle: cpu.cycles });
+      if (responseAt !== undefined && !hasWritten) writeDelays.push(cpu.cycles - responseAt);
+      hasWritten = true;
     };
     cpu.writeHooks[ddr] = (value) => void writes.push({ register: `DDR${letter}`, value, cycle: cpu.cycles });
   }
   while (portWriteCount < wantedPortWrites) {
     if (cpu.cycles > cycleLimit)
       throw new Error(`Only ${portWriteCount} port writes in ${cycleLimit} cycles.`);
+    const isReturn = cpu.progMem[cpu.pc] === returnFromInterrupt;
     avrInstruction(cpu);
+    if (isReturn && responseAt !== undefined) {
+      handlerCycles.push(cpu.cycles - responseAt);
+      responseAt = undefined;
+    }
+    const before = cpu.cycles;
     cpu.tick();
+    if (cpu.pc === vector && responseAt === undefined) {
+      responseAt = before;
+      hasWritten = false;
+    }
   }
-  return writes;
+  return { writes, handlerCycles, writeDelays };
+}
+
+/** Timer 1 at a part's own addresses. @returns the address of its compare A interrupt */
+function addTimer(cpu: CPU, at: Readonly<Record<string, number>>): number {
+  const vector = at.TIMER1_COMPA_vect_num;
+  new AVRTimer(cpu, {
+    ...timer1Config,
+    compAInterrupt: vector,
+    TIFR: at.TIFR,
+    OCRA: at.OCR1A,
+    OCRB: at.OCR1B,
+    OCRC: 0,
+    ICR: at.ICR1,
+    TCNT: at.TCNT1,
+    TCCRA: at.TCCR1A,
+    TCCRB: at.TCCR1B,
+    TCCRC: at.TCCR1C,
+    TIMSK: at.TIMSK,
+    TOV: 1 << at.TOV1,
+    OCFA: 1 << at.OCF1A,
+    OCFB: 1 << at.OCF1B,
+    OCFC: 0,
+    TOIE: 1 << at.TOIE1,
+    OCIEA: 1 << at.OCIE1A,
+    OCIEB: 1 << at.OCIE1B,
+    OCIEC: 0,
+    compPortA: 0,
+    compPortB: 0,
+    compPortC: 0,
+  });
+  return vector;
 }

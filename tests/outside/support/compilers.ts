@@ -105,10 +105,22 @@ export interface AvrPart {
   readonly flashEnd: number;
 }
 
-/** Addresses of a part as avr-libc's header for it has them: preprocessor and compiler work them out, nobody copies. */
-export function avrPart(mcu: string, ports: readonly string[]): Promise<AvrPart> {
-  const wanted = ['RAMEND', 'FLASHEND', ...ports.flatMap((port) => [`PORT${port}`, `DDR${port}`])];
-  const marked = wanted.map((name) => `stepwell_wants ${name}`);
+/** Addresses of a part as avr-libc's header for it has them. */
+export async function avrPart(mcu: string, ports: readonly string[]): Promise<AvrPart> {
+  const names = ports.flatMap((port) => [`PORT${port}`, `DDR${port}`]);
+  const values = await avrValues(mcu, ['RAMEND', 'FLASHEND', ...names]);
+  return {
+    ramEnd: values.RAMEND,
+    flashEnd: values.FLASHEND,
+    ports: Object.fromEntries(
+      ports.map((port) => [port, { port: values[`PORT${port}`], ddr: values[`DDR${port}`] }]),
+    ),
+  };
+}
+
+/** Values of macros of avr-libc's header for a part: preprocessor and compiler work them out, nobody copies. */
+export function avrValues(mcu: string, names: readonly string[]): Promise<Record<string, number>> {
+  const marked = names.map((name) => `stepwell_wants ${name}`);
   // With this, as sfr_defs.h says, register names are plain constants: their addresses in data space.
   const probe = [
     '#define _SFR_ASM_COMPAT 1',
@@ -127,13 +139,7 @@ export function avrPart(mcu: string, ports: readonly string[]): Promise<AvrPart>
       `#include <stdio.h>\nint main(void) { ${lines.join(' ')} return 0; }\n`,
     );
     await run('gcc', ['values.c', '-o', 'values'], folder);
-    const [ramEnd, flashEnd, ...addresses] = numbersIn(await run('./values', [], folder));
-    return {
-      ramEnd,
-      flashEnd,
-      ports: Object.fromEntries(
-        ports.map((port, index) => [port, { port: addresses[2 * index], ddr: addresses[2 * index + 1] }]),
-      ),
-    };
+    const values = numbersIn(await run('./values', [], folder));
+    return Object.fromEntries(names.map((name, index) => [name, values[index]]));
   });
 }
