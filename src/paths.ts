@@ -11,6 +11,7 @@ export const paths = {
   anyReviews: '/reviews',
   anyTeam: '/team',
   newTeam: '/new-team',
+  audit: '/teams/:team/audit',
   team: '/teams/:team',
   tables: '/teams/:team/tables',
   table: '/teams/:team/tables/:table',
@@ -30,6 +31,7 @@ export const paths = {
   resetPassword: '/reset-password',
   confirmAddress: '/confirm-address',
   invitation: '/invitation',
+  unsubscribe: '/unsubscribe',
 
   mailbox: '/mailbox',
   /** `/api` itself belongs to the server. */
@@ -57,6 +59,8 @@ export const comparePath = (team: string, a?: string, b?: string) => {
   const query = [a && `a=${a}`, b && `b=${b}`].filter(Boolean).join('&');
   return `${teamPath(team)}/compare${query && `?${query}`}`;
 };
+
+export const auditPath = (team: string) => `${teamPath(team)}/audit`;
 
 /** The sign-in page, which goes on to `to`. */
 export const signInPath = (to: string) => `${paths.signIn}?${new URLSearchParams({ to })}`;

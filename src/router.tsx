@@ -113,6 +113,16 @@ function libraryRoutes(queryClient: QueryClient): RouteObject[] {
       },
     },
     {
+      path: paths.audit,
+      lazy: async () => {
+        const [{ AuditPage, auditLoader }, ErrorBoundary] = await Promise.all([
+          import('./features/audit/audit-page.tsx'),
+          placeFault(),
+        ]);
+        return { Component: AuditPage, loader: auditLoader(queryClient), ErrorBoundary };
+      },
+    },
+    {
       path: paths.newTeam,
       lazy: async () => ({ Component: (await import('./features/team/new-team-page.tsx')).NewTeamPage }),
     },
@@ -207,6 +217,12 @@ function accountRoutes(): RouteObject[] {
       path: paths.invitation,
       lazy: async () => ({
         Component: (await import('./features/account/invitation-page.tsx')).InvitationPage,
+      }),
+    },
+    {
+      path: paths.unsubscribe,
+      lazy: async () => ({
+        Component: (await import('./features/account/unsubscribe-page.tsx')).UnsubscribePage,
       }),
     },
   ];

@@ -1,4 +1,5 @@
 import { eq } from 'drizzle-orm';
+import type { AuditAction } from '../../shared/contract/index.ts';
 import type { Executor } from '../db/client.ts';
 import { auditEvents, auditHeads } from '../db/schema/index.ts';
 import { macOf, type AuditKey } from './mac.ts';
@@ -6,8 +7,7 @@ import { macOf, type AuditKey } from './mac.ts';
 export interface AuditEntry {
   readonly teamId: number;
   readonly actor: { readonly id: number; readonly name: string };
-  /** What was done, as `table.created`, `member.role-changed`. */
-  readonly action: string;
+  readonly action: AuditAction;
   /** What it was done to, as `table:fog-signal`, `member:17`. */
   readonly subject: string;
   /** What changed, as plain JSON; no secrets. */

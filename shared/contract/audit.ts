@@ -5,6 +5,33 @@ import { wholeNumberText } from './library.ts';
 const dayError = 'a day, as 2026-03-31';
 const actionError = 'an action, as revision.vetted, or its beginning, as revision.';
 
+/** What is noted of a team, every kind of it; a new one needs its words on the audit page. */
+export const auditActions = [
+  'team.created',
+  'team.changed',
+  'member.invited',
+  'member.joined',
+  'member.role-changed',
+  'member.left',
+  'member.removed',
+  'invitation.withdrawn',
+  'table.created',
+  'table.changed',
+  'table.duplicated',
+  'table.archived',
+  'table.restored',
+  'revision.saved',
+  'revision.submitted',
+  'revision.vetted',
+  'revision.returned',
+  'revision.withdrawn',
+  'comment.added',
+  'limits.created',
+  'limits.changed',
+  'limits.deleted',
+] as const;
+export type AuditAction = (typeof auditActions)[number];
+
 /** All filters hold together. Days are UTC, both included. */
 export const auditFiltersSchema = z.strictObject({
   /** Id of the member who did it. */
@@ -39,6 +66,7 @@ export const auditEventSchema = z.strictObject({
   sequence: z.int(),
   at: momentField,
   actor: z.strictObject({ id: z.int(), name: z.string() }),
+  /** One of `auditActions`, or one of another version of the program. */
   action: z.string(),
   subject: z.string(),
   details: z.record(z.string(), z.unknown()),

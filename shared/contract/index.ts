@@ -16,6 +16,7 @@ export * from './accounts.ts';
 export * from './fields.ts';
 export * from './library.ts';
 export * from './mailbox.ts';
+export * from './originals.ts';
 export * from './teams.ts';
 export * from './rendering.ts';
 export * from './audit.ts';

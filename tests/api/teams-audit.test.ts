@@ -59,7 +59,7 @@ describe('the chain of audit events', () => {
     await append();
     await expect(
       test.database.db.transaction(async (transaction) => {
-        await appendEvent(transaction, key, { teamId: team.id, actor: admin, action: 'x', subject: 'y' });
+        await appendEvent(transaction, key, { teamId: team.id, actor: admin, action: 'table.created', subject: 'y' });
         throw new Error('after all not');
       }),
     ).rejects.toThrow('after all not');
@@ -111,7 +111,7 @@ describe('the chain of audit events', () => {
       appendEvent(transaction, deriveAuditKey('another secret of enough letters'), {
         teamId: team.id,
         actor: admin,
-        action: 'table.vetted',
+        action: 'revision.vetted',
         subject: 'table:fog-signal',
       }),
     );

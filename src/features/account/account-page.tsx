@@ -5,6 +5,7 @@ import { WithAccount } from '../../forms/with-account.tsx';
 import { AddressPanel } from './address-panel.tsx';
 import { DeletePanel } from './delete-panel.tsx';
 import { NamePanel } from './name-panel.tsx';
+import { NoticesPanel } from './notices-panel.tsx';
 import { PasswordPanel } from './password-panel.tsx';
 import { SessionsPanel } from './sessions-panel.tsx';
 import { TeamsPanel } from './teams-panel.tsx';
@@ -26,6 +27,7 @@ function AccountParts({ account }: { account: Account }) {
         <TeamsPanel memberships={account.memberships} />
         <AddressPanel email={account.email} />
         <PasswordPanel email={account.email} />
+        <NoticesPanel />
       </div>
       <SessionsPanel />
       <DeletePanel account={account} />
