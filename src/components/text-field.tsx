@@ -14,7 +14,7 @@ export interface TextFieldProps {
   /** Code and identifiers: the mono face, no spelling marks. */
   isCode?: boolean;
   isReadOnly?: boolean;
-  type?: 'text' | 'email' | 'password' | 'search' | 'url';
+  type?: 'text' | 'email' | 'password' | 'search' | 'url' | 'date';
   autoComplete?: string;
   placeholder?: string;
   aside?: ReactNode;

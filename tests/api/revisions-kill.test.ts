@@ -1,8 +1,6 @@
-import { spawn, type ChildProcess } from 'node:child_process';
 import { mkdtempSync, rmSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
-import { setTimeout as delay } from 'node:timers/promises';
 import { asc, eq } from 'drizzle-orm';
 import { afterAll, beforeAll, expect, it } from 'vitest';
 import { verifyChain } from '../../server/audit/verify-chain.ts';
@@ -16,6 +14,7 @@ import { holdDatabase, type HeldDatabase } from '../../server/setup/database.mjs
 import { withLock } from '../../server/setup/lock.mjs';
 import type { Definition, LibraryTable } from '../../shared/contract/index.ts';
 import { digestOf } from '../../shared/firmware/index.ts';
+import { killableApp, type KillableApp } from '../support/killable-app.ts';
 import { sineDefinition } from '../support/library.ts';
 import { makePerson, makeTeam, type TestPerson, type TestTeam } from '../support/people.ts';
 import { testSecret } from '../support/test-app.ts';
@@ -27,8 +26,7 @@ const savesOfEach = 50;
 let folder: string;
 let server: HeldDatabase;
 let database: OpenDatabase;
-let app: ChildProcess;
-let address: string;
+let app: KillableApp;
 let url: string;
 let person: TestPerson;
 let team: TestTeam;
@@ -40,46 +38,18 @@ beforeAll(async () => {
   folder = mkdtempSync(join(tmpdir(), 'stepwell-kill-'));
   server = await holdDatabase(join(folder, 'mariadb'));
   url = server.urlOf('stepwell_test_kill');
-  await startServer();
+  app = killableApp(url);
+  await app.start();
   database = openDatabase(url);
   person = await makePerson({ database });
   team = await makeTeam({ database }, [{ person, role: 'author' }]);
 });
 afterAll(async () => {
   await database.close();
-  app.kill('SIGKILL');
+  await app.kill();
   await server.release();
   rmSync(folder, { recursive: true, force: true });
 });
-
-/** The built application, as `npm start` runs it; its port is another one each time. */
-async function startServer(): Promise<void> {
-  app = spawn(process.execPath, [join(projectFolder, 'dist', 'server', 'main.js')], {
-    cwd: projectFolder,
-    env: {
-      ...process.env,
-      DATABASE_URL: '',
-      PRIVATE_DATABASE_URL: url,
-      AUTH_SECRET: testSecret,
-      HOST: '127.0.0.1',
-      PORT: '0',
-      LOG_LEVEL: 'silent',
-      DEMO_FILE: '',
-    },
-    stdio: ['ignore', 'ignore', 'inherit', 'ipc'],
-  });
-  const told = new Promise<{ address: string }>((resolve, reject) => {
-    app.once('message', (message) => resolve(message as { address: string }));
-    app.once('exit', () => reject(new Error('The application did not start.')));
-  });
-  ({ address } = await told);
-}
-
-async function killServer(): Promise<void> {
-  const gone = new Promise((resolve) => app.once('exit', resolve));
-  app.kill('SIGKILL');
-  await gone;
-}
 
 /** The holder of the database starts it again. */
 async function killDatabase(): Promise<void> {
@@ -89,24 +59,10 @@ async function killDatabase(): Promise<void> {
   await waitUntil('another database process', () => server.pid() !== undefined && server.pid() !== pid);
 }
 
-/** Sends the same request, under the same key, until it is answered: as a client does that loses nothing. */
 async function insist(path: string, body: object, headers: Record<string, string>): Promise<LibraryTable> {
-  for (;;) {
-    try {
-      const response = await fetch(`${address}/api/v1/teams/${team.slug}/tables${path}`, {
-        method: 'POST',
-        body: JSON.stringify(body),
-        headers: { 'Content-Type': 'application/json', Origin: address, Cookie: person.cookie, ...headers },
-      });
-      if (response.status === 201) return (await response.json()) as LibraryTable;
-      // What went down in the middle of a request is 500 or 503; anything else would be a wrong answer.
-      if (response.status < 500)
-        throw new Error(`${response.status} ${await response.text()}`, { cause: 'wrong' });
-    } catch (error) {
-      if (error instanceof Error && error.cause === 'wrong') throw error;
-    }
-    await delay(50);
-  }
+  const answer = await app.insist(person, `/teams/${team.slug}/tables${path}`, body, headers);
+  expect(answer.status, JSON.stringify(answer.body)).toBe(201);
+  return answer.body as LibraryTable;
 }
 
 it(
@@ -139,11 +95,11 @@ it(
       await reach(40);
       await killDatabase();
       await reach(90);
-      await killServer();
-      await startServer();
+      await app.kill();
+      await app.start();
       await reach(140);
-      await Promise.all([killDatabase(), killServer()]);
-      await startServer();
+      await Promise.all([killDatabase(), app.kill()]);
+      await app.start();
     }
     await Promise.all([...Array.from({ length: savers }, (_, saver) => saveAll(saver)), disturb()]);
     expect(acknowledged).toHaveLength(savers * savesOfEach);

@@ -30,6 +30,12 @@ describe('array names', () => {
     ['class', 'no keyword of C or C++'],
     ['co_await', 'no keyword of C or C++'],
     ['constexpr', 'no keyword of C or C++'],
+    ['loop', 'no keyword of Rust'],
+    ['impl', 'no keyword of Rust'],
+    ['Self', 'no keyword of Rust'],
+    ['lambda', 'no keyword of Python'],
+    ['pass', 'no keyword of Python'],
+    ['None', 'no keyword of Python'],
     ['uint8_t', '<stdint.h> does not use'],
     ['int_least16_t', '<stdint.h> does not use'],
     ['INT8_MAX', '<stdint.h> does not use'],
@@ -47,7 +53,7 @@ describe('array names', () => {
   it('takes the longest name, all of whose offspring keep to 63 significant characters (C17 §5.2.4.1)', () => {
     const longest = 'x'.repeat(arrayNameLength.max);
     expect(arrayNameFault(longest)).toBeUndefined();
-    expect(`${longest}_MAX_WORD`).toHaveLength(63);
+    expect(`${longest}_STEP_FOR_MILLIHZ`).toHaveLength(63);
   });
 
   it.each([
@@ -74,7 +80,8 @@ describe('text made inert', () => {
     ['*/', '* /'],
     ['/*', '/ *'],
     ['/*/', '/ * /'],
-    ['**//**', '** // **'],
+    ['**//**', '** / / **'],
+    ['see http://x', 'see http:/ /x'],
     ['??/', '? ?/'],
     ['???', '? ? ?'],
     ['C:\\tone', 'C:/tone'],

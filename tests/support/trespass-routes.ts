@@ -55,6 +55,20 @@ export async function freshInvitation({ test, team, admin }: Target): Promise<nu
   return response.body.id;
 }
 
+const asFile = { 'Content-Type': 'application/octet-stream' };
+
+/** A new original of a new table's first revision; answers its address. */
+async function freshOriginal(target: Target): Promise<string> {
+  const { test, team, admin } = target;
+  const path = `/teams/${team.slug}/tables/${await freshTable(target)}/revisions/1/originals`;
+  const response = await asPerson(test, admin)
+    .post(`${path}?name=old.csv`)
+    .set(asFile)
+    .send(Buffer.from('1\n2\n3\n'));
+  if (response.status !== 201) throw new Error(response.text);
+  return `${path}/${response.body.id}`;
+}
+
 const noToken = () => ({ token: randomBytes(32).toString('base64url') });
 
 const always =
@@ -180,6 +194,22 @@ export const routeCases: Readonly<Record<string, RouteCase>> = {
       headers: seen,
       status: 204,
     }),
+  },
+  'GET /teams/:team/tables/:table/revisions/:number/originals': {
+    access: 'viewer',
+    attempt: ofTable(200, '/revisions/1/originals'),
+  },
+  'POST /teams/:team/tables/:table/revisions/:number/originals': {
+    access: 'author',
+    attempt: ofTable(201, '/revisions/1/originals?name=old.csv', Buffer.from('1\n2\n3\n'), asFile),
+  },
+  'GET /teams/:team/tables/:table/revisions/:number/originals/:id': {
+    access: 'viewer',
+    attempt: async (target) => ({ path: await freshOriginal(target), status: 200 }),
+  },
+  'DELETE /teams/:team/tables/:table/revisions/:number/originals/:id': {
+    access: 'admin',
+    attempt: async (target) => ({ path: await freshOriginal(target), status: 204 }),
   },
   'GET /teams/:team/tags': { access: 'viewer', attempt: inTeam(200, '/tags') },
 

@@ -7,7 +7,7 @@ import {
   type LimitSet,
   type VettingLimits,
 } from '../../../shared/contract/index.ts';
-import { appendEvent } from '../../audit/append-event.ts';
+import { appendEvent, type AuditEntry } from '../../audit/append-event.ts';
 import { lockTeam } from '../../auth/team-lock.ts';
 import type { TeamScope } from '../../auth/team-scope.ts';
 import type { Executor } from '../../db/client.ts';
@@ -91,7 +91,7 @@ const isSame = (one: VettingLimits, other: VettingLimits) => JSON.stringify(one)
 
 const note = (
   { transaction, auditKey, scope }: Command,
-  action: string,
+  action: AuditEntry['action'],
   tag: string | null,
   details: Readonly<Record<string, unknown>>,
 ) =>

@@ -10,7 +10,7 @@ import type {
   WithdrawRevision,
 } from '../../../shared/contract/index.ts';
 import { showValue } from '../../../shared/contract/index.ts';
-import { appendEvent } from '../../audit/append-event.ts';
+import { appendEvent, type AuditEntry } from '../../audit/append-event.ts';
 import type { AuditKey } from '../../audit/mac.ts';
 import { holdTeam } from '../../auth/team-lock.ts';
 import type { TeamScope } from '../../auth/team-scope.ts';
@@ -191,7 +191,7 @@ async function concluded(
   { transaction, auditKey, scope, tell, slug, number }: Command,
   asker: Asker,
   sets: readonly LimitSet[],
-  { action, details, notice }: { action: string; details: object; notice: NoticeOf<Notice> },
+  { action, details, notice }: { action: AuditEntry['action']; details: object; notice: NoticeOf<Notice> },
 ): Promise<Review> {
   const row = await findReview(transaction, { teamId: scope.teamId, slug, number });
   if (!row) throw noRevision(slug, number);

@@ -8,7 +8,7 @@ import { teamQueries } from '../../api/teams.ts';
 import { Page } from '../../components/index.ts';
 import { load } from '../../forms/load.ts';
 import { sayRole } from '../../forms/say-role.ts';
-import { tablesPath } from '../../paths.ts';
+import { auditPath, tablesPath } from '../../paths.ts';
 import { DefaultsPanel } from './defaults-panel.tsx';
 import { InvitationsPanel } from './invitations-panel.tsx';
 import { LimitsPanel } from './limits-panel.tsx';
@@ -46,9 +46,16 @@ function TeamParts({ slug }: { slug: string }) {
         </p>
       }
       actions={
-        <Link to={tablesPath(slug)} className="button button-plain">
-          Tables
-        </Link>
+        <>
+          {includesRole(team.myRole, 'reviewer') && (
+            <Link to={auditPath(slug)} className="button button-plain">
+              Audit trail
+            </Link>
+          )}
+          <Link to={tablesPath(slug)} className="button button-plain">
+            Tables
+          </Link>
+        </>
       }
     >
       <MembersPanel team={slug} isAdmin={isAdmin} ownId={account?.id} />

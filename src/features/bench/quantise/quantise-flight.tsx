@@ -1,5 +1,6 @@
 import './quantise.css';
 import type { TableSettings } from '../../../../shared/contract/index.ts';
+import { FindSmallest } from '../size-search/index.ts';
 import { useDefinition } from '../state/use-bench.ts';
 import { later } from '../view/later.tsx';
 import { Recess } from '../view/recess.tsx';
@@ -26,7 +27,10 @@ export function QuantiseFlight() {
   const table = useDefinition((definition) => definition.table);
   return (
     <div className="space-y-5">
-      <TableFields />
+      <div className="space-y-3">
+        <TableFields />
+        <FindSmallest />
+      </div>
       <LevelFields />
       <CodeFields />
       <div className="recesses">

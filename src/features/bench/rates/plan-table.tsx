@@ -72,7 +72,7 @@ export function PlanTable({ plans, isChosen, onChoose }: PlanTableProps) {
           );
         })}
       </tbody>
-      {plans[0]?.toleranceCents != null && (
+      {plans.length > 0 && plans[0].toleranceCents !== null && (
         <tfoot>
           <tr>
             <td colSpan={4}>

@@ -25,9 +25,9 @@ const shownAtFirst = 6;
 const mostPlans = 48;
 
 const widths: readonly SelectOption<RateWishes['compareBits']>[] = [
-  { value: '8', label: '8 bits' },
-  { value: '16', label: '16 bits' },
-  { value: '32', label: '32 bits' },
+  { value: '8', label: '8' },
+  { value: '16', label: '16' },
+  { value: '32', label: '32' },
 ];
 
 const lengthChoices: readonly SelectOption<RateWishes['lengths']>[] = [
@@ -78,7 +78,7 @@ export function RatesPanel() {
           problem={'fault' in prescalers ? prescalers.fault : undefined}
         />
         <ChoiceField
-          label="Compare register"
+          label="Compare register, bits"
           options={widths}
           value={wishes.compareBits}
           onChange={(compareBits) => wish({ compareBits })}

@@ -1,4 +1,4 @@
-import { z } from 'zod';
+import type { z } from 'zod';
 import { targets } from '../../../../shared/firmware/index.ts';
 import { outputHz } from '../../../../shared/playback/index.ts';
 import { sampleRateOf, timerOf, type Work } from '../state/wave.ts';

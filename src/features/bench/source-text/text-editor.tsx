@@ -1,6 +1,6 @@
 import './source-text.css';
 import { json } from '@codemirror/lang-json';
-import { lintGutter, setDiagnostics } from '@codemirror/lint';
+import { setDiagnostics } from '@codemirror/lint';
 import { EditorView } from '@codemirror/view';
 import CodeMirror from '@uiw/react-codemirror';
 import { useEffect, useMemo } from 'react';
@@ -17,13 +17,18 @@ const mostListed = 5;
 
 const extensions = () => [
   json(),
-  lintGutter(),
   EditorView.contentAttributes.of({ 'aria-label': 'Definition as JSON', spellcheck: 'false' }),
   EditorView.lineWrapping,
   codeLook(),
 ];
 
-const setup = { drawSelection: false, foldGutter: false, autocompletion: false, highlightActiveLine: false };
+const setup = {
+  drawSelection: false,
+  foldGutter: false,
+  autocompletion: false,
+  highlightActiveLine: false,
+  highlightActiveLineGutter: false,
+};
 
 /** The whole definition as the command line and the API take it, to be read, typed and pasted. */
 export function TextEditor() {

@@ -1,3 +1,4 @@
+import './recess.css';
 import { useCallback, type ReactNode } from 'react';
 import { useSearchParams } from 'react-router-dom';
 import { icons } from '../../../components/index.ts';

@@ -136,7 +136,7 @@ function say({ decimals }: Row, value: number | null): string {
   if (value === null) return '–';
   if (!Number.isFinite(value)) return 'exact';
   const shown = Math.abs(value) < leastShown ? 0 : value;
-  return formatQuantity(shown, '', decimals === undefined ? { significant: 4 } : { decimals });
+  return formatQuantity(shown, '', decimals === undefined ? { significant: 3 } : { decimals });
 }
 
 function sayDifference(row: Row, before: number | null, after: number | null): string {

@@ -1,0 +1,1 @@
+export { FindSmallest } from './find-smallest.tsx';
