@@ -5,6 +5,7 @@ import { readSignIn } from './auth/sign-in-state.ts';
 import type { Feature, ServerDeps } from './feature.ts';
 import { account } from './features/account/routes.ts';
 import { audit } from './features/audit/routes.ts';
+import { boards } from './features/boards/routes.ts';
 import { health } from './features/health/routes.ts';
 import { invitations } from './features/invitations/routes.ts';
 import { limitSets } from './features/limit-sets/routes.ts';
@@ -32,6 +33,7 @@ import { cspNonce, securityHeaders } from './http/security-headers.ts';
 /** Every resource of the API, the most asked for first: a request goes through their routes in this order. */
 const features: readonly Feature[] = [
   tables,
+  boards,
   reviews,
   uploads,
   health,
@@ -76,8 +78,16 @@ export function buildApp(deps: AppDeps): Express {
   app.use('/auth', noStore, ...known, ...authRoutes(deps));
   const routers = buildRouters(deps);
   app.use('/api/v1/notices/unsubscribe', formBody);
-  app.use('/api/v1/teams/:team/tables/:table/revisions/:number/originals', originGate(origins), fileBody);
-  app.use('/api/v1', noStore, originGate(origins), ...known, jsonBody, ...routers, noSuchRoute(routers));
+  app.use(
+    '/api/v1',
+    noStore,
+    originGate(origins),
+    ...known,
+    fileBody,
+    jsonBody,
+    ...routers,
+    noSuchRoute(routers),
+  );
   app.use('/api', nothingHere);
 
   app.use(deps.client);

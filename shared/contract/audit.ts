@@ -26,9 +26,16 @@ export const auditActions = [
   'revision.returned',
   'revision.withdrawn',
   'comment.added',
+  'original.kept',
+  'original.removed',
   'limits.created',
   'limits.changed',
   'limits.deleted',
+  'board.created',
+  'board.revised',
+  'board.copied',
+  'board.retired',
+  'board.restored',
 ] as const;
 export type AuditAction = (typeof auditActions)[number];
 

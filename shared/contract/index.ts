@@ -42,3 +42,4 @@ export {
   type TrialSettings,
   type TrialSettingsInput,
 } from './trials.ts';
+export * from './boards.ts';

@@ -20,6 +20,7 @@ export const limits = {
   /** Different words that one search of the library may look for. */
   searchWords: 8,
   revisionsPerTable: 10_000,
+  revisionsPerBoard: 1_000,
   /** Largest request body the server reads, in bytes. */
   requestBytes: 8 * 1024 * 1024,
 } as const;

@@ -27,6 +27,7 @@ export const teamLimits = {
   members: 200,
   openInvitations: 100,
   tables: 200_000,
+  boards: 1_000,
 } as const;
 
 const wholeNumber = ({ min, max }: { readonly min: number; readonly max: number }) => {

@@ -18,7 +18,15 @@ import { wordTypeOf } from './word-type.ts';
 /** Playback in portable C: which entry is next, without anything of a processor. */
 const portablePlaybacks = ['none', 'timer', 'timer-accumulator', 'two-accumulators', 'once', 'dma'] as const;
 
-const allPlaybacks = ['none', 'loop', 'timer', 'timer-accumulator', 'two-accumulators', 'once', 'dma'] as const;
+const allPlaybacks = [
+  'none',
+  'loop',
+  'timer',
+  'timer-accumulator',
+  'two-accumulators',
+  'once',
+  'dma',
+] as const;
 type CPlayback = (typeof allPlaybacks)[number];
 
 const dmaBitsOption = wordOption(['8', '16', '32'])
@@ -98,10 +106,7 @@ export function layOutForC(table: ExportableTable, given: SharedOptions): Layout
 }
 
 /** Header and source, and what plays them where that is asked for. */
-export function cFiles(
-  folder: 'c99' | 'cortex-m' | 'riscv',
-  input: ExportInput<COptions>,
-): TargetFile[] {
+export function cFiles(folder: 'c99' | 'cortex-m' | 'riscv', input: ExportInput<COptions>): TargetFile[] {
   const { options } = input;
   const facts: Facts = { ...alignmentFacts(options), ...playbackFacts(input) };
   const hasCode = options.playback !== 'none' && options.playback !== 'dma';
@@ -127,7 +132,11 @@ function playbackFacts({ table, layout, options }: ExportInput<COptions>): Facts
   }
   const isTwo = playback === 'two-accumulators';
   if (isTwo && layout.map !== undefined) {
-    refuse('options.portMap', options.portMap, 'nothing with options.playback "two-accumulators": sums have no map');
+    refuse(
+      'options.portMap',
+      options.portMap,
+      'nothing with options.playback "two-accumulators": sums have no map',
+    );
   }
   const entries = playback === 'once' ? table.stored.length : length;
   return {
@@ -143,9 +152,7 @@ function playbackFacts({ table, layout, options }: ExportInput<COptions>): Facts
     clockHz: options.clockHz,
     addresses: addressesOf(layout, options),
     outputType: wordTypeOf(table.definition.table).bytes === 1 ? 'uint8_t' : 'uint16_t',
-    ...(isTwo || playback === 'timer-accumulator'
-      ? accumulatorFacts(table.definition, options, counts)
-      : {}),
+    ...(isTwo || playback === 'timer-accumulator' ? accumulatorFacts(table.definition, options, counts) : {}),
   };
 }
 

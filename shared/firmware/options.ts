@@ -60,7 +60,9 @@ export const sharedOptions = { ...nameOptions, licenceLine: licenceLineOption, l
 /** How numbers stand in a source. */
 export const numberOptions = {
   numberBase: wordOption(['decimal', 'hexadecimal']).default('decimal').describe('base of the numbers'),
-  columns: wholeNumberOption(1, 64).optional().describe('numbers in a row, 1 to 64; by their width if not given'),
+  columns: wholeNumberOption(1, 64)
+    .optional()
+    .describe('numbers in a row, 1 to 64; by their width if not given'),
 };
 
 /** Where an array lies, and on what boundary. */

@@ -58,7 +58,8 @@ export function parsePortMap(
     const [, where, rest] = /^(.*)=(low|high)$/.exec(text) ?? [];
     if (where === undefined) refuse(path, text, 'places with their rest level, as B.2=high');
     const { port, pin } = place(where, path);
-    if (!names.includes(port)) refuse(path, text, `pins of the ports of options.portMap: ${names.join(', ')}`);
+    if (!names.includes(port))
+      refuse(path, text, `pins of the ports of options.portMap: ${names.join(', ')}`);
     return { port, pin, rest: rest as 'low' | 'high' };
   });
   return {

@@ -62,6 +62,10 @@ export function renderFiles(
     const body = String(liquid.renderFileSync(file.template, { ...facts, ...file.facts }));
     // Parts that a file leaves out leave no more than one empty line.
     const text = top + body.replace(/\n{3,}/g, '\n\n');
-    return { name, text: given.lineEnding === 'crlf' ? text.replaceAll('\n', '\r\n') : text, encoding: 'utf-8' };
+    return {
+      name,
+      text: given.lineEnding === 'crlf' ? text.replaceAll('\n', '\r\n') : text,
+      encoding: 'utf-8',
+    };
   });
 }

@@ -76,8 +76,13 @@ export function sharedFacts(
 }
 
 /** What a template prints of one array. Rows are made when they are asked for: some targets write bytes. */
-function arrayFacts({ suffix, elements, bytes, signed, ports }: StoredArray, name: string, style: NumberStyle) {
-  const hex = (mask: number, digits = 2 * bytes) => `0x${mask.toString(16).toUpperCase().padStart(digits, '0')}`;
+function arrayFacts(
+  { suffix, elements, bytes, signed, ports }: StoredArray,
+  name: string,
+  style: NumberStyle,
+) {
+  const hex = (mask: number, digits = 2 * bytes) =>
+    `0x${mask.toString(16).toUpperCase().padStart(digits, '0')}`;
   const portFacts = ports.map((port) => ({
     name: port.name,
     macro: port.name.toUpperCase(),

@@ -51,3 +51,4 @@ export {
   type ResistorSeries,
 } from './standard-values.ts';
 export { markedTolerances, toleranceForYield, type ToleranceForYield } from './tolerance-for-yield.ts';
+export { boardDigestOf } from './board-digest.ts';

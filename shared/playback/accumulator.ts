@@ -80,15 +80,21 @@ const half = 2 ** 24;
 
 /**
  * Where line k of §5 is heard: `k·w mod P`, folded into 0…P/2, in units of fs/P. The step is split in two, so that
- * every product stays a whole number of a double.
+ * every product stays a whole number of a double; beyond that k is rare, and left to long integers.
  *
- * @param k a whole number below 2^28
+ * @param k a whole number up to P/2
  */
 export function binOf(k: number, { period, oddStep }: Round): number {
+  const bin =
+    k < 2 ** 28 ? turnsLeft(k, period, oddStep) : Number((BigInt(k) * BigInt(oddStep)) % BigInt(period));
+  return Math.min(bin, period - bin);
+}
+
+/** `k·w mod P` for k below 2^28. */
+function turnsLeft(k: number, period: number, oddStep: number): number {
   const high = Math.floor(oddStep / half);
   const low = oddStep - high * half;
   // A period of 24 bits or less leaves no high part.
   const highPart = high === 0 ? 0 : ((k * high) % (period / half)) * half;
-  const bin = (highPart + k * low) % period;
-  return Math.min(bin, period - bin);
+  return (highPart + k * low) % period;
 }

@@ -10,11 +10,11 @@ export interface AccumulatorLines {
   readonly amplitudes: Float64Array;
   /** k of §5: from N/2 on a line of the truncated phase. */
   readonly tableLines: Float64Array;
-  /** No line that is not listed is stronger; 0 where all are listed. */
+  /** No line that is not listed is stronger; 0 where all that there are, are listed. */
   readonly unlistedAmplitude: number;
 }
 
-/** A longer list would outgrow whole-number products (`binOf`) long after any screen. */
+/** More than any screen has columns. */
 const linesAtMost = 2 ** 16;
 
 /**
@@ -33,20 +33,17 @@ export function strongestLines(
   const lines = roundLinesOf(values, accumulator);
   const most = Math.min(limit, linesAtMost);
   const all = lines.period / 2;
-  if (all <= most)
-    return listOf(
-      Float64Array.from({ length: all }, (_, i) => i + 1),
-      lines,
-      0,
-    );
-
-  const strongestFirst = tableLinesByStrength(lines);
-  const threshold = thresholdFor(most, strongestFirst, lines);
-  const found = linesFrom(threshold, strongestFirst, lines);
+  if (all <= most) {
+    const every = Array.from({ length: all }, (_, i) => ({ k: i + 1, amplitude: amplitudeOf(i + 1, lines) }));
+    return listOf(every, lines, 0);
+  }
+  const sources = sourcesOf(lines);
+  if (sources.length === 0) return listOf([], lines, 0);
+  const threshold = thresholdFor(most, sources, lines);
+  const found = linesFrom(threshold, sources, lines).sort((a, b) => b.amplitude - a.amplitude);
   // Counting takes an arcsine, telling a sine: where they part by a line at the edge, the weakest goes.
-  const byStrength = found.sort((a, b) => amplitudeOf(b, lines) - amplitudeOf(a, lines));
-  const unlisted = byStrength.length > most ? amplitudeOf(byStrength[most], lines) : threshold;
-  return listOf(Float64Array.from(byStrength.slice(0, most)), lines, unlisted);
+  const unlisted = found.length > most ? found[most].amplitude : threshold;
+  return listOf(found.slice(0, most), lines, unlisted);
 }
 
 /** Amplitudes of the strongest listed line of each of `columns` equal parts of 0…fs/2; NaN where none is listed. */
@@ -62,70 +59,87 @@ export function strongestByColumn(
   return strongest;
 }
 
-function listOf(ks: Float64Array, lines: RoundLines, unlistedAmplitude: number): AccumulatorLines {
-  const order = Array.from(ks, (k) => ({ k, bin: binOf(k, lines) })).sort((a, b) => a.bin - b.bin);
+interface Line {
+  readonly k: number;
+  readonly amplitude: number;
+}
+
+function listOf(found: readonly Line[], lines: RoundLines, unlistedAmplitude: number): AccumulatorLines {
+  const order = found
+    .map(({ k, amplitude }) => ({ k, amplitude, bin: binOf(k, lines) }))
+    .sort((a, b) => a.bin - b.bin);
   return {
     period: lines.period,
     bins: Float64Array.from(order, ({ bin }) => bin),
-    amplitudes: Float64Array.from(order, ({ k }) => amplitudeOf(k, lines)),
+    amplitudes: Float64Array.from(order, ({ amplitude }) => amplitude),
     tableLines: Float64Array.from(order, ({ k }) => k),
     unlistedAmplitude,
   };
 }
 
-/** Table lines r = 1…base/2 by the amplitude with which they come out at k = r. */
-function tableLinesByStrength(lines: RoundLines): Uint32Array {
-  const strength = new Float64Array(lines.base / 2 + 1);
-  for (let r = 1; r < strength.length; r += 1) strength[r] = amplitudeOf(r, lines);
-  return Uint32Array.from({ length: lines.base / 2 }, (_, i) => i + 1).sort(
-    (a, b) => strength[b] - strength[a] || a - b,
-  );
+/** A table line r from which lines of the output come: the first at k = r, and its images, which only fall. */
+interface LineSource {
+  readonly r: number;
+  /** Amplitude at k = r. */
+  readonly first: number;
+  /** Amplitude at k times `sin(πk/P)`: the same for all its images. */
+  readonly scaled: number;
 }
 
-/** An amplitude that some lines, but no more than `most`, reach. */
-function thresholdFor(most: number, strongestFirst: Uint32Array, lines: RoundLines): number {
-  let high = amplitudeOf(strongestFirst[0], lines);
+/** The table lines that are there at all, the strongest first. */
+function sourcesOf(lines: RoundLines): LineSource[] {
+  const sources: LineSource[] = [];
+  for (let r = 1; r <= lines.base / 2; r += 1) {
+    const first = amplitudeOf(r, lines);
+    if (first > 0) sources.push({ r, first, scaled: first * Math.sin((Math.PI * r) / lines.period) });
+  }
+  return sources.sort((a, b) => b.first - a.first);
+}
+
+/** An amplitude that some lines, but no more than `most`, reach; found by halving its logarithm. */
+function thresholdFor(most: number, sources: readonly LineSource[], lines: RoundLines): number {
+  let high = sources[0].first;
   let low = 0;
-  // Halved as logarithms while low is unknown; 60 halvings fill a double.
   for (let turn = 0; turn < 60; turn += 1) {
     const guess = low === 0 ? high / 16 : Math.sqrt(low * high);
-    if (guess <= 1e-300) break;
-    if (countFrom(guess, most, strongestFirst, lines) <= most) high = guess;
-    else low = guess;
+    const count = countFrom(guess, most, sources, lines);
+    if (count > most) low = guess;
+    else high = guess;
+    // A list that is nearly full will do.
+    if (guess < 1e-300 || (count <= most && count >= 0.9 * most)) break;
   }
   return high;
 }
 
 /** How many lines have at least that amplitude; stops counting beyond `most`. */
-function countFrom(amplitude: number, most: number, strongestFirst: Uint32Array, lines: RoundLines): number {
+function countFrom(
+  amplitude: number,
+  most: number,
+  sources: readonly LineSource[],
+  { period, base, repeats }: RoundLines,
+): number {
   let count = 0;
-  for (const r of strongestFirst) {
-    if (amplitudeOf(r, lines) < amplitude) break;
-    const last = lastLineFrom(amplitude, r, lines);
+  for (const { r, first, scaled } of sources) {
+    if (first < amplitude || count > most) break;
+    const sine = scaled / amplitude;
+    const last =
+      repeats === 1 ? r : sine >= 1 ? period / 2 : Math.floor((period / Math.PI) * Math.asin(sine));
     // k = r, r + base, …, and k = base − r, 2·base − r, …, which for base/2 are the same.
-    count += Math.floor((last - r) / lines.base) + 1;
-    if (2 * r !== lines.base) count += Math.floor((last + r) / lines.base);
-    if (count > most) break;
+    count += Math.floor((last - r) / base) + 1;
+    if (2 * r !== base) count += Math.floor((last + r) / base);
   }
   return count;
 }
 
-/** The highest k at which an image of table line r could still have that amplitude. */
-function lastLineFrom(amplitude: number, r: number, lines: RoundLines): number {
-  const { period, base, repeats, tableAmplitudes } = lines;
-  if (repeats === 1) return r;
-  const sine = (tableAmplitudes[r] * Math.sin((Math.PI * r) / base)) / (repeats * amplitude);
-  return sine >= 1 ? period / 2 : Math.floor((period / Math.PI) * Math.asin(sine));
-}
-
-function linesFrom(amplitude: number, strongestFirst: Uint32Array, lines: RoundLines): number[] {
-  const found: number[] = [];
-  for (const r of strongestFirst) {
-    if (amplitudeOf(r, lines) < amplitude) break;
-    const steps = 2 * r === lines.base ? [r] : [r, lines.base - r];
-    for (const start of steps) {
-      for (let k = start; 2 * k <= lines.period && amplitudeOf(k, lines) >= amplitude; k += lines.base) {
-        found.push(k);
+function linesFrom(amplitude: number, sources: readonly LineSource[], lines: RoundLines): Line[] {
+  const found: Line[] = [];
+  for (const { r, first } of sources) {
+    if (first < amplitude) break;
+    for (const start of 2 * r === lines.base ? [r] : [r, lines.base - r]) {
+      for (let k = start; 2 * k <= lines.period; k += lines.base) {
+        const each = amplitudeOf(k, lines);
+        if (each < amplitude) break;
+        found.push({ k, amplitude: each });
       }
     }
   }

@@ -8,7 +8,7 @@ export function WaitingCount({ team }: { team: string }) {
   return (
     <span className="place-count">
       <span aria-hidden="true">{count > 99 ? '99+' : count}</span>
-      <span className="sr-only">, {count} waiting for you</span>
+      <span className="sr-only">{count} waiting for you</span>
     </span>
   );
 }

@@ -95,6 +95,8 @@ describe('the audit trail', () => {
     expect(seen).toEqual([6, 5, 4, 3, 2, 1]);
     expect((await get(`?limit=2&cursor=${cursor}`)).status).toBe(422);
     const other = await makeTeam(test, [{ person: crew.reviewer, role: 'reviewer' }]);
+    expect((await get('', crew.reviewer, other.slug)).body).toEqual({ items: [], nextCursor: null });
+    expect((await get(`?actor=${crew.author.id}`, crew.reviewer, other.slug)).body.items).toEqual([]);
     expect((await get(`?limit=2&to=2026-04-01&cursor=${cursor}`, crew.reviewer, other.slug)).status).toBe(
       422,
     );

@@ -146,7 +146,12 @@ describe('POST /render', () => {
   });
 
   it.each([
-    [{ ...wanted, target: 'c98' }, 'target', '"c98"', `one of ${targets.map(({ id }) => `"${id}"`).join(', ')}`],
+    [
+      { ...wanted, target: 'c98' },
+      'target',
+      '"c98"',
+      `one of ${targets.map(({ id }) => `"${id}"`).join(', ')}`,
+    ],
     [{ ...wanted, target: 7 }, 'target', '7', 'the name of a target'],
     [
       { ...wanted, options: { arrayName: '__x' } },

@@ -45,7 +45,19 @@ function rendered(definition: object, flags: readonly string[]): GeneratedFile[]
   execFileSync(process.execPath, ['--import', 'tsx', script, 'render', file, '--out', out, ...flags], {
     cwd: projectFolder,
   });
-  return readdirSync(out).map((name) => ({ name, text: readFileSync(join(out, name), 'utf8') }));
+  const isBytes = (name: string) => /\.(?:bin|wav)$/.test(name);
+  return readdirSync(out).map((name) =>
+    isBytes(name)
+      ? { name, text: readFileSync(join(out, name), 'base64'), encoding: 'base64' }
+      : { name, text: readFileSync(join(out, name), 'utf8'), encoding: 'utf-8' },
+  );
+}
+
+/** Collects an answer as the bytes that came, whatever their type. */
+function wholeBody(answer: NodeJS.ReadableStream, done: (error: Error | null, body: Buffer) => void): void {
+  const parts: Buffer[] = [];
+  answer.on('data', (part: Buffer) => parts.push(Buffer.from(part)));
+  answer.on('end', () => done(null, Buffer.concat(parts)));
 }
 
 const byName = (files: readonly GeneratedFile[]) => [...files].sort((a, b) => (a.name < b.name ? -1 : 1));
@@ -54,6 +66,8 @@ describe('the export of a saved revision', () => {
   it.each([
     ['c99', 'target=c99', ['--target', 'c99']],
     ['avr', 'target=avr&port=D&arrayName=horn', ['--target', 'avr', '--port', 'D', '--name', 'horn']],
+    ['wav', 'target=wav&sampleRateHz=8000', ['--target', 'wav', '--sample-rate-hz', '8000']],
+    ['binary', 'target=binary', ['--target', 'binary']],
   ])('has the bytes of the command line: %s', async (target, query, flags) => {
     const definition = sineDefinition('Same bytes', { bits: 8, dither: 'triangular', seed: 3 });
     const { slug } = await saveTable(test, crew.team, crew.author, `Same bytes ${target}`, { definition });
@@ -61,7 +75,7 @@ describe('the export of a saved revision', () => {
     expect(answer.status, answer.text).toBe(200);
     const { files, digest } = renderAnswerSchema.parse(answer.body);
     expect(byName(files)).toEqual(byName(rendered(definition, flags)));
-    expect(files[0].text).toContain(digest);
+    if (files[0].encoding === 'utf-8') expect(files[0].text).toContain(digest);
   });
 
   it('comes from what was stored, also where the engine would compute it otherwise today', async () => {
@@ -112,6 +126,11 @@ describe('the export of a saved revision', () => {
       expect(answer.headers.etag).not.toBe(whole.headers.etag);
       expect(answer.text).toBe(text);
     }
+    const { body } = await exported(slug, 'target=wav');
+    const [sound] = body.files as GeneratedFile[];
+    const bytes = await exported(slug, `target=wav&file=${sound.name}`).buffer().parse(wholeBody);
+    expect(bytes.headers['content-type']).toBe('application/octet-stream');
+    expect(Buffer.compare(bytes.body, Buffer.from(sound.text, 'base64'))).toBe(0);
     const missing = await exported(slug, 'target=c99&file=../../etc/passwd');
     expect([missing.status, missing.headers['content-disposition']]).toEqual([422, undefined]);
     expect(missing.body.errors).toEqual([

@@ -3,6 +3,7 @@ import { createServer, type AddressInfo } from 'node:net';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { afterEach, beforeEach, describe, expect, it } from 'vitest';
+import { stepwell } from '../support/command-line.ts';
 import { holdTestServer, makeTestDatabase } from '../support/databases.ts';
 import { processesWith, startScript, type StartScript } from '../support/start-script.ts';
 import { waitUntil } from '../support/wait-until.ts';
@@ -40,6 +41,19 @@ describe('npm start', () => {
     const page = await fetch(address);
     expect(page.headers.get('content-type')).toContain('text/html');
     expect(statSync(join(folder, 'auth-secret')).mode & 0o777).toBe(0o600);
+  });
+
+  it('has its audit trail verified by the command line, while it runs and after', async () => {
+    const verify = () => stepwell(['audit-verify'], { env: { DATABASE_URL: '', STEPWELL_DATA: folder } });
+    const script = start();
+    await script.address();
+    const during = await verify();
+    expect(during).toMatchObject({ status: 0, stderr: '' });
+    expect(during.stdout).toMatch(/^ninth-fathom: whole, \d+ events\n$/);
+    script.child.kill('SIGINT');
+    expect(await script.ended()).toBe(0);
+    expect(await verify()).toEqual(during);
+    expect(processesWith(folder)).toEqual([]);
   });
 
   it.each(['SIGINT', 'SIGTERM', 'SIGHUP'] as const)('leaves no process behind after %s', async (signal) => {

@@ -59,7 +59,12 @@ describe('the chain of audit events', () => {
     await append();
     await expect(
       test.database.db.transaction(async (transaction) => {
-        await appendEvent(transaction, key, { teamId: team.id, actor: admin, action: 'table.created', subject: 'y' });
+        await appendEvent(transaction, key, {
+          teamId: team.id,
+          actor: admin,
+          action: 'table.created',
+          subject: 'y',
+        });
         throw new Error('after all not');
       }),
     ).rejects.toThrow('after all not');
@@ -130,7 +135,10 @@ describe('the chain of audit events', () => {
       .update(auditHeads)
       .set({ lastSequence: head.lastSequence, lastMac: head.lastMac })
       .where(eq(auditHeads.teamId, other.id));
-    expect(await verifyChain(test.database.db, key, other.id)).toMatchObject({ brokenAt: 1, kind: 'foreign' });
+    expect(await verifyChain(test.database.db, key, other.id)).toMatchObject({
+      brokenAt: 1,
+      kind: 'foreign',
+    });
   });
 
   it('outlives the account of who acted', async () => {

@@ -3,6 +3,8 @@ import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { buildRouters } from '../../server/app.ts';
 import {
   auditEvents,
+  boardRevisions,
+  boards,
   comments,
   memberships,
   oneTimeLinks,
@@ -19,6 +21,7 @@ import { includesRole, type Role } from '../../shared/contract/index.ts';
 import { makeOwnTestApp, type OwnTestApp } from '../support/own-database.ts';
 import { asPerson, makeCrew, makePerson, makeSession, makeTeam, type TestPerson } from '../support/people.ts';
 import {
+  freshBoard,
   freshInvitation,
   freshLimits,
   freshMember,
@@ -34,7 +37,14 @@ let target: Target;
 /** Another team, with things of every kind, that none of ours belongs to. */
 let other: Target;
 let senders: Record<string, TestPerson | undefined>;
-let foreign: { table: string; userId: number; id: number; limitsId: number; sessionId: string };
+let foreign: {
+  table: string;
+  board: string;
+  userId: number;
+  id: number;
+  limitsId: number;
+  sessionId: string;
+};
 
 beforeAll(async () => {
   test = await makeOwnTestApp();
@@ -49,8 +59,14 @@ beforeAll(async () => {
     .update(waveTables)
     .set({ slug: table })
     .where(eq(waveTables.slug, await freshTable(other)));
+  const board = 'only-theirs';
+  await test.database.db
+    .update(boards)
+    .set({ slug: board })
+    .where(eq(boards.slug, await freshBoard(other)));
   foreign = {
     table,
+    board,
     userId: (await freshMember(other)).id,
     id: await freshInvitation(other),
     limitsId: await freshLimits(other),
@@ -137,6 +153,8 @@ async function stateOfOther() {
       .select({ id: revisions.id, state: revisions.state })
       .from(revisions)
       .where(eq(revisions.teamId, teamId)),
+    boards: await db.select().from(boards).where(eq(boards.teamId, teamId)),
+    boardRevisions: await db.select().from(boardRevisions).where(eq(boardRevisions.teamId, teamId)),
     reviews: await db.select().from(reviews).where(eq(reviews.teamId, teamId)),
     comments: await db.select().from(comments).where(eq(comments.teamId, teamId)),
     limits: await db.select().from(teamLimits).where(eq(teamLimits.teamId, teamId)),
@@ -154,7 +172,7 @@ async function stateOfOther() {
 
 describe('an admin who names another team’s things', () => {
   const named = Object.keys(routeCases).filter(
-    (route) => /:(table|userId|id)\b/.test(route) && !route.includes('mailbox'),
+    (route) => /:(table|board|userId|id)\b/.test(route) && !route.includes('mailbox'),
   );
 
   it.each(named)('is told that they do not exist: %s', async (route) => {
@@ -169,6 +187,7 @@ describe('an admin who names another team’s things', () => {
       .split(' ')[1]
       .replace(':team', target.team.slug)
       .replace(':table', foreign.table)
+      .replace(':board', foreign.board)
       .replace(':userId', String(foreign.userId))
       .replace(':id', String(id))
       .replace(':number', '1');
@@ -231,8 +250,9 @@ describe('an admin who names another team’s things', () => {
     expect((await get('/teams')).text).not.toContain(other.team.slug);
   });
 
+  // An original's body is a file and has no fields.
   const writing = Object.keys(routeCases).filter(
-    (route) => /^(POST|PATCH|PUT)/.test(route) && route.includes(':team'),
+    (route) => /^(POST|PATCH|PUT)/.test(route) && route.includes(':team') && !route.endsWith('/originals'),
   );
   it.each(writing)('cannot smuggle them into a body: %s', async (route) => {
     const before = await stateOfOther();

@@ -3,6 +3,7 @@ import { measureCommandLine } from './command-line.ts';
 import { measureDrag } from './drag.ts';
 import { measureEngine } from './engine.ts';
 import { measureFirstPage } from './first-page.ts';
+import { measureImports } from './imports.ts';
 import { measureLibrary } from './library.ts';
 import { measureOutputStage } from './output-stage.ts';
 import { measurePlayback } from './playback.ts';
@@ -20,6 +21,7 @@ const parts: Record<string, { title: string; measure: () => boolean | Promise<bo
     title: 'The search over sizes beside vectorised NumPy, and phase accumulators',
     measure: measurePlayback,
   },
+  imports: { title: 'What is brought in', measure: measureImports },
   cli: { title: 'The command line', measure: measureCommandLine },
   bench: {
     title: 'The bench in Chromium',

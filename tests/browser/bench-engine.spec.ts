@@ -1,5 +1,7 @@
+import AxeBuilder from '@axe-core/playwright';
 import { expect } from '@playwright/test';
 import { field, figure, flight, problems, test } from '../support/bench-page.ts';
+import { beginWithTeam } from '../support/library-page.ts';
 
 test('noise, storage and measured levels open in place, are refused with the way out, and undone', async ({
   page,
@@ -160,3 +162,128 @@ test('the definition as JSON goes both ways, says line and column, and loses not
   await text.press('Control+z');
   await expect(text).toContainText('"name" "Typed"');
 });
+
+test('a note’s timer values chosen from the ranked list reach the export, with the step word beside', async ({
+  page,
+}) => {
+  await page.goto('/?open=output&more=rates');
+  await page.getByRole('textbox', { name: 'Wanted tone' }).fill('H4');
+  await expect(page.getByText('“H4” is not allowed')).toBeVisible();
+  await page.getByRole('textbox', { name: 'Wanted tone' }).fill('A4');
+  await page.getByRole('textbox', { name: 'Cost of a sample' }).fill('150');
+  const rows = page.getByRole('table', { name: /Timer settings/ }).getByRole('row');
+  // 16 MHz/(1·(141 + 1))/256 = 440.14 Hz, and between two samples lie 142 cycles, fewer than asked for.
+  await expect(rows.nth(1)).toContainText('440.141 Hz');
+  await expect(rows.nth(1)).toContainText('+0.55 cents');
+  await expect(rows.nth(1)).toContainText('too few');
+  await page.getByRole('button', { name: 'Use prescaler 1, compare 141' }).click();
+  await expect(rows.nth(1)).toContainText('in use');
+  await expect(page.getByText('Prescaler 1, compare 141 at 16 MHz')).toBeVisible();
+
+  await page.getByText('None chosen: the table is a loop').click();
+  await page.getByRole('textbox', { name: 'Wanted frequency' }).fill('C5');
+  await expect(page.getByRole('figure', { name: 'Spurs' })).toBeVisible();
+  await expect(page.getByText(/^24 bits, step word \d+: 523\.25\sHz$/)).toBeVisible();
+  await expect(page.getByText('Repeats after')).toBeVisible();
+
+  await page.reload();
+  await expect(page.getByText('Prescaler 1, compare 141 at 16 MHz')).toBeVisible();
+  await flight(page, 'Export').click();
+  await page.getByRole('combobox', { name: 'Target' }).selectOption('avr');
+  await expect(page.locator('.command-line')).toContainText('--prescaler 1 --compare 141');
+  await expect(page.locator('.command-line')).toContainText('--clock-hz 16000000');
+});
+
+test('the smallest table for two limits is found, taken and saved', async ({ page }) => {
+  const { team } = await beginWithTeam(page);
+  await page.goto('/?open=quantise');
+  await page.getByRole('button', { name: 'Find the smallest table…' }).click();
+  const search = page.getByRole('dialog', { name: 'Find the smallest table' });
+  const limits = search.getByRole('textbox', { name: 'Limits' });
+  await limits.fill('SNR ≤ 45 dB');
+  await expect(search.getByText('“SNR ≤ 45 dB” is not allowed')).toBeVisible();
+  await limits.fill('SNR ≥ 55 dB, ≤ 512 bytes');
+  await expect(search.getByText('The smallest that keeps the limits')).toBeVisible();
+  // Nine bits take two bytes an entry, and 16 entries would leave out harmonic 8.
+  await expect(
+    search.getByText(/The smallest that keeps the limits: 32 entries of 9 bits: .*, 64 bytes/),
+  ).toBeVisible();
+  const cells = search.getByRole('grid', { name: /^Sizes/ });
+  await cells.getByRole('button', { name: /^256 entries of 8 bits/ }).focus();
+  await page.keyboard.press('ArrowRight');
+  await expect(cells.getByRole('button', { name: /^256 entries of 9 bits/ })).toBeFocused();
+  await expect(search.getByText(/^256 entries of 9 bits: SNR/)).toBeVisible();
+  await search.getByRole('button', { name: 'Take the smallest that meets them' }).click();
+  await expect(search).toBeHidden();
+  await expect(page.getByRole('button', { name: 'Find the smallest table…' })).toBeFocused();
+  await expect(field(page, 'Table length')).toHaveValue('32');
+  await expect(field(page, 'Bit depth')).toHaveValue('9');
+
+  await flight(page, 'Output').click();
+  await page.getByText('None chosen', { exact: true }).click();
+  await page
+    .getByRole('button', { name: /^Use prescaler/ })
+    .first()
+    .click();
+  await page.keyboard.press('Control+s');
+  const saving = page.getByRole('dialog', { name: /^Save/ });
+  await saving.getByRole('textbox', { name: 'Title' }).fill('Small horn');
+  await saving.getByRole('button', { name: 'Save' }).click();
+  await expect(page.getByText('This is revision 1 of Small horn')).toBeVisible();
+  const answer = await page.request.get(`/api/v1/teams/${team}/tables/small-horn/revisions/1`);
+  const { definition, playback } = (await answer.json()) as Record<string, Record<string, unknown>>;
+  expect(definition.table).toMatchObject({ length: 32, bits: 9 });
+  expect(playback.timer).toMatchObject({ clockHz: 16e6 });
+});
+
+for (const colorScheme of ['light', 'dark'] as const) {
+  test.describe(`${colorScheme}`, () => {
+    test.use({
+      colorScheme,
+      viewport: colorScheme === 'light' ? { width: 390, height: 844 } : { width: 1440, height: 900 },
+    });
+
+    test('what opens in place has no barrier that axe finds, nor any sideways scroll', async ({ page }) => {
+      const check = async (where: string) => {
+        const { violations } = await new AxeBuilder({ page }).analyze();
+        expect(violations.map(({ id, nodes }) => [where, id, nodes.map(({ html }) => html)])).toEqual([]);
+        expect(
+          await page.evaluate(() => document.documentElement.scrollWidth - innerWidth),
+        ).toBeLessThanOrEqual(0);
+      };
+      await page.goto('/?open=quantise&more=noise,sampling,storage,levels,text');
+      await page.getByRole('radio', { name: 'Triangular' }).check();
+      await page.getByText('Why a quarter would be refused now').click();
+      await field(page, 'Voltages').fill('0,1\n1,25');
+      await expect(page.getByRole('button', { name: 'a decimal comma: 0.1' })).toBeVisible();
+      await field(page, 'Voltages').fill(
+        Array.from({ length: 256 }, (_, code) => code * 0.02 + (code % 7) * 0.004).join('\n'),
+      );
+      await page.getByRole('button', { name: 'Use these levels' }).click();
+      await expect(page.getByRole('textbox', { name: 'Definition as JSON' })).toBeVisible();
+      await check('quantise');
+      await page.getByRole('button', { name: 'Find the smallest table…' }).click();
+      await expect(page.getByText('Put the marked fields right first.')).toBeVisible();
+      await page.getByRole('button', { name: 'Clear the measured levels' }).first().click();
+      await page.getByRole('button', { name: 'Find the smallest table…' }).click();
+      await expect(page.getByText('The smallest that keeps the limits')).toBeVisible();
+      await check('sizes');
+      await page.keyboard.press('Escape');
+
+      await page.goto('/?open=shape,output&more=fades,rates,accumulator,two-tones,pulses');
+      await page.getByRole('radio', { name: 'Points' }).check();
+      await page.getByRole('combobox', { name: 'Fade' }).selectOption('exponential');
+      await page.getByRole('button', { name: 'Start from this fade' }).click();
+      await expect(page.getByRole('figure', { name: 'Spurs' })).toBeVisible();
+      await expect(page.getByRole('img', { name: /^Entries 0 to/ })).toBeVisible();
+      await check('fades and rates');
+      await page.getByRole('radio', { name: 'Mix' }).check();
+      await page.getByRole('button', { name: 'Add a part', exact: true }).click();
+      await page.getByRole('button', { name: 'Make part 2 a mix of its own' }).click();
+      await check('mix');
+      await page.getByRole('radio', { name: 'Samples' }).first().click();
+      await expect(page.getByRole('textbox', { name: 'Value of sample 1', exact: true })).toBeVisible();
+      await check('samples');
+    });
+  });
+}

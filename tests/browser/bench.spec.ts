@@ -150,7 +150,7 @@ for (const { name, typed, allowed, link, mend } of [
   test(`refuses ${typed} for ${name} beside the field, keeps it as typed and offers a mend`, async ({
     page,
   }) => {
-    await page.goto('/?open=shape,quantise');
+    await page.goto('/?open=shape,quantise&more=sampling');
     await field(page, name).fill(typed);
     await expect(field(page, name)).toHaveAttribute('aria-invalid', 'true');
     await expect.poll(() => saidBeside(page, name)).toContain(allowed);

@@ -70,16 +70,15 @@ test('a mailed notice is ended by its link, chosen again with the account, and w
   await expect(page.getByText('This link is not valid.')).toBeVisible();
   await page.goto('/mailbox');
   await page.goto(link);
-  await expect(
-    page.getByRole('heading', { level: 1, name: 'Mail of the kind Reviews asked for' }),
-  ).toBeVisible();
+  await expect(page.getByRole('heading', { level: 1, name: 'Notices: Reviews asked for' })).toBeVisible();
   await isOpenToAll(page);
   await page.getByRole('button', { name: 'Send me no more of these' }).press('Enter');
   await expect(page.getByRole('heading', { level: 1, name: 'No longer sent' })).toBeVisible();
-  await expect(page.getByText('You get no more mail of the kind Reviews asked for.')).toBeVisible();
+  await expect(page.getByText('You get no more notices of the kind Reviews asked for.')).toBeVisible();
 
+  await expect(page.getByRole('link', { name: 'your account' })).toHaveAttribute('href', '/account');
   await signIn(context, reviewer);
-  await page.getByRole('link', { name: 'your account' }).click();
+  await page.goto('/account');
   const notices = page.getByRole('region', { name: 'Notices' });
   const asked = notices.getByRole('switch', { name: 'Reviews asked for' });
   await expect(asked).not.toBeChecked();

@@ -43,57 +43,56 @@ async function reviewed(page: Page, quiet: string[]) {
   return made;
 }
 
-for (const colorScheme of ['light', 'dark'] as const) {
-  for (const viewport of [
-    { width: 1440, height: 900 },
-    { width: 390, height: 844 },
-  ]) {
-    test.describe(`${colorScheme}, ${viewport.width} wide`, () => {
-      test.use({ colorScheme, viewport });
-      const { width } = viewport;
+// Colours do not depend on the width: two of the four pairs show each of them, and each width.
+for (const [colorScheme, viewport] of [
+  ['light', { width: 1440, height: 900 }],
+  ['dark', { width: 390, height: 844 }],
+] as const) {
+  test.describe(`${colorScheme}, ${viewport.width} wide`, () => {
+    test.use({ colorScheme, viewport });
+    const { width } = viewport;
 
-      test('the places of vetting have no barrier that axe finds', async ({ page, quiet }) => {
-        test.setTimeout(120_000);
-        const { team } = await reviewed(page, quiet);
-        await page.goto(`/teams/${team}/reviews`);
-        await expect(page.getByRole('link', { name: 'Fog signal, revision 2' })).toBeVisible();
-        await isOpenToAll(page, width);
-        await page.goto(`/teams/${team}/reviews?show=mine`);
-        await expect(page.getByText('You have submitted nothing yet')).toBeVisible();
-        await isOpenToAll(page, width);
+    test('the places of vetting have no barrier that axe finds', async ({ page, quiet }) => {
+      test.setTimeout(120_000);
+      const { team } = await reviewed(page, quiet);
+      await page.goto(`/teams/${team}/reviews`);
+      await expect(page.getByRole('link', { name: 'Fog signal, revision 2' })).toBeVisible();
+      await isOpenToAll(page, width);
+      await page.goto(`/teams/${team}/reviews?show=mine`);
+      await expect(page.getByText('You have submitted nothing yet')).toBeVisible();
+      await isOpenToAll(page, width);
 
-        await page.goto(`/teams/${team}/tables/fog-signal/revisions/2/review`);
-        await expect(page.getByRole('figure', { name: 'Both spectra' })).toBeVisible();
-        await expect(page.getByRole('list', { name: 'Comments on Bit depth' })).toBeVisible();
-        await page.getByRole('button', { name: 'Comment on Bit depth' }).click();
-        await page.getByRole('radio', { name: 'Return it' }).check();
-        await page.getByRole('button', { name: 'Return it' }).click();
-        await expect(page.getByText('as a return needs its reasons')).toBeVisible();
-        await page.locator('details > summary').filter({ hasText: 'differences' }).click();
-        await isOpenToAll(page, width);
+      await page.goto(`/teams/${team}/tables/fog-signal/revisions/2/review`);
+      await expect(page.getByRole('figure', { name: 'Both spectra' })).toBeVisible();
+      await expect(page.getByRole('list', { name: 'Comments on Bit depth' })).toBeVisible();
+      await page.getByRole('button', { name: 'Comment on Bit depth' }).click();
+      await page.getByRole('radio', { name: 'Return it' }).check();
+      await page.getByRole('button', { name: 'Return it' }).click();
+      await expect(page.getByText('as a return needs its reasons')).toBeVisible();
+      await page.locator('details > summary').filter({ hasText: 'differences' }).click();
+      await isOpenToAll(page, width);
 
-        await page.goto(`/teams/${team}/tables/lamp-fade/revisions/1/review`);
-        await expect(page.getByRole('region', { name: 'How it is set' })).toBeVisible();
-        await isOpenToAll(page, width);
-        await page.goto(`/teams/${team}/compare?a=fog-signal:1&b=lamp-fade:1`);
-        await expect(page.getByRole('figure', { name: 'Both spectra' })).toBeVisible();
-        await isOpenToAll(page, width);
+      await page.goto(`/teams/${team}/tables/lamp-fade/revisions/1/review`);
+      await expect(page.getByRole('region', { name: 'How it is set' })).toBeVisible();
+      await isOpenToAll(page, width);
+      await page.goto(`/teams/${team}/compare?a=fog-signal:1&b=lamp-fade:1`);
+      await expect(page.getByRole('figure', { name: 'Both spectra' })).toBeVisible();
+      await isOpenToAll(page, width);
 
-        await page.goto(`/teams/${team}/tables/lamp-fade`);
-        await expect(page.getByText('Withdrawn: do not build it in.')).toBeVisible();
-        await isOpenToAll(page, width);
-        await page.goto(`/teams/${team}/tables/fog-signal?revision=1`);
-        await page.getByRole('button', { name: 'Withdraw' }).click();
-        await isOpenToAll(page, width);
+      await page.goto(`/teams/${team}/tables/lamp-fade`);
+      await expect(page.getByText('Withdrawn: do not build it in.')).toBeVisible();
+      await isOpenToAll(page, width);
+      await page.goto(`/teams/${team}/tables/fog-signal?revision=1`);
+      await page.getByRole('button', { name: 'Withdraw' }).click();
+      await isOpenToAll(page, width);
 
-        await page.goto(`/teams/${team}`);
-        await expect(page.getByRole('switch', { name: 'Somebody else must judge' })).toBeVisible();
-        await page.getByRole('button', { name: 'Change the limits of all tables' }).click();
-        await isOpenToAll(page, width);
-        await page.goto('/');
-        await page.locator('.bench-limits > summary').click();
-        await isOpenToAll(page, width);
-      });
+      await page.goto(`/teams/${team}`);
+      await expect(page.getByRole('switch', { name: 'Somebody else must judge' })).toBeVisible();
+      await page.getByRole('button', { name: 'Change the limits of all tables' }).click();
+      await isOpenToAll(page, width);
+      await page.goto('/');
+      await page.locator('.bench-limits > summary').click();
+      await isOpenToAll(page, width);
     });
-  }
+  });
 }

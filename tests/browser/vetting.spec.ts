@@ -60,12 +60,12 @@ test('from a draft to a vetted table that is withdrawn, between five people', as
   await expect(author.page.getByRole('link', { name: 'Open review' })).toBeVisible();
 
   // The reviewer is told by mail and in the header, comments on a setting and returns it with reasons.
-  const asked = await mailTo(reviewer.context.request, reviewer.person.email, 'Review asked for');
+  const asked = await mailTo(reviewer.context.request, reviewer.person.email, 'Review asked for: revision 2');
   expect(asked).toContain('Does six bits do for the small buoy?');
   expect(asked).toContain(`/teams/${team}/tables/${first.slug}/revisions/2/review`);
   const judge = reviewer.page;
   await judge.goto('/');
-  await pressByKey(judge, 'Reviews , 1 waiting for you', 'link');
+  await pressByKey(judge, 'Reviews 1 waiting for you', 'link');
   await expect(judge.getByRole('tab', { name: 'For me: 1', selected: true })).toBeVisible();
   await expect(judge.getByRole('listitem').filter({ hasText: 'Fog signal' })).toContainText(
     'One limit is broken',
@@ -93,7 +93,9 @@ test('from a draft to a vetted table that is withdrawn, between five people', as
   await judge.getByRole('radio', { name: 'Return it' }).check();
   await judge.getByRole('button', { name: 'Return it' }).click();
   await expect(panel(judge, 'Returned')).toContainText('Returned by Rhea Sound');
-  expect(await mailTo(author.context.request, author.person.email, 'Returned')).toContain('It hisses.');
+  expect(await mailTo(author.context.request, author.person.email, 'Returned: revision 2')).toContain(
+    'It hisses.',
+  );
 
   // The author mends it, which makes the next number.
   await author.page.goto(home);
@@ -125,7 +127,8 @@ test('from a draft to a vetted table that is withdrawn, between five people', as
   await judge.getByRole('button', { name: 'Vet it' }).click();
   await expect(panel(judge, 'Vetted')).toContainText('The siren drowns it.');
   await expect(panel(judge, 'The one limit is broken')).toContainText('As they were when it was decided.');
-  await expect(judge.getByRole('link', { name: 'Reviews', exact: true })).toBeVisible();
+  const places = judge.getByRole('navigation', { name: 'Places' });
+  await expect(places.getByRole('link', { name: 'Reviews', exact: true })).toBeVisible();
 
   // The viewer exports it.
   const look = viewer.page;
@@ -152,7 +155,7 @@ test('from a draft to a vetted table that is withdrawn, between five people', as
   await expect(look.getByText('Withdrawn: do not build it in.')).toBeVisible();
   await expect(look.getByText('The ladder of the second board glitches on it.')).toBeVisible();
   await expect(figure(look, 'Codes used')).toContainText('of 512');
-  await mailTo(author.context.request, author.person.email, 'Withdrawn');
+  await mailTo(author.context.request, author.person.email, 'Withdrawn: revision 3');
   await close();
 });
 

@@ -56,6 +56,8 @@ describe('what an event says', () => {
     ['revision.vetted', 'table:x', { number: 3, title: 'Fog signal' }, 'vetted revision 3 of Fog signal'],
     ['comment.added', 'table:x', { number: 3, title: 'Fog signal' }, 'commented on revision 3 of Fog signal'],
     ['limits.changed', 'limits:fog', {}, 'changed the limits for tables tagged fog'],
+    ['board.revised', 'board:buoy', { number: 2, name: 'Buoy' }, 'saved revision 2 of the board Buoy'],
+    ['board.retired', 'board:buoy', {}, 'retired the board buoy'],
     ['bundle.released', 'bundle:buoy', {}, 'bundle.released: buoy'],
   ])('%s of %s', (action, subject, details, words) => {
     expect(said(action, subject, details)).toBe(words);

@@ -163,6 +163,24 @@ describe('an accumulator of 48 bits', () => {
     );
   });
 
+  it('keeps them where a pure line has nothing but images, far beyond 2^28', () => {
+    const length = 65_536;
+    const values = Float64Array.from({ length }, (_, k) => Math.cos((2 * Math.PI * (k + 0.5)) / length));
+    // Its own rounding noise is −300 dB: only the carrier's images are above it.
+    const step = 2n ** 47n + 12_345n;
+    const { bins, tableLines } = strongestLines(
+      values,
+      { accumulatorBits: 48, stepWord: Number(step) },
+      10_000,
+    );
+    expect(Math.max(...tableLines)).toBeGreaterThan(2 ** 28);
+    const off = tableLines.findIndex((k, i) => {
+      const bin = (BigInt(k) * step) % 2n ** 48n;
+      return bins[i] !== Number(bin > 2n ** 47n ? 2n ** 48n - bin : bin);
+    });
+    expect(off).toBe(-1);
+  });
+
   it('gives the levels of any other long one', () => {
     const values = sineValues(256);
     const long = analyseAccumulator(values, { accumulatorBits: 48, stepWord: 2 ** 40 + 1 });

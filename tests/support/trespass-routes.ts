@@ -1,8 +1,11 @@
 import { randomBytes } from 'node:crypto';
 import { buildRevision } from '../../server/features/tables/build-revision.ts';
+import { insertBoard } from '../../server/features/boards/store.ts';
 import { insertTable } from '../../server/features/tables/store.ts';
-import type { Role } from '../../shared/contract/index.ts';
+import { parseBoard, type Role } from '../../shared/contract/index.ts';
+import { boardWith } from '../engine/support/boards.ts';
 import { sineDefinition } from './library.ts';
+import { originalCases } from './trespass-originals.ts';
 import { freshAddress } from './outbox.ts';
 import { asPerson, join, makePerson, makeSession, type TestPerson, type TestTeam } from './people.ts';
 import type { TestApp } from './test-app.ts';
@@ -55,19 +58,23 @@ export async function freshInvitation({ test, team, admin }: Target): Promise<nu
   return response.body.id;
 }
 
-const asFile = { 'Content-Type': 'application/octet-stream' };
+/** A new board of the team, with one revision and version 1; answers its address. */
+export const freshBoard = ({ test, team, admin }: Target): Promise<string> =>
+  insertBoard(
+    test.database.db,
+    { teamId: team.id, userId: admin.id },
+    { board: parseBoard(boardWith({}, { name: 'Trespass' })), note: '' },
+  );
 
-/** A new original of a new table's first revision; answers its address. */
-async function freshOriginal(target: Target): Promise<string> {
-  const { test, team, admin } = target;
-  const path = `/teams/${team.slug}/tables/${await freshTable(target)}/revisions/1/originals`;
-  const response = await asPerson(test, admin)
-    .post(`${path}?name=old.csv`)
-    .set(asFile)
-    .send(Buffer.from('1\n2\n3\n'));
-  if (response.status !== 201) throw new Error(response.text);
-  return `${path}/${response.body.id}`;
-}
+const ofBoard =
+  (status: number, below: string, body?: object, headers?: Record<string, string>): RouteCase['attempt'] =>
+  async (target) => ({
+    path: `/teams/${target.team.slug}/boards/${await freshBoard(target)}${below}`,
+    body,
+    headers,
+    status,
+  });
+const savedBoard = { board: boardWith({}, { name: 'Trespass' }) };
 
 const noToken = () => ({ token: randomBytes(32).toString('base64url') });
 
@@ -195,22 +202,7 @@ export const routeCases: Readonly<Record<string, RouteCase>> = {
       status: 204,
     }),
   },
-  'GET /teams/:team/tables/:table/revisions/:number/originals': {
-    access: 'viewer',
-    attempt: ofTable(200, '/revisions/1/originals'),
-  },
-  'POST /teams/:team/tables/:table/revisions/:number/originals': {
-    access: 'author',
-    attempt: ofTable(201, '/revisions/1/originals?name=old.csv', Buffer.from('1\n2\n3\n'), asFile),
-  },
-  'GET /teams/:team/tables/:table/revisions/:number/originals/:id': {
-    access: 'viewer',
-    attempt: async (target) => ({ path: await freshOriginal(target), status: 200 }),
-  },
-  'DELETE /teams/:team/tables/:table/revisions/:number/originals/:id': {
-    access: 'admin',
-    attempt: async (target) => ({ path: await freshOriginal(target), status: 204 }),
-  },
+  ...originalCases,
   'GET /teams/:team/tags': { access: 'viewer', attempt: inTeam(200, '/tags') },
 
   'GET /teams': { access: 'signed-in', attempt: always(200, '/teams') },
@@ -324,6 +316,22 @@ export const routeCases: Readonly<Record<string, RouteCase>> = {
   },
   'GET /teams/:team/audit': { access: 'reviewer', attempt: inTeam(200, '/audit') },
   'GET /teams/:team/audit.csv': { access: 'reviewer', attempt: inTeam(200, '/audit.csv') },
+
+  'GET /teams/:team/boards': { access: 'viewer', attempt: inTeam(200, '/boards') },
+  'POST /teams/:team/boards': { access: 'author', attempt: inTeam(201, '/boards', savedBoard) },
+  'GET /teams/:team/boards/:board': { access: 'viewer', attempt: ofBoard(200, '') },
+  'POST /teams/:team/boards/:board/retire': { access: 'author', attempt: ofBoard(200, '/retire') },
+  'POST /teams/:team/boards/:board/restore': { access: 'author', attempt: ofBoard(200, '/restore') },
+  'POST /teams/:team/boards/:board/copy': { access: 'author', attempt: ofBoard(201, '/copy') },
+  'GET /teams/:team/boards/:board/revisions': { access: 'viewer', attempt: ofBoard(200, '/revisions') },
+  'POST /teams/:team/boards/:board/revisions': {
+    access: 'author',
+    attempt: ofBoard(201, '/revisions', savedBoard, seen),
+  },
+  'GET /teams/:team/boards/:board/revisions/:number': {
+    access: 'viewer',
+    attempt: ofBoard(200, '/revisions/1'),
+  },
 
   'POST /report': { access: 'anyone', attempt: always(200, '/report', saved.definition) },
   'POST /render': { access: 'anyone', attempt: always(200, '/render', { ...saved, target: 'c99' }) },

@@ -17,9 +17,10 @@ export const auditHeads = mysqlTable('audit_heads', {
 export const auditEvents = mysqlTable(
   'audit_events',
   {
+    /** By way of the head, which is locked already: a check on the team's row would have to wait for who changes that. */
     teamId: reference('team_id')
       .notNull()
-      .references(() => teams.id, { onDelete: 'cascade' }),
+      .references(() => auditHeads.teamId, { onDelete: 'cascade' }),
     sequence: sequence('sequence').notNull(),
     at: moment('at').notNull(),
     /** Stays when the account goes: the MAC covers it. */

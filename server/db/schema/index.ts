@@ -1,4 +1,5 @@
 export * from './audit.ts';
+export * from './boards.ts';
 export * from './library.ts';
 export * from './mail.ts';
 export * from './notices.ts';

@@ -29,7 +29,7 @@ export const uploads = mysqlTable(
     sha256: exactText(64).notNull(),
     content: content('content').notNull(),
     keptBy: reference('kept_by').references(() => users.id, { onDelete: 'set null' }),
-    keptAt: createdAt('kept_at'),
+    keptAt: createdAt(),
   },
   (table) => [
     unique('uploads_revision').on(table.teamId, table.revisionId, table.sha256),

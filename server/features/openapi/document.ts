@@ -94,6 +94,7 @@ const slug = { type: 'string', description: 'As in its address' };
 const pathSchemas: Readonly<Record<string, JsonSchema>> = {
   team: slug,
   table: slug,
+  board: slug,
   number: { type: 'integer', minimum: 1 },
   userId: { type: 'integer', minimum: 1 },
 };

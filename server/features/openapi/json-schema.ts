@@ -15,6 +15,11 @@ const answered: Readonly<Record<string, z.ZodType>> = {
   TableSummary: contract.tableSummarySchema,
   Revision: contract.revisionSchema,
   RevisionSummary: contract.revisionSummarySchema,
+  Board: contract.boardSchema,
+  LibraryBoard: contract.libraryBoardSchema,
+  BoardSummary: contract.boardSummarySchema,
+  BoardRevision: contract.boardRevisionSchema,
+  BoardRevisionSummary: contract.boardRevisionSummarySchema,
   GeneratedFile: contract.generatedFileSchema,
   Review: contract.reviewSchema,
   Comment: contract.commentSchema,
@@ -28,12 +33,14 @@ const answered: Readonly<Record<string, z.ZodType>> = {
 const sent: Readonly<Record<string, z.ZodType>> = {
   DefinitionInput: contract.definitionSchema,
   SourceInput: contract.sourceSchema,
+  BoardInput: contract.boardSchema,
 };
 
-/** Fields that take anything here, so that the engine's own parser can say what is wrong with it. */
-const definitions = new Set<unknown>([
-  contract.definitionField,
-  contract.renderRequestSchema.shape.definition,
+/** Fields that take anything here, so that the engine's own parser can say what is wrong with it, and what they hold. */
+const parsedLater = new Map<unknown, string>([
+  [contract.definitionField, 'Definition'],
+  [contract.renderRequestSchema.shape.definition, 'Definition'],
+  [contract.boardField, 'Board'],
 ]);
 
 type Side = 'input' | 'output';
@@ -73,9 +80,8 @@ export function jsonSchemaOf(schema: z.ZodType, io: Side): JsonSchema {
 const tidied =
   (io: Side) =>
   ({ zodSchema, jsonSchema }: { zodSchema: unknown; jsonSchema: JsonSchema }) => {
-    if (definitions.has(zodSchema)) {
-      jsonSchema.$ref = place(io === 'input' ? 'DefinitionInput' : 'Definition');
-    }
+    const held = parsedLater.get(zodSchema);
+    if (held !== undefined) jsonSchema.$ref = place(io === 'input' ? `${held}Input` : held);
     // What every integer of JavaScript keeps to says nothing; `date-time` says all that its pattern does.
     if (jsonSchema.minimum === Number.MIN_SAFE_INTEGER) delete jsonSchema.minimum;
     if (jsonSchema.maximum === Number.MAX_SAFE_INTEGER) delete jsonSchema.maximum;

@@ -7,6 +7,7 @@ import { hasReadableMailbox } from '../../mail/local-mailbox.ts';
 import { openApiDocument } from './document.ts';
 import { account } from './operations/account.ts';
 import { audit } from './operations/audit.ts';
+import { boards } from './operations/boards.ts';
 import { library } from './operations/library.ts';
 import { notices } from './operations/notices.ts';
 import { originals } from './operations/originals.ts';
@@ -19,6 +20,7 @@ export const openapi: Feature = (deps) => {
   const sections = [
     library,
     originals,
+    boards,
     reviews,
     limitSets,
     teams,

@@ -1,4 +1,4 @@
-import { plainText } from './plain-text.ts';
+import { plainText } from '../../text/plain-text.ts';
 
 /** Characters of a term that count; a title has no more. */
 const termLength = 63;

@@ -1,17 +1,10 @@
 import { and, eq, like, sql } from 'drizzle-orm';
 import type { Executor } from '../../db/client.ts';
 import { waveTables } from '../../db/schema/index.ts';
-import { plainText } from './plain-text.ts';
+import { slugOfTitle } from '../../text/slugs.ts';
 
-/** Leaves room for a number behind it in the 60 characters of an address. */
-const longest = 50;
-
-/** A title as part of an address: ASCII letters and digits, hyphens between them; `table` where nothing is left. */
-export const slugFrom = (title: string): string =>
-  plainText(title)
-    .replace(/[^a-z0-9]+/g, '-')
-    .slice(0, longest)
-    .replace(/^-+|-+$/g, '') || 'table';
+/** A title as part of an address; `table` where nothing of it is left. */
+export const slugFrom = (title: string): string => slugOfTitle(title, 'table');
 
 /** The smallest number n from 2 for which `base-n` and all after it are free in the team; 1 where `base` itself is. */
 export async function firstFreeNumber(db: Executor, teamId: number, base: string): Promise<number> {
@@ -33,5 +26,3 @@ export async function firstFreeNumber(db: Executor, teamId: number, base: string
     );
   return Math.max(1, Number(row.last ?? 1)) + 1;
 }
-
-export const numbered = (base: string, number: number): string => (number === 1 ? base : `${base}-${number}`);

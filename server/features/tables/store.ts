@@ -4,10 +4,11 @@ import type { Executor } from '../../db/client.ts';
 import { errno, errnoOf } from '../../db/errors.ts';
 import { revisions, tableTerms, waveTables } from '../../db/schema/index.ts';
 import { Problem } from '../../http/problem.ts';
+import { numbered } from '../../text/slugs.ts';
 import type { BuiltRevision } from './build-revision.ts';
 import { countTables } from './queries.ts';
 import { signatureOf, termsOf } from './search-terms.ts';
-import { firstFreeNumber, numbered, slugFrom } from './slugs.ts';
+import { firstFreeNumber, slugFrom } from './slugs.ts';
 import { packCodes } from './stored-codes.ts';
 
 export interface Place {

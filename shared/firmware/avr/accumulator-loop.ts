@@ -26,7 +26,9 @@ export function accumulatorLoop(shape: AccumulatorShape): PortLoop {
   const bytes = shape.accumulatorBits / 8;
   const registers = accumulatorRegisters.slice(4 - bytes);
   if (topIsPointer(shape)) registers[bytes - 1] = 'r30';
-  const add = registers.map((register, k) => line(k === 0 ? 'add' : 'adc', `${register}, ${stepOperands[k]}`));
+  const add = registers.map((register, k) =>
+    line(k === 0 ? 'add' : 'adc', `${register}, ${stepOperands[k]}`),
+  );
   const turn = [...add, ...pointerOf(shape), ...sampleBlock(shape, false), line('rjmp', '1b')];
   const start = registers.map((register) => line('ldi', `${register}, 0`));
   if (indexIsOneByte(shape)) start.push(line('ldi', `r31, hi8(${shape.table})`));
@@ -44,7 +46,10 @@ function pointerOf(shape: AccumulatorShape): Line[] {
   // The offset is the index times the word's bytes: its bits end one place higher for two.
   const offsetBits = indexBits + ports.length - 1;
   const toZ = [line('mov', 'r31, r27'), line('mov', 'r30, r26')];
-  const shifts = Array.from({ length: 16 - offsetBits }, () => [line('lsr', 'r31'), line('ror', 'r30')]).flat();
+  const shifts = Array.from({ length: 16 - offsetBits }, () => [
+    line('lsr', 'r31'),
+    line('ror', 'r30'),
+  ]).flat();
   const even = ports.length === 2 ? [line('andi', 'r30, 0xFE')] : [];
   const base = [line('subi', `r30, lo8(-(${table}))`), line('sbci', `r31, hi8(-(${table}))`)];
   return [...toZ, ...shifts, ...even, ...base];

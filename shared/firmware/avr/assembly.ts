@@ -33,7 +33,10 @@ const cyclesOf: Readonly<Record<string, number>> = {
 };
 
 export function line(instruction: string, operands = ''): Line {
-  return { text: operands === '' ? instruction : `${instruction} ${operands}`, cycles: cyclesOf[instruction] };
+  return {
+    text: operands === '' ? instruction : `${instruction} ${operands}`,
+    cycles: cyclesOf[instruction],
+  };
 }
 
 /** A branch back that is taken, or one that falls through. */

@@ -53,7 +53,11 @@ function playbackOf(input: ExportInput<AvrOptions>): Playback {
   const { table, layout, options } = input;
   const { definition } = table;
   if (definition.table.fold !== 'none') {
-    refuse('table.fold', definition.table.fold, '"none" for the target avr, unless options.playback is "none"');
+    refuse(
+      'table.fold',
+      definition.table.fold,
+      '"none" for the target avr, unless options.playback is "none"',
+    );
   }
   if (options.packed === 'yes') {
     refuse('options.packed', options.packed, '"no", unless options.playback is "none"');
@@ -82,10 +86,18 @@ function freeRunning(input: ExportInput<AvrOptions>, ports: readonly LoopPort[])
   const { words, most } = wholeLoopWords(shape, elements.length);
   if (options.unroll === 'whole' && words > most) {
     const entries = Math.floor((most * elements.length) / words);
-    refuse('options.unroll', options.unroll, `"none" or "two" above ${entries} entries, as jumps reach no farther`);
+    refuse(
+      'options.unroll',
+      options.unroll,
+      `"none" or "two" above ${entries} entries, as jumps reach no farther`,
+    );
   }
   if (options.unroll === 'two' && !keepsFlags(shape)) {
-    refuse('options.unroll', options.unroll, '"none" or "whole" where words are masked or reserved pins are kept');
+    refuse(
+      'options.unroll',
+      options.unroll,
+      '"none" or "whole" where words are masked or reserved pins are kept',
+    );
   }
   const loop = portLoop(shape, elements, options.unroll);
   return { template: 'avr/loop.c', facts: loopFacts(loop, ports), alignment: 0 };
@@ -117,12 +129,18 @@ function onInterrupts(input: ExportInput<AvrOptions>, ports: readonly LoopPort[]
   const { bits, coding } = table.definition.table;
   const cyclesPerWord = Number(prescaler) * (compare + 1);
   if (playback === 'two-accumulators' && layout.map !== undefined) {
-    refuse('options.portMap', options.portMap, 'nothing with options.playback "two-accumulators": sums have no map');
+    refuse(
+      'options.portMap',
+      options.portMap,
+      'nothing with options.playback "two-accumulators": sums have no map',
+    );
   }
   const isSum = playback === 'two-accumulators';
   const count = table.stored.length;
   const accumulator =
-    isSum || playback === 'timer-accumulator' ? accumulatorFacts(table.definition, options, cyclesPerWord) : undefined;
+    isSum || playback === 'timer-accumulator'
+      ? accumulatorFacts(table.definition, options, cyclesPerWord)
+      : undefined;
   const shape: PhaseShape = {
     ...shapeOf(input, ports),
     count,
@@ -159,7 +177,8 @@ function onInterrupts(input: ExportInput<AvrOptions>, ports: readonly LoopPort[]
       compare,
       cyclesPerWord,
       handlerCycles,
-      wordFetch: options.storage === 'ram' ? '' : layout.arrays[0].bytes === 1 ? 'pgm_read_byte' : 'pgm_read_word',
+      wordFetch:
+        options.storage === 'ram' ? '' : layout.arrays[0].bytes === 1 ? 'pgm_read_byte' : 'pgm_read_word',
       halfWord: coding === 'twos-complement' ? 2 ** (bits - 1) : 0,
       assembly: handler.lines.map(inC).join('\n'),
       accumulatorBytes: shape.accumulatorBytes,

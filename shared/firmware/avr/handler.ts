@@ -185,7 +185,10 @@ export function phaseHandler(shape: PhaseShape): Handler {
 }
 
 /** Half the sum of the codes of two phases. In two's complement half the levels are added to words to get codes. */
-export function sumHandler(shape: PhaseShape, { bits, isSigned }: { bits: number; isSigned: boolean }): Handler {
+export function sumHandler(
+  shape: PhaseShape,
+  { bits, isSigned }: { bits: number; isSigned: boolean },
+): Handler {
   const { load, ports } = shape;
   const half = 2 ** (bits - 1);
   const code = (registers: readonly string[]) => [

@@ -1,12 +1,5 @@
 import { cyclesIn, label, line, taken, wait, type Line } from './assembly.ts';
-import {
-  immediateBlock,
-  keepsFlags,
-  rewind,
-  sampleBlock,
-  sampleCycles,
-  type LoopShape,
-} from './sample.ts';
+import { immediateBlock, keepsFlags, rewind, sampleBlock, sampleCycles, type LoopShape } from './sample.ts';
 
 /** A loop for ever, with the clock cycles from each write of a port to its next one: all alike, the seam included. */
 export interface PortLoop {

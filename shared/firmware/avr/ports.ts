@@ -48,7 +48,11 @@ function withinObject({ definition: { table } }: ExportableTable, layout: Layout
 }
 
 /** The ports that the words go to, that of the lower byte first. */
-export function loopPorts({ definition: { table } }: ExportableTable, layout: Layout, options: AvrOptions): LoopPort[] {
+export function loopPorts(
+  { definition: { table } }: ExportableTable,
+  layout: Layout,
+  options: AvrOptions,
+): LoopPort[] {
   const [{ ports }] = layout.arrays;
   if (layout.map !== undefined) {
     return ports.map(({ name, driven, isKept }) => ({ letter: name, driven, isMasked: false, isKept }));

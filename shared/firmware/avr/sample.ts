@@ -60,7 +60,8 @@ function writeBlock(ports: readonly LoopPort[]): Line[] {
 }
 
 /** Whether a word's way from table to pin leaves the flags alone, so that a count may stand before it. */
-export const keepsFlags = ({ ports }: LoopShape) => ports.every(({ isMasked, isKept }) => !isMasked && !isKept);
+export const keepsFlags = ({ ports }: LoopShape) =>
+  ports.every(({ isMasked, isKept }) => !isMasked && !isKept);
 
 export const sampleCycles = (shape: LoopShape) => cyclesIn(sampleBlock(shape));
 

@@ -16,6 +16,10 @@ export const cpp17 = defineTarget({
     ...portMapOptions,
   }),
   filesOf: ({ options }) => [
-    { template: 'cpp17/header.hpp', ending: '.hpp', facts: { ...alignmentFacts(options), readerStart: 'word', readerEnd: '' } },
+    {
+      template: 'cpp17/header.hpp',
+      ending: '.hpp',
+      facts: { ...alignmentFacts(options), readerStart: 'word', readerEnd: '' },
+    },
   ],
 });

@@ -9,9 +9,18 @@ export const csv = defineTarget({
   options: z.strictObject({ ...nameOptions, lineEnding: lineEndingOption, ...portMapOptions }),
   filesOf: ({ table: { codes, stored }, layout }) => {
     const ports = layout.map === undefined ? [] : layout.arrays;
-    const lines = Array.from(stored, (word, k) =>
-      [k, codes[k], word, ...ports.map(({ elements }) => elements[k] >>> 0)].join(','),
-    );
-    return [{ template: 'csv/table.csv', ending: '.csv', facts: { lines: lines.join('\n'), ports: ports.length > 0 } }];
+    const lines = new Array<string>(stored.length);
+    for (let k = 0; k < stored.length; k += 1) {
+      let line = `${k},${codes[k]},${stored[k]}`;
+      for (const { elements } of ports) line += `,${elements[k] >>> 0}`;
+      lines[k] = line;
+    }
+    return [
+      {
+        template: 'csv/table.csv',
+        ending: '.csv',
+        facts: { lines: lines.join('\n'), ports: ports.length > 0 },
+      },
+    ];
   },
 });

@@ -62,11 +62,19 @@ function clearedLine(text: string, from: number): { text: string; next: number }
         );
       }
       clearTo(end);
-    } else at += 1;
+    } else at = nextSign(text, at + 1);
   }
   cleared += text.slice(copied, at);
   return { text: cleared, next: text.startsWith('\r\n', at) ? at + 2 : at + 1 };
 }
+
+/** Where the next character stands that may begin something, or end the line. */
+function nextSign(text: string, from: number): number {
+  signs.lastIndex = from;
+  return signs.test(text) ? signs.lastIndex - 1 : text.length;
+}
+
+const signs = /["'/;#@\n\r]/g;
 
 function endOfLine(text: string, from: number): number {
   let at = from;

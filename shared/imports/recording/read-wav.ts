@@ -12,7 +12,8 @@ export interface Recording {
 }
 
 // Node sees the package as a CommonJS module without named exports, Vite as an ES module with them.
-const { WaveFile } = 'WaveFile' in wavefile ? wavefile : (wavefile as { default: typeof wavefile }).default;
+const seen: { WaveFile?: typeof wavefile.WaveFile; default?: typeof wavefile } = { ...wavefile };
+const WaveFile = seen.WaveFile ?? seen.default?.WaveFile;
 
 /**
  * Reads one channel of a RIFF WAVE file: 8 to 32 bits, or floating point. The package sees a file that we have made
@@ -26,6 +27,7 @@ export function readWav(bytes: Uint8Array, channel = 0): Recording {
   if (!Number.isInteger(channel) || channel < 0 || channel >= header.channels) {
     throw new Refusal({ path: 'channel', value: String(channel + 1), allowed: `1 to ${header.channels}` });
   }
+  if (!WaveFile) throw new Error('The package wavefile has no WaveFile.');
   const file = new WaveFile(plainFile(bytes, header));
   const interleaved = file.getSamples(true, Float64Array);
   const samples = new Float64Array(header.length);

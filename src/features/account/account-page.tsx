@@ -27,8 +27,8 @@ function AccountParts({ account }: { account: Account }) {
         <TeamsPanel memberships={account.memberships} />
         <AddressPanel email={account.email} />
         <PasswordPanel email={account.email} />
-        <NoticesPanel />
       </div>
+      <NoticesPanel />
       <SessionsPanel />
       <DeletePanel account={account} />
     </Page>

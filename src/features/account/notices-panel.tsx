@@ -26,17 +26,20 @@ export function NoticesPanel() {
       <p className="quiet">By mail to your address, for all your teams; never about what you do yourself.</p>
       <ProblemNotice fault={error && asProblem(error)} onTryAgain={() => void refetch()} />
       {shown === undefined && !error && <Waiting>Reading your choices…</Waiting>}
-      {shown !== undefined &&
-        noticeKinds.map((kind) => (
-          <SwitchField
-            key={kind}
-            label={noticeWords[kind].label}
-            description={noticeWords[kind].when}
-            isOn={shown[kind]}
-            isDisabled={changing.isPending}
-            onChange={(isOn) => changing.mutate({ [kind]: isOn })}
-          />
-        ))}
+      {shown !== undefined && (
+        <div className="notice-choices">
+          {noticeKinds.map((kind) => (
+            <SwitchField
+              key={kind}
+              label={noticeWords[kind].label}
+              description={noticeWords[kind].when}
+              isOn={shown[kind]}
+              isDisabled={changing.isPending}
+              onChange={(isOn) => changing.mutate({ [kind]: isOn })}
+            />
+          ))}
+        </div>
+      )}
     </Panel>
   );
 }

@@ -27,7 +27,8 @@ export function UnsubscribePage() {
     return (
       <Page title="No longer sent" size="narrow">
         <p role="status">
-          You get no more mail of the kind <strong>{label}</strong>. {when} The other kinds come as before.
+          You get no more notices of the kind <strong>{label}</strong>. ({when}) The other kinds come as
+          before.
         </p>
         {choices}
       </Page>
@@ -35,7 +36,7 @@ export function UnsubscribePage() {
   }
   return (
     <Page
-      title={`Mail of the kind ${label}`}
+      title={`Notices: ${label}`}
       size="narrow"
       lead={<p>{when} One press, and you get no more of these.</p>}
     >

@@ -9,7 +9,9 @@ const kindWords: Readonly<Record<string, string>> = {
   table: 'Tables',
   revision: 'Revisions',
   comment: 'Comments',
+  original: 'Originals',
   limits: 'Limits',
+  board: 'Boards',
 };
 
 const actionWords: Readonly<Record<AuditAction, string>> = {
@@ -32,9 +34,16 @@ const actionWords: Readonly<Record<AuditAction, string>> = {
   'revision.returned': 'returned',
   'revision.withdrawn': 'withdrawn',
   'comment.added': 'added',
+  'original.kept': 'kept',
+  'original.removed': 'removed',
   'limits.created': 'set',
   'limits.changed': 'changed',
   'limits.deleted': 'taken away',
+  'board.created': 'saved anew',
+  'board.revised': 'revised',
+  'board.copied': 'copied',
+  'board.retired': 'retired',
+  'board.restored': 'restored',
 };
 
 const kindOf = (action: string) => action.slice(0, action.indexOf('.'));

@@ -72,7 +72,7 @@ function Facts({ team, query, event }: { team: string; query: AuditAsk; event: A
     ['event', String(sequence)],
     ['action', action],
     ['subject', subject],
-    ...Object.entries(details).map(([name, value]): [string, string] => [name, sayValue(value)]),
+    ...Object.entries(details).map(([name, value]): [string, string] => [sayName(name), sayValue(value)]),
   ];
   return (
     <>
@@ -92,6 +92,9 @@ function Facts({ team, query, event }: { team: string; query: AuditAsk; event: A
     </>
   );
 }
+
+/** `failedLimits` is called failed limits. */
+const sayName = (name: string) => name.replace(/[A-Z]/g, (letter) => ` ${letter.toLowerCase()}`);
 
 const sayValue = (value: unknown): string =>
   typeof value === 'string' ? value : JSON.stringify(value, null, 1).replace(/\s+/g, ' ');

@@ -22,9 +22,20 @@ const revision =
   (verb: string): Say =>
   ({ text, name }) => ({ words: `${verb} revision ${text('number')} of`, thing: text('title') || name });
 
+const original =
+  (verb: string): Say =>
+  ({ text, name }) => ({
+    words: `${verb} the original ${text('name')} of revision ${text('number')} of`,
+    thing: name,
+  });
+
 const table =
   (verb: string): Say =>
   ({ text, name }) => ({ words: verb, thing: text('title') || name });
+
+const board =
+  (verb: string): Say =>
+  ({ text, name }) => ({ words: verb, thing: text('name') || name });
 
 const limits =
   (verb: string): Say =>
@@ -64,9 +75,23 @@ const sentences: Readonly<Record<AuditAction, Say>> = {
   'revision.returned': revision('returned'),
   'revision.withdrawn': revision('withdrew'),
   'comment.added': revision('commented on'),
+  'original.kept': original('kept'),
+  'original.removed': original('removed'),
   'limits.created': limits('set'),
   'limits.changed': limits('changed'),
   'limits.deleted': limits('took away'),
+  'board.created': board('saved the new board'),
+  'board.revised': ({ text, name }) => ({
+    words: `saved revision ${text('number')} of the board`,
+    thing: text('name') || name,
+  }),
+  'board.copied': ({ text, details, name }) => ({
+    words: 'made the board',
+    thing: text('name') || name,
+    after: `out of ${sayOrigin(details.from)}`,
+  }),
+  'board.retired': board('retired the board'),
+  'board.restored': board('restored the board'),
 };
 
 /** An event of another version of the program is told by its bare action. */

@@ -2,6 +2,10 @@ import { useCallback } from 'react';
 import type { Source } from '../../../shared/contract/index.ts';
 import { ShapeFlight, sayInWords } from './shape/index.ts';
 import { changeDefinition, useBench, useDefinition } from './state/use-bench.ts';
+import { later } from './view/later.tsx';
+import { Recess } from './view/recess.tsx';
+
+const FadeStarts = later('the fades', async () => (await import('./shape/fades/fade-starts.tsx')).FadeStarts);
 
 /** The shape flight, tied to the definition on the bench. */
 export function BenchShape() {
@@ -13,7 +17,18 @@ export function BenchShape() {
       changeDefinition((definition) => ({ ...definition, source: next }), how?.coalesce),
     [],
   );
-  return <ShapeFlight {...{ source, problems, cycles, range }} onChange={change} tableLength={length} />;
+  return (
+    <ShapeFlight
+      {...{ source, problems, cycles, range }}
+      onChange={change}
+      tableLength={length}
+      moreStarts={
+        <Recess id="fades" title="Lamp fades" summary="Even to the eye, exponential or linear">
+          <FadeStarts tableLength={length} onStart={changeDefinition} />
+        </Recess>
+      }
+    />
+  );
 }
 
 /** What the wave is made of, in one line. */

@@ -61,11 +61,21 @@ const loops: Playing[] = [
   { title: '3 × 8', definition: tone({ length: 3 }), options: {}, played: thrice },
   { title: '261 × 8', definition: tone({ length: 261 }), options: {}, played: thrice },
   { title: '1024 × 8', definition: tone({ length: 1024 }), options: {}, played: thrice },
-  { title: '1024 × 16 on two ports', definition: tone({ length: 1024, bits: 16 }), options: {}, played: thrice },
+  {
+    title: '1024 × 16 on two ports',
+    definition: tone({ length: 1024, bits: 16 }),
+    options: {},
+    played: thrice,
+  },
   { title: `${signed.title} on two ports`, definition: signed.definition, options: {}, played: thrice },
   { title: '64 × 8 in RAM', definition: tone({ length: 64 }), options: { storage: 'ram' }, played: thrice },
   { title: '256 × 8, unrolled by two', definition: tone({}), options: { unroll: 'two' }, played: thrice },
-  { title: '1001 × 8, unrolled by two', definition: tone({ length: 1001 }), options: { unroll: 'two' }, played: thrice },
+  {
+    title: '1001 × 8, unrolled by two',
+    definition: tone({ length: 1001 }),
+    options: { unroll: 'two' },
+    played: thrice,
+  },
   { title: '256 × 8, unrolled whole', definition: tone({}), options: { unroll: 'whole' }, played: thrice },
   {
     title: '100 × 12 on two ports, unrolled whole',
@@ -74,8 +84,18 @@ const loops: Playing[] = [
     played: thrice,
   },
   { ...mapped, played: thrice },
-  { ...mapped, title: `${mapped.title} and kept`, options: { ...mapped.options, reservedBy: 'kept' }, played: thrice },
-  { ...onePort, title: '256 × 6 on one port, two pins reserved', places: onePort.options.portMap.split(' '), played: thrice },
+  {
+    ...mapped,
+    title: `${mapped.title} and kept`,
+    options: { ...mapped.options, reservedBy: 'kept' },
+    played: thrice,
+  },
+  {
+    ...onePort,
+    title: '256 × 6 on one port, two pins reserved',
+    places: onePort.options.portMap.split(' '),
+    played: thrice,
+  },
   {
     ...onePort,
     title: '256 × 6 on one port, two pins kept',
@@ -92,7 +112,12 @@ const accumulators = [
   { title: '256 × 8, 16 bits', definition: tone({}), bits: 16, cyclesPerWord: 8 },
   { title: '256 × 8, 32 bits', definition: tone({}), bits: 32, cyclesPerWord: 10 },
   { title: '64 × 8, 24 bits', definition: tone({ length: 64 }), bits: 24, cyclesPerWord: 13 },
-  { title: '1024 × 12 on two ports, 24 bits', definition: tone({ length: 1024, bits: 12 }), bits: 24, cyclesPerWord: 28 },
+  {
+    title: '1024 × 12 on two ports, 24 bits',
+    definition: tone({ length: 1024, bits: 12 }),
+    bits: 24,
+    cyclesPerWord: 28,
+  },
 ];
 
 const timerRate = { clockHz, cyclesPerWord: 500, milliHz: 440_000 };
@@ -100,9 +125,27 @@ const secondRate = { ...timerRate, milliHz: 550_000 };
 const onTimer: (Playing & { playback: string })[] = [
   { playback: 'timer', title: '256 × 8', definition: tone({}), options: {}, played: thrice },
   { playback: 'timer', title: '100 × 8', definition: tone({ length: 100 }), options: {}, played: thrice },
-  { playback: 'timer', title: '300 × 12 on two ports', definition: tone({ length: 300, bits: 12 }), options: {}, played: thrice },
-  { playback: 'timer', ...mapped, title: `${mapped.title} and kept`, options: { ...mapped.options, reservedBy: 'kept' }, played: thrice },
-  { playback: 'timer-accumulator', title: '256 × 8', definition: tone({}), options: {}, played: (words) => accumulated(words, 24, timerRate, 400) },
+  {
+    playback: 'timer',
+    title: '300 × 12 on two ports',
+    definition: tone({ length: 300, bits: 12 }),
+    options: {},
+    played: thrice,
+  },
+  {
+    playback: 'timer',
+    ...mapped,
+    title: `${mapped.title} and kept`,
+    options: { ...mapped.options, reservedBy: 'kept' },
+    played: thrice,
+  },
+  {
+    playback: 'timer-accumulator',
+    title: '256 × 8',
+    definition: tone({}),
+    options: {},
+    played: (words) => accumulated(words, 24, timerRate, 400),
+  },
   {
     playback: 'timer-accumulator',
     title: '512 × 10 in two’s complement, 32 bits',
@@ -110,15 +153,34 @@ const onTimer: (Playing & { playback: string })[] = [
     options: { accumulatorBits: '32' },
     played: (words) => accumulated(words, 32, timerRate, 400),
   },
-  { playback: 'two-accumulators', title: '256 × 8', definition: tone({}), options: {}, played: (words) => summed(words, 24, timerRate, secondRate, 400) },
+  {
+    playback: 'two-accumulators',
+    title: '256 × 8',
+    definition: tone({}),
+    options: {},
+    played: (words) => summed(words, 24, timerRate, secondRate, 400),
+  },
   {
     playback: 'two-accumulators',
     title: '128 × 12 in two’s complement',
     definition: tone({ length: 128, bits: 12, coding: 'twos-complement' }),
     options: {},
-    played: (words) => summed(words.map((word) => word + 2048), 24, timerRate, secondRate, 300).map((code) => code - 2048),
+    played: (words) =>
+      summed(
+        words.map((word) => word + 2048),
+        24,
+        timerRate,
+        secondRate,
+        300,
+      ).map((code) => code - 2048),
   },
-  { playback: 'once', title: '100 × 8', definition: tone({ length: 100 }), options: { rampWords: '9', idleCode: '30' }, played: (words) => playedOnce(words, 30, 9) },
+  {
+    playback: 'once',
+    title: '100 × 8',
+    definition: tone({ length: 100 }),
+    options: { rampWords: '9', idleCode: '30' },
+    played: (words) => playedOnce(words, 30, 9),
+  },
 ];
 
 async function play({ definition, options, places, played }: Playing, bench: Bench, playback: string) {
@@ -169,9 +231,11 @@ export async function proveAvr(): Promise<Proof[]> {
     const { run, most } = await play(one, bench, one.playback);
     const delays = new Set(run.writeDelays);
     const [delay] = delays;
-    if (delays.size !== 1) throw new Error(`${one.title}: writes come ${[...delays].join()} cycles after the response.`);
+    if (delays.size !== 1)
+      throw new Error(`${one.title}: writes come ${[...delays].join()} cycles after the response.`);
     const handlerCycles = Math.max(...run.handlerCycles);
-    if (handlerCycles + 2 !== most) throw new Error(`${one.title}: ${handlerCycles} cycles, where the file says ${most}.`);
+    if (handlerCycles + 2 !== most)
+      throw new Error(`${one.title}: ${handlerCycles} cycles, where the file says ${most}.`);
     proofs.push({
       case: `${one.playback}, ${one.title}`,
       tool,
@@ -186,7 +250,9 @@ export async function proveAvr(): Promise<Proof[]> {
 function evenly(playback: string, title: string, run: SimulatedRun, said: number): Proof {
   const steps = stepsOf(run);
   if (steps.size !== 1 || !steps.has(said)) {
-    throw new Error(`${playback}, ${title}: ${[...steps].join()} cycles between writes, where the file says ${said}.`);
+    throw new Error(
+      `${playback}, ${title}: ${[...steps].join()} cycles between writes, where the file says ${said}.`,
+    );
   }
   return {
     case: `${playback}, ${title}`,
@@ -220,7 +286,11 @@ int main(void)
     const words = expected[0].words.map((word, k) => (word & 0xffff) | ((expected[1]?.words[k] ?? 0) << 8));
     const run = simulate(program, part, { wantedPortWrites: 2 * words.length });
     const [low, high] = [valuesAt(run, 'PORTB'), valuesAt(run, 'PORTD')];
-    mustEqual(low.map((byte, k) => byte | (high[k] << 8)), words, `avr ${title}`);
+    mustEqual(
+      low.map((byte, k) => byte | (high[k] << 8)),
+      words,
+      `avr ${title}`,
+    );
     proofs.push({ case: title, tool, proven: 'the running program reads every entry back' });
   }
   return proofs;

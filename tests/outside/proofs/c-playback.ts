@@ -36,21 +36,26 @@ const kinds: Playing[] = [
     next: 'NAME_word(NAME_next_entry())',
     wanted: (words) => [...words, ...words],
   },
-  ...(['16', '24', '32'] as const).map(
-    (accumulatorBits): Playing => ({
-      title: `timer-accumulator of ${accumulatorBits} bits, 64 × 12 in two’s complement`,
-      definition: signed,
-      options: { playback: 'timer-accumulator', accumulatorBits },
-      next: 'NAME[NAME_next_entry()]',
-      wanted: (words) => accumulated(words, Number(accumulatorBits), rate, 500),
-    }),
-  ),
+  ...(['16', '24', '32'] as const).map((accumulatorBits): Playing => ({
+    title: `timer-accumulator of ${accumulatorBits} bits, 64 × 12 in two’s complement`,
+    definition: signed,
+    options: { playback: 'timer-accumulator', accumulatorBits },
+    next: 'NAME[NAME_next_entry()]',
+    wanted: (words) => accumulated(words, Number(accumulatorBits), rate, 500),
+  })),
   {
     title: 'two-accumulators, 64 × 12 in two’s complement',
     definition: signed,
     options: { playback: 'two-accumulators' },
     next: 'NAME_next()',
-    wanted: (words) => summed(words.map((word) => word + 2048), 24, rate, second, 500).map((code) => code - 2048),
+    wanted: (words) =>
+      summed(
+        words.map((word) => word + 2048),
+        24,
+        rate,
+        second,
+        500,
+      ).map((code) => code - 2048),
   },
   {
     title: 'once, 64 × 12 in two’s complement',
@@ -73,7 +78,12 @@ export async function proveC99Playback(): Promise<Proof[]> {
     const [{ words }] = expectedOf(table);
     return { ...kind, name, files, wanted: kind.wanted([...words]) };
   });
-  const dma = exported(signed, 'c99', { arrayName: 'channel', playback: 'dma', dmaBits: '32', alignment: '4' });
+  const dma = exported(signed, 'c99', {
+    arrayName: 'channel',
+    playback: 'dma',
+    dmaBits: '32',
+    alignment: '4',
+  });
   const tones = Array.from({ length: 40 }, (_, k) => (k * 207_017 + 1) % 8_000_000);
   const main = `
 #include <stdio.h>
@@ -95,7 +105,8 @@ ${tones.map((m) => `    printf("%lu ", (unsigned long)PLAY_4_STEP_FOR_MILLIHZ(${
     return 0;
 }
 `;
-  const beyond = '#include "play_4_play.h"\nuint32_t step(void);\nuint32_t step(void) { return PLAY_4_STEP_FOR_MILLIHZ(8000001u); }\n';
+  const beyond =
+    '#include "play_4_play.h"\nuint32_t step(void);\nuint32_t step(void) { return PLAY_4_STEP_FOR_MILLIHZ(8000001u); }\n';
   const files = [
     ...playing.flatMap((one) => one.files),
     ...dma.files,
@@ -104,15 +115,21 @@ ${tones.map((m) => `    printf("%lu ", (unsigned long)PLAY_4_STEP_FOR_MILLIHZ(${
     { name: 'within.c', text: beyond.replace('8000001', '8000000') },
   ];
   await inFolder(files, async (folder) => {
-    const sources = files.map(({ name }) => name).filter((name) => name.endsWith('.c') && !/beyond|within/.test(name));
+    const sources = files
+      .map(({ name }) => name)
+      .filter((name) => name.endsWith('.c') && !/beyond|within/.test(name));
     for (const compiler of ['gcc', 'clang']) {
       await run(compiler, ['-std=c99', ...everyWarning, ...sources, '-o', 'main'], folder);
-      const lines = (await run('./main', [], folder)).split('\n').map((line) => line.trim().split(' ').map(Number));
+      const lines = (await run('./main', [], folder))
+        .split('\n')
+        .map((line) => line.trim().split(' ').map(Number));
       playing.forEach(({ title, wanted }, k) => mustEqual(lines[k], wanted, `c99 ${title}`));
       const patterns = expectedOf(dma.table)[0].words.map((word) => word & 0xfff);
       mustEqual(lines[playing.length], patterns, 'c99 dma');
       mustEqual(lines[playing.length + 1], [4], 'c99 dma item bytes');
-      const steps = tones.map((m) => Number((BigInt(m) * 2n ** 32n * 500n * 2n + 8_000_000_000n) / 16_000_000_000n));
+      const steps = tones.map((m) =>
+        Number((BigInt(m) * 2n ** 32n * 500n * 2n + 8_000_000_000n) / 16_000_000_000n),
+      );
       mustEqual(lines[playing.length + 2], steps, 'step words');
       await run(compiler, ['-std=c99', ...strictWarnings, '-c', 'within.c'], folder);
       const isTaken = await run(compiler, ['-std=c99', ...strictWarnings, '-c', 'beyond.c'], folder).then(

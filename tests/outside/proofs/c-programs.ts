@@ -8,7 +8,9 @@ export const everyWarning = [...strictWarnings, '-Wconversion', '-Wsign-conversi
 const cWarnings = [...everyWarning, '-Wstrict-prototypes', '-Wmissing-prototypes'];
 
 const readers = ({ name, files, expected }: Exported) => {
-  const hasReader = files.some(({ text }) => text.includes(`${name}_word(`) || text.includes('_word(uint16_t'));
+  const hasReader = files.some(
+    ({ text }) => text.includes(`${name}_word(`) || text.includes('_word(uint16_t'),
+  );
   return expected.map(({ port }) => {
     const array = port === '' ? name : `${name}_${port}`;
     return { port: port || '-', read: hasReader ? `${array}_word((uint16_t)k)` : `${array}[k]` };
@@ -42,7 +44,10 @@ const sourcesOf = (cases: readonly Exported[], ending: string) =>
 /** c99: two compilers, three dialects of C, and C++ through the same headers. */
 export async function proveC99(): Promise<Proof[]> {
   const proofs: Proof[] = [];
-  const settings: Record<string, string>[] = [{}, { numberBase: 'hexadecimal', storage: 'ram', alignment: '64', lineEnding: 'crlf' }];
+  const settings: Record<string, string>[] = [
+    {},
+    { numberBase: 'hexadecimal', storage: 'ram', alignment: '64', lineEnding: 'crlf' },
+  ];
   for (const extra of settings) {
     const cases = exportCases('c99', extra);
     const print = printer(cases);
@@ -144,6 +149,10 @@ export async function proveAsm(): Promise<Proof[]> {
     }
     await run('gcc', ['-std=c99', ...cWarnings, 'print.c', ...objects, '-o', 'print'], folder);
     mustPrint(await run('./print', [], folder), cases);
-    return each(cases, 'GNU as for this machine, Arm and RISC-V; gcc', 'same bytes by all three; prints every entry');
+    return each(
+      cases,
+      'GNU as for this machine, Arm and RISC-V; gcc',
+      'same bytes by all three; prints every entry',
+    );
   });
 }

@@ -113,9 +113,14 @@ export function mustPrint(text: string, cases: readonly Exported[]): void {
   }
 }
 
-export function mustEqual(found: readonly number[] | undefined, wanted: readonly number[], what: string): void {
+export function mustEqual(
+  found: readonly number[] | undefined,
+  wanted: readonly number[],
+  what: string,
+): void {
   const at = wanted.findIndex((word, k) => found?.[k] !== word);
   if (found !== undefined && at < 0 && found.length === wanted.length) return;
-  const where = at < 0 ? `${found?.length} words for ${wanted.length}` : `entry ${at}: ${found?.[at]} for ${wanted[at]}`;
+  const where =
+    at < 0 ? `${found?.length} words for ${wanted.length}` : `entry ${at}: ${found?.[at]} for ${wanted[at]}`;
   throw new Error(`${what}: ${where}.`);
 }

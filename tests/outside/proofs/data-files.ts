@@ -8,7 +8,10 @@ import { exportCases, mustEqual, mustPrint, tableCases, type Exported } from './
 import { each, type Proof } from './proof.ts';
 
 /** Puts every file of every case into a folder of its own, does some work there. */
-function withFiles<Result>(cases: readonly Exported[], work: (folder: string) => Promise<Result>): Promise<Result> {
+function withFiles<Result>(
+  cases: readonly Exported[],
+  work: (folder: string) => Promise<Result>,
+): Promise<Result> {
   return inFolder([], async (folder) => {
     await writeAll(
       cases.flatMap(({ files }) => files),
@@ -31,7 +34,11 @@ const python = (folder: string, program: string, cases: readonly Exported[]) => 
     bits: table.definition.table.bits,
     signed: table.definition.table.coding === 'twos-complement',
   }));
-  return run('python3', ['-c', `import json, sys\ncases = json.loads(sys.argv[1])\n${program}`, JSON.stringify(about)], folder);
+  return run(
+    'python3',
+    ['-c', `import json, sys\ncases = json.loads(sys.argv[1])\n${program}`, JSON.stringify(about)],
+    folder,
+  );
 };
 
 /** The module as the interpreter reads it; bytes literals, imported under a name of their own. */
@@ -100,7 +107,10 @@ export async function proveIntelHex(): Promise<Proof[]> {
   const cases = exportCases('intel-hex', { address: '0x0801FFF8' });
   const images = exportCases('binary');
   return inFolder([], async (folder) => {
-    await writeAll([...cases, ...images].flatMap(({ files }) => files), folder);
+    await writeAll(
+      [...cases, ...images].flatMap(({ files }) => files),
+      folder,
+    );
     for (const [at, { files, title }] of cases.entries()) {
       for (const [index, { name }] of files.entries()) {
         const back = ['-intel', '-offset', `-${address}`, '-o', 'back.bin', '-binary'];
@@ -108,13 +118,20 @@ export async function proveIntelHex(): Promise<Proof[]> {
         const info = await run('srec_info', [name, '-intel'], folder);
         const size = contentOf(images[at].files[index]).length;
         const range = /Data:\s+([0-9A-F]+) - ([0-9A-F]+)/.exec(info);
-        if (parseInt(range?.[1] ?? '', 16) !== address || parseInt(range?.[2] ?? '', 16) !== address + size - 1) {
+        if (
+          parseInt(range?.[1] ?? '', 16) !== address ||
+          parseInt(range?.[2] ?? '', 16) !== address + size - 1
+        ) {
           throw new Error(`${title}: ${info}`);
         }
         await run('cmp', ['back.bin', images[at].files[index].name], folder);
       }
     }
-    return each(cases, 'srec_cat, srec_info', 'sums and addresses over the end of a 64 KiB; the binary target’s bytes');
+    return each(
+      cases,
+      'srec_cat, srec_info',
+      'sums and addresses over the end of a 64 KiB; the binary target’s bytes',
+    );
   });
 }
 
@@ -205,7 +222,10 @@ export async function proveWav(): Promise<Proof[]> {
   const proofs: Proof[] = [];
   const short = { title: '100 × 6, three times over', definition: tone({ length: 101, bits: 6 }) };
   for (const { title, definition, repeats } of [
-    ...[tableCases.plain, tableCases.signed, tableCases.long, tableCases.fold].map((one) => ({ ...one, repeats: 1 })),
+    ...[tableCases.plain, tableCases.signed, tableCases.long, tableCases.fold].map((one) => ({
+      ...one,
+      repeats: 1,
+    })),
     { ...short, repeats: 3 },
   ]) {
     const { table, files } = exported(definition, 'wav', { sampleRateHz: '44100', repeats: String(repeats) });
@@ -216,12 +236,22 @@ export async function proveWav(): Promise<Proof[]> {
       if (!/Channels\s*: 1\n/.test(said) || !/Sample Rate\s*: 44100\n/.test(said)) throw new Error(said);
       const bytes = bits <= 8 ? 1 : 2;
       const encoding = bytes === 1 ? 'unsigned-integer' : 'signed-integer';
-      await run('sox', [files[0].name, '-t', 'raw', '-e', encoding, '-b', String(8 * bytes), 'raw.bin'], folder);
-      const text = await run('od', ['-An', '-v', '-w1', bytes === 1 ? '-tu1' : '-td2', ...(bytes === 1 ? [] : ['-w2']), 'raw.bin'], folder);
+      await run(
+        'sox',
+        [files[0].name, '-t', 'raw', '-e', encoding, '-b', String(8 * bytes), 'raw.bin'],
+        folder,
+      );
+      const text = await run(
+        'od',
+        ['-An', '-v', '-w1', bytes === 1 ? '-tu1' : '-td2', ...(bytes === 1 ? [] : ['-w2']), 'raw.bin'],
+        folder,
+      );
       const codes = text
         .trim()
         .split(/\s+/)
-        .map((sample) => (bytes === 1 ? Number(sample) >> (8 - bits) : (Number(sample) + 32_768) >> (16 - bits)));
+        .map((sample) =>
+          bytes === 1 ? Number(sample) >> (8 - bits) : (Number(sample) + 32_768) >> (16 - bits),
+        );
       const once = Array.from(table.codes);
       mustEqual(codes, Array.from({ length: repeats }, () => once).flat(), title);
     });

@@ -128,8 +128,25 @@ async function simulate(
     // The files of the export under every warning; what only carries them need not please.
     await run(gcc, [...flags.slice(0, 3), ...processor.flags, ...everyWarning, '-c', ...own], folder);
     const objects = own.map((name) => name.replace(/c$/, 'o'));
-    await run(gcc, [...flags, ...strictWarnings.slice(0, 1), 'start.c', 'main.c', ...objects, '-lgcc', '-o', 'program.elf'], folder);
-    const disassembly = await run(`${processor.tools}objdump`, ['-d', '--no-show-raw-insn', 'program.elf'], folder);
+    await run(
+      gcc,
+      [
+        ...flags,
+        ...strictWarnings.slice(0, 1),
+        'start.c',
+        'main.c',
+        ...objects,
+        '-lgcc',
+        '-o',
+        'program.elf',
+      ],
+      folder,
+    );
+    const disassembly = await run(
+      `${processor.tools}objdump`,
+      ['-d', '--no-show-raw-insn', 'program.elf'],
+      folder,
+    );
     return { sent: await serialOutput(processor, folder, wantedBytes), disassembly };
   });
 }
@@ -138,7 +155,11 @@ async function simulate(
  * Runs until the program ends, or until it has sent so many bytes; half a minute at most. They go into a file: into a
  * pipe the simulated port could send only as fast as someone reads.
  */
-async function serialOutput({ emulator }: Processor, folder: string, wantedBytes = Infinity): Promise<Buffer> {
+async function serialOutput(
+  { emulator }: Processor,
+  folder: string,
+  wantedBytes = Infinity,
+): Promise<Buffer> {
   const [command, ...args] = emulator;
   const sent = join(folder, 'sent.bin');
   const board = ['-display', 'none', '-monitor', 'none', '-serial', `file:${sent}`];
@@ -149,7 +170,11 @@ async function serialOutput({ emulator }: Processor, folder: string, wantedBytes
     child.once('error', reject);
     child.once('close', () => resolve());
   });
-  const sizeNow = () => stat(sent).then(({ size }) => size, () => 0);
+  const sizeNow = () =>
+    stat(sent).then(
+      ({ size }) => size,
+      () => 0,
+    );
   const start = performance.now();
   let isRunning = true;
   void ended.finally(() => (isRunning = false)).catch(() => undefined);
@@ -198,7 +223,12 @@ const turns = 3;
 async function provePlayback(processor: Processor): Promise<Proof[]> {
   const tool = `${processor.tools}gcc, ${processor.emulator[0]}`;
   const proofs: Proof[] = [];
-  const prove = async (playback: string, length: number, wanted: (codes: number[]) => number[], options = {}) => {
+  const prove = async (
+    playback: string,
+    length: number,
+    wanted: (codes: number[]) => number[],
+    options = {},
+  ) => {
     const { table, files } = exported(tone({ length }), processor.target, {
       arrayName: 'wave',
       playback,
@@ -220,7 +250,9 @@ async function provePlayback(processor: Processor): Promise<Proof[]> {
       tool,
       proven: playback === 'loop' ? 'every word in order' : 'every word in order, from real interrupts',
       instructions:
-        playback === 'loop' ? loopInstructions(disassembly) : functionInstructions(disassembly, processor.handler),
+        playback === 'loop'
+          ? loopInstructions(disassembly)
+          : functionInstructions(disassembly, processor.handler),
     });
   };
   const round = (words: number[]) => Array.from({ length: turns }, () => words).flat();
@@ -229,7 +261,9 @@ async function provePlayback(processor: Processor): Promise<Proof[]> {
   await prove('timer', 256, round);
   await prove('timer', 100, round);
   const rate = { clockHz: 8_000_000, cyclesPerWord: 4000 };
-  await prove('timer-accumulator', 256, (codes) => accumulated(codes, 24, { ...rate, milliHz: 440_000 }, 400));
+  await prove('timer-accumulator', 256, (codes) =>
+    accumulated(codes, 24, { ...rate, milliHz: 440_000 }, 400),
+  );
   await prove('two-accumulators', 256, (codes) =>
     summed(codes, 24, { ...rate, milliHz: 440_000 }, { ...rate, milliHz: 550_000 }, 400),
   );

@@ -8,7 +8,10 @@ const rustc = existsSync('/usr/bin/rustc') ? '/usr/bin/rustc' : 'rustc';
 
 /** rust: a library without std, every warning an error, and a program that prints what it holds. */
 export async function proveRust(): Promise<Proof[]> {
-  const settings: Record<string, string>[] = [{}, { alignment: '32', storage: 'ram', numberBase: 'hexadecimal' }];
+  const settings: Record<string, string>[] = [
+    {},
+    { alignment: '32', storage: 'ram', numberBase: 'hexadecimal' },
+  ];
   for (const extra of settings) {
     const cases = exportCases('rust', extra);
     const library = `#![no_std]\n${cases.map(({ name }) => `pub mod ${name};`).join('\n')}\n`;

@@ -31,18 +31,10 @@ export function ExportedFiles({ table, targetId, options, files, selected, onSel
         {...{ files, selected, onSelect }}
         downloads={(shown) => (
           <>
-            <Button
-              size="small"
-              icon={icons.download}
-              onPress={() => saveFile(shown)}
-            >
+            <Button size="small" icon={icons.download} onPress={() => saveFile(shown)}>
               Download {shown.name}
             </Button>
-            <Button
-              size="small"
-              icon={icons.download}
-              onPress={() => files.forEach(saveFile)}
-            >
+            <Button size="small" icon={icons.download} onPress={() => files.forEach(saveFile)}>
               Download each file
             </Button>
           </>

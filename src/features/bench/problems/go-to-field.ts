@@ -29,6 +29,7 @@ export function goToField(path: string): void {
       return goOnceThere(here);
     }
   }
+  goOnceThere(path);
 }
 
 function fieldAt(path: string): HTMLElement | undefined {

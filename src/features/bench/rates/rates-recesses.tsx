@@ -14,6 +14,8 @@ const TwoTonesPanel = later(
   async () => (await import('./two-tones-panel.tsx')).TwoTonesPanel,
 );
 
+const PulsesPanel = later('the pulses', async () => (await import('./pulses-panel.tsx')).PulsesPanel);
+
 /** How the part makes the rate and the tone: parts of the output flight that open in place. */
 export function RatesRecesses() {
   const playback = useBench(({ history }) => history.present.playback);
@@ -50,6 +52,11 @@ export function RatesRecesses() {
       <Recess id="two-tones" title="Two tones in one loop" summary="Finds the loop that holds both">
         <TwoTonesPanel />
       </Recess>
+      {table.range === 'unipolar' && (
+        <Recess id="pulses" title="Pulses of the envelope" summary="What a PWM pin does, period by period">
+          <PulsesPanel />
+        </Recess>
+      )}
     </div>
   );
 }

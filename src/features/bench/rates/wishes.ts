@@ -15,6 +15,10 @@ const wishesSchema = z.strictObject({
   secondTone: z.string(),
   longest: z.number(),
   withinCents: z.number(),
+  pwmMode: z.enum(['fast', 'phase-correct']),
+  pwmBits: z.int().min(1).max(16),
+  pwmPrescaler: z.int().min(1),
+  periodsPerEntry: z.int().min(1),
 });
 
 /** What is known of the part and asked of it. It is no part of the wave, so undo leaves it alone. */
@@ -33,6 +37,10 @@ const atFirst: RateWishes = {
   secondTone: 'C#5',
   longest: 1024,
   withinCents: 5,
+  pwmMode: 'fast',
+  pwmBits: 8,
+  pwmPrescaler: 8,
+  periodsPerEntry: 4,
 };
 
 const storageKey = 'stepwell.bench.rates';

@@ -1,3 +1,4 @@
+import type { ReactNode } from 'react';
 import type { PointsSource, Problem } from '../../../../shared/contract/index.ts';
 import { SelectField, SwitchField, type SelectOption } from '../../../components/index.ts';
 import type { OnChange } from './change.ts';
@@ -11,6 +12,7 @@ interface PointsEditorProps extends TableFrame {
   source: PointsSource;
   onChange: OnChange<PointsSource>;
   problems: readonly Problem[];
+  moreStarts?: ReactNode;
 }
 
 const startNames: Record<PointStart, string> = {
@@ -36,7 +38,8 @@ const interpolations: readonly SelectOption<PointsSource['interpolation']>[] = [
 ];
 
 /** A wave as a closed curve through points. */
-export function PointsEditor({ source, onChange, problems, range, tableLength, cycles }: PointsEditorProps) {
+export function PointsEditor(props: PointsEditorProps) {
+  const { source, onChange, problems, range, tableLength, cycles, moreStarts } = props;
   const pathTo = usePathTo();
   return (
     <div className="space-y-4">
@@ -53,6 +56,7 @@ export function PointsEditor({ source, onChange, problems, range, tableLength, c
           </button>
         ))}
       </div>
+      {moreStarts !== undefined && <div className="recesses">{moreStarts}</div>}
       <div data-path={pathTo('.interpolation')}>
         <SelectField
           label="Between the points"

@@ -1,3 +1,4 @@
+import type { ReactNode } from 'react';
 import type { Problem, Source } from '../../../../shared/contract/index.ts';
 import { ChoiceField, type SelectOption } from '../../../components/index.ts';
 import { FieldProblem } from '../../../components/field-frame.tsx';
@@ -18,6 +19,8 @@ export interface ShapeFlightProps {
   tableLength: number;
   cycles: number;
   range: 'bipolar' | 'unipolar';
+  /** More to start a curve from than a source alone, below the starts. */
+  moreStarts?: ReactNode;
 }
 
 const kinds: Record<Kind, SelectOption<Kind>> = {
@@ -42,7 +45,8 @@ const SamplesEditor = later(
 );
 
 /** The first flight: what the wave is made of. */
-export function ShapeFlight({ source, onChange, problems, tableLength, cycles, range }: ShapeFlightProps) {
+export function ShapeFlight(props: ShapeFlightProps) {
+  const { source, onChange, problems, tableLength, cycles, range } = props;
   const kept = useKeptWork(source, onChange);
   const isSound = !problems.some(({ path }) => path.startsWith('source'));
   const wholeProblem = problemAt(problems, 'source');
@@ -61,7 +65,9 @@ export function ShapeFlight({ source, onChange, problems, tableLength, cycles, r
         {wholeProblem && <FieldProblem id="source-problem">{wholeProblem}</FieldProblem>}
       </div>
       {source.kind === 'harmonics' && <HarmonicsEditor {...frame} source={source} onChange={change} />}
-      {source.kind === 'points' && <PointsEditor {...frame} source={source} onChange={change} />}
+      {source.kind === 'points' && (
+        <PointsEditor {...frame} source={source} onChange={change} moreStarts={props.moreStarts} />
+      )}
       {source.kind === 'samples' && <SamplesEditor source={source} onChange={change} problems={problems} />}
       {source.kind === 'mix' && <MixEditor {...frame} source={source} onChange={change} />}
     </div>

@@ -17,7 +17,7 @@ const mostListed = 5;
 
 const extensions = () => [
   json(),
-  EditorView.contentAttributes.of({ 'aria-label': 'Definition as JSON', spellcheck: 'false' }),
+  EditorView.contentAttributes.of({ 'aria-label': 'Definition as JSON', spellcheck: 'false', tabindex: '0' }),
   EditorView.lineWrapping,
   codeLook(),
 ];

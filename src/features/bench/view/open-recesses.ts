@@ -8,6 +8,8 @@ export const recessIds = [
   'rates',
   'accumulator',
   'two-tones',
+  'pulses',
+  'fades',
 ] as const;
 export type RecessId = (typeof recessIds)[number];
 
