@@ -54,7 +54,7 @@ describe('npm start', () => {
     expect(await script.ended()).toBe(0);
     expect(await verify()).toEqual(during);
     expect(processesWith(folder)).toEqual([]);
-  });
+  }, 120_000);
 
   it.each(['SIGINT', 'SIGTERM', 'SIGHUP'] as const)('leaves no process behind after %s', async (signal) => {
     const script = start();

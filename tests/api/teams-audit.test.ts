@@ -160,6 +160,7 @@ describe('what is done to a team', () => {
     const invited = await as(boss).post(`${path}/invitations`, { email: viewer.email, role: 'viewer' });
     await as(boss).delete(`${path}/invitations/${(invited.body as { id: number }).id}`);
     const rows = await test.database.db.select().from(auditEvents).where(eq(auditEvents.teamId, crewTeam.id));
+    expect(rows.at(-1)?.details).toEqual({ email: viewer.email, role: 'viewer' });
     expect(rows.map(({ action, actorName }) => [action, actorName])).toEqual([
       ['team.changed', 'Ada Keel'],
       ['member.role-changed', 'Ada Keel'],

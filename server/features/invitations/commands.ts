@@ -93,6 +93,9 @@ export const withdrawInvitation = (
 ): Promise<void> =>
   withTransaction(database.db, async (transaction) => {
     await lockTeam(transaction, scope, 'admin');
+    const open = (await findInvitations(transaction, scope.teamId)).find(
+      (invitation) => invitation.id === id,
+    );
     const [{ affectedRows }] = await transaction
       .delete(oneTimeLinks)
       .where(
@@ -103,12 +106,15 @@ export const withdrawInvitation = (
           isNull(oneTimeLinks.usedAt),
         ),
       );
-    if (affectedRows === 0) throw new Problem('not-found', { detail: 'There is no such open invitation.' });
+    if (!open || affectedRows === 0) {
+      throw new Problem('not-found', { detail: 'There is no such open invitation.' });
+    }
     await appendEvent(transaction, config.auditKey, {
       teamId: scope.teamId,
       actor: scope.user,
       action: 'invitation.withdrawn',
       subject: `invitation:${id}`,
+      details: { email: open.email, role: open.role },
     });
   });
 

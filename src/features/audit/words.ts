@@ -59,7 +59,9 @@ const sentences: Readonly<Record<AuditAction, Say>> = {
     words: details.accountDeleted === true ? 'deleted their account, and so left the team' : 'left the team',
   }),
   'member.removed': ({ text }) => ({ words: `removed ${text('name')}, who was ${text('role')}` }),
-  'invitation.withdrawn': () => ({ words: 'withdrew an invitation' }),
+  'invitation.withdrawn': ({ text }) => ({
+    words: text('email') === '' ? 'withdrew an invitation' : `withdrew the invitation of ${text('email')}`,
+  }),
   'table.created': table('saved the new table'),
   'table.changed': ({ details, name }) => sayRenamed(details, name),
   'table.duplicated': ({ text, details, name }) => ({
