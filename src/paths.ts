@@ -3,6 +3,8 @@ const part = encodeURIComponent;
 /** Every address of the client, in one place. Patterns have their parameters as `:name`. */
 export const paths = {
   bench: '/',
+  /** The bench, with the way in for what exists already. */
+  bringIn: '/?open=shape&bring-in',
   /** The wave stands in the fragment, which browsers keep to themselves. */
   sharedWave: '/wave',
 

@@ -1,7 +1,15 @@
 import type { Command } from 'commander';
 import { buildTable } from '../../shared/build-table.ts';
-import { Refusal, type GeneratedFile } from '../../shared/contract/index.ts';
-import { contentOf, flagOf, optionOf, renderFiles, targetOf, targets } from '../../shared/firmware/index.ts';
+import { parseBoard, Refusal, type GeneratedFile } from '../../shared/contract/index.ts';
+import {
+  boardOptions,
+  contentOf,
+  flagOf,
+  optionOf,
+  renderFiles,
+  targetOf,
+  targets,
+} from '../../shared/firmware/index.ts';
 import { readTemplates } from '../tables/read-templates.ts';
 import { say, sayError } from './output.ts';
 import { readDefinition } from './read-definition.ts';
@@ -11,21 +19,23 @@ import { writeFiles } from './write-files.ts';
 interface Flags extends Readonly<Record<string, string>> {
   readonly target: string;
   readonly out: string;
+  readonly board: string;
 }
 
-/** `render DEFINITION.json --target NAME [--out DIR]`, and a flag for each option that some target has. */
+/** `render DEFINITION.json --target NAME [--board BOARD.json] [--out DIR]`, and a flag for each option that some target has. */
 export function addRender(command: Command): void {
   command
     .argument('<DEFINITION.json>', 'the definition; - reads standard input')
     .requiredOption('--target <name>', targets.map(({ id, title }) => `${id}: ${title}`).join('; '))
+    .option('--board <file>', 'a board: its clock and port map, where no flag of their own says otherwise')
     .option(
       '--out <folder>',
       'folder for the files, made where it is missing; without it they go to standard output',
     );
   for (const [flag, description] of optionFlags()) command.option(`${flag} <value>`, description);
-  command.action(async (file: string, { target, out, ...options }: Flags) => {
+  command.action(async (file: string, { target, out, board, ...options }: Flags) => {
     try {
-      await render(file, target, out, options);
+      await render(file, target, { out, board }, options);
     } catch (error) {
       throw error instanceof Refusal ? inFlags(error) : error;
     }
@@ -35,19 +45,36 @@ export function addRender(command: Command): void {
 async function render(
   file: string,
   target: string,
-  out: string | undefined,
+  { out, board }: { readonly out?: string; readonly board?: string },
   flags: Readonly<Record<string, string>>,
 ) {
-  const { commentOf } = targetOf(target);
+  const { commentOf, options: own } = targetOf(target);
+  const ofBoard = board === undefined ? {} : await optionsOfBoard(board);
   const table = buildTable(await readDefinition(file));
   // commander hands flags over in camel case, without their hyphens.
-  const options = Object.fromEntries(
-    Object.entries(flags).map(([flag, value]) => [optionOf(`--${flag}`), value]),
-  );
+  const options = Object.fromEntries([
+    ...Object.entries(ofBoard).filter(([name]) => name in own.shape),
+    ...Object.entries(flags).map(([flag, value]) => [optionOf(`--${flag}`), value]),
+  ]);
   const files = renderFiles(table, target, options, readTemplates());
   const said = out === undefined ? asOne(files, commentOf) : `${(await writeFiles(out, files)).join('\n')}\n`;
   say(said);
   for (const { path, message } of table.warnings) sayError(onOneLine(`warning: ${path}: ${message}`));
+}
+
+/** What a board's file says of clock and pins. @throws {Refusal} with `board.` before the path of a field at fault */
+async function optionsOfBoard(file: string): Promise<Readonly<Record<string, string>>> {
+  const input = await readDefinition(file);
+  try {
+    return boardOptions(parseBoard(input));
+  } catch (error) {
+    if (!(error instanceof Refusal)) throw error;
+    const [first, ...others] = error.problems.map((problem) => ({
+      ...problem,
+      path: `board.${problem.path}`,
+    }));
+    throw new Refusal(first, ...others);
+  }
 }
 
 /**

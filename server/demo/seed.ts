@@ -1,6 +1,6 @@
 import { randomBytes } from 'node:crypto';
 import { chmod, writeFile } from 'node:fs/promises';
-import { roles, teamDefaultsSchema, type Role } from '../../shared/contract/index.ts';
+import { parseBoard, roles, teamDefaultsSchema, type Role } from '../../shared/contract/index.ts';
 import { appendEvent } from '../audit/append-event.ts';
 import { hashPassword } from '../auth/passwords.ts';
 import type { Person } from '../auth/team-scope.ts';
@@ -12,7 +12,9 @@ import type { ServerDeps } from '../feature.ts';
 import type { BuiltRevision } from '../features/tables/build-revision.ts';
 import { createLimitSet } from '../features/limit-sets/commands.ts';
 import type { Command } from '../features/reviews/commands.ts';
+import { createBoard, reviseBoard } from '../features/boards/commands.ts';
 import { addRevision, createTable } from '../features/tables/commands.ts';
+import { demoBoards, type DemoBoard } from './boards.ts';
 import { demoTables, type DemoTable } from './library.ts';
 import { demoLimits } from './limits.ts';
 import { playReview } from './vetting.ts';
@@ -37,7 +39,7 @@ interface DemoAccount {
 }
 
 /**
- * Fills a database that nobody has an account in with the made-up team Ninth Fathom: people by role, limits, and tables
+ * Fills a database that nobody has an account in with the made-up team Ninth Fathom: people by role, limits, boards, and tables
  * saved, submitted and judged by the same commands as everybody's. Passwords are random; they are kept in `file`, which only its owner can read,
  * and answered as text to show. Answers nothing where there are people already.
  */
@@ -67,6 +69,7 @@ export async function seedDemo(deps: Deps, file: string): Promise<string | undef
         tell: () => Promise.resolve(),
       });
       for (const limits of demoLimits) await createLimitSet(commandBy('admin'), limits);
+      for (const board of demoBoards) await saveBoard(board, commandBy);
       for (const [index, table] of demoTables.entries()) await saveTable(table, built[index], commandBy);
     });
   } catch (error) {
@@ -135,12 +138,29 @@ async function insertTeam({ config }: Deps, transaction: Executor, people: Peopl
   return teamId;
 }
 
+/** Nobody else is there yet. */
+const unhindered = { holds: () => true };
+
+async function saveBoard(
+  { revisions }: DemoBoard,
+  commandBy: (role: Role) => Omit<Command, 'slug' | 'number'>,
+): Promise<void> {
+  let slug = '';
+  for (const [index, { by, note, board }] of revisions.entries()) {
+    const input = { board: parseBoard(board), note };
+    const saved =
+      index === 0
+        ? await createBoard(commandBy(by), input)
+        : await reviseBoard(commandBy(by), slug, unhindered, input);
+    slug = saved.slug;
+  }
+}
+
 async function saveTable(
   { title, tags, playback, revisions }: DemoTable,
   built: readonly BuiltRevision[],
   commandBy: (role: Role) => Omit<Command, 'slug' | 'number'>,
 ): Promise<void> {
-  const unhindered = { holds: () => true };
   let slug = '';
   for (const [index, revision] of revisions.entries()) {
     const { by, note } = revision;

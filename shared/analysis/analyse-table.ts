@@ -1,4 +1,5 @@
 import type { Report, TableSettings } from '../contract/index.ts';
+import { realTransformOf } from '../dft/index.ts';
 import { levelsOf, lsbOf, tableBytesOf, valuesOf, type QuantisedCycle } from '../quantiser/index.ts';
 import type { LevelledCycle } from '../waveform/index.ts';
 import { againstSignal, isConstant, strongestOf } from './against-signal.ts';
@@ -22,7 +23,7 @@ export function analyseTable(
 ): TableAnalysis {
   const lsb = lsbOf(table);
   const values = valuesOf(codes, table);
-  const errorSignal = differenceOf(values, cycle);
+  const errorSignal = errorOf(values, cycle);
   const wanted = spreadOf(cycle);
   const result = spreadOf(values);
   const error = spreadOf(errorSignal);
@@ -56,10 +57,11 @@ export function analyseTable(
   return { report, spectrum, values };
 }
 
-function differenceOf(values: Float64Array, cycle: Float64Array): Float64Array {
-  const difference = new Float64Array(cycle.length);
-  for (let k = 0; k < cycle.length; k += 1) difference[k] = values[k] - cycle[k];
-  return difference;
+/** The error `q − r`, in the working memory of its transform: it is not given away. */
+function errorOf(values: Float64Array, cycle: Float64Array): Float64Array {
+  const error = realTransformOf(cycle.length).signal;
+  for (let k = 0; k < cycle.length; k += 1) error[k] = values[k] - cycle[k];
+  return error;
 }
 
 function codeFigures(codes: Uint16Array, bits: number): Pick<Report, 'minCode' | 'maxCode' | 'usedCodes'> {

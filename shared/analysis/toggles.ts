@@ -1,11 +1,9 @@
 import type { WorstToggle } from '../contract/index.ts';
 
-/** Number of ones in a word of 16 bits, by sums over growing fields. */
-function onesIn(word: number): number {
-  let sum = word - ((word >> 1) & 0x5555);
-  sum = (sum & 0x3333) + ((sum >> 2) & 0x3333);
-  sum = (sum + (sum >> 4)) & 0x0f0f;
-  return (sum + (sum >> 8)) & 0x1f;
+/** Number of ones in each byte: those of its upper seven bits, and its last. */
+const onesInByte = new Uint8Array(2 ** 8);
+for (let byte = 1; byte < onesInByte.length; byte += 1) {
+  onesInByte[byte] = onesInByte[byte >> 1] + (byte & 1);
 }
 
 /** Bits that change at each step of the loop, from entry k to k+1 and from the last to the first (§4). */
@@ -14,13 +12,17 @@ export function toggleFigures(codes: Uint16Array): { meanToggles: number; worstT
   let total = 0;
   let worst = -1;
   let worstIndex = 0;
+  let from = codes[0];
   for (let k = 0; k < count; k += 1) {
-    const ones = onesIn(codes[k] ^ codes[k + 1 === count ? 0 : k + 1]);
+    const to = codes[k + 1 === count ? 0 : k + 1];
+    const changed = from ^ to;
+    const ones = onesInByte[changed >> 8] + onesInByte[changed & 0xff];
     total += ones;
     if (ones > worst) {
       worst = ones;
       worstIndex = k;
     }
+    from = to;
   }
   return {
     meanToggles: total / count,

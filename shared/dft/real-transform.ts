@@ -7,7 +7,8 @@ export interface RealTransform {
   readonly bins: number;
   /** Fills `lines` (2·bins numbers) from `signal` (N numbers). The two must be different arrays. */
   readonly forward: (lines: Float64Array, signal: Float64Array) => void;
-  /** Two arrays of 2·bins numbers for any caller's use; what they hold lasts until the next caller's. */
+  /** Arrays of N and twice 2·bins numbers for any caller's use; what they hold lasts until the next caller's. */
+  readonly signal: Float64Array;
   readonly lines: Float64Array;
   readonly otherLines: Float64Array;
 }
@@ -25,6 +26,7 @@ export function realTransformOf(size: number): RealTransform {
     size,
     bins,
     forward: size % 2 === 0 ? halfSizeTransform(size) : wholeTransform(size, bins),
+    signal: new Float64Array(size),
     lines: new Float64Array(2 * bins),
     otherLines: new Float64Array(2 * bins),
   };

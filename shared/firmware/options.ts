@@ -103,36 +103,3 @@ export const portLetters = ['A', 'B', 'C', 'D', 'E', 'F', 'G'] as const;
 export const portOption = z.enum(portLetters, {
   error: `a port letter, ${portLetters[0]} to ${portLetters.at(-1)}`,
 });
-
-/** Options in the groups that a form shows, in order; a target has some of each. */
-export const optionGroups: readonly { readonly title: string; readonly options: readonly string[] }[] = [
-  { title: 'Names', options: ['arrayName', 'arrayPrefix', 'licenceLine'] },
-  { title: 'Numbers and lines', options: ['numberBase', 'columns', 'lineEnding'] },
-  {
-    title: 'Storage',
-    options: ['storage', 'alignment', 'packed', 'endianness', 'address', 'repeats', 'sampleRateHz'],
-  },
-  {
-    title: 'Pins',
-    options: ['port', 'highPort', 'portMap', 'reservedPins', 'reservedBy', 'portAddress'],
-  },
-  {
-    title: 'Playback',
-    options: [
-      'playback',
-      'unroll',
-      'clockHz',
-      'prescaler',
-      'compare',
-      'countsPerWord',
-      'accumulatorBits',
-      'toneMilliHz',
-      'secondToneMilliHz',
-      'idleCode',
-      'rampWords',
-      'dmaBits',
-      'timeAddress',
-      'compareAddress',
-    ],
-  },
-];

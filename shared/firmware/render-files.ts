@@ -8,7 +8,7 @@ import { inertText } from './inert-text.ts';
 import { layOut } from './layout.ts';
 import { wordsToPlayOnce } from './once.ts';
 import { sharedFacts } from './shared-facts.ts';
-import type { ExportableTable, Target } from './target.ts';
+import type { ExportableTable, SharedOptions, Target } from './target.ts';
 import { targets } from './targets/index.ts';
 
 /** Text of each template by its path below `templates/`, the ending `.liquid` included. */
@@ -37,12 +37,12 @@ export function renderFiles(
   const target = targetOf(targetId);
   const given = target.parseOptions(options);
   const { definition, codes, engineVersion = thisEngine } = table;
-  const played = given.playback === 'once' ? { ...table, stored: wordsToPlayOnce(table, given) } : table;
+  const { played, layout } = laidOut(table, target, given);
   const input = {
     table: played,
     options: given,
     arrayName: given.arrayName ?? arrayNameFrom(definition.name, given.arrayPrefix),
-    layout: (target.layOut ?? layOut)(played, given),
+    layout,
     digest: digestOf({ definition, engineVersion, codes }),
   };
   const licence = inertText(given.licenceLine ?? '');
@@ -68,4 +68,20 @@ export function renderFiles(
       encoding: 'utf-8',
     };
   });
+}
+
+/** A table's words as its target stores them; of a wave played once with what leads in and out. */
+function laidOut(table: ExportableTable, target: Target, given: SharedOptions) {
+  const played = given.playback === 'once' ? { ...table, stored: wordsToPlayOnce(table, given) } : table;
+  return { played, layout: (target.layOut ?? layOut)(played, given) };
+}
+
+/**
+ * Bytes that the arrays of an export take where they are stored.
+ *
+ * @throws {Refusal} as `renderFiles`
+ */
+export function storedBytes(table: ExportableTable, targetId: string, options: unknown): number {
+  const target = targetOf(targetId);
+  return laidOut(table, target, target.parseOptions(options)).layout.byteCount;
 }

@@ -21,3 +21,4 @@ export { cutCycle, type CutCycle, type CycleBounds, type Join } from './recordin
 export { seamOf, type Seam } from './table/seam.ts';
 export { oldTableOf, reportOldTable, type OldTable, type OldTableReport } from './table/old-table-report.ts';
 export { betterTable, definitionOfTable, type BetterMethod, type BetterTable } from './table/definitions.ts';
+export { definitionOfValues, draftsOf, nameOfFile, type ImportDraft } from './drafts.ts';

@@ -75,8 +75,12 @@ export class Elimination {
     for (let state = 0; state < below; state += 1) {
       const t = ohms[from + state] + between;
       const u = volts[from + state];
-      const whenLow = 1 / (1 + low * t);
-      const whenHigh = 1 / (1 + high * t);
+      // One division serves both.
+      const lowPart = 1 + low * t;
+      const highPart = 1 + high * t;
+      const both = 1 / (lowPart * highPart);
+      const whenLow = highPart * both;
+      const whenHigh = lowPart * both;
       ohms[to + state] = t * whenLow;
       ohms[to + below + state] = t * whenHigh;
       volts[to + state] = u * whenLow;

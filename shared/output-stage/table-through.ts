@@ -27,6 +27,8 @@ export class TableThrough {
   readonly #amplitudes: Float64Array;
   readonly #wanted: ReturnType<typeof linesOf>;
   readonly #strongestWanted: number;
+  /** The cycle's strongest line below N/2; 0 where it has none. */
+  readonly #carrier: number;
   #waiting: SaveFigures | null = null;
 
   constructor(table: PlayedTable) {
@@ -40,10 +42,15 @@ export class TableThrough {
     this.#amplitudes = new Float64Array(this.#wanted.re.length);
     const { re, im } = this.#wanted;
     let strongest = 0;
+    let carrier = 0;
     for (let k = 1; k < re.length; k += 1) {
-      const own = (re[k] ** 2 + im[k] ** 2) * (table.gains?.[k] ?? 1) ** 2;
-      strongest = Math.max(strongest, 2 * k === size ? own : 4 * own);
+      const isHalf = 2 * k === size;
+      const own = (re[k] ** 2 + im[k] ** 2) * (table.gains?.[k] ?? 1) ** 2 * (isHalf ? 1 : 4);
+      if (own <= strongest) continue;
+      strongest = own;
+      carrier = isHalf ? 0 : k;
     }
+    this.#carrier = carrier;
     // A constant's lines are rounding noise.
     const isConstant = table.cycle.every((value) => value === table.cycle[0]);
     this.#strongestWanted = isConstant ? 0 : strongest;
@@ -85,9 +92,11 @@ export class TableThrough {
     const size = this.#table.codes.length;
     const { re: wantedRe, im: wantedIm } = this.#wanted;
     const { gains } = this.#table;
+    const carrier = this.#carrier;
     let strongestAdded = 0;
     let addedPower = 0;
-    amplitudes[0] = 0;
+    let strongestOther = 0;
+    let otherPower = 0;
     for (let k = 1; k < amplitudes.length; k += 1) {
       const a = 2 * k;
       const b = 2 * (size - k);
@@ -97,13 +106,31 @@ export class TableThrough {
       const addedIm = im - wantedIm[k];
       const scale = (a === size ? 1 : 2) * (gains === undefined ? 1 : gains[k]);
       const added = (addedRe * addedRe + addedIm * addedIm) * scale * scale;
+      const own = (re * re + im * im) * scale * scale;
       if (added > strongestAdded) strongestAdded = added;
       addedPower += a === size ? added : added / 2;
-      amplitudes[k] = (Math.sqrt(re * re + im * im) * scale) / size;
+      // Squares of amplitudes, times N²; roots are taken where they are wanted.
+      amplitudes[k] = own;
+      if (k === carrier) continue;
+      if (own > strongestOther) strongestOther = own;
+      otherPower += a === size ? own : own / 2;
     }
-    const { sinadDb } = carrierFigures(amplitudes, { length: size, range: this.#table.range });
-    const isExact = addedPower <= exactPower * size * size;
+    const perSquare = 1 / (size * size);
+    const isExact = addedPower * perSquare <= exactPower;
     const ratio = isExact ? 0 : strongestAdded / this.#strongestWanted;
-    save(sinadDb ?? NaN, ratio > 0 && Number.isFinite(ratio) ? 10 * Math.log10(ratio) : NaN);
+    // Most converters leave the carrier where the cycle has it. Where another line comes near, the report decides.
+    const isPlain =
+      carrier > 0 && amplitudes[carrier] > 1.01 * strongestOther && otherPower * perSquare > 1e-18;
+    const sinadDb = isPlain ? 10 * Math.log10(amplitudes[carrier] / 2 / otherPower) : this.#sinadDb();
+    save(sinadDb, ratio > 0 && Number.isFinite(ratio) ? 10 * Math.log10(ratio) : NaN);
+  }
+
+  /** By the report's own rules, from the squares that stand in the place of amplitudes. */
+  #sinadDb(): number {
+    const amplitudes = this.#amplitudes;
+    const length = this.#table.codes.length;
+    amplitudes[0] = 0;
+    for (let k = 1; k < amplitudes.length; k += 1) amplitudes[k] = Math.sqrt(amplitudes[k]) / length;
+    return carrierFigures(amplitudes, { length, range: this.#table.range }).sinadDb ?? NaN;
   }
 }

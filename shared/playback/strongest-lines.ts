@@ -86,19 +86,20 @@ interface LineSource {
   readonly scaled: number;
 }
 
-/** The table lines that are there at all, the strongest first. */
+/** The table lines that are there at all. */
 function sourcesOf(lines: RoundLines): LineSource[] {
   const sources: LineSource[] = [];
   for (let r = 1; r <= lines.base / 2; r += 1) {
     const first = amplitudeOf(r, lines);
     if (first > 0) sources.push({ r, first, scaled: first * Math.sin((Math.PI * r) / lines.period) });
   }
-  return sources.sort((a, b) => b.first - a.first);
+  return sources;
 }
 
 /** An amplitude that some lines, but no more than `most`, reach; found by halving its logarithm. */
 function thresholdFor(most: number, sources: readonly LineSource[], lines: RoundLines): number {
-  let high = sources[0].first;
+  let high = 0;
+  for (const { first } of sources) high = Math.max(high, first);
   let low = 0;
   for (let turn = 0; turn < 60; turn += 1) {
     const guess = low === 0 ? high / 16 : Math.sqrt(low * high);
@@ -120,7 +121,8 @@ function countFrom(
 ): number {
   let count = 0;
   for (const { r, first, scaled } of sources) {
-    if (first < amplitude || count > most) break;
+    if (count > most) break;
+    if (first < amplitude) continue;
     const sine = scaled / amplitude;
     const last =
       repeats === 1 ? r : sine >= 1 ? period / 2 : Math.floor((period / Math.PI) * Math.asin(sine));
@@ -134,7 +136,7 @@ function countFrom(
 function linesFrom(amplitude: number, sources: readonly LineSource[], lines: RoundLines): Line[] {
   const found: Line[] = [];
   for (const { r, first } of sources) {
-    if (first < amplitude) break;
+    if (first < amplitude) continue;
     for (const start of 2 * r === lines.base ? [r] : [r, lines.base - r]) {
       for (let k = start; 2 * k <= lines.period; k += lines.base) {
         const each = amplitudeOf(k, lines);

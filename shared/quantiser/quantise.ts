@@ -48,10 +48,10 @@ function roundInto(
   const { gain, offset } = snappedLine(table);
   const topCode = levelsOf(table.bits) - 1;
   const round = rounderOf(table.rounding);
-  const steps = snapSteps;
+  const oneStep = 1 / snapSteps;
   let clippedCodes = 0;
   for (let k = 0; k < cycle.length; k += 1) {
-    const position = Math.floor(cycle[k] * gain + offset) / steps;
+    const position = Math.floor(cycle[k] * gain + offset) * oneStep;
     let code = round(dither === null ? position : position + dither[k]);
     if (code < 0 || code > topCode) {
       clippedCodes += 1;
@@ -78,10 +78,10 @@ export function errorInto(
   const { multiplier, less, divisor, minus } = valueLine(table);
   const topCode = levelsOf(table.bits) - 1;
   const round = rounderOf(table.rounding);
-  const steps = snapSteps;
+  const oneStep = 1 / snapSteps;
   for (let k = 0; k < cycle.length; k += 1) {
     const r = cycle[k];
-    const position = Math.floor(r * gain + offset) / steps;
+    const position = Math.floor(r * gain + offset) * oneStep;
     let code = round(dither === null ? position : position + dither[k]);
     if (code < 0) code = 0;
     else if (code > topCode) code = topCode;

@@ -15,9 +15,8 @@ export function storedWords(codes: Uint16Array, { bits, coding, complement, fold
   const count = fold === 'quarter' ? codes.length / 4 : codes.length;
   const shift = coding === 'twos-complement' ? levels / 2 : 0;
   const words = new Int32Array(count);
-  for (let k = 0; k < count; k += 1) {
-    words[k] = (complement ? levels - 1 - codes[k] : codes[k]) - shift;
-  }
+  if (complement) for (let k = 0; k < count; k += 1) words[k] = levels - 1 - shift - codes[k];
+  else for (let k = 0; k < count; k += 1) words[k] = codes[k] - shift;
   return words;
 }
 

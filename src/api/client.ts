@@ -6,6 +6,8 @@ import { askToSignIn } from './sign-in-again.ts';
 export interface Ask<Data> {
   readonly method?: 'GET' | 'POST' | 'PUT' | 'PATCH' | 'DELETE';
   readonly body?: object;
+  /** In place of a body: the bytes of a file. */
+  readonly file?: Blob;
   /** Entity tag of the state that the change was made from. */
   readonly ifMatch?: string;
   /** A request repeated with the same key is done once and answered alike. */
@@ -44,15 +46,16 @@ export async function ask<Data = undefined>(path: string, request: Ask<Data> = {
 }
 
 async function send<Data>(path: string, method: string, request: Ask<Data>): Promise<Answer<Data>> {
-  const { body, ifMatch, key, signal, schema } = request;
+  const { body, file, ifMatch, key, signal, schema } = request;
   const headers = new Headers();
   if (body !== undefined) headers.set('Content-Type', 'application/json');
+  if (file !== undefined) headers.set('Content-Type', 'application/octet-stream');
   if (ifMatch !== undefined) headers.set('If-Match', ifMatch);
   if (key !== undefined) headers.set('Idempotency-Key', key);
   const response = await fetchOrSay(`/api/v1${path}`, {
     method,
     headers,
-    body: body === undefined ? null : JSON.stringify(body),
+    body: body === undefined ? (file ?? null) : JSON.stringify(body),
     signal: signal ?? null,
   });
   const rates = readRates(response.headers.get('RateLimit'));

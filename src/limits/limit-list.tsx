@@ -22,7 +22,7 @@ function Row({ outcome }: { outcome: LimitOutcome }) {
       <Sign width="18" height="18" />
       <span className="limit-words">
         <span>
-          <strong>{limitWords[limit].figure.replace(/,$/, '')}</strong>{' '}
+          <strong>{limitWords[limit].figure}</strong>{' '}
           <span className="limit-figure">{sayMeasured(outcome)}</span>
         </span>
         <span className="quiet">

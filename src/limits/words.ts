@@ -40,11 +40,10 @@ export const limitWords: Readonly<Record<VettingLimit, LimitWords>> = {
     explains: 'What the array takes in memory.',
   },
   maxMean: {
-    figure: 'Mean, of either sign,',
+    figure: 'Mean',
     bound: 'at most',
     unit: 'of full scale',
-    explains:
-      'Direct current behind the converter: a loudspeaker without a capacitor in front of it gets warm.',
+    explains: 'Counted without its sign. Direct current behind the converter: keep it from a loudspeaker.',
   },
   maxClipped: {
     figure: 'Clipped',

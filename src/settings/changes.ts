@@ -1,7 +1,8 @@
 import type { Definition, Source } from '../../shared/contract/index.ts';
 import { leavesOf, leavesOfLevel, leavesOfSource, type Leaves } from './leaves.ts';
 import { nameOfSetting } from './names.ts';
-import { absent, saySource, sayValue } from './values.ts';
+import { sayInWords } from './source-words.ts';
+import { absent, sayValue } from './values.ts';
 
 /** A setting that differs between two definitions, in words. */
 export interface SettingChange {
@@ -25,7 +26,7 @@ export function changedSettings(before: Definition, after: Definition): SettingC
 
 function changedSource(before: Source, after: Source, path: string): SettingChange[] {
   if (before.kind !== after.kind || (before.kind === 'mix' && !hasSameParts(before, after))) {
-    return [{ path, name: nameOfSetting(path), before: saySource(before), after: saySource(after) }];
+    return [{ path, name: nameOfSetting(path), before: sayInWords(before), after: sayInWords(after) }];
   }
   if (before.kind === 'mix' && after.kind === 'mix') return changedMix(before, after, path);
   if (before.kind === 'samples' && after.kind === 'samples') {

@@ -1,7 +1,8 @@
 import type { Definition, Source } from '../../shared/contract/index.ts';
 import { leavesOf, leavesOfLevel, leavesOfSource, type Leaf } from './leaves.ts';
 import { nameOfSetting } from './names.ts';
-import { saySource, sayValue } from './values.ts';
+import { sayInWords } from './source-words.ts';
+import { sayValue } from './values.ts';
 
 /** A setting in words. */
 export interface SettingInWords {
@@ -20,7 +21,7 @@ export function listSettings({ name, source, level, table, schema }: Definition)
   ];
   return [
     ...leaves.slice(0, 1).map(inWords),
-    { path: 'source', name: nameOfSetting('source'), value: saySource(source) },
+    { path: 'source', name: nameOfSetting('source'), value: sayInWords(source) },
     ...leaves.slice(1).map(inWords),
     ...(table.levels === undefined ? [] : [longList('table.levels', table.levels)]),
   ];

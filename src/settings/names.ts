@@ -6,10 +6,10 @@ const names: Readonly<Record<string, string>> = {
   'source.partials': 'Partials',
   'source.points': 'Points',
   'source.interpolation': 'Interpolation',
-  'source.bandlimit': 'Held to the table’s band',
+  'source.bandlimit': 'Band-limiting',
   'source.values': 'Samples',
   'source.resampling': 'Resampling',
-  'source.operation': 'Mixed as',
+  'source.operation': 'Operation',
   level: 'Level',
   'level.removeMean': 'Remove the mean',
   'level.normalise': 'Normalise',
@@ -20,7 +20,7 @@ const names: Readonly<Record<string, string>> = {
   'table.bits': 'Bit depth',
   'table.cycles': 'Cycles in the table',
   'table.startPhaseDeg': 'Start phase',
-  'table.sampleAt': 'Sampled at the',
+  'table.sampleAt': 'Sampled at',
   'table.range': 'Range',
   'table.scale': 'Scale',
   'table.rounding': 'Rounding',
@@ -42,25 +42,29 @@ const partNames: Readonly<Record<string, string>> = {
   gain: 'gain',
 };
 
-const itemNames: Readonly<Record<string, string>> = {
-  partials: 'Partial',
-  points: 'Point',
-  values: 'Sample',
-  parts: 'Part',
-  levels: 'Level of code',
-};
+const listed: Readonly<Record<string, string>> = { partials: 'Partial', points: 'Point', values: 'Sample' };
 
 /**
- * Names the setting at a path in words: `source.partials[2].amplitude` is `Partial 3, amplitude`, and what stands in a
- * part of a mix is led by that part: `Part 2: Offset`. A path that is not known stays as it is.
+ * Names the setting at a path in words: `source.partials[2].amplitude` is `Partial 3, amplitude`, and in the
+ * second part of a mix `Part 2: Partial 3, amplitude`.
  */
 export function nameOfSetting(path: string): string {
-  const inMix = /^source\.parts\[(\d+)\]\.(source\b.*)$/.exec(path);
-  if (inMix !== null) return `Part ${Number(inMix[1]) + 1}: ${nameOfSetting(inMix[2])}`;
-  const inList = /^(?:source|table)\.(partials|points|values|parts|levels)\[(\d+)\](?:\.(\w+))?$/.exec(path);
-  if (inList === null) return names[path] ?? path;
-  const [, list, index, part] = inList;
-  // Codes are counted from 0, everything else as people count.
-  const item = `${itemNames[list]} ${list === 'levels' ? index : Number(index) + 1}`;
-  return part === undefined ? item : `${item}, ${partNames[part] ?? part}`;
+  const inMix = /^source\.parts\[(\d+)\](?:\.(source\b.*|\w+))?$/.exec(path);
+  if (inMix !== null) {
+    const [, index, inner] = inMix;
+    const part = `Part ${Number(index) + 1}`;
+    if (inner === undefined || inner === 'source') return part;
+    return inner.startsWith('source.')
+      ? `${part}: ${nameOfSetting(inner)}`
+      : `${part}, ${partNames[inner] ?? inner}`;
+  }
+  const inList = /^source\.(partials|points|values)\[(\d+)\](?:\.(\w+))?$/.exec(path);
+  if (inList !== null) {
+    const [, list, index, part] = inList;
+    const item = `${listed[list]} ${Number(index) + 1}`;
+    return part === undefined ? item : `${item}, ${partNames[part] ?? part}`;
+  }
+  const level = /^table\.levels\[(\d+)\]$/.exec(path);
+  if (level !== null) return `Measured level of code ${level[1]}`;
+  return names[path] ?? path;
 }

@@ -1,4 +1,3 @@
-import type { Source } from '../../shared/contract/index.ts';
 import { formatQuantity } from '../../shared/quantities/index.ts';
 
 /** What the choices of a setting are called. */
@@ -47,19 +46,3 @@ export function sayValue(path: string, value: unknown): string {
 }
 
 const whole = (value: number) => value.toLocaleString('en').replace('-', '−');
-
-const count = (number: number, one: string, many: string) => `${whole(number)} ${number === 1 ? one : many}`;
-
-/** Says in a few words what a wave is made of, whatever its kind. */
-export function saySource(source: Source): string {
-  switch (source.kind) {
-    case 'harmonics':
-      return count(source.partials.length, 'partial', 'partials');
-    case 'points':
-      return count(source.points.length, 'drawn point', 'drawn points');
-    case 'samples':
-      return count(source.values.length, 'sample', 'samples');
-    case 'mix':
-      return `${source.operation === 'sum' ? 'the sum' : 'the product'} of ${count(source.parts.length, 'part', 'parts')}`;
-  }
-}

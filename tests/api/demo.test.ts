@@ -8,6 +8,8 @@ import { checkPassword } from '../../server/auth/passwords.ts';
 import { readConfig } from '../../server/config.ts';
 import { openDatabase, type OpenDatabase } from '../../server/db/client.ts';
 import {
+  boardRevisions,
+  boards,
   comments,
   mailOutbox,
   reviews,
@@ -20,7 +22,8 @@ import {
 import { seedDemo } from '../../server/demo/seed.ts';
 import { createJobPool } from '../../server/jobs/pool.ts';
 import { digestOf } from '../../shared/firmware/index.ts';
-import type { Definition } from '../../shared/contract/index.ts';
+import { parseBoard, type Board, type Definition } from '../../shared/contract/index.ts';
+import { boardDigestOf } from '../../shared/output-stage/index.ts';
 import { unpackCodes } from '../../server/features/tables/stored-codes.ts';
 import {
   holdTestServer,
@@ -103,7 +106,24 @@ describe('demo data', () => {
       expect(note).not.toBe('');
     }
     expect(new Set(saved.map(({ madeBy }) => madeBy)).size).toBe(3);
-    expect(await verifyChain(db, config.auditKey, team.id)).toMatchObject({ events: 30 });
+    expect(await verifyChain(db, config.auditKey, team.id)).toMatchObject({ events: 33 });
+  });
+
+  it('holds two boards, one of them revised, as the parser has them and with right digests', async () => {
+    const { db } = database;
+    expect(
+      (await db.select().from(boards)).map(({ slug, latestRevision }) => [slug, latestRevision]),
+    ).toEqual([
+      ['small-controller-6-bit-ladder', 2],
+      ['buoy-controller-12-bit-converter', 1],
+    ]);
+    const saved = await db.select().from(boardRevisions);
+    expect(saved).toHaveLength(3);
+    for (const { board, digest, note } of saved) {
+      expect(parseBoard(board)).toEqual(board);
+      expect(digest).toBe(boardDigestOf(board as Board));
+      expect(note).not.toBe('');
+    }
   });
 
   it('shows the whole way of review: one table in each state, limits, reasons, comments, and no mail about it', async () => {

@@ -53,13 +53,6 @@ function rendered(definition: object, flags: readonly string[]): GeneratedFile[]
   );
 }
 
-/** Collects an answer as the bytes that came, whatever their type. */
-function wholeBody(answer: NodeJS.ReadableStream, done: (error: Error | null, body: Buffer) => void): void {
-  const parts: Buffer[] = [];
-  answer.on('data', (part: Buffer) => parts.push(Buffer.from(part)));
-  answer.on('end', () => done(null, Buffer.concat(parts)));
-}
-
 const byName = (files: readonly GeneratedFile[]) => [...files].sort((a, b) => (a.name < b.name ? -1 : 1));
 
 describe('the export of a saved revision', () => {
@@ -128,7 +121,7 @@ describe('the export of a saved revision', () => {
     }
     const { body } = await exported(slug, 'target=wav');
     const [sound] = body.files as GeneratedFile[];
-    const bytes = await exported(slug, `target=wav&file=${sound.name}`).buffer().parse(wholeBody);
+    const bytes = await exported(slug, `target=wav&file=${sound.name}`);
     expect(bytes.headers['content-type']).toBe('application/octet-stream');
     expect(Buffer.compare(bytes.body, Buffer.from(sound.text, 'base64'))).toBe(0);
     const missing = await exported(slug, 'target=c99&file=../../etc/passwd');

@@ -20,8 +20,8 @@ import { listRoutes } from '../../server/http/routes.ts';
 import { includesRole, type Role } from '../../shared/contract/index.ts';
 import { makeOwnTestApp, type OwnTestApp } from '../support/own-database.ts';
 import { asPerson, makeCrew, makePerson, makeSession, makeTeam, type TestPerson } from '../support/people.ts';
+import { freshBoard } from '../support/trespass-boards.ts';
 import {
-  freshBoard,
   freshInvitation,
   freshLimits,
   freshMember,
@@ -269,7 +269,7 @@ describe('an admin who names another team’s things', () => {
     };
     const response = await send(target.admin, route, { ...attempt, body: smuggled });
     // What takes no body at all reads none.
-    const takesNone = /\/(archive|restore)$/.test(route);
+    const takesNone = /\/(archive|restore|retire)$/.test(route);
     expect(response.status, response.text).toBe(takesNone ? 200 : 422);
     if (!takesNone) {
       const paths = (response.body.errors as { path: string }[]).map(({ path }) => path);

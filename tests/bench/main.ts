@@ -2,6 +2,7 @@ import { withClient } from './client.ts';
 import { measureCommandLine } from './command-line.ts';
 import { measureDrag } from './drag.ts';
 import { measureEngine } from './engine.ts';
+import { measureExports } from './exports.ts';
 import { measureFirstPage } from './first-page.ts';
 import { measureImports } from './imports.ts';
 import { measureLibrary } from './library.ts';
@@ -22,6 +23,7 @@ const parts: Record<string, { title: string; measure: () => boolean | Promise<bo
     measure: measurePlayback,
   },
   imports: { title: 'What is brought in', measure: measureImports },
+  exports: { title: 'Exports of 65,536 entries', measure: measureExports },
   cli: { title: 'The command line', measure: measureCommandLine },
   bench: {
     title: 'The bench in Chromium',

@@ -22,7 +22,7 @@ test.describe('export', () => {
     expect(scripts.filter((url) => /export-panel/.test(url))).not.toEqual([]);
   });
 
-  for (const target of ['c99', 'avr']) {
+  for (const target of ['c99', 'avr', 'rust']) {
     test(`shows, copies and downloads the same ${target} files that the command line writes`, async ({
       page,
     }) => {
@@ -32,8 +32,15 @@ test.describe('export', () => {
       await page
         .getByRole('textbox', { name: 'Licence line' })
         .fill("Ninth Fathom's own; $HOME stays as it is");
-      if (target === 'avr') await page.getByRole('combobox', { name: 'Port', exact: true }).selectOption('D');
-      await expect(page.getByRole('tab', { name: 'buoyTone.h' })).toBeVisible();
+      if (target === 'avr') {
+        await page.getByRole('combobox', { name: 'Port', exact: true }).selectOption('D');
+        await page.getByRole('combobox', { name: 'Playback' }).selectOption('timer');
+        await page.getByRole('textbox', { name: 'Compare value' }).fill('999');
+      }
+      await expect(
+        page.getByRole('tab', { name: `buoyTone.${target === 'rust' ? 'rs' : 'h'}`, exact: true }),
+      ).toBeVisible();
+      await expect(page.getByText(/^Proven: \d+ cases, by /)).toBeVisible();
 
       const folder = await mkdtemp(join(tmpdir(), 'stepwell-export-'));
       try {
@@ -78,6 +85,35 @@ test.describe('export', () => {
       }
     });
   }
+
+  test('shows bytes in hexadecimal, downloads them as the command line writes them, offers what applies', async ({
+    page,
+  }) => {
+    await page.goto('/?open=export');
+    await page.getByRole('combobox', { name: 'Target' }).selectOption('wav');
+    await expect(page.getByRole('textbox', { name: 'Licence line' })).toHaveCount(0);
+    await page.getByText('Storage', { exact: true }).click();
+    await page.getByRole('textbox', { name: 'Sample rate' }).fill('8000');
+    await expect(page.getByText(/52 49 46 46/)).toBeVisible();
+    const [sound] = await Promise.all([
+      page.waitForEvent('download'),
+      page.getByRole('button', { name: 'Download fog_signal_tone.wav' }).click(),
+    ]);
+    const bytes = await readFile(await sound.path());
+    expect(bytes.subarray(0, 4).toString('latin1')).toBe('RIFF');
+    expect(bytes.readUInt32LE(24)).toBe(8000);
+    await page.getByRole('combobox', { name: 'Target' }).selectOption('avr');
+    await expect(page.getByRole('combobox', { name: 'Unrolled' })).toBeVisible();
+    await expect(page.getByRole('textbox', { name: 'Ramp words' })).toHaveCount(0);
+    await page.getByRole('combobox', { name: 'Playback' }).selectOption('once');
+    await expect(page.getByRole('combobox', { name: 'Unrolled' })).toHaveCount(0);
+    await page.getByRole('textbox', { name: 'Ramp words' }).fill('5000');
+    await expect.poll(() => saidBeside(page, 'Ramp words')).toContain('"5000" is not allowed');
+    await page.getByRole('textbox', { name: 'Ramp words' }).fill('5');
+    await page.getByText(/^Proven: \d+ cases/).click();
+    await expect(page.getByRole('region', { name: 'Proofs' }).getByRole('row')).not.toHaveCount(0);
+    await expect(page.getByRole('cell', { name: '7 cycles a word' }).first()).toBeVisible();
+  });
 
   test('refuses an array name that C does not take, beside the field', async ({ page }) => {
     await page.goto('/?open=export');

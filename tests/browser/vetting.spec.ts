@@ -221,7 +221,7 @@ test('nobody judges what is their own while the two-person rule is on', async ({
   await submit(reviewer.context.request, team, slug);
   await page.goto(`/teams/${team}/reviews`);
   await expect(page.getByText('Nothing waits for you')).toBeVisible();
-  await page.getByRole('tab', { name: 'Submitted by me' }).click();
+  await page.getByRole('tab', { name: 'Mine' }).click();
   await expect(page).toHaveURL(/show=mine/);
   await page.getByRole('link', { name: 'My own, revision 1' }).click();
   const why = 'The two-person rule: somebody else must judge what you made.';

@@ -33,10 +33,10 @@ describe('how two definitions differ, in words', () => {
     const theirs = tone({ name: 'Tone-2', level: { level: 0.5 }, table: { startPhaseDeg: 90 } });
     expect(differencesOf(mine, theirs).differences).toEqual([
       { name: 'Name of the wave', mine: 'Tone', theirs: 'Tone-2' },
-      { name: 'Level', mine: '1', theirs: '0.5' },
-      { name: 'Bit depth', mine: '10', theirs: '8' },
+      { name: 'Level', mine: '1 of full scale', theirs: '0.5 of full scale' },
+      { name: 'Bit depth', mine: '10 bits', theirs: '8 bits' },
       { name: 'Start phase', mine: '0°', theirs: '90°' },
-      { name: 'Coding', mine: 'twos complement', theirs: 'offset binary' },
+      { name: 'Coding', mine: 'two’s complement', theirs: 'offset binary' },
       { name: 'Inverted codes', mine: 'yes', theirs: 'no' },
     ]);
   });

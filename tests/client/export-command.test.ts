@@ -14,6 +14,7 @@ import {
   definitionFileName,
   renderExport,
 } from '../../src/features/bench/export/render-export.ts';
+import { targetTitles } from '../../src/features/bench/export/target-titles.ts';
 import { examples } from '../../src/features/bench/state/examples.ts';
 import type { TableAnswer } from '../../src/workers/engine-messages.ts';
 
@@ -93,6 +94,10 @@ async function wordsOf(command: string): Promise<string[]> {
   const { stdout } = await promisify(execFile)('sh', ['-c', `printf '%s\\0' ${command}`]);
   return stdout.split('\0').slice(0, -1);
 }
+
+it('targets have the titles that the closed flight shows', () => {
+  expect(targetTitles).toEqual(Object.fromEntries(targets.map(({ id, title }) => [id, title])));
+});
 
 describe.each(targets.map((target) => [target.id, target] as const))('options of %s', (id, target) => {
   it('each have a flag of their own that leads back to them', () => {

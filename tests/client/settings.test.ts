@@ -81,7 +81,7 @@ describe('settings that differ, in words', () => {
       ['source.values', 'Samples', '3 numbers', '3 numbers, 2 of them others'],
     ]);
     expect(rows(tone({ table: { range: 'unipolar' } }), samples([0, 1]))).toEqual([
-      ['source', 'Shape', '2 partials', '2 samples'],
+      ['source', 'Shape', '2 partials', '2 samples, resampled by holding each one'],
     ]);
     expect(
       rows(

@@ -1,10 +1,9 @@
 import { randomBytes } from 'node:crypto';
 import { buildRevision } from '../../server/features/tables/build-revision.ts';
-import { insertBoard } from '../../server/features/boards/store.ts';
 import { insertTable } from '../../server/features/tables/store.ts';
-import { parseBoard, type Role } from '../../shared/contract/index.ts';
-import { boardWith } from '../engine/support/boards.ts';
+import type { Role } from '../../shared/contract/index.ts';
 import { sineDefinition } from './library.ts';
+import { boardCases } from './trespass-boards.ts';
 import { originalCases } from './trespass-originals.ts';
 import { freshAddress } from './outbox.ts';
 import { asPerson, join, makePerson, makeSession, type TestPerson, type TestTeam } from './people.ts';
@@ -57,24 +56,6 @@ export async function freshInvitation({ test, team, admin }: Target): Promise<nu
   if (response.status !== 201) throw new Error(response.text);
   return response.body.id;
 }
-
-/** A new board of the team, with one revision and version 1; answers its address. */
-export const freshBoard = ({ test, team, admin }: Target): Promise<string> =>
-  insertBoard(
-    test.database.db,
-    { teamId: team.id, userId: admin.id },
-    { board: parseBoard(boardWith({}, { name: 'Trespass' })), note: '' },
-  );
-
-const ofBoard =
-  (status: number, below: string, body?: object, headers?: Record<string, string>): RouteCase['attempt'] =>
-  async (target) => ({
-    path: `/teams/${target.team.slug}/boards/${await freshBoard(target)}${below}`,
-    body,
-    headers,
-    status,
-  });
-const savedBoard = { board: boardWith({}, { name: 'Trespass' }) };
 
 const noToken = () => ({ token: randomBytes(32).toString('base64url') });
 
@@ -203,6 +184,7 @@ export const routeCases: Readonly<Record<string, RouteCase>> = {
     }),
   },
   ...originalCases,
+  ...boardCases,
   'GET /teams/:team/tags': { access: 'viewer', attempt: inTeam(200, '/tags') },
 
   'GET /teams': { access: 'signed-in', attempt: always(200, '/teams') },
@@ -316,22 +298,6 @@ export const routeCases: Readonly<Record<string, RouteCase>> = {
   },
   'GET /teams/:team/audit': { access: 'reviewer', attempt: inTeam(200, '/audit') },
   'GET /teams/:team/audit.csv': { access: 'reviewer', attempt: inTeam(200, '/audit.csv') },
-
-  'GET /teams/:team/boards': { access: 'viewer', attempt: inTeam(200, '/boards') },
-  'POST /teams/:team/boards': { access: 'author', attempt: inTeam(201, '/boards', savedBoard) },
-  'GET /teams/:team/boards/:board': { access: 'viewer', attempt: ofBoard(200, '') },
-  'POST /teams/:team/boards/:board/retire': { access: 'author', attempt: ofBoard(200, '/retire') },
-  'POST /teams/:team/boards/:board/restore': { access: 'author', attempt: ofBoard(200, '/restore') },
-  'POST /teams/:team/boards/:board/copy': { access: 'author', attempt: ofBoard(201, '/copy') },
-  'GET /teams/:team/boards/:board/revisions': { access: 'viewer', attempt: ofBoard(200, '/revisions') },
-  'POST /teams/:team/boards/:board/revisions': {
-    access: 'author',
-    attempt: ofBoard(201, '/revisions', savedBoard, seen),
-  },
-  'GET /teams/:team/boards/:board/revisions/:number': {
-    access: 'viewer',
-    attempt: ofBoard(200, '/revisions/1'),
-  },
 
   'POST /report': { access: 'anyone', attempt: always(200, '/report', saved.definition) },
   'POST /render': { access: 'anyone', attempt: always(200, '/render', { ...saved, target: 'c99' }) },

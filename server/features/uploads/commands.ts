@@ -99,7 +99,7 @@ async function refuseFull(db: Executor, teamId: number, count: number, bytes: nu
 
 const noteEvent = (
   { transaction, auditKey, scope, slug, number }: Command,
-  action: string,
+  action: 'original.kept' | 'original.removed',
   { id, name, kind, bytes, sha256 }: UploadRow,
 ) =>
   appendEvent(transaction, auditKey, {

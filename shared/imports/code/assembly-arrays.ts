@@ -170,6 +170,8 @@ function signedNumber(
   operand: string,
   symbols: ReadonlyMap<string, number | undefined>,
 ): number | { readonly fault: string } {
+  // As nearly all operands are: a short decimal number.
+  if (/^[1-9]\d{0,8}$/.test(operand)) return Number(operand);
   const parts = /^([-+]?)\s*(.*)$/s.exec(operand);
   const [sign, digits] = [parts?.[1] === '-' ? -1 : 1, parts?.[2] ?? ''];
   if (digits === '') return { fault: 'nothing at all' };

@@ -145,8 +145,14 @@ function operandsIn(rest: string, restStart: number): Operand[] {
     operands.push({ text: piece.trim(), at: restStart + begin + lead });
     begin = end + 1;
   };
+  const isPlain = !/["']/.test(rest);
   for (let at = 0; at < rest.length;) {
-    if (rest[at] === "'") at = endOfCharacter(rest, at);
+    if (isPlain) {
+      const comma = rest.indexOf(',', at);
+      if (comma < 0) break;
+      take(comma);
+      at = comma + 1;
+    } else if (rest[at] === "'") at = endOfCharacter(rest, at);
     else if (rest[at] === '"') at = endOfString(rest, at);
     else {
       if (rest[at] === ',') take(at);

@@ -25,6 +25,7 @@ export function CodeView({ name, text }: { name: string; text: string }) {
 const extensionsFor = (name: string) => [
   EditorView.contentAttributes.of({ 'aria-label': `${name}, read-only`, spellcheck: 'false', tabindex: '0' }),
   lineNumbers(),
-  cpp(),
+  // The one grammar that is loaded: other languages are shown plain rather than wrongly coloured.
+  ...(/\.(?:c|h|hpp)$/.test(name) ? [cpp()] : []),
   codeLook(),
 ];

@@ -2,4 +2,5 @@
 export { codeLook } from './code-look.ts';
 export { FilesView, type FilesViewProps } from './files-view.tsx';
 export { OptionField } from './option-field.tsx';
+export { OptionGroups } from './option-groups.tsx';
 export { useCopy } from './use-copy.ts';

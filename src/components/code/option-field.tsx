@@ -2,6 +2,7 @@ import type { ReactNode } from 'react';
 import { z } from 'zod';
 import { SelectField } from '../select-field.tsx';
 import { TextField } from '../text-field.tsx';
+import { optionLabels, valueLabel } from './option-words.ts';
 
 interface OptionFieldProps {
   name: string;
@@ -13,23 +14,15 @@ interface OptionFieldProps {
   problem: ReactNode;
 }
 
-const labels: Readonly<Record<string, string>> = {
-  arrayName: 'Array name',
-  arrayPrefix: 'Prefix',
-  licenceLine: 'Licence line',
-  port: 'Port',
-  highPort: 'Port of bit 8 and up',
-};
-
 /** A control for one option of a target, made from the option's own schema. */
 export function OptionField({ name, schema, value, onChange, fallback, problem }: OptionFieldProps) {
   const { inner, standard } = unwrap(schema);
-  const label = labels[name] ?? name;
+  const label = optionLabels[name] ?? name;
   const description = sentence(schema instanceof z.ZodType ? schema.description : undefined);
   const typed = typeof value === 'string' ? value : '';
   if (inner instanceof z.ZodEnum) {
     const values = inner.options.map(String);
-    const choices = values.map((one) => ({ value: one, label: one }));
+    const choices = values.map((one) => ({ value: one, label: valueLabel(name, one) }));
     return (
       <SelectField
         label={label}
@@ -45,7 +38,7 @@ export function OptionField({ name, schema, value, onChange, fallback, problem }
     <TextField
       label={label}
       value={typed}
-      placeholder={fallback}
+      placeholder={fallback ?? standard}
       onChange={onChange}
       description={description}
       problem={problem}

@@ -1,5 +1,6 @@
 import { useCallback } from 'react';
 import type { Source } from '../../../shared/contract/index.ts';
+import { BringIn } from './import/index.ts';
 import { ShapeFlight, sayInWords } from './shape/index.ts';
 import { changeDefinition, useBench, useDefinition } from './state/use-bench.ts';
 import { later } from './view/later.tsx';
@@ -18,16 +19,19 @@ export function BenchShape() {
     [],
   );
   return (
-    <ShapeFlight
-      {...{ source, problems, cycles, range }}
-      onChange={change}
-      tableLength={length}
-      moreStarts={
-        <Recess id="fades" title="Lamp fades" summary="Even to the eye, exponential or linear">
-          <FadeStarts tableLength={length} onStart={changeDefinition} />
-        </Recess>
-      }
-    />
+    <>
+      <BringIn />
+      <ShapeFlight
+        {...{ source, problems, cycles, range }}
+        onChange={change}
+        tableLength={length}
+        moreStarts={
+          <Recess id="fades" title="Lamp fades" summary="Even to the eye, exponential or linear">
+            <FadeStarts tableLength={length} onStart={changeDefinition} />
+          </Recess>
+        }
+      />
+    </>
   );
 }
 

@@ -57,8 +57,8 @@ function Reviews({ slug }: { slug: string }) {
           selected={show}
           tabs={[
             { id: 'for-me', label: <ForMe team={slug} /> },
-            { id: 'waiting', label: 'All waiting' },
-            { id: 'mine', label: 'Submitted by me' },
+            { id: 'waiting', label: 'Waiting' },
+            { id: 'mine', label: 'Mine' },
             { id: 'decided', label: 'Decided' },
           ]}
           onSelect={(next) =>
@@ -141,7 +141,7 @@ function NoReviews({ team, show, role }: { team: string; show: ReviewShow; role:
     >
       <p>{words}</p>
       {show === 'for-me' && !includesRole(role, 'reviewer') && (
-        <p>Judging takes the role reviewer. As {roleWords[role]} you find your own under Submitted by me.</p>
+        <p>Judging takes the role reviewer. As {roleWords[role]} you find your own under Mine.</p>
       )}
     </EmptyState>
   );

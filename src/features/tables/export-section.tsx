@@ -9,8 +9,8 @@ import { ProblemNotice } from '../../forms/problem-notice.tsx';
 import { useSettled } from '../../components/use-settled.ts';
 
 const FilesView = lazy(async () => ({ default: (await import('../../components/code/index.ts')).FilesView }));
-const OptionField = lazy(async () => ({
-  default: (await import('../../components/code/index.ts')).OptionField,
+const OptionGroups = lazy(async () => ({
+  default: (await import('../../components/code/index.ts')).OptionGroups,
 }));
 
 interface ExportSectionProps {
@@ -71,24 +71,20 @@ function Export({ team, table, number, defaults }: ExportSectionProps) {
   };
   return (
     <div className="space-y-4 export-files">
-      <div className="field-pair">
+      <div className="space-y-4">
         <SelectField
           label="Target"
           value={target.id}
           options={targets.map(({ id, title }) => ({ value: id, label: title }))}
           onChange={(id) => setTarget(targets.find((one) => one.id === id) ?? target)}
         />
-        {Object.entries(target.options.shape).map(([name, schema]) => (
-          <OptionField
-            key={`${target.id} ${name}`}
-            name={name}
-            schema={schema}
-            value={typed[name]}
-            fallback={standard[name]}
-            onChange={(value) => setTyped({ ...typed, [name]: value })}
-            problem={problemOf(name)}
-          />
-        ))}
+        <OptionGroups
+          target={target}
+          typed={typed}
+          fallbacks={standard}
+          problemOf={problemOf}
+          onChange={(name, value) => setTyped({ ...typed, [name]: value })}
+        />
       </div>
       <ProblemNotice
         fault={fault}

@@ -70,6 +70,9 @@ function FirstTable({ team }: { team: string }) {
           <Link to={paths.bench} className="button button-primary">
             Shape a wave on the bench
           </Link>
+          <Link to={paths.bringIn} className="button button-plain">
+            Bring in what exists
+          </Link>
           <Button isDisabled={adding.isBusy} onPress={() => void adding.submit(undefined)}>
             Add one working example
           </Button>

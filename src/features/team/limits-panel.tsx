@@ -25,7 +25,7 @@ export function LimitsPanel({ team, isAdmin }: LimitsPanelProps) {
     <Panel title="Limits for vetting">
       <p className="quiet">
         The bench shows while shaping whether they are kept; a review shows it too, and vetting against a
-        broken one takes a written reason. {!isAdmin && 'They are set by an admin.'}
+        broken one takes a written reason. {!isAdmin && 'An admin sets them.'}
       </p>
       <ProblemNotice fault={error && asProblem(error)} onTryAgain={() => void refetch()} />
       {sets === undefined && !error && <Waiting>Reading the limits…</Waiting>}

@@ -44,7 +44,7 @@ export function TwoPersonPanel({ team, isAdmin }: TwoPersonPanelProps) {
       ) : (
         <p>
           {team.twoPersonRule ? `On. ${meaning}` : 'Off: reviewers may judge what they made themselves.'}{' '}
-          <span className="quiet">It is set by an admin.</span>
+          <span className="quiet">An admin sets it.</span>
         </p>
       )}
       <ProblemNotice fault={changing.fault} />

@@ -1,4 +1,4 @@
-import stored from '../../../shared/firmware/proofs.json' with { type: 'json' };
+import { proofsOf, targets } from '../../../shared/firmware/index.ts';
 import { proveAvr } from './avr.ts';
 import { proveC99Playback } from './c-playback.ts';
 import { proveAsm, proveC99, proveCpp17 } from './c-programs.ts';
@@ -33,7 +33,9 @@ export const provers: Readonly<Record<string, () => Promise<Proof[]>>> = {
   wav: proveWav,
 };
 
-export const storedProofs: Readonly<Record<string, readonly Proof[]>> = stored;
+export const storedProofs: Readonly<Record<string, readonly Proof[]>> = Object.fromEntries(
+  targets.map(({ id }) => [id, proofsOf(id)]),
+);
 
 /** Where the proofs differ from what is stored: a line each. */
 export function differencesFrom(kept: readonly Proof[] = [], proofs: readonly Proof[]): string[] {

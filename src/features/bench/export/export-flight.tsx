@@ -2,6 +2,7 @@ import { useCallback, useEffect, useState, type ComponentType } from 'react';
 import { Button } from '../../../components/index.ts';
 import { useBench } from '../state/use-bench.ts';
 import type { ExportPanelProps } from './export-panel.tsx';
+import { targetTitles } from './target-titles.ts';
 
 /** Files for firmware. Templates and the code view load when the flight is first opened. */
 export function ExportFlight({ isOpen, onGoTo }: { isOpen: boolean } & ExportPanelProps) {
@@ -34,15 +35,10 @@ function usePanel() {
   return { Panel, hasFailed, load };
 }
 
-const says: Readonly<Record<string, string>> = {
-  c99: 'C99 header and source',
-  avr: 'AVR program memory and port loop',
-};
-
 /** The target and the size of the array, in one line. */
 export function ExportSummary() {
   const target = useBench(({ history }) => history.present.exporting.target);
   const bytes = useBench(({ table }) => table?.report.tableBytes);
   const size = bytes === undefined ? '' : ` · ${bytes.toLocaleString('en')} bytes`;
-  return `${says[target] ?? target}${size}`;
+  return `${targetTitles[target] ?? target}${size}`;
 }

@@ -1,6 +1,6 @@
 import { useMemo, useState } from 'react';
 import { arrayNameFrom, targets } from '../../../../shared/firmware/index.ts';
-import { OptionField } from '../../../components/code/index.ts';
+import { OptionGroups } from '../../../components/code/index.ts';
 import { SelectField } from '../../../components/index.ts';
 import { useSettled } from '../../../components/use-settled.ts';
 import { useCalmTable } from '../state/tables.ts';
@@ -37,28 +37,24 @@ export function ExportPanel({ onGoTo }: ExportPanelProps) {
   const problems = 'problems' in rendered ? rendered.problems : [];
   return (
     <div className="space-y-4">
-      <div className="field-pair">
-        <SelectField
-          label="Target"
-          value={targetId}
-          options={targets.map(({ id, title }) => ({ value: id, label: title }))}
-          onChange={setTarget}
+      <SelectField
+        label="Target"
+        value={targetId}
+        options={targets.map(({ id, title }) => ({ value: id, label: title }))}
+        onChange={setTarget}
+      />
+      {target !== undefined && (
+        <OptionGroups
+          target={target}
+          typed={typed}
+          fallbacks={{ arrayName: arrayNameFrom(table.definition.name) }}
+          problemOf={(name) => {
+            const problem = problems.find(({ path }) => path === `options.${name}`);
+            return problem && `${problem.value} is not allowed. Allowed: ${problem.allowed}.`;
+          }}
+          onChange={setOption}
         />
-        {Object.entries(target?.options.shape ?? {}).map(([name, schema]) => {
-          const problem = problems.find(({ path }) => path === `options.${name}`);
-          return (
-            <OptionField
-              key={`${targetId} ${name}`}
-              name={name}
-              schema={schema}
-              value={typed[name]}
-              fallback={name === 'arrayName' ? arrayNameFrom(table.definition.name) : undefined}
-              onChange={(value) => setOption(name, value)}
-              problem={problem && `${problem.value} is not allowed. Allowed: ${problem.allowed}.`}
-            />
-          );
-        })}
-      </div>
+      )}
       <ExportProblems problems={problems} onGoTo={onGoTo} />
       {isStale && <p className="figure-note">These are the files of the last wave that could be built.</p>}
       {'files' in rendered && (

@@ -1,9 +1,11 @@
 import type { GeneratedFile } from '../../../../shared/contract/index.ts';
+import { storedBytes } from '../../../../shared/firmware/index.ts';
 import { FilesView, useCopy } from '../../../components/code/index.ts';
 import { Button, icons } from '../../../components/index.ts';
 import { saveFile } from '../../../components/save-file.ts';
 import { saveText } from '../../../components/save-text.ts';
 import type { TableAnswer } from '../../../workers/engine-messages.ts';
+import { ProofStatus } from './proof-status.tsx';
 import { commandFor, definitionFileName, type TypedOptions } from './render-export.ts';
 
 interface ExportedFilesProps {
@@ -19,13 +21,13 @@ interface ExportedFilesProps {
 export function ExportedFiles({ table, targetId, options, files, selected, onSelect }: ExportedFilesProps) {
   const copy = useCopy();
   const { name } = table.definition;
-  const bytes = table.report.tableBytes;
+  const bytes = storedBytes(table, targetId, options);
 
   return (
     <div className="space-y-3">
       <p>
-        The array takes <strong className="font-mono">{bytes.toLocaleString('en')}</strong>{' '}
-        {bytes === 1 ? 'byte' : 'bytes'} of flash.
+        The words take <strong className="font-mono">{bytes.toLocaleString('en')}</strong>{' '}
+        {bytes === 1 ? 'byte' : 'bytes'} of flash{options.storage === 'ram' && ', and as many of RAM'}.
       </p>
       <FilesView
         {...{ files, selected, onSelect }}
@@ -40,6 +42,7 @@ export function ExportedFiles({ table, targetId, options, files, selected, onSel
           </>
         )}
       />
+      <ProofStatus targetId={targetId} />
       <section className="space-y-2">
         <h3>The same files from the command line</h3>
         <p>

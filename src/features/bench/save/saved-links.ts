@@ -35,13 +35,17 @@ interface Lineage {
   link: SavedLink | null;
   /** What was saved last, where this page knows it. */
   saved: Pick<Wave, 'definition' | 'playback'> | null;
+  /** The file that the work was made from, as long as it has not been kept with a revision. */
+  original?: File | null;
 }
 
 export interface SavedLinks {
   getView(): SavedView;
   subscribe(listener: () => void): () => void;
   /** Puts other work on the bench, as one step of undo; `link` says which table it is, if any. */
-  open(update: (work: Work) => Work, link: SavedLink | null): void;
+  open(update: (work: Work) => Work, link: SavedLink | null, original?: File | null): void;
+  /** The file that the present work was made from, handed out once. */
+  takeOriginal(): File | null;
   /** Notes that `saved` is now what the link's revision holds. */
   markSaved(link: SavedLink, saved: Pick<Wave, 'definition' | 'playback'>): void;
 }
@@ -118,14 +122,19 @@ export function createSavedLinks({ bench, storage, tabs }: SavedLinksParts): Sav
       listeners.add(listener);
       return () => listeners.delete(listener);
     },
-    open(update, link) {
+    open(update, link, original = null) {
       const work = update(presentWork());
-      next = { link, saved: link === null ? null : work };
+      next = { link, saved: link === null ? null : work, original };
       const lineage = next;
       bench.change(() => work);
       next = null;
       // The bench takes no step for work that is the same; it belongs to the link all the same.
       if (current !== lineage) take(lineage);
+    },
+    takeOriginal() {
+      const original = current.original ?? null;
+      current.original = null;
+      return original;
     },
     markSaved(link, saved) {
       Object.assign(current, { link, saved });

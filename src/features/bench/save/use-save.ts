@@ -71,6 +71,7 @@ export function useSave({ schema, onClose, onFault }: SaveParts) {
         { ...linkTo, table: slug, title, revision: latestRevision, newest: latestRevision, etag },
         work,
       );
+      void keepOriginalOf(linkTo.team, slug, latestRevision);
       keep({ ...emptyDraft, team: linkTo.team });
       queryClient.setQueryData(tableQueries.detail(linkTo.team, slug).queryKey, table);
       void queryClient.invalidateQueries({ queryKey: tableQueries.all(linkTo.team) });
@@ -82,6 +83,21 @@ export function useSave({ schema, onClose, onFault }: SaveParts) {
       });
     };
     await saving.submit(act);
+  };
+
+  /** The revision is saved whatever becomes of this; a file that is not kept is told. */
+  const keepOriginalOf = async (team: string, slug: string, revision: number) => {
+    const file = theSavedLinks().takeOriginal();
+    if (file === null) return;
+    try {
+      const { keepOriginal } = await import('../../../api/originals.ts');
+      await keepOriginal(team, slug, revision, file);
+    } catch (error) {
+      toast({
+        message: `The revision is saved, but not ${file.name} with it: ${asProblem(error).message}`,
+        tone: 'fault',
+      });
+    }
   };
 
   return { draft, type: (part: Partial<SaveDraft>) => keep({ ...draft, ...part }), saving, save };

@@ -1,0 +1,57 @@
+/** What options are called on screen. */
+export const optionLabels: Readonly<Record<string, string>> = {
+  arrayName: 'Array name',
+  arrayPrefix: 'Prefix',
+  licenceLine: 'Licence line',
+  numberBase: 'Number base',
+  columns: 'Numbers in a row',
+  lineEnding: 'Line end',
+  storage: 'Stored in',
+  alignment: 'Boundary',
+  packed: 'Packed',
+  endianness: 'Byte order',
+  address: 'Address of the first byte',
+  repeats: 'Repeats',
+  sampleRateHz: 'Sample rate',
+  port: 'Port',
+  highPort: 'Port of bit 8 and up',
+  portMap: 'Port map',
+  reservedPins: 'Reserved pins',
+  reservedBy: 'Reserved pins are',
+  portAddress: 'Address of the output register',
+  playback: 'Playback',
+  unroll: 'Unrolled',
+  clockHz: 'Clock',
+  prescaler: 'Prescaler',
+  compare: 'Compare value',
+  countsPerWord: 'Counts from word to word',
+  accumulatorBits: 'Accumulator bits',
+  toneMilliHz: 'Tone in millihertz',
+  secondToneMilliHz: 'Second tone in millihertz',
+  idleCode: 'Idle code',
+  rampWords: 'Ramp words',
+  dmaBits: 'Element bits',
+  timeAddress: 'Address of the timer’s count',
+  compareAddress: 'Address of the timer’s compare',
+};
+
+/** What values of options are called on screen, where not by themselves. */
+const valueLabels: Readonly<Record<string, Readonly<Record<string, string>>>> = {
+  lineEnding: { lf: 'LF', crlf: 'CR LF' },
+  storage: { flash: 'flash', ram: 'RAM' },
+  alignment: { none: 'as the words need' },
+  reservedBy: { baked: 'written with each word', kept: 'kept by a mask' },
+  unroll: { none: 'not', two: 'by two', whole: 'whole' },
+  playback: {
+    none: 'table only',
+    loop: 'free-running loop',
+    timer: 'timer interrupt',
+    accumulator: 'loop with a phase accumulator',
+    'timer-accumulator': 'timer and phase accumulator',
+    'two-accumulators': 'timer and two tones',
+    once: 'once, with ramps',
+    dma: 'table for DMA',
+  },
+};
+
+export const valueLabel = (option: string, value: string) => valueLabels[option]?.[value] ?? value;
