@@ -11,12 +11,17 @@ export const paths = {
   /** These lead to the team in use, or say what to do first. */
   anyTables: '/tables',
   anyReviews: '/reviews',
+  anyBoards: '/boards',
   anyTeam: '/team',
   newTeam: '/new-team',
   audit: '/teams/:team/audit',
   team: '/teams/:team',
   tables: '/teams/:team/tables',
   table: '/teams/:team/tables/:table',
+  boards: '/teams/:team/boards',
+  newBoard: '/teams/:team/new-board',
+  board: '/teams/:team/boards/:board',
+  editBoard: '/teams/:team/boards/:board/edit',
   reviews: '/teams/:team/reviews',
   review: '/teams/:team/tables/:table/revisions/:number/review',
   /** Two revisions side by side: `?a=slug:3&b=slug:5`. */
@@ -48,6 +53,18 @@ export const tablePath = (team: string, table: string, revision?: number) =>
 
 export const openRevisionPath = (team: string, table: string, revision: number) =>
   `${tablesPath(team)}/${part(table)}/revisions/${revision}/bench`;
+
+export const boardsPath = (team: string) => `${teamPath(team)}/boards`;
+export const newBoardPath = (team: string) => `${teamPath(team)}/new-board`;
+
+export const boardPath = (team: string, board: string, revision?: number) =>
+  `${boardsPath(team)}/${part(board)}${revision === undefined ? '' : `?revision=${revision}`}`;
+
+export const editBoardPath = (team: string, board: string) => `${boardPath(team, board)}/edit`;
+
+/** The bench, with what the board makes of the codes in sight. */
+export const boardOnBenchPath = (team: string, board: string) =>
+  `${paths.bench}?open=output&more=stage&board=${part(team)}/${part(board)}`;
 
 export const reviewsPath = (team: string) => `${teamPath(team)}/reviews`;
 

@@ -4,7 +4,7 @@ import { levelsOf, lsbOf, tableBytesOf, valuesOf, type QuantisedCycle } from '..
 import type { LevelledCycle } from '../waveform/index.ts';
 import { againstSignal, isConstant, strongestOf } from './against-signal.ts';
 import { carrierFigures } from './carrier-figures.ts';
-import { peakOf, spreadOf } from './moments.ts';
+import { spreadOf } from './moments.ts';
 import { spectrumOf, type Spectrum } from './spectrum.ts';
 import { toggleFigures } from './toggles.ts';
 
@@ -23,29 +23,31 @@ export function analyseTable(
 ): TableAnalysis {
   const lsb = lsbOf(table);
   const values = valuesOf(codes, table);
-  const errorSignal = errorOf(values, cycle);
-  const wanted = spreadOf(cycle);
-  const result = spreadOf(values);
-  const error = spreadOf(errorSignal);
-  const spectrum = spectrumOf(cycle, errorSignal);
+  const { error, errorPeak, valuePeak } = errorOf(values, cycle);
+  const spreads = { wanted: spreadOf(cycle), result: spreadOf(values), error: spreadOf(error) };
+  const spectrum = spectrumOf(cycle, error);
   const signal = {
-    variance: wanted.variance,
-    isConstant: isConstant(cycle, wanted.variance),
+    variance: spreads.wanted.variance,
+    isConstant: isConstant(cycle, spreads.wanted.variance),
     strongest: strongestOf(spectrum.intended),
   };
   const storedCount = table.fold === 'quarter' ? codes.length / 4 : codes.length;
 
-  const { exact, snrDb, unwantedDb } = againstSignal(signal, error.variance, strongestOf(spectrum.added));
+  const { exact, snrDb, unwantedDb } = againstSignal(
+    signal,
+    spreads.error.variance,
+    strongestOf(spectrum.added),
+  );
   const report: Report = {
     snrDb,
     idealSnrDb: 6.02 * table.bits + 1.76,
     exact,
-    meanErrorLsb: error.mean / lsb,
-    rmsErrorLsb: error.rms / lsb,
-    peakErrorLsb: peakOf(errorSignal) / lsb,
-    mean: result.mean,
-    rms: result.rms,
-    crestFactor: result.rms === 0 ? null : peakOf(values) / result.rms,
+    meanErrorLsb: spreads.error.mean / lsb,
+    rmsErrorLsb: spreads.error.rms / lsb,
+    peakErrorLsb: errorPeak / lsb,
+    mean: spreads.result.mean,
+    rms: spreads.result.rms,
+    crestFactor: spreads.result.rms === 0 ? null : valuePeak / spreads.result.rms,
     ...codeFigures(codes, table.bits),
     clippedSamples,
     clippedCodes,
@@ -57,11 +59,25 @@ export function analyseTable(
   return { report, spectrum, values };
 }
 
-/** The error `q − r`, in the working memory of its transform: it is not given away. */
-function errorOf(values: Float64Array, cycle: Float64Array): Float64Array {
+/**
+ * The error `q − r` and the largest absolute values of both q and e. The error lies in the working memory of its
+ * transform: it is not given away.
+ */
+function errorOf(
+  values: Float64Array,
+  cycle: Float64Array,
+): { error: Float64Array; errorPeak: number; valuePeak: number } {
   const error = realTransformOf(cycle.length).signal;
-  for (let k = 0; k < cycle.length; k += 1) error[k] = values[k] - cycle[k];
-  return error;
+  let errorPeak = 0;
+  let valuePeak = 0;
+  for (let k = 0; k < cycle.length; k += 1) {
+    const q = values[k];
+    const e = q - cycle[k];
+    error[k] = e;
+    if (Math.abs(e) > errorPeak) errorPeak = Math.abs(e);
+    if (Math.abs(q) > valuePeak) valuePeak = Math.abs(q);
+  }
+  return { error, errorPeak, valuePeak };
 }
 
 function codeFigures(codes: Uint16Array, bits: number): Pick<Report, 'minCode' | 'maxCode' | 'usedCodes'> {

@@ -44,15 +44,3 @@ export function spreadOf(signal: Float64Array): Spread {
   const variance = (a + b + (c + d)) / count;
   return { mean, variance, rms: Math.sqrt(variance + mean * mean) };
 }
-
-/** Largest absolute value of a signal. */
-export function peakOf(signal: Float64Array): number {
-  let lowest = 0;
-  let highest = 0;
-  for (let k = 0; k < signal.length; k += 1) {
-    const x = signal[k];
-    if (x > highest) highest = x;
-    else if (x < lowest) lowest = x;
-  }
-  return Math.max(highest, -lowest);
-}

@@ -43,3 +43,9 @@ export {
   type TrialSettingsInput,
 } from './trials.ts';
 export * from './boards.ts';
+export {
+  parseResistorBag,
+  resistorBagSchema,
+  type ResistorBag,
+  type ResistorBagInput,
+} from './resistor-bag.ts';

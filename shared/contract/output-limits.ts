@@ -18,6 +18,7 @@ export const outputLimits = {
   prescalers: { min: 1, max: 32 },
   compareBits: { min: 4, max: 32 },
   flashBytes: { min: 1, max: 2 ** 30 },
+  bagResistors: 1_000,
   trials: { min: 1, max: 1_000_000 },
   ports: { min: 1, max: 8 },
   portWidth: { min: 1, max: 32 },

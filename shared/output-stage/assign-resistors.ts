@@ -1,15 +1,5 @@
 import { xoroshiro128plus } from 'pure-rand/generator/xoroshiro128plus';
-
-/** Measured resistors to choose from, in Ω. */
-export interface ResistorBag {
-  readonly bits: number;
-  /** For R: at least `bits − 1`. */
-  readonly singles: readonly number[];
-  /** For 2R, rungs and terminator: at least `bits + 1`. */
-  readonly doubles: readonly number[];
-  /** What each pin adds in series, in Ω, high or low. */
-  readonly pinOhms?: number;
-}
+import type { ResistorBag } from '../contract/index.ts';
 
 export interface Assignment {
   readonly rungs: readonly number[];
@@ -65,7 +55,7 @@ class Arrangement {
   #bestDnl = Infinity;
   #tried = 0;
 
-  constructor({ bits, singles, doubles, pinOhms = 0 }: ResistorBag) {
+  constructor({ bits, singles, doubles, pinOhms }: ResistorBag) {
     this.#bits = bits;
     this.#pinOhms = pinOhms;
     this.#singles = Float64Array.from(singles);

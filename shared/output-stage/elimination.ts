@@ -42,7 +42,7 @@ export class Elimination {
 
   /** Where the sources behind node i begin. */
   static placeOf(node: number): number {
-    return 2 ** (node + 1) - 2;
+    return (1 << (node + 1)) - 2;
   }
 
   run({ rungs, series, terminator }: Resistors): void {

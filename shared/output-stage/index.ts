@@ -37,7 +37,7 @@ export {
   type TableStep,
 } from './settling.ts';
 export { stageWaveform, type StageInput, type StageWaveform } from './stage-waveform.ts';
-export { assignResistors, type Assignment, type ResistorBag } from './assign-resistors.ts';
+export { assignResistors, type Assignment } from './assign-resistors.ts';
 export { sinadAgainstBits, type BitsThatMatter, type SinadOfBits } from './bits-that-matter.ts';
 export { fitLevels, levelsFromWeights, type ChangedField, type FittedTable } from './fit-levels.ts';
 export { opAmpFollows, type OpAmpAnswer } from './op-amp-follows.ts';

@@ -1,5 +1,5 @@
 import type { OpAmp, OutputFilter } from '../contract/index.ts';
-import { apply, propagatorOf, type Matrix } from './propagator.ts';
+import { apply, changeOver, propagatorOf, type Matrix } from './propagator.ts';
 import { bufferAfter, modeOf, nodeAfter, timeInMode, type Follower, type Mode } from './slewing.ts';
 
 export interface StageInput {
@@ -25,8 +25,8 @@ export interface StageWaveform {
   readonly buffer: Float64Array;
   readonly output: Float64Array;
   /**
-   * Whether the period ends as it begins. False where the op-amp has not come to rest in many periods: one that slews
-   * all the time keeps where it began, so that such a loop has no one steady state.
+   * Whether the period ends as it begins, to 10⁻⁹ of the span. An op-amp that slews all the time keeps where it began:
+   * many beginnings are steady then, and one of them is shown.
    */
   readonly isSteady: boolean;
   /** Share of the time in which the op-amp slews, 0…1. */
@@ -36,7 +36,7 @@ export interface StageWaveform {
 // Places in the state: pin, buffer, two of the filter, the level that the pin nears, and 1.
 const size = 6;
 const [pinAt, bufferAt, filterAt, slopeAt, levelAt, oneAt] = [0, 1, 2, 3, 4, 5];
-const mostPeriods = 400;
+const mostPeriods = 100;
 /** In one hold a follower begins to slew, ends and begins the other way at most; more is rounding at the limit. */
 const mostChanges = 8;
 
@@ -75,12 +75,14 @@ type Draw = (state: Float64Array, point: number) => void;
 
 class StageRun {
   readonly span: number;
+  readonly #low: number;
   readonly #input: StageInput;
   readonly #holdS: number;
   readonly #pointS: number;
   readonly #follower: Follower | null;
-  /** Propagators over one point, by mode and time constant. */
-  readonly #perPoint = new Map<string, Matrix>();
+  /** For modes −1, 0 and 1, by time constant: rates of change, and propagators over one point. */
+  readonly #rates = [new Map<number, Matrix>(), new Map<number, Matrix>(), new Map<number, Matrix>()];
+  readonly #perPoint = [new Map<number, Matrix>(), new Map<number, Matrix>(), new Map<number, Matrix>()];
 
   constructor(input: StageInput) {
     const { volts, codes, opAmp, sampleRateHz, pointsPerHold } = input;
@@ -95,6 +97,7 @@ class StageRun {
       low = Math.min(low, volts[codes[k]]);
       high = Math.max(high, volts[codes[k]]);
     }
+    this.#low = low;
     this.span = high > low ? high - low : 1;
   }
 
@@ -134,13 +137,17 @@ class StageRun {
   }
 
   #propagator(mode: Mode, tau: number, t: number): Matrix {
+    let rates = this.#rates[mode + 1].get(tau);
+    if (rates === undefined) {
+      rates = this.#matrixOf(mode, tau);
+      this.#rates[mode + 1].set(tau, rates);
+    }
     // Whole points come again and again; what is left between moments of slewing does not.
-    const isWhole = t === this.#pointS;
-    const key = `${mode} ${tau}`;
-    const known = isWhole ? this.#perPoint.get(key) : undefined;
+    if (t !== this.#pointS) return propagatorOf(rates, size, t);
+    const known = this.#perPoint[mode + 1].get(tau);
     if (known !== undefined) return known;
-    const made = propagatorOf(this.#matrixOf(mode, tau), size, t);
-    if (isWhole) this.#perPoint.set(key, made);
+    const made = propagatorOf(rates, size, t);
+    this.#perPoint[mode + 1].set(tau, made);
     return made;
   }
 
@@ -217,31 +224,57 @@ class StageRun {
     const state = new Float64Array(size);
     state[oneAt] = 1;
     state[pinAt] = this.#steadyPin();
-    state[bufferAt] = state[pinAt];
-    if (this.#follower !== null) {
-      // The follower forgets where it began, the sooner the less it slews.
-      for (let turn = 0; turn < mostPeriods; turn += 1) {
-        const before = state[bufferAt];
-        state[bufferAt] = this.period(state, undefined, false).end[bufferAt];
-        if (Math.abs(state[bufferAt] - before) <= 1e-13 * this.span) break;
-      }
-    }
+    state[bufferAt] = this.#steadyBuffer(state);
     this.#setSteadyFilter(state);
     return { state };
+  }
+
+  /**
+   * The follower by itself. A higher beginning ends no lower, and no further from another's end than it began: what a
+   * period adds falls as the beginning rises, from above 0 at the lowest level to below 0 at the highest. Its root is
+   * found by false position with the Illinois rule; without slewing it is a straight line.
+   */
+  #steadyBuffer(start: Float64Array): number {
+    const at = Float64Array.from(start);
+    const added = (beginning: number) => {
+      at[bufferAt] = beginning;
+      return this.period(at, undefined, false).end[bufferAt] - beginning;
+    };
+    const near = 1e-13 * this.span;
+    const first = start[pinAt];
+    if (this.#follower === null || Math.abs(added(first)) <= near) return first;
+    let [low, high] = [this.#low, this.#low + this.span];
+    let [addedLow, addedHigh] = [added(low), added(high)];
+    let side = 0;
+    for (let turn = 0; turn < mostPeriods && addedLow > near && addedHigh < -near; turn += 1) {
+      const next = low + ((high - low) * addedLow) / (addedLow - addedHigh);
+      const here = added(next);
+      if (here > 0) {
+        [low, addedLow] = [next, here];
+        if (side === 1) addedHigh /= 2;
+        side = 1;
+      } else {
+        [high, addedHigh] = [next, here];
+        if (side === -1) addedLow /= 2;
+        side = -1;
+      }
+    }
+    return addedLow <= near ? low : high;
   }
 
   /** The pin by itself: `p ← V + (p − V)·e^(−T/τ)` for each sample, a straight line from start to end. */
   #steadyPin(): number {
     const { codes, volts } = this.#input;
-    let kept = 1;
+    // Shares far below 1 are wanted with all their digits: hence expm1.
+    let exponent = 0;
     let own = 0;
     for (let k = 0; k < codes.length; k += 1) {
       const tau = this.#tauOf(codes[k]);
-      const share = tau === 0 ? 0 : Math.exp(-this.#holdS / tau);
-      kept *= share;
-      own = volts[codes[k]] * (1 - share) + own * share;
+      const passed = tau === 0 ? -Infinity : -this.#holdS / tau;
+      exponent += passed;
+      own += (volts[codes[k]] - own) * -Math.expm1(passed);
     }
-    return own / (1 - kept);
+    return own / -Math.expm1(exponent);
   }
 
   /** The filter is linear in what it began with, whatever the op-amp does: `z = Φz + c` is solved. */
@@ -249,8 +282,8 @@ class StageRun {
     const { filter, codes } = this.#input;
     if (filter.kind === 'none') return;
     const forced = this.period(state).end;
-    const own = propagatorOf(this.#matrixOf(0, 0), size, this.#holdS * codes.length);
-    const at = (row: number, column: number) => (row === column ? 1 : 0) - own[row * size + column];
+    const own = changeOver(this.#matrixOf(0, 0), size, this.#holdS * codes.length);
+    const at = (row: number, column: number) => -own[row * size + column];
     if (filter.kind === 'rc') {
       state[filterAt] = forced[filterAt] / at(filterAt, filterAt);
       return;

@@ -16,7 +16,8 @@ export function storedWords(codes: Uint16Array, { bits, coding, complement, fold
   const shift = coding === 'twos-complement' ? levels / 2 : 0;
   const words = new Int32Array(count);
   if (complement) for (let k = 0; k < count; k += 1) words[k] = levels - 1 - shift - codes[k];
-  else for (let k = 0; k < count; k += 1) words[k] = codes[k] - shift;
+  else if (shift !== 0) for (let k = 0; k < count; k += 1) words[k] = codes[k] - shift;
+  else words.set(codes.subarray(0, count));
   return words;
 }
 

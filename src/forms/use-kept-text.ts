@@ -9,16 +9,21 @@ import { useAccount } from '../api/account-state.ts';
  */
 export function useKeptText(name: string): [text: string, set: (text: string) => void] {
   const own = useAccount()?.id;
-  const key = `stepwell.typed ${own ?? 'nobody'} ${name}`;
+  const key = keyOf(own, name);
   const [typed, setTyped] = useState(() => ({ key, text: read(key) }));
-  // Another person, or another place, has a text of its own.
-  if (typed.key !== key) setTyped({ key, text: read(key) });
+  // Another person, or another place, has a text of its own; what was typed before it was known who types goes along.
+  if (typed.key !== key) {
+    const early = typed.key === keyOf(undefined, name) ? typed.text : '';
+    setTyped({ key, text: early || read(key) });
+  }
   const set = (text: string) => {
     setTyped({ key, text });
     write(key, text);
   };
-  return [typed.key === key ? typed.text : read(key), set];
+  return [typed.text, set];
 }
+
+const keyOf = (person: number | undefined, name: string) => `stepwell.typed ${person ?? 'nobody'} ${name}`;
 
 function read(key: string): string {
   try {

@@ -11,3 +11,4 @@ export type { PlotTheme } from './plot-theme.ts';
 export type { AxisSpec, ReadOut, Scene } from './scene.ts';
 export { decimalTicks, tickText } from './ticks.ts';
 export { StairDrawing, type StairDrawingProps } from './stair-drawing.tsx';
+export { traceLine, traceStairs } from './traces.ts';

@@ -10,7 +10,7 @@ import type { Scene } from './scene.ts';
 export interface PlotProps<Data> {
   title: string;
   /** Which drawing it is; sets its height and the names of exported files. */
-  kind: 'cycle' | 'error' | 'spectrum' | 'spurs';
+  kind: 'cycle' | 'error' | 'spectrum' | 'spurs' | 'waveform' | 'lines' | 'linearity' | 'trials' | 'bits';
   scene: Scene<Data>;
   /** What the scene shows. Each change is drawn with the next frame. */
   data: Live<Data>;

@@ -6,7 +6,7 @@ import { promisify } from 'node:util';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { buildTable } from '../../shared/build-table.ts';
 import { tableReportSchema } from '../../shared/contract/index.ts';
-import { renderFiles } from '../../shared/firmware/index.ts';
+import { contentOf, renderFiles } from '../../shared/firmware/index.ts';
 import { projectFolder } from '../../server/project-folder.ts';
 import { readTemplates } from '../../server/tables/read-templates.ts';
 import { expectOneLine, fogJson, fogSignal, stepwell } from '../support/command-line.ts';
@@ -102,6 +102,51 @@ describe('render', () => {
     for (const { name, text } of expected('avr', { arrayName: 'mist', port: 'D', highPort: 'B' })) {
       expect(await readFile(join(out, name), 'utf8')).toBe(text);
     }
+  });
+
+  it('takes clock and pins from a board, where no flag says otherwise', async () => {
+    const out = join(folder, 'board');
+    const places = ['B.0', 'B.1', 'B.3', 'B.4', 'B.5', 'B.6', 'D.0', 'D.1', 'D.2', 'D.3'].map((place) => {
+      const [port, pin] = place.split('.');
+      return { port, pin: Number(pin) };
+    });
+    const ports = [
+      { name: 'B', reserved: [{ pin: 2, rest: 'high' }], reservedPins: 'kept' },
+      { name: 'D', reserved: [{ pin: 7 }] },
+    ];
+    const output = { kind: 'ladder', bits: 10, R: 10_000, portMap: { bits: places, ports } };
+    const board = join(folder, 'board.json');
+    await writeFile(board, JSON.stringify({ schema: 1, name: 'Buoy', clock: { hz: 16_000_000 }, output }));
+    const flags = ['--board', board, '--playback', 'timer', '--clock-hz', '1000000'];
+    const { status } = await stepwell(['render', file, '--target', 'avr', ...flags, '--out', out]);
+    expect(status).toBe(0);
+    const options = {
+      portMap: 'B.0 B.1 B.3 B.4 B.5 B.6 D.0 D.1 D.2 D.3',
+      reservedPins: 'B.2=high D.7=low',
+      reservedBy: 'kept',
+      playback: 'timer',
+      clockHz: '1000000',
+    };
+    for (const { name, text } of expected('avr', options))
+      expect(await readFile(join(out, name), 'utf8')).toBe(text);
+    await writeFile(board, '{"schema":1,"name":"Buoy","clock":{"hz":-1}}');
+    expectOneLine(
+      await stepwell(['render', file, '--target', 'avr', '--board', board]),
+      /^board\.clock\.hz: -1 is not allowed; allowed: /,
+    );
+  });
+
+  it('gives bytes as they are to standard output, and refuses several files that nothing could part', async () => {
+    const sound = await promisify(execFile)(
+      process.execPath,
+      [join(projectFolder, 'server/setup/stepwell.mjs'), 'render', file, '--target', 'wav'],
+      { encoding: 'buffer' },
+    );
+    expect(Buffer.compare(sound.stdout, contentOf(expected('wav')[0]))).toBe(0);
+    const map = ['--port-map', 'B.0 B.1 B.2 B.3 B.4 B.5 B.6 D.0 D.1 D.2'];
+    const { stdout, ...refused } = await stepwell(['render', file, '--target', 'binary', ...map]);
+    expect(stdout).toBe('');
+    expectOneLine({ stdout, ...refused }, /^--out: nothing is not allowed; allowed: a folder, .*2 files/);
   });
 
   it('prints the files one after the other, each below a line that names it, where no folder is given', async () => {

@@ -1,6 +1,14 @@
 import { expect, type Page } from '@playwright/test';
 import { field, figure, textOf } from '../support/bench-page.ts';
-import { mailTo, readTable, saveRevision, saveTable, test } from '../support/library-page.ts';
+import {
+  beginWithTeam,
+  mailTo,
+  post,
+  readTable,
+  saveRevision,
+  saveTable,
+  test,
+} from '../support/library-page.ts';
 import { decide, makeCrew, submit } from '../support/vetting-page.ts';
 
 const table = (page: Page, name: string) => page.getByRole('table', { name });
@@ -219,7 +227,8 @@ test('nobody judges what is their own while the two-person rule is on', async ({
   const { page } = reviewer;
   const { slug } = await saveTable(reviewer.context.request, team, 'My own');
   await submit(reviewer.context.request, team, slug);
-  await page.goto(`/teams/${team}/reviews`);
+  await page.goto('/reviews');
+  await expect(page).toHaveURL(`/teams/${team}/reviews`);
   await expect(page.getByText('Nothing waits for you')).toBeVisible();
   await page.getByRole('tab', { name: 'Mine' }).click();
   await expect(page).toHaveURL(/show=mine/);
@@ -281,4 +290,34 @@ test('any two revisions are compared, and heard at one loudness without a gap', 
   await page.getByRole('button', { name: 'Stop' }).click();
   await expect(page.getByText('Brought to equal RMS.')).toBeVisible();
   await close();
+});
+
+test('limits changed by two admins at once: the second sees what stands there, and keeps what was typed', async ({
+  page,
+}) => {
+  const { team } = await beginWithTeam(page);
+  const made = await post(page.request, `/teams/${team}/limit-sets`, { tag: null, limits: { minSnrDb: 40 } });
+  const { id } = (await made.json()) as { id: number };
+  await page.goto(`/teams/${team}`);
+  await page.getByRole('button', { name: 'Change the limits of all tables' }).click();
+  const sheet = page.getByRole('dialog', { name: 'Limits for all tables' });
+  await expect(sheet.getByRole('textbox', { name: 'SNR at least' })).toHaveValue('40');
+  await sheet.getByRole('textbox', { name: 'SNR at least' }).fill('50');
+  const origin = process.env.STEPWELL_TEST_ADDRESS ?? '';
+  const theirs = await page.request.put(`${origin}/api/v1/teams/${team}/limit-sets/${id}`, {
+    headers: { Origin: origin, 'If-Match': made.headers().etag },
+    data: { limits: { minSnrDb: 45, maxClipped: 0 } },
+  });
+  expect(theirs.status()).toBe(200);
+  await sheet.getByRole('button', { name: 'Set these' }).click();
+  const other = sheet.getByRole('region', { name: 'Set by somebody else' });
+  await expect(other).toContainText('SNR at least 45 dB');
+  await expect(other).toContainText('Clipped at most 0 entries');
+  await expect(sheet.getByRole('textbox', { name: 'SNR at least' })).toHaveValue('50');
+  await sheet.getByRole('button', { name: 'Set mine' }).click();
+  await expect(panel(page, 'Limits for vetting')).toContainText('SNR at least 50 dB');
+  await expect(panel(page, 'Limits for vetting')).not.toContainText('Clipped');
+  await page.getByRole('button', { name: 'Remove the limits of all tables' }).click();
+  await page.getByRole('dialog').getByRole('button', { name: 'Remove', exact: true }).click();
+  await expect(panel(page, 'Limits for vetting')).toContainText('None are set, so anything can be vetted.');
 });

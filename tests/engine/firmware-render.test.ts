@@ -237,6 +237,14 @@ describe('what a target cannot take', () => {
     expect(problem.allowed).toContain(allowed);
   });
 
+  it('a register’s name that is made from the definition’s, as one that is given', () => {
+    const table = buildTable(sine({}, 'R12'));
+    expect(refusalOf(() => renderFiles(table, 'asm', {}, readTemplates()))).toMatchObject({
+      path: 'options.arrayName',
+      value: '"r12"',
+    });
+  });
+
   it.each(['null', '"x"', '[]', '{"constructor":1}', '{"__proto__":{"port":"B"}}'])('options %s', (json) => {
     const options: unknown = JSON.parse(json);
     expect(refusalOf(() => render('c99', {}, options)).path).toMatch(/^options/);

@@ -1,6 +1,12 @@
 import { describe, expect, it } from 'vitest';
 import { buildTable } from '../../shared/build-table.ts';
-import { parseDefinition, parseTrialSettings, Refusal } from '../../shared/contract/index.ts';
+import {
+  parseDefinition,
+  parseResistorBag,
+  parseTrialSettings,
+  Refusal,
+  type ResistorBag,
+} from '../../shared/contract/index.ts';
 import {
   assignResistors,
   drawsOf,
@@ -8,7 +14,6 @@ import {
   levelsFromWeights,
   linearityOf,
   voltsOf,
-  type ResistorBag,
 } from '../../shared/output-stage/index.ts';
 import { ladderWith } from './support/ladders.ts';
 import { waveOf } from './support/waves.ts';
@@ -79,11 +84,11 @@ describe('a bag of measured resistors', () => {
   const bagOf = (bits: number, singles: number, doubles: number, seed: number): ResistorBag => {
     const draws = drawsOf(ladderWith({ bits: 16 }), parseTrialSettings({ tolerancePercent: 5, seed }));
     const { rungs, series } = draws.next();
-    return {
+    return parseResistorBag({
       bits,
       singles: Array.from(series.subarray(0, singles)),
       doubles: Array.from(rungs.subarray(0, doubles)),
-    };
+    });
   };
   const dnlOf = (
     bits: number,
@@ -127,6 +132,20 @@ describe('a bag of measured resistors', () => {
       expect(found.maxDnl).toBeCloseTo(best, 10);
       expect(dnlOf(4, found)).toBeCloseTo(found.maxDnl, 10);
     }
+  });
+
+  it.each([
+    [
+      { bits: 4, singles: [1, 1], doubles: [2, 2, 2, 2, 2] },
+      /^singles: a list of 2 is not allowed; allowed: at least 3/,
+    ],
+    [
+      { bits: 4, singles: [1, 1, 1], doubles: [2, 2, 2, 2] },
+      /^doubles: a list of 4 is not allowed; allowed: at least 5/,
+    ],
+    [{ bits: 2, singles: [0], doubles: [2, 2, 2] }, /^singles\[0\]: 0 is not allowed/],
+  ])('with too little in it, or nothing of a resistor, is refused: %j', (input, line) => {
+    expect(() => parseResistorBag(input)).toThrow(line);
   });
 
   it('uses each resistor once, and those to spare where they serve better', () => {

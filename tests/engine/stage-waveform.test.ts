@@ -125,6 +125,25 @@ describe('the waveform through the stage', () => {
     }
   });
 
+  it('holds its mean where the capacitance is very large, and ends where it began with parts of any speed', () => {
+    const codes = [0, 15, 7, 8];
+    const mean = codes.reduce((sum, code) => sum + volts[code], 0) / codes.length;
+    const { pin, output, isSteady } = stageWaveform(
+      stageOf({ codes, capacitanceF: 1, filter: { kind: 'butterworth', cutoffHz: 1e9 } }),
+    );
+    expect(isSteady).toBe(true);
+    for (const value of [...pin, ...output]) expect(Math.abs(value - mean)).toBeLessThan(1e-7);
+    const slow = stageWaveform(
+      stageOf({
+        codes,
+        opAmp: { slewRateVPerS: 1e9, gainBandwidthHz: 0.001 },
+        filter: { kind: 'rc', cutoffHz: 1e10 },
+      }),
+    );
+    expect(slow.isSteady).toBe(true);
+    for (const value of slow.output) expect(Math.abs(value - mean)).toBeLessThan(1e-5);
+  });
+
   it('slews in a straight line and then nears its end exponentially', () => {
     const rate = 2 * Math.PI * 50_000;
     const slew = 1e5;

@@ -1,4 +1,5 @@
 import { z } from 'zod';
+import { Refusal, showValue } from '../../contract/index.ts';
 import { numberOptions, packedOption, portMapOptions, sharedOptions, storageOptions } from '../options.ts';
 import { alignmentFacts } from '../storage-facts.ts';
 import { defineTarget } from '../target.ts';
@@ -6,6 +7,8 @@ import { defineTarget } from '../target.ts';
 /** Names that assemblers read as registers: Arm's and RISC-V's procedure call standards, and x86-64's. */
 const registerName =
   /^(?:[rxdqvfkwastc]\d+|[sf][aipst]|sp|lr|pc|gp|tp|ra|ip|zero|[fs]t?\d+|fa\d+|e?[abcd]x|[abcd][hl]|r?[abcd]x|[re]?(?:si|di|bp|sp|ip)|apsr|cpsr|spsr|[x-z])$/i;
+
+const noRegister = 'a name that is no register of a processor';
 
 const directives = { 1: '.byte', 2: '.2byte', 4: '.4byte' } as const;
 
@@ -18,14 +21,22 @@ export const asm = defineTarget({
   options: z.strictObject({
     ...sharedOptions,
     arrayName: sharedOptions.arrayName.refine((name) => name === undefined || !registerName.test(name), {
-      error: 'a name that is no register of a processor',
+      error: noRegister,
     }),
     ...numberOptions,
     ...storageOptions,
     packed: packedOption,
     ...portMapOptions,
   }),
-  filesOf: ({ options }) => {
+  filesOf: ({ options, arrayName }) => {
+    // A name that was made from the definition's has not been through the option's schema.
+    if (registerName.test(arrayName)) {
+      throw new Refusal({
+        path: 'options.arrayName',
+        value: showValue(arrayName),
+        allowed: noRegister,
+      });
+    }
     const facts = { ...alignmentFacts(options), sourceEnding: '.s' };
     return [
       { template: 'asm/header.h', ending: '.h', facts },

@@ -19,7 +19,7 @@ export function BenchShape() {
     [],
   );
   return (
-    <>
+    <div className="space-y-4">
       <BringIn />
       <ShapeFlight
         {...{ source, problems, cycles, range }}
@@ -31,7 +31,7 @@ export function BenchShape() {
           </Recess>
         }
       />
-    </>
+    </div>
   );
 }
 

@@ -100,6 +100,11 @@ const kept = {
   'twos-complement': 'two’s complement',
 } as const;
 
+function noiseFact({ dither, seed, shaping }: Wave['definition']['table']): [string, string] {
+  const dithered = dither === 'none' ? 'no dither' : `${dither} dither, seed ${seed}`;
+  return ['Noise', `${dithered}, ${shaping === 0 ? 'no shaping' : `shaping of order ${shaping}`}`];
+}
+
 function WaveFacts({ wave: { definition, playback } }: { wave: Wave }) {
   const { source, table, level } = definition;
   const facts: readonly [string, string][] = [
@@ -111,6 +116,11 @@ function WaveFacts({ wave: { definition, playback } }: { wave: Wave }) {
       `${table.range}, ${kept[table.scale]}, ${kept[table.coding]}${table.complement ? ', inverted' : ''}`,
     ],
     ['Rounding', table.rounding.replace('-', ' ')],
+    ...(table.dither === 'none' && table.shaping === 0 ? [] : [noiseFact(table)]),
+    ...(table.levels === undefined
+      ? []
+      : [['Measured levels', `${table.levels.length} voltages`] as [string, string]]),
+    ...(table.fold === 'none' ? [] : [['Stored', 'the first quarter'] as [string, string]]),
     ['Level', `${level.level} of full scale, normalised: ${level.normalise}`],
     ['Sampled at the', `step’s ${table.sampleAt}, from ${table.startPhaseDeg}°`],
     playback.mode === 'loop'

@@ -13,6 +13,7 @@ import { load } from '../../forms/load.ts';
 import { ProblemNotice } from '../../forms/problem-notice.tsx';
 import { openRevisionPath, tablesPath, teamPath } from '../../paths.ts';
 import { ExportSection } from './export-section.tsx';
+import { OriginalsSection } from './originals-section.tsx';
 import { RevisionHistory } from './revision-history.tsx';
 import { StateWord } from '../../components/state-word.tsx';
 import { TableActions } from './table-actions.tsx';
@@ -75,7 +76,11 @@ export function TablePage({ RevisionView, RevisionReview }: TablePageProps) {
       }
     >
       <div className="table-parts">
-        <Shown {...{ teamSlug, slug, number, RevisionView, RevisionReview }} newest={table.latestRevision} />
+        <Shown
+          {...{ teamSlug, slug, number, RevisionView, RevisionReview }}
+          newest={table.latestRevision}
+          isAdmin={includesRole(team.myRole, 'admin')}
+        />
         <ExportSection key={number} team={teamSlug} table={slug} number={number} defaults={team.defaults} />
         <RevisionHistory team={teamSlug} table={table} shown={number} />
       </div>
@@ -124,9 +129,10 @@ interface ShownProps extends TablePageProps {
   slug: string;
   number: number;
   newest: number;
+  isAdmin: boolean;
 }
 
-function Shown({ teamSlug, slug, number, newest, RevisionView, RevisionReview }: ShownProps) {
+function Shown({ teamSlug, slug, number, newest, isAdmin, RevisionView, RevisionReview }: ShownProps) {
   const { data: revision, error, refetch } = useQuery(tableQueries.revision(teamSlug, slug, number));
   return (
     <section className="space-y-3" aria-labelledby="shown-revision">
@@ -141,6 +147,7 @@ function Shown({ teamSlug, slug, number, newest, RevisionView, RevisionReview }:
         <>
           {revision.note !== '' && <p className="revision-note">{revision.note}</p>}
           <RevisionView key={`${slug} ${number}`} revision={revision} />
+          <OriginalsSection at={{ team: teamSlug, table: slug, number }} mayRemove={isAdmin} />
           <details className="quiet">
             <summary>Digest and engine</summary>
             <dl className="facts">

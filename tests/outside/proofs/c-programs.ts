@@ -69,15 +69,22 @@ export async function proveC99(): Promise<Proof[]> {
       }
       await run('gcc', ['-std=c99', '-c', ...sources], folder);
       const objects = sources.map((name) => name.replace(/c$/, 'o'));
-      for (const compiler of ['g++', 'clang++']) {
-        await run(compiler, ['-std=c++17', ...everyWarning, 'print.cpp', ...objects, '-o', 'print'], folder);
+      for (const [compiler, standard] of [
+        ['g++', 'c++17'],
+        ['clang++', 'c++20'],
+      ]) {
+        await run(
+          compiler,
+          [`-std=${standard}`, ...everyWarning, 'print.cpp', ...objects, '-o', 'print'],
+          folder,
+        );
         mustPrint(await run('./print', [], folder), cases);
       }
     });
     if (proofs.length === 0) {
       proofs.push(
         ...each(cases, 'gcc, clang', 'C99, C11, C17 without a warning; prints every entry'),
-        ...each(cases, 'g++, clang++', 'C++17 through the same header'),
+        ...each(cases, 'g++, clang++', 'C++17, C++20 through the same header'),
       );
     }
   }

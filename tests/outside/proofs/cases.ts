@@ -10,6 +10,8 @@ export interface Case {
   readonly options: Readonly<Record<string, string>>;
   /** The places that the map's bits have, bit 0 first; absent without a map. */
   readonly places?: readonly string[];
+  /** Whether only a reader of the target's own gives every entry. */
+  readonly needsReader?: boolean;
 }
 
 const portMap = 'B.0 B.1 B.3 B.4 B.5 B.6 D.3 D.2 D.1 D.0';
@@ -33,8 +35,14 @@ export const tableCases = {
     options: { packed: 'yes' },
   },
   packed4: {
-    title: 'first quarter of 64 × 4, packed',
-    definition: sine({ length: 64, bits: 4, sampleAt: 'centre', fold: 'quarter' }),
+    title: 'first quarter of 64 × 4 in two’s complement, packed',
+    definition: sine({
+      length: 64,
+      bits: 4,
+      sampleAt: 'centre',
+      fold: 'quarter',
+      coding: 'twos-complement',
+    }),
     options: { packed: 'yes' },
   },
   mapped: {
@@ -43,7 +51,17 @@ export const tableCases = {
     options: { portMap, reservedPins: 'B.2=high D.7=low' },
     places: portMap.split(' '),
   },
+  mappedFold: {
+    title: 'first quarter of 64 × 10 over two ports, two pins reserved',
+    definition: sine({ length: 64, bits: 10, sampleAt: 'centre', fold: 'quarter' }),
+    options: { portMap, reservedPins: 'B.2=high D.7=low' },
+    places: portMap.split(' '),
+    needsReader: true,
+  },
 } satisfies Record<string, Case>;
+
+/** Targets that are data alone: what a reader does of a wave is left to whoever reads them. */
+const dataTargets = new Set(['verilog-memh', 'intel-hex', 'binary', 'csv', 'json']);
 
 export type CaseId = keyof typeof tableCases;
 export const caseIds = Object.keys(tableCases) as CaseId[];
@@ -63,10 +81,14 @@ export interface Exported {
 export function exportCases(target: string, extra: Readonly<Record<string, string>> = {}): Exported[] {
   const { shape } = targets.find(({ id }) => id === target)?.options ?? { shape: {} };
   return caseIds
-    .filter((id) => Object.keys(tableCases[id].options).every((option) => option in shape))
+    .filter((id) => {
+      const { options, needsReader = false }: Case = tableCases[id];
+      const isTaken = Object.keys(options).every((option) => option in shape);
+      return isTaken && !(needsReader && dataTargets.has(target));
+    })
     .map((id) => {
       const { title, definition, options, ...rest }: Case = tableCases[id];
-      const name = `wave_${id}`;
+      const name = `wave_${id.toLowerCase()}`;
       const { table, files } = exported(definition, target, { arrayName: name, ...options, ...extra });
       return { id, title, name, table, files, expected: expectedOf(table, rest.places) };
     });

@@ -75,10 +75,11 @@ def entries(case, raw, bits):
     if case['folded']:
         top = (1 << bits) - 1
         half = stored + stored[::-1]
-        stored = half + [top - w for w in half]
+        stored = half + [-1 - w if case['two'] else top - w for w in half]
     return stored
 for case in cases:
     case['folded'] = len(case['name'].split('_')) > 1 and case['name'] in ('wave_fold', 'wave_packed4')
+    case['two'] = case['signed']
     case['stored'] = case['count'] // 4 if case['folded'] else case['count']
 `;
 

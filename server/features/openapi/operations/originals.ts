@@ -25,7 +25,7 @@ export const originals: Section = {
       path,
       summary: 'Keep a file with a revision',
       description:
-        'Of a kind that a table can be made from, by its content. The same bytes once more answer 200 with the file that is kept.',
+        'The body is the bytes of the file, of a kind that a table can be made from. The same bytes once more answer 200 with the file that is kept.',
       access: 'author',
       query: originalQuerySchema,
       fileBody: true,

@@ -92,6 +92,11 @@ export function BoundsDrawing({ samples, bounds, onChange }: BoundsDrawingProps)
           );
         })}
       </div>
+      <p className="field-description">
+        Amplitude over time, samples {Math.round(shown.from).toLocaleString('en')} to{' '}
+        {Math.round(shown.to).toLocaleString('en')}. Drag the bounds, or move them with the arrow keys; with
+        Shift by ten.
+      </p>
       <label className="field-description bounds-place">
         Place of the cycle in the recording
         <input

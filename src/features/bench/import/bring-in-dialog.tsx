@@ -29,12 +29,15 @@ type Stage =
     }
   | { readonly kind: 'code'; readonly chosen: Chosen; readonly read: Extract<AnyFile, { kind: 'code' }> };
 
+/** What was pasted outlives the dialog: closing it loses nothing that was typed. */
+let keptText = '';
+
 /** Brings in what exists already: one file or pasted text at a time, or a folder at once. */
 export function BringInDialog({ onClose }: { onClose: () => void }) {
   const worker = useImportsWorker();
   const put = usePutOnBench(onClose);
   const [stage, setStage] = useState<Stage>({ kind: 'start' });
-  const [pasted, setPasted] = useState('');
+  const [pasted, setPasted] = useState(keptText);
   const [faults, setFaults] = useState<readonly string[]>([]);
 
   const read = useCallback(
@@ -59,21 +62,26 @@ export function BringInDialog({ onClose }: { onClose: () => void }) {
     [worker],
   );
   const back = stage.kind !== 'start' && (
-    <Button variant="quiet" size="small" onPress={() => setStage({ kind: 'start' })}>
-      Choose something else
-    </Button>
+    <div>
+      <Button variant="quiet" size="small" onPress={() => setStage({ kind: 'start' })}>
+        Choose something else
+      </Button>
+    </div>
   );
 
   return (
     <Dialog title="Bring in" isOpen onClose={onClose} size="wide">
       <div className="bring-in">
-        <div aria-live="polite">
+        <div aria-live="polite" className="bring-in-faults">
           <Faults faults={faults} />
         </div>
         {stage.kind === 'start' && (
           <StartView
             pasted={pasted}
-            onType={setPasted}
+            onType={(text) => {
+              keptText = text;
+              setPasted(text);
+            }}
             onChoose={(chosen) => void read(chosen)}
             onChooseMany={(files) => setStage({ kind: 'files', files })}
           />
@@ -81,10 +89,20 @@ export function BringInDialog({ onClose }: { onClose: () => void }) {
         {stage.kind === 'reading' && <p role="status">Reading {stage.name} …</p>}
         {stage.kind === 'recording' && <RecordingView {...stage} worker={worker} onPut={put} />}
         {stage.kind === 'columns' && <ColumnsView {...stage} worker={worker} onPut={put} />}
-        {stage.kind === 'code' && <CodeView {...stage} worker={worker} onPut={put} />}
+        {stage.kind === 'code' && (
+          <CodeView
+            {...stage}
+            worker={worker}
+            onPut={put}
+            onAll={() => setStage({ kind: 'files', files: [fileOf(stage.chosen)] })}
+          />
+        )}
         {stage.kind === 'files' && <FilesView files={stage.files} worker={worker} onPut={put} />}
         {back}
       </div>
     </Dialog>
   );
 }
+
+/** A text that was pasted is a file of its own, once it is kept. */
+const fileOf = ({ file, text, name }: Chosen) => file ?? new File([text], name, { type: 'text/plain' });

@@ -16,6 +16,8 @@ interface CodeViewProps {
   read: Extract<AnyFile, { kind: 'code' }>;
   worker: ImportsWorker;
   onPut: (brought: Brought) => void;
+  /** Takes every array, each as a draft. */
+  onAll: () => void;
 }
 
 const languages = {
@@ -25,7 +27,7 @@ const languages = {
 } as const;
 
 /** Arrays out of code: one is picked, its figures are told, and a better table is proposed beside it. */
-export function CodeView({ chosen, read, worker, onPut }: CodeViewProps) {
+export function CodeView({ chosen, read, worker, onPut, onAll }: CodeViewProps) {
   const { language, arrays, refused } = read.code;
   const [picked, setPicked] = useState(0);
   const [part, setPart] = useState<ImagePart | null>(null);
@@ -49,6 +51,11 @@ export function CodeView({ chosen, read, worker, onPut }: CodeViewProps) {
             setPart(null);
           }}
         />
+      )}
+      {arrays.length > 1 && (
+        <Button size="small" onPress={onAll}>
+          Take all {arrays.length} as drafts
+        </Button>
       )}
       {refused.length > 0 && (
         <Notice

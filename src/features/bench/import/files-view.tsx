@@ -174,7 +174,7 @@ function useSaving(
               : { ...playback, mode: 'loop' as const, by: 'tone' as const, toneHz },
         };
         const table = await createTable(team, body, newKey());
-        await keepOriginal(team, table.slug, table.latestRevision, file);
+        await keepOriginal({ team, table: table.slug, number: table.latestRevision }, file);
         change(index, { saved: 'yes' });
       } catch (error) {
         change(index, { saved: 'no', fault: faultsOf(error)[0] });

@@ -124,7 +124,9 @@ export function RecordingView({ chosen, bytes, worker, onPut, ...props }: Record
       <p aria-live="polite">
         One cycle of {formatQuantity(period, 'samples', { significant: 6 })},{' '}
         {formatQuantity(toneHz, 'Hz', { significant: 5 })}
-        {found && `; found by how alike neighbouring cycles are: ${Math.round(found.clarity * 100)} %`}.
+        {found &&
+          `. Cycle and next are ${Math.round(found.clarity * 100)} % alike where the period was found`}
+        .
       </p>
       <Bounds bounds={bounds} last={samples.length - 1} onChange={setBounds} />
       <div className="form-actions">

@@ -3,6 +3,7 @@ import { formatQuantity } from '../../../../shared/quantities/index.ts';
 import { Caution, Explain } from '../../../components/index.ts';
 import { ListenPanel, type Playback } from '../listen/index.ts';
 import { RatesRecesses } from '../rates/index.ts';
+import { StageRecesses } from '../stage/index.ts';
 import { useCalmTable } from '../state/tables.ts';
 import { theBench, useBench, useDefinition } from '../state/use-bench.ts';
 import { sampleRateOf, toneOf } from '../state/wave.ts';
@@ -29,6 +30,7 @@ export function OutputFlight() {
         />
       )}
       <RatesRecesses />
+      <StageRecesses />
       <AtThePin />
     </div>
   );

@@ -91,7 +91,7 @@ export function useSave({ schema, onClose, onFault }: SaveParts) {
     if (file === null) return;
     try {
       const { keepOriginal } = await import('../../../api/originals.ts');
-      await keepOriginal(team, slug, revision, file);
+      await keepOriginal({ team, table: slug, number: revision }, file);
     } catch (error) {
       toast({
         message: `The revision is saved, but not ${file.name} with it: ${asProblem(error).message}`,

@@ -10,6 +10,10 @@ export const recessIds = [
   'two-tones',
   'pulses',
   'fades',
+  'stage',
+  'trials',
+  'advice',
+  'fit',
 ] as const;
 export type RecessId = (typeof recessIds)[number];
 

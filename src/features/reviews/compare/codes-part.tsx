@@ -48,6 +48,11 @@ export function CodesPart({ pair, names, compared }: CodesPartProps) {
               ? `The ${largest.length} largest differences`
               : 'All differences, the largest first'}
           </summary>
+          {count > largest.length && (
+            <p className="quiet">
+              All of them are in the data of the drawing above, which is exported as CSV.
+            </p>
+          )}
           <div className="ledger-scroll" tabIndex={0} role="region" aria-label="Codes that differ">
             <table className="ledger code-rows">
               <thead>

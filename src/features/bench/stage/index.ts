@@ -1,0 +1,1 @@
+export { StageRecesses } from './stage-recesses.tsx';
