@@ -56,5 +56,9 @@ function keeps(
 ): boolean {
   if (measured === null) return isExact;
   if (typeof allowed === 'object') return allowed.includes(measured);
-  return limit.startsWith('min') ? measured >= allowed : measured <= allowed;
+  if (limit.startsWith('min')) return measured >= allowed;
+  return measured <= allowed + (limit === 'maxPeakErrorLsb' ? snapLsb : 0);
 }
+
+/** The snap of code positions (engine specification §3.2): a tie may lie this much beyond half an LSB. */
+const snapLsb = 2 ** -24;

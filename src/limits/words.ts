@@ -90,14 +90,13 @@ export function sayMeasured({ limit, allowed, measured, passed }: LimitOutcome):
   if (measured === null) return passed ? 'no error at all' : 'no such figure for this wave';
   const { unit } = limitWords[limit];
   if (typeof allowed !== 'number') return `${said(measured)} ${unit}`;
-  // As many digits as it takes to show on which side of the bound it lies.
+  // As many digits as it takes not to belie the outcome: 0.50003 against "at most 0.5" is not shown as 0.5.
+  const isLeast = limitWords[limit].bound === 'at least';
+  const belies = (shown: number) => (isLeast ? shown >= allowed : shown <= allowed) !== passed;
   let digits = 4;
-  while (digits < 15 && sideOf(Number(measured.toPrecision(digits)), allowed) !== sideOf(measured, allowed))
-    digits += 1;
+  while (digits < 15 && belies(Number(measured.toPrecision(digits)))) digits += 1;
   return `${formatQuantity(measured, '', { significant: Number.isInteger(measured) ? 6 : digits })} ${unit}`;
 }
-
-const sideOf = (value: number, bound: number): number => Math.sign(value - bound);
 
 /** `All 4 limits are kept`, `2 of 4 limits are broken`. */
 export function sayStanding(outcomes: readonly LimitOutcome[]): string {

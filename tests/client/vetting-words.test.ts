@@ -31,6 +31,9 @@ describe('limits in words', () => {
   test('say what was measured with as many digits as tell on which side of the bound it lies', () => {
     expect(sayMeasured(outcome({ measured: 49.76123 }))).toBe('49.76 dB');
     expect(sayMeasured(outcome({ measured: 47.99996, passed: false }))).toBe('47.99996 dB');
+    const peak = { limit: 'maxPeakErrorLsb', allowed: 0.5 } as const;
+    expect(sayMeasured(outcome({ ...peak, measured: 0.499999999999998 }))).toBe('0.5 LSB');
+    expect(sayMeasured(outcome({ ...peak, measured: 0.50003, passed: false }))).toBe('0.50003 LSB');
     expect(sayMeasured(outcome({ limit: 'maxTableBytes', allowed: 1024, measured: 131_072 }))).toBe(
       '131072 bytes',
     );
