@@ -20,6 +20,7 @@ export function createRouter(queryClient: QueryClient) {
           children: [
             ...benchRoutes(queryClient),
             ...libraryRoutes(queryClient),
+            ...boardRoutes(queryClient),
             ...reviewRoutes(queryClient),
             ...accountRoutes(),
           ],
@@ -126,11 +127,55 @@ function libraryRoutes(queryClient: QueryClient): RouteObject[] {
       path: paths.newTeam,
       lazy: async () => ({ Component: (await import('./features/team/new-team-page.tsx')).NewTeamPage }),
     },
-    ...(['tables', 'reviews', 'team'] as const).map((place): RouteObject => ({
-      path: { tables: paths.anyTables, reviews: paths.anyReviews, team: paths.anyTeam }[place],
+    ...(['tables', 'boards', 'reviews', 'team'] as const).map((place): RouteObject => ({
+      path: {
+        tables: paths.anyTables,
+        boards: paths.anyBoards,
+        reviews: paths.anyReviews,
+        team: paths.anyTeam,
+      }[place],
       lazy: async () => {
         const { AnyTeamPage } = await import('./features/team/any-team-page.tsx');
         return { element: <AnyTeamPage place={place} /> };
+      },
+    })),
+  ];
+}
+
+function boardRoutes(queryClient: QueryClient): RouteObject[] {
+  return [
+    {
+      path: paths.boards,
+      lazy: async () => {
+        const [{ BoardsPage, boardsLoader }, ErrorBoundary] = await Promise.all([
+          import('./features/boards/boards-page.tsx'),
+          placeFault(),
+        ]);
+        return { Component: BoardsPage, loader: boardsLoader(queryClient), ErrorBoundary };
+      },
+    },
+    {
+      path: paths.board,
+      lazy: async () => {
+        const [{ BoardPage, boardLoader }, ErrorBoundary] = await Promise.all([
+          import('./features/boards/board-page.tsx'),
+          placeFault(),
+        ]);
+        return { Component: BoardPage, loader: boardLoader(queryClient), ErrorBoundary };
+      },
+    },
+    ...(['new', 'edit'] as const).map((way): RouteObject => ({
+      path: { new: paths.newBoard, edit: paths.editBoard }[way],
+      lazy: async () => {
+        const [{ NewBoardPage, EditBoardPage, boardFormLoader }, ErrorBoundary] = await Promise.all([
+          import('./features/boards/board-form-page.tsx'),
+          placeFault(),
+        ]);
+        return {
+          Component: way === 'new' ? NewBoardPage : EditBoardPage,
+          loader: boardFormLoader(queryClient),
+          ErrorBoundary,
+        };
       },
     })),
   ];

@@ -1,4 +1,5 @@
 import type { Command } from 'commander';
+import { z } from 'zod';
 import { buildTable } from '../../shared/build-table.ts';
 import { parseBoard, Refusal, type GeneratedFile } from '../../shared/contract/index.ts';
 import {
@@ -96,18 +97,26 @@ function asOne(files: readonly GeneratedFile[], commentOf?: (text: string) => st
 
 /** Flags of every option of every target, with what each says of itself and the targets that have it. */
 function optionFlags(): [flag: string, description: string][] {
-  const found = new Map<string, { description: string; ids: string[] }>();
+  const found = new Map<string, { description: string; ids: string[]; words: Set<string> }>();
   for (const { id, options } of targets) {
     for (const [option, schema] of Object.entries(options.shape)) {
-      const entry = found.get(option) ?? { description: descriptionOf(schema), ids: [] };
+      const entry = found.get(option) ?? { description: descriptionOf(schema), ids: [], words: new Set() };
       entry.ids.push(id);
+      for (const word of wordsOf(schema)) entry.words.add(word);
       found.set(option, entry);
     }
   }
-  return [...found].map(([option, { description, ids }]) => [
-    flagOf(option),
-    ids.length === targets.length ? description : `${description} (${ids.join(', ')})`,
-  ]);
+  return [...found].map(([option, { description, ids, words }]) => {
+    const choices = words.size === 0 ? '' : `: ${[...words].join(', ')}`;
+    const having = ids.length === targets.length ? '' : ` (${ids.join(', ')})`;
+    return [flagOf(option), `${description}${choices}${having}`];
+  });
+}
+
+/** The words that an option is chosen from; none where it is free. */
+function wordsOf(schema: z.core.$ZodType): string[] {
+  if (schema instanceof z.ZodDefault || schema instanceof z.ZodOptional) return wordsOf(schema.unwrap());
+  return schema instanceof z.ZodEnum ? schema.options.map(String) : [];
 }
 
 const descriptionOf = (schema: object) => ('description' in schema ? String(schema.description) : '');

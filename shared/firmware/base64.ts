@@ -1,16 +1,23 @@
 const letters = 'ABCDEFGHIJKLMNOPQRSTUVWXYZabcdefghijklmnopqrstuvwxyz0123456789+/';
 const values = new Map(Array.from(letters, (letter, value) => [letter, value]));
 
+/** Two letters for 12 bits. */
+const pairs = Array.from({ length: 4096 }, (_, bits) => letters[bits >> 6] + letters[bits & 63]);
+
 /** Bytes in base64 with its padding (RFC 4648 §4). */
 export function toBase64(bytes: Uint8Array): string {
-  const groups: string[] = [];
-  for (let k = 0; k < bytes.length; k += 3) {
-    const left = Math.min(3, bytes.length - k);
-    const group = (bytes[k] << 16) | ((bytes[k + 1] ?? 0) << 8) | (bytes[k + 2] ?? 0);
-    const four = [18, 12, 6, 0].map((shift) => letters[(group >> shift) & 63]).join('');
-    groups.push(four.slice(0, left + 1).padEnd(4, '='));
+  const whole = bytes.length - (bytes.length % 3);
+  let text = '';
+  for (let k = 0; k < whole; k += 3) {
+    text += pairs[(bytes[k] << 4) | (bytes[k + 1] >> 4)];
+    text += pairs[((bytes[k + 1] & 15) << 8) | bytes[k + 2]];
   }
-  return groups.join('');
+  if (bytes.length - whole === 1) text += `${pairs[bytes[whole] << 4]}==`;
+  if (bytes.length - whole === 2) {
+    text += pairs[(bytes[whole] << 4) | (bytes[whole + 1] >> 4)];
+    text += `${letters[(bytes[whole + 1] & 15) << 2]}=`;
+  }
+  return text;
 }
 
 /** The bytes again; for what `toBase64` has written. */

@@ -1,11 +1,5 @@
 import { useCallback, useEffect, useRef, useState, useSyncExternalStore } from 'react';
-import {
-  openAudioContext,
-  type AudioPreview,
-  type Hearing,
-  type PreviewState,
-  type Sound,
-} from './index.ts';
+import { openAudioContext, type AudioPreview, type Hearing, type PreviewState, type Sound } from './index.ts';
 
 const silent: PreviewState = { status: 'silent', trouble: null };
 const noListeners = () => () => undefined;

@@ -1,6 +1,6 @@
 import { useMatch } from 'react-router-dom';
 import { useCurrentTeam } from '../api/current-team.ts';
-import { paths, reviewsPath, tablesPath, teamPath } from '../paths.ts';
+import { boardsPath, paths, reviewsPath, tablesPath, teamPath } from '../paths.ts';
 
 /** One entry of the header's navigation. */
 export interface Place {
@@ -19,13 +19,19 @@ export function usePlaces(): readonly Place[] {
   const team = useCurrentTeam()?.teamSlug;
   // A review has the address of its table.
   const isReview = useMatch(paths.review) !== null;
+  const isCompare = useMatch(paths.compare) !== null;
   return [
     { label: 'Bench', to: paths.bench, isExact: true },
     {
       label: 'Tables',
       to: team === undefined ? paths.anyTables : tablesPath(team),
       isExact: false,
-      isHere: isReview ? false : undefined,
+      isHere: isReview ? false : isCompare || undefined,
+    },
+    {
+      label: 'Boards',
+      to: team === undefined ? paths.anyBoards : boardsPath(team),
+      isExact: false,
     },
     {
       label: 'Reviews',

@@ -7,29 +7,35 @@ export interface StageRun {
   stop(): void;
 }
 
-/** Starts a worker for the output stage. Nothing comes after `stop`. */
-export function startStage(onMessage: (message: StageMessage) => void): StageRun {
+/**
+ * Starts a worker for the output stage. Nothing comes after `stop`.
+ *
+ * @param onMessage is told for which job, null where the worker broke
+ */
+export function startStage(onMessage: (message: StageMessage, job: StageJob | null) => void): StageRun {
   const worker = new Worker(new URL('./stage.worker.ts', import.meta.url), { type: 'module', name: 'stage' });
-  let isBusy = false;
+  let working: StageJob | null = null;
   let waiting: StageJob | null = null;
   const next = () => {
-    isBusy = waiting !== null;
+    working = waiting;
     if (waiting !== null) worker.postMessage(waiting);
     waiting = null;
   };
   worker.onmessage = ({ data }: MessageEvent<StageMessage>) => {
+    const job = working;
     if (data.kind !== 'trials' || data.isDone) next();
-    onMessage(data);
+    onMessage(data, job);
   };
   worker.onerror = (event) => {
     event.preventDefault();
     worker.terminate();
-    onMessage({ kind: 'failed', message: event.message || 'The program for it could not be loaded.' });
+    const message = event.message || 'The program for it could not be loaded.';
+    onMessage({ kind: 'failed', message }, null);
   };
   return {
     ask(job) {
       waiting = job;
-      if (!isBusy) next();
+      if (working === null) next();
     },
     stop() {
       worker.onmessage = null;

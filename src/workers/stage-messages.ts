@@ -78,8 +78,11 @@ export interface PlayingAnswer {
   readonly sampleRateHz: number;
   readonly tableLength: number;
   readonly lines: StageLines;
+  /** Through the board’s levels, and by even ones. */
   readonly sinadDb: number | null;
+  readonly snrDb: number | null;
   readonly codesSinadDb: number | null;
+  readonly codesSnrDb: number | null;
   readonly meanSupplyAmps: number | null;
   /** Of the first image of the tone; null where the tone is not below half the sample rate. */
   readonly image: { readonly frequencyHz: number; readonly outputDb: number } | null;

@@ -104,9 +104,14 @@ function playing(board: Board, { table, codes, cycle, sampleRateHz, toneHz }: Pl
   const atPin = Float64Array.from(codes, (code) => volts[code]);
   const span = supply.vHigh - supply.vLow;
   const facts = { cycle, clippedSamples: 0 };
-  const sinadAt = (levels?: number[]) =>
-    analyseTable(facts, { codes, clippedCodes: 0 }, levels === undefined ? table : { ...table, levels })
-      .report.sinadDb;
+  const { levels: _own, ...evenTable } = table;
+  const reportAt = (levels?: number[]) =>
+    analyseTable(
+      facts,
+      { codes, clippedCodes: 0 },
+      levels === undefined ? evenTable : { ...evenTable, levels },
+    ).report;
+  const [real, even] = [reportAt(Array.from(volts)), reportAt()];
   const carrierHz = output.kind === 'pwm' ? pwmCarrierHz(clock.hz, output) : null;
   return {
     waveform: stageWaveform({
@@ -123,8 +128,10 @@ function playing(board: Board, { table, codes, cycle, sampleRateHz, toneHz }: Pl
     sampleRateHz,
     tableLength: codes.length,
     lines: strongest(outputLines(atPin, sampleRateHz, shownRates * codes.length, gain), span / 2),
-    sinadDb: sinadAt(Array.from(volts)),
-    codesSinadDb: sinadAt(),
+    sinadDb: real.sinadDb,
+    snrDb: real.snrDb,
+    codesSinadDb: even.sinadDb,
+    codesSnrDb: even.snrDb,
     meanSupplyAmps: ladder && meanSupplyAmps(ladder, codes),
     image: toneHz > 0 && toneHz < sampleRateHz / 2 ? firstImageOf(toneHz, sampleRateHz, gain) : null,
     opAmp:

@@ -134,6 +134,20 @@ describe('an original', () => {
     expect(events[1].details).toMatchObject({ number: 1, name: 'old.c', kind: 'c', bytes: array.length });
   });
 
+  it('of another team, or of another revision, is none', async () => {
+    const other = await makeCrew(test);
+    const { slug } = await saveTable(test, other.team, other.author, 'Theirs');
+    const theirs = `/teams/${other.team.slug}/tables/${slug}/revisions/1/originals`;
+    const { body } = await keep(theirs, 'old.c', array, other.author);
+    const own = await freshPath('Ours');
+    for (const path of [own, theirs]) {
+      expect((await asPerson(test, crew.admin).get(`${path}/${body.id}`)).status).toBe(404);
+      expect((await asPerson(test, crew.admin).delete(`${path}/${body.id}`)).status).toBe(404);
+    }
+    expect((await asPerson(test, crew.admin).get(`${own}/x`)).status).toBe(404);
+    expect((await asPerson(test, other.viewer).get(theirs)).body.items).toHaveLength(1);
+  });
+
   it('finds no room where the team or the revision is full; two at once cannot share the last of it', async () => {
     const own = await makeCrew(test);
     const { slug } = await saveTable(test, own.team, own.author, 'Full');

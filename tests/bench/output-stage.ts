@@ -8,9 +8,9 @@ type Engine = typeof outputStageEntry;
 type Figures = Record<'maxInl' | 'maxDnl' | 'sinadDb' | 'unwantedDb', number[]> & { monotonic: boolean[] };
 
 const trials = 10_000;
-const turns = 11;
+const turns = 25;
 /** Turns that only warm both sides up. */
-const coldTurns = 3;
+const coldTurns = 4;
 const goals = { trialsMs: 1500, shareOfNumpy: 1, allCodesMs: 15 };
 
 const cases: { name: string; ladder: LadderInput }[] = [

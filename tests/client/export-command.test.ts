@@ -7,13 +7,23 @@ import { Command } from 'commander';
 import { afterAll, beforeAll, describe, expect, it, vi } from 'vitest';
 import { z } from 'zod';
 import { tabulate } from '../../shared/build-table.ts';
-import { contentOf, flagOf, optionOf, targets, type Target } from '../../shared/firmware/index.ts';
+import {
+  contentOf,
+  flagOf,
+  optionApplies,
+  optionGroups,
+  optionOf,
+  targetOf,
+  targets,
+  type Target,
+} from '../../shared/firmware/index.ts';
 import { addRender } from '../../server/cli/render-command.ts';
 import {
   commandFor,
   definitionFileName,
   renderExport,
 } from '../../src/features/bench/export/render-export.ts';
+import { optionLabels } from '../../src/components/code/option-words.ts';
 import { targetTitles } from '../../src/features/bench/export/target-titles.ts';
 import { examples } from '../../src/features/bench/state/examples.ts';
 import type { TableAnswer } from '../../src/workers/engine-messages.ts';
@@ -97,6 +107,29 @@ async function wordsOf(command: string): Promise<string[]> {
 
 it('targets have the titles that the closed flight shows', () => {
   expect(targetTitles).toEqual(Object.fromEntries(targets.map(({ id, title }) => [id, title])));
+});
+
+it('every option of every target has one place in the groups that forms show, and words for it', () => {
+  const grouped = optionGroups.flatMap(({ options }) => options);
+  expect(new Set(grouped).size).toBe(grouped.length);
+  const named = targets.flatMap(({ options }) => Object.keys(options.shape));
+  expect([...new Set(named)].sort()).toEqual([...grouped].sort());
+  expect(Object.keys(optionLabels).sort()).toEqual([...grouped].sort());
+});
+
+it('options that mean nothing as others are set are not offered', () => {
+  const applying = (given: Record<string, string>) =>
+    optionGroups
+      .flatMap(({ options }) => options)
+      .filter((name) => name in targetOf('avr').options.shape)
+      .filter((name) => optionApplies(name, (option) => given[option] ?? ''));
+  const loop = applying({ playback: 'loop' });
+  expect(loop).toEqual(expect.arrayContaining(['port', 'highPort', 'portMap', 'unroll']));
+  for (const name of ['reservedPins', 'compare', 'toneMilliHz', 'rampWords'])
+    expect(loop).not.toContain(name);
+  const once = applying({ playback: 'once', portMap: 'B.0' });
+  expect(once).toEqual(expect.arrayContaining(['reservedPins', 'compare', 'idleCode', 'rampWords']));
+  for (const name of ['port', 'unroll', 'toneMilliHz']) expect(once).not.toContain(name);
 });
 
 describe.each(targets.map((target) => [target.id, target] as const))('options of %s', (id, target) => {

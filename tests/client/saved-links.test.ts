@@ -55,6 +55,24 @@ function begin(kept: string | null = null) {
 
 const other = (work: Work): Work => ({ ...work, definition: examples[2].work.definition });
 
+describe('the file that the work on the bench was made from', () => {
+  test('goes with that work through changes and undo, and is handed out once', () => {
+    const { bench, links, rename, present } = begin();
+    const file = new File(['1, 2'], 'old.c');
+    links.open(other, null, file);
+    rename('Changed');
+    bench.undo();
+    bench.undo();
+    expect(links.takeOriginal()).toBeNull();
+    bench.redo();
+    links.markSaved(linkTo('lamp'), present());
+    expect(links.takeOriginal()).toBe(file);
+    expect(links.takeOriginal()).toBeNull();
+    links.giveBackOriginal(file);
+    expect(links.takeOriginal()).toBe(file);
+  });
+});
+
 describe('which table the work on the bench belongs to', () => {
   test('none at first, and the one it was saved to from then on', () => {
     const { links, rename, present, kept } = begin();

@@ -220,7 +220,7 @@ describe('what a target cannot take', () => {
       'a code of 8 bits, 0 to 255',
     ],
     ['intel-hex', {}, { address: '0xFFFFFFFF' }, 'options.address', '4294967295', 'at most 4294967040'],
-    ['wav', {}, { repeats: '65536' }, 'options.repeats', '65536', 'at most 32768 for 256 entries'],
+    ['wav', {}, { repeats: '65536' }, 'options.repeats', '65536', 'at most 4096 for 256 entries'],
     ['avr', { length: 32_768 }, {}, 'table.length', '32768', 'at most 32767 entries of 8 bits'],
     ['avr', { length: 16_384, bits: 9 }, {}, 'table.length', '16384', 'at most 16383 entries of 9 bits'],
     [

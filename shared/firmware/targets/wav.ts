@@ -4,8 +4,8 @@ import { nameOptions, wholeNumberOption } from '../options.ts';
 import { defineTarget } from '../target.ts';
 import { wavFile } from '../wav-file.ts';
 
-/** Samples of a file at most: 16 MiB of 16 bits. */
-const mostSamples = 8 * 1024 * 1024;
+/** Samples of a file at most: 2 MiB of 16 bits, as answers hold it in base64. */
+const mostSamples = 1024 * 1024;
 
 /** The codes as sound, before complement, coding and fold: to hear, or for a player that takes files. */
 export const wav = defineTarget({

@@ -12,7 +12,14 @@ import { Moment, Page, Panel, Waiting } from '../../components/index.ts';
 import { StateWord } from '../../components/state-word.tsx';
 import { load } from '../../forms/load.ts';
 import { ProblemNotice } from '../../forms/problem-notice.tsx';
-import { openRevisionPath, reviewsPath, tablePath, teamPath } from '../../paths.ts';
+import {
+  comparePath,
+  openRevisionPath,
+  revisionText,
+  reviewsPath,
+  tablePath,
+  teamPath,
+} from '../../paths.ts';
 import { changedSettings, listSettings } from '../../settings/index.ts';
 import { CommentProvider } from './comment-context.ts';
 import { CommentsPanel } from './comments-panel.tsx';
@@ -90,9 +97,17 @@ function OneReview({ at, ...views }: { at: RevisionAt } & ReviewPageProps) {
         </p>
       }
       actions={
-        <Link to={openRevisionPath(at.team, at.table, at.number)} className="button button-plain">
-          Open on the bench
-        </Link>
+        <>
+          <Link
+            to={comparePath(at.team, undefined, revisionText(at.table, at.number))}
+            className="button button-plain"
+          >
+            Compare with another
+          </Link>
+          <Link to={openRevisionPath(at.team, at.table, at.number)} className="button button-plain">
+            Open on the bench
+          </Link>
+        </>
       }
     >
       <CommentProvider value={commenting}>

@@ -2,13 +2,18 @@ import { Link, Navigate } from 'react-router-dom';
 import { useCurrentTeam } from '../../api/current-team.ts';
 import { EmptyState } from '../../components/index.ts';
 import { WithAccount } from '../../forms/with-account.tsx';
-import { paths, reviewsPath, tablesPath, teamPath } from '../../paths.ts';
+import { boardsPath, paths, reviewsPath, tablesPath, teamPath } from '../../paths.ts';
 
 const places = {
   tables: {
     why: 'The library holds a team’s tables with all their revisions: found again, listened to, exported, shared.',
     lead: 'Tables are saved for a team.',
     pathOf: (team: string) => tablesPath(team),
+  },
+  boards: {
+    why: 'Boards are what a team’s tables play on. The bench shows an example board without signing in.',
+    lead: 'Boards are kept for a team.',
+    pathOf: boardsPath,
   },
   reviews: {
     why: 'In a team one makes a table and another vets it. What waits for you is here once you are signed in.',

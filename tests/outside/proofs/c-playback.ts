@@ -30,6 +30,20 @@ const kinds: Playing[] = [
     wanted: (words) => [...words, ...words],
   },
   {
+    title: 'timer, 65,536 × 8',
+    definition: tone({ length: 65_536 }),
+    options: { playback: 'timer' },
+    next: 'NAME[NAME_next_entry()]',
+    wanted: (words) => [...words, ...words.slice(0, 100)],
+  },
+  {
+    title: 'timer, 100 × 8',
+    definition: tone({ length: 100 }),
+    options: { playback: 'timer' },
+    next: 'NAME[NAME_next_entry()]',
+    wanted: (words) => [...words, ...words],
+  },
+  {
     title: 'timer, first quarter of 128 × 8',
     definition: folded,
     options: { playback: 'timer' },
@@ -101,12 +115,12 @@ ${playing
   .join('\n')}
     for (k = 0u; k < CHANNEL_DMA_ITEMS; ++k) { printf("%ld ", (long)channel[k]); }
     printf("\\n%u\\n", CHANNEL_DMA_ITEM_BYTES * (unsigned int)((sizeof channel / sizeof channel[0]) / CHANNEL_DMA_ITEMS));
-${tones.map((m) => `    printf("%lu ", (unsigned long)PLAY_4_STEP_FOR_MILLIHZ(${m}u));`).join('\n')}
+${tones.map((m) => `    printf("%lu ", (unsigned long)PLAY_6_STEP_FOR_MILLIHZ(${m}u));`).join('\n')}
     return 0;
 }
 `;
   const beyond =
-    '#include "play_4_play.h"\nuint32_t step(void);\nuint32_t step(void) { return PLAY_4_STEP_FOR_MILLIHZ(8000001u); }\n';
+    '#include "play_6_play.h"\nuint32_t step(void);\nuint32_t step(void) { return PLAY_6_STEP_FOR_MILLIHZ(8000001u); }\n';
   const files = [
     ...playing.flatMap((one) => one.files),
     ...dma.files,

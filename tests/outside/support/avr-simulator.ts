@@ -1,5 +1,5 @@
 import { avrInstruction, AVRTimer, CPU, timer1Config } from 'avr8js';
-import type { AvrPart } from './compilers.ts';
+import { avrValues, type AvrPart } from './compilers.ts';
 
 /** One write to an I/O register, in the order they happened. */
 export interface RegisterWrite {
@@ -22,11 +22,20 @@ export interface SimulatedRun {
   readonly writeDelays: readonly number[];
 }
 
-/** Names that a part's timer 1 is known by, for `avrValues`. */
-export const timerNames = [
-  ...['TIFR', 'OCR1A', 'OCR1B', 'ICR1', 'TCNT1', 'TCCR1A', 'TCCR1B', 'TCCR1C', 'TIMSK'],
-  ...['TOV1', 'OCF1A', 'OCF1B', 'TOIE1', 'OCIE1A', 'OCIE1B', 'TIMER1_COMPA_vect_num'],
-];
+/**
+ * Timer 1 of a part by its names' values. Larger parts have registers of flags and of the mask for each timer, and
+ * vectors of two words.
+ */
+export async function timerOf(mcu: string, isLarge = false): Promise<Readonly<Record<string, number>>> {
+  const own = isLarge ? ['TIFR1', 'TIMSK1'] : ['TIFR', 'TIMSK'];
+  const names = [
+    ...['OCR1A', 'OCR1B', 'ICR1', 'TCNT1', 'TCCR1A', 'TCCR1B', 'TCCR1C'],
+    ...['TOV1', 'OCF1A', 'OCF1B', 'TOIE1', 'OCIE1A', 'OCIE1B', 'TIMER1_COMPA_vect_num'],
+  ];
+  const { [own[0]]: TIFR, [own[1]]: TIMSK, ...values } = await avrValues(mcu, [...own, ...names]);
+  const vector = values.TIMER1_COMPA_vect_num * (isLarge ? 2 : 1);
+  return { ...values, TIFR, TIMSK, vector };
+}
 
 const returnFromInterrupt = 0x9518;
 
@@ -44,7 +53,7 @@ export function portWrites(
   return [...simulate(program, part, { wantedPortWrites, cycleLimit }).writes];
 }
 
-/** The same with the part's timer 1, by its names' values, where the program waits for its interrupt. */
+/** The same with the part's timer 1, as `timerOf` has it, where the program waits for its interrupt. */
 export function simulate(
   program: Uint8Array,
   part: AvrPart,
@@ -97,7 +106,7 @@ export function simulate(
 
 /** Timer 1 at a part's own addresses. @returns the address of its compare A interrupt */
 function addTimer(cpu: CPU, at: Readonly<Record<string, number>>): number {
-  const vector = at.TIMER1_COMPA_vect_num;
+  const { vector } = at;
   new AVRTimer(cpu, {
     ...timer1Config,
     compAInterrupt: vector,

@@ -8,7 +8,8 @@ import { ColumnsView } from './columns-view.tsx';
 import { Faults } from './faults.tsx';
 import { FilesView } from './files-view.tsx';
 import { RecordingView } from './recording-view.tsx';
-import { StartView, type Chosen } from './start-view.tsx';
+import { fileOf, type Chosen } from './chosen.ts';
+import { StartView } from './start-view.tsx';
 import { usePutOnBench } from './put-on-bench.ts';
 import { faultsOf, useImportsWorker } from './use-imports.ts';
 
@@ -103,6 +104,3 @@ export function BringInDialog({ onClose }: { onClose: () => void }) {
     </Dialog>
   );
 }
-
-/** A text that was pasted is a file of its own, once it is kept. */
-const fileOf = ({ file, text, name }: Chosen) => file ?? new File([text], name, { type: 'text/plain' });

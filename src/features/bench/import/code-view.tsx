@@ -8,7 +8,7 @@ import { ImageFields } from './image-fields.tsx';
 import { OldTableFigures } from './old-table-figures.tsx';
 import type { Brought } from './put-on-bench.ts';
 import { Sketch } from './sketch.tsx';
-import type { Chosen } from './start-view.tsx';
+import { fileOf, type Chosen } from './chosen.ts';
 import { sayFault, useAnswer } from './use-imports.ts';
 
 interface CodeViewProps {
@@ -77,7 +77,7 @@ export function CodeView({ chosen, read, worker, onPut, onAll }: CodeViewProps) 
           key={`${picked} ${JSON.stringify(part)}`}
           array={array}
           name={array.name || nameOfFile(chosen.file ? chosen.name : '')}
-          file={chosen.file}
+          file={fileOf(chosen)}
           {...{ worker, onPut }}
         />
       )}
@@ -91,7 +91,7 @@ const sayArray = ({ name, line, values, typeName }: CodeArray) =>
 interface PickedArrayProps extends Pick<CodeViewProps, 'worker' | 'onPut'> {
   array: CodeArray;
   name: string;
-  file: File | null;
+  file: File;
 }
 
 function PickedArray({ array, name, file, worker, onPut }: PickedArrayProps) {

@@ -10,7 +10,7 @@ import type { ImportsWorker } from '../../../workers/imports-client.ts';
 import { Faults } from './faults.tsx';
 import type { Brought } from './put-on-bench.ts';
 import { Sketch } from './sketch.tsx';
-import type { Chosen } from './start-view.tsx';
+import { fileOf, type Chosen } from './chosen.ts';
 import { faultsOf, useAnswer } from './use-imports.ts';
 
 interface ColumnsViewProps {
@@ -31,7 +31,7 @@ export function ColumnsView({ chosen, read, worker, onPut }: ColumnsViewProps) {
   const change = (part: CsvReading) => setReading((before) => ({ ...before, ...part }));
   const put = (values: readonly number[]) => {
     try {
-      onPut({ definition: definitionOfValues(nameOfFile(chosen.name), values), file: chosen.file });
+      onPut({ definition: definitionOfValues(nameOfFile(chosen.name), values), file: fileOf(chosen) });
     } catch (error) {
       setPutFaults(faultsOf(error));
     }

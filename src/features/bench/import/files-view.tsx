@@ -5,7 +5,7 @@ import { useAccount } from '../../../api/account-state.ts';
 import { useCurrentTeam } from '../../../api/current-team.ts';
 import { newKey } from '../../../api/new-key.ts';
 import { keepOriginal } from '../../../api/originals.ts';
-import { createTable } from '../../../api/tables.ts';
+import { createTable, type TaggedTable } from '../../../api/tables.ts';
 import { Button, Notice } from '../../../components/index.ts';
 import type { ImportsWorker } from '../../../workers/imports-client.ts';
 import { theBench } from '../state/use-bench.ts';
@@ -22,6 +22,8 @@ interface FoundDraft extends ImportDraft {
   readonly file: File;
   readonly saved: 'no' | 'saving' | 'yes';
   readonly fault: string | null;
+  /** Of the request that saves it: sent again, it is done once. */
+  readonly key: string;
 }
 
 interface RefusedFile {
@@ -70,7 +72,8 @@ export function FilesView({ files, worker, onPut }: FilesViewProps) {
                 <strong>{draft.definition.name}</strong>, {draft.words}, from {pathOf(draft.file)}
                 {draft.saved === 'saving' && ': saving …'}
                 {draft.saved === 'yes' && ': saved'}
-                {draft.fault !== null && `: not saved, ${draft.fault}`}{' '}
+                {draft.fault !== null &&
+                  `: ${draft.saved === 'yes' ? 'the file itself is not kept' : 'not saved'}, ${draft.fault}`}{' '}
                 {draft.saved === 'no' && (
                   <Button size="small" variant="quiet" onPress={() => onPut(draft)}>
                     Put {draft.definition.name} on the bench
@@ -124,7 +127,7 @@ function useDrafts(files: readonly File[], worker: ImportsWorker) {
             throw new Error(`It is larger than ${importLimits.fileBytes} bytes.`);
           const bytes = new Uint8Array(await file.arrayBuffer());
           for (const draft of await worker.run('drafts', { bytes, name: file.name })) {
-            found.push({ ...draft, file, saved: 'no', fault: null });
+            found.push({ ...draft, file, saved: 'no', fault: null, key: newKey() });
           }
         } catch (error) {
           wrong.push({ name: pathOf(file), faults: faultsOf(error) });
@@ -157,7 +160,7 @@ function useSaving(
     isStopped.current = false;
     setSaving(true);
     const { playback } = theBench().getState().history.present;
-    for (const [index, { definition, toneHz, file, saved }] of drafts.entries()) {
+    for (const [index, { definition, toneHz, file, saved, key }] of drafts.entries()) {
       if (isStopped.current) break;
       if (saved === 'yes') continue;
       change(index, { saved: 'saving', fault: null });
@@ -173,9 +176,8 @@ function useSaving(
               ? playback
               : { ...playback, mode: 'loop' as const, by: 'tone' as const, toneHz },
         };
-        const table = await createTable(team, body, newKey());
-        await keepOriginal({ team, table: table.slug, number: table.latestRevision }, file);
-        change(index, { saved: 'yes' });
+        const table = await createTable(team, body, key);
+        change(index, { saved: 'yes', fault: await faultOfKeeping(team, table, file) });
       } catch (error) {
         change(index, { saved: 'no', fault: faultsOf(error)[0] });
       }
@@ -183,4 +185,18 @@ function useSaving(
     setSaving(false);
   };
   return { isSaving, save, stop: () => void (isStopped.current = true) };
+}
+
+/** The table is saved by then: that its file is not kept is told, and no reason to save it again. */
+async function faultOfKeeping(
+  team: string,
+  { slug, latestRevision }: TaggedTable,
+  file: File,
+): Promise<string | null> {
+  try {
+    await keepOriginal({ team, table: slug, number: latestRevision }, file);
+    return null;
+  } catch (error) {
+    return faultsOf(error)[0];
+  }
 }

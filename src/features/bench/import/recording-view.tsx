@@ -8,7 +8,7 @@ import { BoundsDrawing } from './bounds-drawing.tsx';
 import { Faults } from './faults.tsx';
 import { benchTable, type Brought } from './put-on-bench.ts';
 import { Sketch } from './sketch.tsx';
-import type { Chosen } from './start-view.tsx';
+import { fileOf, type Chosen } from './chosen.ts';
 import { faultsOf, useAnswer } from './use-imports.ts';
 
 interface RecordingViewProps {
@@ -98,7 +98,7 @@ export function RecordingView({ chosen, bytes, worker, onPut, ...props }: Record
         table: benchTable(),
       },
       toneHz,
-      file: chosen.file,
+      file: fileOf(chosen),
     });
   };
 

@@ -1,13 +1,7 @@
 import { useId, useRef, useState, type DragEvent } from 'react';
 import { Button, TextField } from '../../../components/index.ts';
+import type { Chosen } from './chosen.ts';
 import { filesOf } from './dropped-files.ts';
-
-/** One file, or a text that was pasted. */
-export interface Chosen {
-  readonly name: string;
-  readonly file: File | null;
-  readonly text: string;
-}
 
 interface StartViewProps {
   pasted: string;

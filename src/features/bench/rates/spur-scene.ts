@@ -43,9 +43,9 @@ export class SpurScene implements Scene<SpurData> {
       },
       {
         side: 'bottom',
-        title: 'frequency in Hz',
-        ticks: (min, max, px) => decimalTicks(min, max, Math.min(5, px / 64)),
-        text: (hz) => (hz === 0 ? '0' : formatQuantity(hz, '', { significant: 6 })),
+        title: 'f in kHz',
+        ticks: (min, max, px) => decimalTicks(min, max, Math.min(5, px / 90)),
+        text: (hz) => tickText(Number((hz / 1_000).toPrecision(6))),
       },
     ];
   }

@@ -44,8 +44,9 @@ export interface SavedLinks {
   subscribe(listener: () => void): () => void;
   /** Puts other work on the bench, as one step of undo; `link` says which table it is, if any. */
   open(update: (work: Work) => Work, link: SavedLink | null, original?: File | null): void;
-  /** The file that the present work was made from, handed out once. */
+  /** The file that the present work was made from, handed out once; what was not kept is given back. */
   takeOriginal(): File | null;
+  giveBackOriginal(file: File): void;
   /** Notes that `saved` is now what the link's revision holds. */
   markSaved(link: SavedLink, saved: Pick<Wave, 'definition' | 'playback'>): void;
 }
@@ -135,6 +136,9 @@ export function createSavedLinks({ bench, storage, tabs }: SavedLinksParts): Sav
       const original = current.original ?? null;
       current.original = null;
       return original;
+    },
+    giveBackOriginal(file) {
+      current.original = file;
     },
     markSaved(link, saved) {
       Object.assign(current, { link, saved });

@@ -93,6 +93,8 @@ export function useSave({ schema, onClose, onFault }: SaveParts) {
       const { keepOriginal } = await import('../../../api/originals.ts');
       await keepOriginal({ team, table: slug, number: revision }, file);
     } catch (error) {
+      // The next revision takes it along.
+      theSavedLinks().giveBackOriginal(file);
       toast({
         message: `The revision is saved, but not ${file.name} with it: ${asProblem(error).message}`,
         tone: 'fault',

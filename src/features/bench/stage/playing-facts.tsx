@@ -5,7 +5,7 @@ import { Fact, Facts } from './fact.tsx';
 
 /** What the board makes of the table on the bench. */
 export function PlayingFacts({ board, answer }: { board: Board; answer: PlayingAnswer }) {
-  const { sinadDb, codesSinadDb, meanSupplyAmps, image, glitch, pwm, waveform } = answer;
+  const { sinadDb, snrDb, codesSinadDb, codesSnrDb, meanSupplyAmps, image, glitch, pwm, waveform } = answer;
   return (
     <Facts label="The table through the board">
       <Fact name="SINAD through these levels" is={db(sinadDb)}>
@@ -14,6 +14,12 @@ export function PlayingFacts({ board, answer }: { board: Board; answer: PlayingA
           mapped from lowest to highest. By even levels it is {db(codesSinadDb)}.
         </p>
         <p>Fit the table to measured levels to win back what the ladder costs.</p>
+      </Fact>
+      <Fact name="SNR through these levels" is={db(snrDb)}>
+        <p>
+          The wave against all that codes and levels add to it, 20·log10 of standard deviations. By even
+          levels it is {db(codesSnrDb)}. For a wave of several partials it tells more than SINAD.
+        </p>
       </Fact>
       {meanSupplyAmps !== null && (
         <Fact name="Mean supply current" is={q(meanSupplyAmps, 'A')}>

@@ -1,30 +1,21 @@
 import './stage.css';
 import { useMemo } from 'react';
 import type { Board } from '../../../../shared/contract/index.ts';
-import { Button, Caution, Notice } from '../../../components/index.ts';
-import { ProblemNotice } from '../../../forms/problem-notice.tsx';
+import { Caution } from '../../../components/index.ts';
 import type { StageJob } from '../../../workers/stage-messages.ts';
-import { changeDefinition, useDefinition } from '../state/use-bench.ts';
-import { BoardField } from './board-field.tsx';
+import { BitsFit } from './bits-fit.tsx';
+import { Fault } from './fault.tsx';
 import { LevelFacts } from './level-facts.tsx';
 import { LevelTable } from './level-table.tsx';
+import { OnStageBoard } from './on-stage-board.tsx';
 import { LevelPlots, PlayingPlots } from './plots.tsx';
 import { PlayingFacts } from './playing-facts.tsx';
 import { usePlayed } from './use-played.ts';
 import { useStage } from './use-stage.ts';
-import { useStageBoard } from './use-stage-board.ts';
 
 /** A board and what it makes of the table: volts over time, spectrum, linearity, currents. */
 export function StagePanel() {
-  const state = useStageBoard();
-  return (
-    <>
-      <BoardField />
-      {state.kind === 'waiting' && <p role="status">Reading the board…</p>}
-      {state.kind === 'failed' && <ProblemNotice fault={state.problem} onTryAgain={state.tryAgain} />}
-      {state.kind === 'there' && <OnBoard board={state.board} />}
-    </>
-  );
+  return <OnStageBoard>{(board) => <OnBoard board={board} />}</OnStageBoard>;
 }
 
 function OnBoard({ board }: { board: Board }) {
@@ -47,7 +38,7 @@ function OnBoard({ board }: { board: Board }) {
       </Caution>
       <Fault of="levels" fault={levels.fault} />
       {levels.answer !== null && isCurrent && <LevelFacts board={board} answer={levels.answer} />}
-      <BitsFit boardBits={board.output.bits} />
+      <BitsFit bits={board.output.bits} />
       <Fault of="wave at the output" fault={playing.fault} />
       {fits && playing.answer === null && playing.fault === null && (
         <p role="status">Computing what comes out…</p>
@@ -65,39 +56,5 @@ function OnBoard({ board }: { board: Board }) {
         </>
       )}
     </>
-  );
-}
-
-export function Fault({ of, fault }: { of: string; fault: string | null }) {
-  if (fault === null) return null;
-  return (
-    <Notice tone="fault">
-      The {of} could not be computed: {fault}
-    </Notice>
-  );
-}
-
-/** Says where table and board have different bits, and offers the board's. */
-export function BitsFit({ boardBits }: { boardBits: number }) {
-  const tableBits = useDefinition(({ table }) => table.bits);
-  if (tableBits === boardBits) return null;
-  const say = (bits: number) => `${bits} ${bits === 1 ? 'bit' : 'bits'}`;
-  return (
-    <div className="reasons">
-      <p>
-        The board takes codes of {say(boardBits)}; the table has {say(tableBits)}.
-      </p>
-      <Button
-        size="small"
-        onPress={() =>
-          changeDefinition(({ table: { levels: _gone, ...table }, ...definition }) => ({
-            ...definition,
-            table: { ...table, bits: boardBits },
-          }))
-        }
-      >
-        Use {say(boardBits)}
-      </Button>
-    </div>
   );
 }

@@ -12,6 +12,11 @@ export interface StageState<Name extends Kind> {
   readonly isBusy: boolean;
 }
 
+interface Answered<Name extends Kind> extends Pick<StageState<Name>, 'answer' | 'fault'> {
+  /** What was answered. */
+  readonly of: StageJob | null;
+}
+
 /**
  * Has one job done off the main thread, and again with each new one; `null` asks for nothing.
  *
@@ -21,19 +26,24 @@ export function useStage<Name extends Kind>(
   kind: Name,
   job: Extract<StageJob, { kind: Name }> | null,
 ): StageState<Name> {
-  const [state, setState] = useState<StageState<Name>>({ answer: null, fault: null, isBusy: true });
+  const [state, setState] = useState<Answered<Name>>({ answer: null, fault: null, of: null });
   const run = useRef<StageRun | null>(null);
   useEffect(() => {
-    run.current = startStage((message) => {
-      if (message.kind === kind) setState({ answer: message as Of<Name>, fault: null, isBusy: false });
-      else if (message.kind === 'failed') setState({ answer: null, fault: message.message, isBusy: false });
-    });
-    return () => run.current?.stop();
-  }, [kind]);
-  useEffect(() => {
     if (job === null) return;
-    setState((before) => (before.isBusy ? before : { ...before, isBusy: true }));
-    run.current?.ask(job);
-  }, [job]);
-  return state;
+    run.current ??= startStage((message, of) => {
+      if (message.kind === kind) setState({ answer: message as Of<Name>, fault: null, of });
+      else if (message.kind === 'failed') setState({ answer: null, fault: message.message, of });
+    });
+    run.current.ask(job);
+  }, [kind, job]);
+  // Declared last, so that it ends what the effect above has begun.
+  useEffect(
+    () => () => {
+      run.current?.stop();
+      run.current = null;
+    },
+    [],
+  );
+  const { answer, fault, of } = state;
+  return { answer, fault, isBusy: job !== null && of !== job && fault === null };
 }
