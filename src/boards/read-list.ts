@@ -6,7 +6,7 @@ import { parseQuantity } from '../../shared/quantities/index.ts';
  */
 export function readList(text: string, unit: string): { numbers: number[] | undefined } | { fault: string } {
   // A number and its unit stay together.
-  const tidy = text.replace(/(\d)\s+(?=[pnuµmkKMG]?(?:Ω|ohm|V)\b)/g, '$1');
+  const tidy = text.replace(/(\d)[^\S\n]+(?=[pnuµmkKMG]?(?:Ω|ohms?|V)(?![A-Za-z]))/gi, '$1');
   const cells = tidy.split(/[;\s]+/).filter((cell) => cell !== '');
   if (cells.length === 0) return { numbers: undefined };
   const numbers: number[] = [];

@@ -11,9 +11,13 @@ export type CellReading =
 
 const plain = /^[-+]?(?:\d+\.?\d*|\.\d+)(?:[eE][-+]?\d+)?$/;
 
+const minus = 0x2212;
+const enDash = 0x2013;
+
 /** A number of a cell, in either decimal sign where one is agreed on. Units are text: a column has one, in its heading. */
 export function readCell(cell: string, decimal?: DecimalSign): CellReading {
-  const text = cell.replace(/^[\u2212\u2013]/u, '-');
+  const first = cell.charCodeAt(0);
+  const text = first === minus || first === enDash ? `-${cell.slice(1)}` : cell;
   if (plain.test(text) && !(decimal === 'comma' && /^[-+]?\d{1,3}(?:\.\d{3})+$/.test(text))) {
     return numberOf(Number(text), text.includes('.') ? 'point' : undefined);
   }

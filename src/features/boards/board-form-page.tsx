@@ -3,7 +3,6 @@ import { useQueryClient, useSuspenseQuery, type QueryClient } from '@tanstack/re
 import { useState } from 'react';
 import { Link, useNavigate, useParams, type LoaderFunctionArgs } from 'react-router-dom';
 import { includesRole, limits, outputLimits } from '../../../shared/contract/index.ts';
-import { useAccount } from '../../api/account-state.ts';
 import { boardQueries, createBoard, reviseBoard, type TaggedBoard } from '../../api/boards.ts';
 import { chooseTeam } from '../../api/current-team.ts';
 import { teamQueries } from '../../api/teams.ts';
@@ -20,14 +19,15 @@ import {
 } from '../../components/index.ts';
 import { Form } from '../../forms/form.tsx';
 import { load } from '../../forms/load.ts';
+import { WithAccount } from '../../forms/with-account.tsx';
 import { boardPath, boardsPath, teamPath } from '../../paths.ts';
 import { BothBoards } from './both-boards.tsx';
-import { withKind, type BoardDraft, type ChangeBoard } from './draft.ts';
+import { draftOf, withKind, type BoardDraft, type ChangeBoard } from './draft.ts';
 import { BoundedField } from './fields.tsx';
 import { OutputFields } from './output-fields.tsx';
 import { PortMapFields } from './port-map-fields.tsx';
 import { StageFields } from './stage-fields.tsx';
-import { draftOf, useBoardForm } from './use-board-form.ts';
+import { useBoardForm } from './use-board-form.ts';
 
 export const boardFormLoader = (queryClient: QueryClient) => async (args: LoaderFunctionArgs) => {
   const { team = '', board } = args.params;
@@ -81,8 +81,6 @@ interface BoardFormProps {
 
 function BoardForm({ team, title, fresh, current }: BoardFormProps) {
   const { data } = useSuspenseQuery(teamQueries.detail(team));
-  // What is kept is a person's own; who that is is known a little later.
-  const own = useAccount()?.id ?? 'nobody';
   // Fields hold texts of their own; another number makes them anew.
   const [begun, setBegun] = useState(1);
   return (
@@ -101,7 +99,16 @@ function BoardForm({ team, title, fresh, current }: BoardFormProps) {
       {!includesRole(data.myRole, 'author') && (
         <Notice>As a viewer you read boards; saving one takes the role author.</Notice>
       )}
-      <Fields key={`${begun} ${own}`} {...{ team, fresh, current }} onBeginAnew={() => setBegun(begun + 1)} />
+      {/* What is typed is kept as a person's own: who that is must be known before anything is typed. */}
+      <WithAccount why="Boards are kept for a team.">
+        {({ id }) => (
+          <Fields
+            key={`${begun} ${id}`}
+            {...{ team, fresh, current }}
+            onBeginAnew={() => setBegun(begun + 1)}
+          />
+        )}
+      </WithAccount>
     </Page>
   );
 }
@@ -216,20 +223,21 @@ function Fields({
           />
         </Panel>
         <OutputFields key={board.output.kind} {...{ board, change, at }} />
-        <StageFields {...{ board, change, at }} />
-        {board.output.kind === 'ladder' && (
-          <PortMapFields
-            output={board.output}
-            onChange={(portMap) =>
-              change((before) =>
-                before.output.kind === 'ladder'
-                  ? { ...before, output: { ...before.output, portMap } }
-                  : before,
-              )
-            }
-            at={at}
-          />
-        )}
+        <StageFields {...{ board, change, at }}>
+          {board.output.kind === 'ladder' && (
+            <PortMapFields
+              output={board.output}
+              onChange={(portMap) =>
+                change((before) =>
+                  before.output.kind === 'ladder'
+                    ? { ...before, output: { ...before.output, portMap } }
+                    : before,
+                )
+              }
+              at={at}
+            />
+          )}
+        </StageFields>
         <TextField
           label="Note"
           autoComplete="off"

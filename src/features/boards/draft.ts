@@ -46,10 +46,16 @@ export function freshOutput(kind: OutputKind, bits: number): BoardOutput {
   }
 }
 
-/** Places for so many bits: those there are, and for more the next free pins; a new port where none is free. */
+/**
+ * Places for so many bits: those there are, and for more the next free pins; a new port where none is free. A port that
+ * loses its last bit goes, unless something is reserved there.
+ */
 export function withBits({ bits, ports }: PortMap, count: number): PortMap {
   const places = bits.slice(0, count);
-  const all = [...ports];
+  const carries = (list: PortMap['bits'], name: string) => list.some(({ port }) => port === name);
+  const all = ports.filter(
+    ({ name, reserved }) => carries(places, name) || !carries(bits, name) || reserved.length > 0,
+  );
   while (places.length < count) {
     const free = all
       .flatMap(({ name, width, reserved }) =>
@@ -79,3 +85,10 @@ export function readDraft(text: string): BoardDraft | null {
     return null;
   }
 }
+
+export const draftOf = (board: Board, etag: string | null): BoardDraft => ({
+  board,
+  others: {},
+  note: '',
+  etag,
+});

@@ -4,6 +4,7 @@ import { Button, NumberField, Panel, SelectField, TextField, icons } from '../..
 import { useUnread } from '../../components/unread-fields.ts';
 import { freeName } from './draft.ts';
 import { BoundedField } from './fields.tsx';
+import { readReserved } from './read-reserved.ts';
 import type { ProblemAt } from './use-board-form.ts';
 
 interface PortMapFieldsProps {
@@ -189,16 +190,4 @@ function ReservedField({ port, onChange, problem }: ReservedFieldProps) {
       }}
     />
   );
-}
-
-export function readReserved(text: string): Port['reserved'] | string {
-  const reserved: Port['reserved'] = [];
-  for (const part of text.split(/[,;]/).map((each) => each.trim())) {
-    if (part === '') continue;
-    const [, pin, rest = 'low'] = /^(\d{1,2})(?:\s+(high|low))?$/i.exec(part) ?? [];
-    if (pin === undefined || Number(pin) >= outputLimits.portWidth.max)
-      return `“${part}” is not allowed; allowed: pins from 0 to ${outputLimits.portWidth.max - 1}, each with high or low behind it, parted by commas`;
-    reserved.push({ pin: Number(pin), rest: rest.toLowerCase() as 'low' | 'high' });
-  }
-  return reserved;
 }

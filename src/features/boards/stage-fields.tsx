@@ -1,3 +1,4 @@
+import type { ReactNode } from 'react';
 import { limits, outputLimits, type Board } from '../../../shared/contract/index.ts';
 import { Button, Panel, SelectField } from '../../components/index.ts';
 import type { ChangeBoard } from './draft.ts';
@@ -9,10 +10,12 @@ interface StageFieldsProps {
   board: Board;
   change: ChangeBoard;
   at: ProblemAt;
+  /** Stands before the flash. */
+  children: ReactNode;
 }
 
 /** What follows the converter, and what makes its rate. */
-export function StageFields({ board, change, at }: StageFieldsProps) {
+export function StageFields({ board, change, at, children }: StageFieldsProps) {
   const { stage, clock, timer, flashBytes, levels } = board;
   const setStage = (part: Partial<Board['stage']>) =>
     change((before) => ({ ...before, stage: { ...before.stage, ...part } }));
@@ -122,6 +125,7 @@ export function StageFields({ board, change, at }: StageFieldsProps) {
           />
         </div>
       </Panel>
+      {children}
       <Panel title="Flash">
         <OptionalField
           asks="Tables have only so much of it"

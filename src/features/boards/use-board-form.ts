@@ -1,5 +1,5 @@
 import { useState } from 'react';
-import { checkBoard, type Board } from '../../../shared/contract/index.ts';
+import { checkBoard } from '../../../shared/contract/index.ts';
 import { readCurrentBoard, type TaggedBoard } from '../../api/boards.ts';
 import { newKey } from '../../api/new-key.ts';
 import { ProblemError } from '../../api/problem-error.ts';
@@ -74,10 +74,3 @@ export function useBoardForm(
     },
   };
 }
-
-export const draftOf = (board: Board, etag: string | null): BoardDraft => ({
-  board,
-  others: {},
-  note: '',
-  etag,
-});

@@ -15,8 +15,33 @@ import { useTextSync } from './use-text-sync.ts';
 /** More than these are counted, not listed. */
 const mostListed = 5;
 
+/**
+ * Text typed over a selection is put in here: the browser would give it the looks of what it replaces by an inline
+ * style, which the page's content policy refuses. Brackets and quotes go on to be put round the selection.
+ */
+const typingOver = EditorView.domEventHandlers({
+  beforeinput(event, view) {
+    const { data, inputType } = event;
+    // The editor may not have heard yet of what the page has just selected.
+    const [range] = event.getTargetRanges();
+    if (inputType !== 'insertText' || data === null || view.composing) return false;
+    if (range === undefined || range.collapsed || /^["'[{(]$/.test(data)) return false;
+    const from = view.posAtDOM(range.startContainer, range.startOffset);
+    const to = view.posAtDOM(range.endContainer, range.endOffset);
+    event.preventDefault();
+    view.dispatch({
+      changes: { from, to, insert: data },
+      selection: { anchor: from + view.state.toText(data).length },
+      userEvent: 'input.type',
+      scrollIntoView: true,
+    });
+    return true;
+  },
+});
+
 const extensions = () => [
   json(),
+  typingOver,
   EditorView.contentAttributes.of({ 'aria-label': 'Definition as JSON', spellcheck: 'false', tabindex: '0' }),
   EditorView.lineWrapping,
   codeLook(),

@@ -12,6 +12,8 @@ import { usePlayed } from './use-played.ts';
 import { useStage } from './use-stage.ts';
 
 const trials = 50;
+/** SINAD so far below SNR is the wave’s own partials, in dB. */
+const partialsDb = 6;
 
 interface BitsPartProps {
   board: Board;
@@ -25,6 +27,8 @@ export function BitsPart({ board, output, ladder }: BitsPartProps) {
   const played = usePlayed();
   const [asked, setAsked] = useState<(StageJob & { kind: 'bits' }) | null>(null);
   const { answer, fault, isBusy } = useStage('bits', asked);
+  const { snrDb = null, sinadDb = null } = table?.report ?? {};
+  const isOfPartials = snrDb !== null && (sinadDb === null || snrDb - sinadDb > partialsDb);
   const isRunning = asked !== null && isBusy;
   const isCurrent =
     asked !== null &&
@@ -44,10 +48,18 @@ export function BitsPart({ board, output, ladder }: BitsPartProps) {
           </p>
         </Explain>
       </h3>
+      {isOfPartials && (
+        <p className="figure-note">
+          The wave has partials of its own, which SINAD counts as distortion: put a single tone on the bench
+          for this curve.
+        </p>
+      )}
       <Button
         size="small"
-        isDisabled={isRunning || table === null || played === null}
-        disabledReason={isRunning ? 'It is under way' : 'No table is built yet'}
+        isDisabled={isRunning || isOfPartials || table === null || played === null}
+        disabledReason={
+          isRunning ? 'It is under way' : isOfPartials ? 'It is for a single tone' : 'No table is built yet'
+        }
         onPress={() => {
           if (table === null || played === null) return;
           const { tolerancePercent, distribution } = output;

@@ -17,7 +17,9 @@ export interface LinesData {
   readonly tableLength: number;
 }
 
-const topDb = 6;
+/** Room above 0 dBFS for the names. */
+const topDb = 50;
+const titleRoom = 110;
 const bottomDb = -120;
 const shownRates = 3;
 /** Places at which the curve of the hold is laid. */
@@ -46,7 +48,8 @@ export class LinesScene implements Scene<LinesData> {
       {
         side: 'bottom',
         title: 'frequency in Hz',
-        ticks: (min, max, px) => decimalTicks(min, max, Math.min(5, px / 64)),
+        ticks: (min, max, px) =>
+          decimalTicks(min, max - ((max - min) / px) * titleRoom, Math.min(5, px / 64)),
         text: (hz) => (hz === 0 ? '0' : formatQuantity(hz, '', { significant: 6 })),
       },
     ];

@@ -51,7 +51,10 @@ export function OpAmpPart({ board }: { board: Board }) {
               triangle.
             </p>
           </Fact>
-          <Fact name="Loss at the tone" is={formatQuantity(opAmp.toneDb, 'dB', { significant: 3 })}>
+          <Fact
+            name="Loss at the tone"
+            is={opAmp.toneDb > -0.005 ? 'under 0.01 dB' : formatQuantity(opAmp.toneDb, 'dB', { decimals: 2 })}
+          >
             <p>What one pole at the gain-bandwidth product takes off.</p>
           </Fact>
         </Facts>

@@ -66,7 +66,9 @@ export class TracesScene implements Scene<TracesData> {
         title: x.unit === 's' ? x.name : named(x),
         ticks: (min, max, px) => {
           const { from, step } = this.data;
-          const places = decimalTicks(from + min * step, from + max * step, Math.min(5, px / 72));
+          // The title stands at the end of the axis.
+          const last = max - ((max - min) / px) * letterPx * named(x).length;
+          const places = decimalTicks(from + min * step, from + last * step, Math.min(5, px / 72));
           return places.map((place) => (place - from) / step);
         },
         text: (item) => {
@@ -87,7 +89,9 @@ export class TracesScene implements Scene<TracesData> {
       }
     }
     const room = 0.05 * (high - low || 1);
-    this.range = [low - (low === 0 ? 0 : room), high + room];
+    // Names of traces stand above them.
+    const above = this.data.traces.length > 1 ? 2 * this.data.traces.length * room : room;
+    this.range = [low - (low === 0 ? 0 : room), high + above];
   }
 
   private get last(): number {
