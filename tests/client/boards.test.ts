@@ -86,6 +86,7 @@ describe('measured values', () => {
     const board = exampleBoard(3);
     const nominal = measuredVolts({ ...own, measured: 'resistors', rungs: '20k 20k 20k' }, board);
     expect(nominal).toEqual({ kind: 'volts', volts: [...boardVolts(board)] });
+    expect(measuredVolts({ ...own, measured: 'board' }, board)).toEqual(nominal);
     const weights = measuredVolts({ ...own, measured: 'weights', weights: '1 V\n2 V\n4 V' }, board);
     expect(weights).toEqual({ kind: 'volts', volts: [0, 1, 2, 3, 4, 5, 6, 7] });
   });

@@ -30,6 +30,11 @@ const kinds = [
     label: 'Resistors',
     hint: 'Single resistors of the ladder, measured before soldering.',
   },
+  {
+    value: 'board',
+    label: 'Board’s own',
+    hint: 'Nothing more: the board’s own levels, of its ladder and pins or as they were measured.',
+  },
 ] as const;
 
 /** Codes chosen for the converter as it was built. */

@@ -1,7 +1,7 @@
 import { createLive } from '../../../live/index.ts';
 import type { Comma } from '../quantise/levels/read-levels.ts';
 
-export type Measured = 'levels' | 'weights' | 'resistors';
+export type Measured = 'levels' | 'weights' | 'resistors' | 'board';
 
 export interface FitWishes {
   readonly measured: Measured;

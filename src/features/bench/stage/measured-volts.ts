@@ -1,5 +1,5 @@
 import { checkLadder, type Board, type Ladder } from '../../../../shared/contract/index.ts';
-import { ladderOf, levelsFromWeights, voltsOf } from '../../../../shared/output-stage/index.ts';
+import { boardVolts, ladderOf, levelsFromWeights, voltsOf } from '../../../../shared/output-stage/index.ts';
 import { readList } from '../../../boards/index.ts';
 import { readLevels } from '../quantise/levels/read-levels.ts';
 import type { FitWishes } from './fit-wishes.ts';
@@ -12,6 +12,7 @@ export type MeasuredVolts =
 
 /** Voltage of each code from what was measured. */
 export function measuredVolts(wishes: FitWishes, board: Board): MeasuredVolts {
+  if (wishes.measured === 'board') return { kind: 'volts', volts: [...boardVolts(board)] };
   if (wishes.measured === 'resistors') return ofResistors(wishes, board);
   const isLevels = wishes.measured === 'levels';
   const reading = isLevels

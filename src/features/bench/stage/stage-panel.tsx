@@ -36,9 +36,10 @@ function OnBoard({ board }: { board: Board }) {
         of the part’s data sheet: leave that to it and to a qualified engineer. This is for low voltages,
         never for the mains. DC through a loudspeaker needs a coupling capacitor in its way.
       </Caution>
+      {/* Above what comes later: a press must not find that it has moved. */}
+      <BitsFit bits={board.output.bits} />
       <Fault of="levels" fault={levels.fault} />
       {levels.answer !== null && isCurrent && <LevelFacts board={board} answer={levels.answer} />}
-      <BitsFit bits={board.output.bits} />
       <Fault of="wave at the output" fault={playing.fault} />
       {fits && playing.answer === null && playing.fault === null && (
         <p role="status">Computing what comes out…</p>
