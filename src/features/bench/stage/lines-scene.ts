@@ -19,7 +19,7 @@ export interface LinesData {
 
 /** Room above 0 dBFS for the names. */
 const topDb = 50;
-const titleRoom = 110;
+const titleRoom = 60;
 const bottomDb = -120;
 const shownRates = 3;
 /** Places at which the curve of the hold is laid. */
@@ -47,10 +47,10 @@ export class LinesScene implements Scene<LinesData> {
       },
       {
         side: 'bottom',
-        title: 'frequency in Hz',
+        title: 'f in kHz',
         ticks: (min, max, px) =>
           decimalTicks(min, max - ((max - min) / px) * titleRoom, Math.min(5, px / 64)),
-        text: (hz) => (hz === 0 ? '0' : formatQuantity(hz, '', { significant: 6 })),
+        text: (hz) => tickText(Number((hz / 1_000).toPrecision(6))),
       },
     ];
   }
