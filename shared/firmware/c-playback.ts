@@ -1,5 +1,6 @@
 import { z } from 'zod';
 import { Refusal, showValue } from '../contract/index.ts';
+import type { ExportableTable } from './exportable-table.ts';
 import { layOut, patternOf, type Layout } from './layout.ts';
 import {
   numberOptions,
@@ -12,7 +13,7 @@ import {
 } from './options.ts';
 import { accumulatorFacts, playbackOptions } from './playback-options.ts';
 import { alignmentFacts } from './storage-facts.ts';
-import type { ExportableTable, ExportInput, Facts, SharedOptions, TargetFile } from './target.ts';
+import type { ExportInput, Facts, SharedOptions, TargetFile } from './target.ts';
 import { wordTypeOf } from './word-type.ts';
 
 /** Playback in portable C: which entry is next, without anything of a processor. */

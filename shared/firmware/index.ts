@@ -1,6 +1,7 @@
 export { boardOptions } from './board-options.ts';
 export { arrayNameFault, arrayNameFrom, arrayNameLength } from './c-identifier.ts';
 export { canonicalJson, digestOf, type DigestInput } from './digest.ts';
+export type { ExportableTable } from './exportable-table.ts';
 export { contentOf, readableContent } from './file-content.ts';
 export { inertText } from './inert-text.ts';
 export { decimal } from './key-figures.ts';
@@ -9,6 +10,7 @@ export { optionApplies, optionGroups } from './option-groups.ts';
 export { parsePortMap, portMapTexts, type PortMapTexts } from './port-map.ts';
 export { proofsOf, type TargetProof } from './proofs.ts';
 export { renderFiles, storedBytes, targetOf, type TemplateTexts } from './render-files.ts';
-export type { ExportableTable, Target } from './target.ts';
+export { sampleCosts, type SampleCost } from './sample-costs.ts';
+export type { Target } from './target.ts';
 export { targets } from './targets/index.ts';
 export { wordTypeOf, type WordType } from './word-type.ts';

@@ -1,7 +1,7 @@
 import { Refusal, showValue, type PortMap } from '../contract/index.ts';
+import type { ExportableTable } from './exportable-table.ts';
 import { packedBitsOf, packWords, type PackedBits } from './packing.ts';
 import { mappedPorts, parsePortMap, wordsOnPort, type MappedPort } from './port-map.ts';
-import type { ExportableTable } from './target.ts';
 import { wordTypeOf } from './word-type.ts';
 
 /** An array as it is stored: a table's words, those of one port, or bytes of packed words. */

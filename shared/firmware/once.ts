@@ -1,5 +1,5 @@
 import { Refusal, showValue } from '../contract/index.ts';
-import type { ExportableTable } from './target.ts';
+import type { ExportableTable } from './exportable-table.ts';
 
 export interface OnceOptions {
   /** Code that the output rests at; the middle one where left out. */

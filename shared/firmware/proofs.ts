@@ -13,7 +13,8 @@ export interface TargetProof {
   readonly instructions?: number;
 }
 
-const proofs: Readonly<Record<string, readonly TargetProof[]>> = stored;
+/** By target. */
+export const proofs: Readonly<Record<string, readonly TargetProof[]>> = stored;
 
 /** The proofs of a target, in the order of their run; none for a target that there is not. */
 export const proofsOf = (target: string): readonly TargetProof[] => proofs[target] ?? [];

@@ -4,11 +4,12 @@ import { engineVersion as thisEngine } from '../engine-version.ts';
 import { toBase64 } from './base64.ts';
 import { arrayNameFrom } from './c-identifier.ts';
 import { digestOf } from './digest.ts';
+import type { ExportableTable } from './exportable-table.ts';
 import { inertText } from './inert-text.ts';
 import { layOut } from './layout.ts';
 import { wordsToPlayOnce } from './once.ts';
 import { sharedFacts } from './shared-facts.ts';
-import type { ExportableTable, SharedOptions, Target } from './target.ts';
+import type { SharedOptions, Target } from './target.ts';
 import { targets } from './targets/index.ts';
 
 /** Text of each template by its path below `templates/`, the ending `.liquid` included. */

@@ -1,19 +1,8 @@
 import type { z } from 'zod';
-import { problemsIn, Refusal, type Definition, type Report } from '../contract/index.ts';
+import { problemsIn, Refusal } from '../contract/index.ts';
+import type { ExportableTable } from './exportable-table.ts';
 import type { Layout, LayoutOptions } from './layout.ts';
 import type { NumberStyle } from './word-rows.ts';
-
-/** A table as it is exported: freshly built, or a saved revision with the figures and engine version stored then. */
-export interface ExportableTable {
-  readonly definition: Definition;
-  /** One code an entry, before complement, coding and fold. */
-  readonly codes: Uint16Array;
-  /** The words to store (engine specification §3.6). */
-  readonly stored: Int32Array;
-  readonly report: Report;
-  /** Version of the engine that built the codes; this engine's where left out. */
-  readonly engineVersion?: string;
-}
 
 /** Facts a template can print. Texts are inert already; numbers print as they are. */
 export type Facts = Readonly<Record<string, unknown>>;

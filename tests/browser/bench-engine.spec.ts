@@ -170,7 +170,22 @@ test('a note’s timer values chosen from the ranked list reach the export, with
   await page.getByRole('textbox', { name: 'Wanted tone' }).fill('H4');
   await expect(page.getByText('“H4” is not allowed')).toBeVisible();
   await page.getByRole('textbox', { name: 'Wanted tone' }).fill('A4');
-  await page.getByRole('textbox', { name: 'Cost of a sample' }).fill('150');
+  const cost = page.getByRole('combobox', { name: 'Cost of one sample' });
+  const cycles = page.getByRole('textbox', { name: 'Cycles of a sample' });
+  await cycles.fill('150');
+  // A proven code's cycles fill the field; what was typed waits under its own choice, over a reload, too.
+  await cost.selectOption('avr timer, 256 × 8');
+  await expect(cycles).toHaveValue('52');
+  await expect(page.getByText(/^Measured in a simulator: 48 cycles at most.*: 52 in all/)).toBeVisible();
+  await expect(page.getByText('too few')).toHaveCount(0);
+  await page.reload();
+  await expect(cycles).toHaveValue('52');
+  await cost.selectOption('cortex-m timer, 256 × 8');
+  await expect(cycles).toHaveValue('11');
+  await expect(page.getByText(/^Counted in the disassembly, not measured/)).toBeVisible();
+  await cycles.fill('12');
+  await expect(cost).toHaveValue('own');
+  await cycles.fill('150');
   const rows = page.getByRole('table', { name: /Timer settings/ }).getByRole('row');
   // 16 MHz/(1·(141 + 1))/256 = 440.14 Hz, and between two samples lie 142 cycles, fewer than asked for.
   await expect(rows.nth(1)).toContainText('440.141 Hz');

@@ -2,6 +2,7 @@ import { describe, expect, it } from 'vitest';
 import { targets } from '../../shared/firmware/index.ts';
 import { readTone, sayCents, sayTone } from '../../src/features/bench/rates/read-tone.ts';
 import { withExportOptions } from '../../src/features/bench/rates/to-export.ts';
+import { chosenCost, costChoices, costCyclesOf } from '../../src/features/bench/rates/sample-cost.ts';
 import { readPrescalers } from '../../src/features/bench/rates/wishes.ts';
 import { examples } from '../../src/features/bench/state/examples.ts';
 import { readKept, writeKept } from '../../src/features/bench/state/storage.ts';
@@ -34,6 +35,41 @@ it('prescalers are read from a line, and what is none is named', () => {
   expect(readPrescalers('1, 8 64;256')).toEqual({ prescalers: [1, 8, 64, 256] });
   expect(readPrescalers('1, x')).toHaveProperty('fault', expect.stringContaining('“x”'));
   expect(readPrescalers('')).toHaveProperty('fault');
+});
+
+describe('the cost of a sample', () => {
+  const typed = { costOf: 'own', costCycles: 150 };
+
+  it('is a proven code’s in all, and one’s own number waits beside', () => {
+    const chosen = { ...typed, costOf: 'avr timer, 256 × 8' };
+    expect(costCyclesOf(chosen)).toBe(52);
+    expect(costCyclesOf(typed)).toBe(150);
+    expect(costChoices(chosen.costCycles)[0]).toMatchObject({
+      value: 'own',
+      label: 'Own number: 150 cycles',
+    });
+    // A case that has gone since.
+    expect(costCyclesOf({ ...typed, costOf: 'avr timer, 7 × 8' })).toBe(150);
+    expect(chosenCost({ costOf: 'avr timer, 7 × 8' })).toBe('own');
+  });
+
+  it('says of each choice whether it was measured or counted', () => {
+    const said = (value: string) => costChoices(40).find((choice) => choice.value === value);
+    expect(said('avr timer, 256 × 8')).toMatchObject({
+      label: 'AVR, timer interrupt, 256 × 8: 52 cycles',
+      hint: expect.stringMatching(/^Measured .* 48 cycles at most, plus 2 .*, plus 2 .*: 52 in all/),
+    });
+    expect(said('avr accumulator, 256 × 8, 24 bits')).toMatchObject({
+      label: 'AVR, accumulator in a loop, 256 × 8, 24 bits: 9 cycles',
+    });
+    expect(said('cortex-m timer, 256 × 8')).toMatchObject({
+      label: 'Cortex-M, timer interrupt, 256 × 8: 11 instructions, counted',
+      hint: expect.stringContaining('not measured'),
+    });
+    for (const { label, hint } of costChoices(40).slice(1)) {
+      expect(hint, label).toMatch(/counted$/.test(label) ? /^Counted / : /^Measured /);
+    }
+  });
 });
 
 describe('a chosen timer and accumulator', () => {

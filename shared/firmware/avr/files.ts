@@ -2,7 +2,6 @@ import { Refusal, showValue } from '../../contract/index.ts';
 import { accumulatorFacts } from '../playback-options.ts';
 import { alignmentFacts } from '../storage-facts.ts';
 import type { ExportInput, Facts, TargetFile } from '../target.ts';
-import type { AvrOptions } from '../targets/avr.ts';
 import { accumulatorLoop, alignmentOf, type AccumulatorShape } from './accumulator-loop.ts';
 import type { Line } from './assembly.ts';
 import {
@@ -13,8 +12,10 @@ import {
   tableHandler,
   type PhaseShape,
 } from './handler.ts';
+import type { AvrOptions } from './options.ts';
 import { portLoop, wholeLoopWords, type PortLoop } from './port-loop.ts';
 import { loopPorts } from './ports.ts';
+import { mainInstructionCycles, responseCycles, vectorCycles } from './response.ts';
 import { keepsFlags, type LoopPort, type LoopShape } from './sample.ts';
 
 /** Header, source and, unless the table alone is wanted, a main that plays it. */
@@ -119,10 +120,6 @@ function freeAccumulator(input: ExportInput<AvrOptions>, ports: readonly LoopPor
   };
 }
 
-/** Cycles of the response to an interrupt by the data sheets, and of the jump that a vector is on parts up to 8 KiB. */
-const responseCycles = 4;
-const vectorCycles = 2;
-
 function onInterrupts(input: ExportInput<AvrOptions>, ports: readonly LoopPort[]): Playback {
   const { table, layout, options } = input;
   const { playback, prescaler, compare, accumulatorBits } = options;
@@ -155,11 +152,12 @@ function onInterrupts(input: ExportInput<AvrOptions>, ports: readonly LoopPort[]
         ? onceHandler(shape)
         : tableHandler(shape);
   const handlerCycles = responseCycles + vectorCycles + handler.cycles;
-  if (cyclesPerWord < handlerCycles + 2) {
+  const leastCycles = handlerCycles + mainInstructionCycles;
+  if (cyclesPerWord < leastCycles) {
     refuse(
       'options.compare',
       compare,
-      `at least ${Math.ceil((handlerCycles + 2) / Number(prescaler)) - 1}: the handler takes ${handlerCycles} cycles of ${cyclesPerWord}`,
+      `at least ${Math.ceil(leastCycles / Number(prescaler)) - 1}: the handler takes ${handlerCycles} cycles of ${cyclesPerWord}`,
     );
   }
   return {

@@ -1,7 +1,7 @@
 import { Refusal, showValue } from '../../contract/index.ts';
+import type { ExportableTable } from '../exportable-table.ts';
 import { layOut, type Layout } from '../layout.ts';
-import type { ExportableTable } from '../target.ts';
-import type { AvrOptions } from '../targets/avr.ts';
+import type { AvrOptions } from './options.ts';
 import type { LoopPort } from './sample.ts';
 
 /** Pins of a port of the part. */

@@ -3,7 +3,8 @@ import { Figure, FigureStrip } from '../../../components/index.ts';
 import type { TableAnswer } from '../../../workers/engine-messages.ts';
 import { sameValue } from '../state/same-value.ts';
 import { useIsWide } from '../view/use-is-wide.ts';
-import { figureGroupsOf, type FigureGroup, type ShownFigure } from './figures.ts';
+import { figureGroupsOf, type FigureGroup } from './figures.ts';
+import type { ShownFigure } from './shown-figure.ts';
 
 /**
  * The figures in four courses. They follow the drawings, which are drawn first while something is dragged. Where

@@ -1,6 +1,6 @@
 import type { TableAnswer } from '../../../workers/engine-messages.ts';
 import { fixed } from '../numbers.ts';
-import type { ShownFigure } from './figures.ts';
+import type { ShownFigure } from './shown-figure.ts';
 
 /** A band of a sixteenth of 0…fs/2 must hold a line at least. */
 const shortestTable = 32;

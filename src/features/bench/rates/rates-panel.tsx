@@ -15,8 +15,10 @@ import { saveText } from '../../../components/save-text.ts';
 import { useLive } from '../../../live/index.ts';
 import { theBench, useBench, useDefinition } from '../state/use-bench.ts';
 import { timerOf, toneOf } from '../state/wave.ts';
+import { CostFields } from './cost-fields.tsx';
 import { PlanTable } from './plan-table.tsx';
 import { readTone } from './read-tone.ts';
+import { costCyclesOf } from './sample-cost.ts';
 import { withExportOptions } from './to-export.ts';
 import { ToneField } from './tone-field.tsx';
 import { rateWishes, readPrescalers, wish, type RateWishes } from './wishes.ts';
@@ -83,6 +85,7 @@ export function RatesPanel() {
           value={wishes.compareBits}
           onChange={(compareBits) => wish({ compareBits })}
         />
+        <CostFields wishes={wishes} />
         <NumberField
           label="Clock tolerance"
           unit="ppm"
@@ -92,17 +95,6 @@ export function RatesPanel() {
           description="To either side, from the crystal’s data sheet."
           value={wishes.tolerancePpm}
           onChange={(tolerancePpm) => wish({ tolerancePpm })}
-        />
-        <NumberField
-          label="Cost of a sample"
-          unit="cycles"
-          min={0}
-          max={1e6}
-          isInteger
-          allowed="a whole number of clock cycles from 0"
-          description="What the handler or the loop takes."
-          value={wishes.costCycles}
-          onChange={(costCycles) => wish({ costCycles })}
         />
       </div>
       <ChoiceField
@@ -183,7 +175,7 @@ function isIn({ playback, definition }: ReturnType<typeof work>) {
 }
 
 function plansFor(
-  { clockHz, prescalers: text, compareBits, tolerancePpm, costCycles, lengths }: RateWishes,
+  { clockHz, prescalers: text, compareBits, tolerancePpm, lengths, ...cost }: RateWishes,
   toneText: string,
   length: number,
   cycles: number,
@@ -204,7 +196,7 @@ function plansFor(
         wantedHz: tone.hz,
         lengths: lengths === 'this' ? [length] : lengthsNear(length),
         cycles: [cycles],
-        costCycles,
+        costCycles: costCyclesOf(cost),
         limit: mostPlans,
       },
     );

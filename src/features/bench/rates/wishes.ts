@@ -1,6 +1,9 @@
 import { z } from 'zod';
 import { createLive } from '../../../live/index.ts';
 
+/** That a sample costs what was typed. */
+export const ownCost = 'own';
+
 const wishesSchema = z.strictObject({
   /** Tone as typed; empty for the one that is set on the bench. */
   tone: z.string(),
@@ -8,6 +11,8 @@ const wishesSchema = z.strictObject({
   prescalers: z.string(),
   compareBits: z.enum(['8', '16', '32']),
   tolerancePpm: z.number().min(0),
+  /** A playback code whose proven cycles count, by its case; `own` for `costCycles`. */
+  costOf: z.string().default(ownCost),
   costCycles: z.number().min(0),
   lengths: z.enum(['this', 'others']),
   accumulatorTone: z.string(),
@@ -30,6 +35,7 @@ const atFirst: RateWishes = {
   prescalers: '1, 8, 64, 256, 1024',
   compareBits: '16',
   tolerancePpm: 50,
+  costOf: ownCost,
   costCycles: 40,
   lengths: 'this',
   accumulatorTone: '',
