@@ -49,18 +49,7 @@ export function spectrumOf(cycle: Float64Array, error: Float64Array): Spectrum {
  * with one root instead of one a line.
  */
 export function strongestLineOf(signal: Float64Array): number {
-  const size = signal.length;
-  const { bins, lines, forward } = realTransformOf(size);
-  forward(lines, signal);
-  const atHalf = size % 2 === 0 ? size : 2 * bins;
-  let strongest = 0;
-  for (let i = 2; i < atHalf; i += 2) {
-    const power = lines[i] * lines[i] + lines[i + 1] * lines[i + 1];
-    if (power > strongest) strongest = power;
-  }
-  const scale = 2 / size;
-  const most = Math.sqrt(strongest) * scale;
-  return size % 2 === 0 ? Math.max(most, (Math.abs(lines[size]) * scale) / 2) : most;
+  return realTransformOf(signal.length).strongest(signal) * (2 / signal.length);
 }
 
 /** 20·log10 of an amplitude, not below −200 dB. An amplitude-1 sine is 0 dBFS. */

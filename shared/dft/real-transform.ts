@@ -7,6 +7,8 @@ export interface RealTransform {
   readonly bins: number;
   /** Fills `lines` (2·bins numbers) from `signal` (N numbers). The two must be different arrays. */
   readonly forward: (lines: Float64Array, signal: Float64Array) => void;
+  /** The largest |X_k|, k ≥ 1, that at N/2 halved as it has no mirror line: what `forward` gives, to the last bit. */
+  readonly strongest: (signal: Float64Array) => number;
   /** Arrays of N and twice 2·bins numbers for any caller's use; what they hold lasts until the next caller's. */
   readonly signal: Float64Array;
   readonly lines: Float64Array;
@@ -25,7 +27,7 @@ export function realTransformOf(size: number): RealTransform {
   const plan = {
     size,
     bins,
-    forward: size % 2 === 0 ? halfSizeTransform(size) : wholeTransform(size, bins),
+    ...(size % 2 === 0 ? halfSizeTransform(size) : wholeTransform(size, bins)),
     signal: new Float64Array(size),
     lines: new Float64Array(2 * bins),
     otherLines: new Float64Array(2 * bins),
@@ -41,15 +43,31 @@ export function realTransformOf(size: number): RealTransform {
   return plan;
 }
 
-function wholeTransform(size: number, bins: number): RealTransform['forward'] {
-  return (lines, signal) => {
+type Ways = Pick<RealTransform, 'forward' | 'strongest'>;
+
+function wholeTransform(size: number, bins: number): Ways {
+  const whole = (signal: Float64Array): Float64Array => {
     const { data, out, forward } = transformOf(size);
     for (let n = 0; n < size; n += 1) {
       data[2 * n] = signal[n];
       data[2 * n + 1] = 0;
     }
     forward(out, data);
-    for (let i = 0; i < 2 * bins; i += 1) lines[i] = out[i];
+    return out;
+  };
+  return {
+    forward: (lines, signal) => {
+      const out = whole(signal);
+      for (let i = 0; i < 2 * bins; i += 1) lines[i] = out[i];
+    },
+    strongest: (signal) => {
+      const out = whole(signal);
+      let power = 0;
+      for (let k = 1; k < bins; k += 1) {
+        power = Math.max(power, out[2 * k] * out[2 * k] + out[2 * k + 1] * out[2 * k + 1]);
+      }
+      return Math.sqrt(power);
+    },
   };
 }
 
@@ -59,7 +77,7 @@ function wholeTransform(size: number, bins: number): RealTransform['forward'] {
  * two, so that they are made in pairs: with S the sum and D the turned difference, `X_k = S + D` and
  * `X_{M−k} = conj(S − D)`.
  */
-function halfSizeTransform(size: number): RealTransform['forward'] {
+function halfSizeTransform(size: number): Ways {
   const half = size / 2;
   const quarter = Math.floor(half / 2);
   const turns = new Float64Array(2 * quarter + 2);
@@ -69,34 +87,53 @@ function halfSizeTransform(size: number): RealTransform['forward'] {
     turns[2 * k] = -Math.sin(angle) / 2;
     turns[2 * k + 1] = -Math.cos(angle) / 2;
   }
-  return (lines, signal) => {
-    const { out, forward } = transformOf(half);
-    forward(out, signal);
-    const re0 = out[0];
-    const im0 = out[1];
-    lines[0] = re0 + im0;
-    lines[1] = 0;
-    lines[size] = re0 - im0;
-    lines[size + 1] = 0;
-    for (let k = 1; k <= quarter; k += 1) {
-      const near = 2 * k;
-      const far = size - near;
-      const re = out[near];
-      const im = out[near + 1];
-      const mirrorRe = out[far];
-      const mirrorIm = out[far + 1];
-      const sumRe = (re + mirrorRe) / 2;
-      const sumIm = (im - mirrorIm) / 2;
-      const differenceRe = re - mirrorRe;
-      const differenceIm = im + mirrorIm;
-      const c = turns[near];
-      const s = turns[near + 1];
-      const turnedRe = c * differenceRe - s * differenceIm;
-      const turnedIm = c * differenceIm + s * differenceRe;
-      lines[near] = sumRe + turnedRe;
-      lines[near + 1] = sumIm + turnedIm;
-      lines[far] = sumRe - turnedRe;
-      lines[far + 1] = turnedIm - sumIm;
-    }
+  return {
+    forward: (lines, signal) => {
+      const { out, forward } = transformOf(half);
+      forward(out, signal);
+      lines[0] = out[0] + out[1];
+      lines[1] = 0;
+      lines[size] = out[0] - out[1];
+      lines[size + 1] = 0;
+      for (let k = 1; k <= quarter; k += 1) {
+        const near = 2 * k;
+        const far = size - near;
+        const sumRe = (out[near] + out[far]) / 2;
+        const sumIm = (out[near + 1] - out[far + 1]) / 2;
+        const differenceRe = out[near] - out[far];
+        const differenceIm = out[near + 1] + out[far + 1];
+        const turnedRe = turns[near] * differenceRe - turns[near + 1] * differenceIm;
+        const turnedIm = turns[near] * differenceIm + turns[near + 1] * differenceRe;
+        lines[near] = sumRe + turnedRe;
+        lines[near + 1] = sumIm + turnedIm;
+        lines[far] = sumRe - turnedRe;
+        lines[far + 1] = turnedIm - sumIm;
+      }
+    },
+    // The same steps, but that no line is kept: half of the time would go into writing and reading them.
+    strongest: (signal) => {
+      const { out, forward } = transformOf(half);
+      forward(out, signal);
+      let power = 0;
+      for (let k = 1; k <= quarter; k += 1) {
+        const near = 2 * k;
+        const far = size - near;
+        const sumRe = (out[near] + out[far]) / 2;
+        const sumIm = (out[near + 1] - out[far + 1]) / 2;
+        const differenceRe = out[near] - out[far];
+        const differenceIm = out[near + 1] + out[far + 1];
+        const turnedRe = turns[near] * differenceRe - turns[near + 1] * differenceIm;
+        const turnedIm = turns[near] * differenceIm + turns[near + 1] * differenceRe;
+        const nearRe = sumRe + turnedRe;
+        const nearIm = sumIm + turnedIm;
+        const farRe = sumRe - turnedRe;
+        const farIm = turnedIm - sumIm;
+        const nearPower = nearRe * nearRe + nearIm * nearIm;
+        const farPower = farRe * farRe + farIm * farIm;
+        if (nearPower > power) power = nearPower;
+        if (farPower > power) power = farPower;
+      }
+      return Math.max(Math.sqrt(power), Math.abs(out[0] - out[1]) / 2);
+    },
   };
 }
