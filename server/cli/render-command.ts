@@ -1,9 +1,9 @@
 import type { Command } from 'commander';
 import { z } from 'zod';
 import { buildTable } from '../../shared/build-table.ts';
-import { parseBoard, Refusal, type GeneratedFile } from '../../shared/contract/index.ts';
+import { parseBoard, Refusal, type Board, type GeneratedFile } from '../../shared/contract/index.ts';
 import {
-  boardOptions,
+  boardOptionsFor,
   contentOf,
   flagOf,
   optionOf,
@@ -49,25 +49,26 @@ async function render(
   { out, board }: { readonly out?: string; readonly board?: string },
   flags: Readonly<Record<string, string>>,
 ) {
-  const { commentOf, options: own } = targetOf(target);
-  const ofBoard = board === undefined ? {} : await optionsOfBoard(board);
+  const described = targetOf(target);
+  const ofBoard = board === undefined ? {} : boardOptionsFor(described, await readBoard(board));
   const table = buildTable(await readDefinition(file));
   // commander hands flags over in camel case, without their hyphens.
   const options = Object.fromEntries([
-    ...Object.entries(ofBoard).filter(([name]) => name in own.shape),
+    ...Object.entries(ofBoard),
     ...Object.entries(flags).map(([flag, value]) => [optionOf(`--${flag}`), value]),
   ]);
   const files = renderFiles(table, target, options, readTemplates());
-  const said = out === undefined ? asOne(files, commentOf) : `${(await writeFiles(out, files)).join('\n')}\n`;
+  const said =
+    out === undefined ? asOne(files, described.commentOf) : `${(await writeFiles(out, files)).join('\n')}\n`;
   say(said);
   for (const { path, message } of table.warnings) sayError(onOneLine(`warning: ${path}: ${message}`));
 }
 
-/** What a board's file says of clock and pins. @throws {Refusal} with `board.` before the path of a field at fault */
-async function optionsOfBoard(file: string): Promise<Readonly<Record<string, string>>> {
+/** A board's file. @throws {Refusal} with `board.` before the path of a field at fault */
+async function readBoard(file: string): Promise<Board> {
   const input = await readDefinition(file);
   try {
-    return boardOptions(parseBoard(input));
+    return parseBoard(input);
   } catch (error) {
     if (!(error instanceof Refusal)) throw error;
     const [first, ...others] = error.problems.map((problem) => ({

@@ -1,4 +1,4 @@
-export { boardOptions } from './board-options.ts';
+export { boardOptionsFor } from './board-options.ts';
 export { arrayNameFault, arrayNameFrom, arrayNameLength } from './c-identifier.ts';
 export { canonicalJson, digestOf, type DigestInput } from './digest.ts';
 export type { ExportableTable } from './exportable-table.ts';

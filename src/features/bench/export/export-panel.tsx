@@ -1,13 +1,17 @@
 import { useMemo, useState } from 'react';
+import type { Board } from '../../../../shared/contract/index.ts';
 import { arrayNameFrom, targets } from '../../../../shared/firmware/index.ts';
 import { OptionGroups } from '../../../components/code/index.ts';
 import { SelectField } from '../../../components/index.ts';
 import { useSettled } from '../../../components/use-settled.ts';
 import { useCalmTable } from '../state/tables.ts';
 import { theBench, useBench } from '../state/use-bench.ts';
+import { useBoardAt } from '../stage/chosen-board.ts';
+import { useStageBoard } from '../stage/use-stage-board.ts';
+import { BoardOptions } from './board-options.tsx';
 import { ExportedFiles } from './exported-files.tsx';
 import { ExportProblems } from './export-problems.tsx';
-import { givenOptions, renderExport } from './render-export.ts';
+import { givenOptions, renderExport, type TypedOptions } from './render-export.ts';
 
 export interface ExportPanelProps {
   /** Brings the field at a path of the definition into sight. */
@@ -25,6 +29,7 @@ export function ExportPanel({ onGoTo }: ExportPanelProps) {
   const targetId = useBench(({ history }) => history.present.exporting.target);
   const typed = useBench(({ history }) => history.present.exporting.options[targetId]) ?? noOptions;
   const [selected, setSelected] = useState('');
+  const board = useChosenBoard();
 
   const options = useMemo(() => givenOptions(typed), [typed]);
   const rendered = useMemo(
@@ -43,6 +48,9 @@ export function ExportPanel({ onGoTo }: ExportPanelProps) {
         options={targets.map(({ id, title }) => ({ value: id, label: title }))}
         onChange={setTarget}
       />
+      {target !== undefined && board !== null && (
+        <BoardOptions {...{ board, target, typed }} onTake={setOptions} />
+      )}
       {target !== undefined && (
         <OptionGroups
           target={target}
@@ -60,6 +68,9 @@ export function ExportPanel({ onGoTo }: ExportPanelProps) {
       {'files' in rendered && (
         <ExportedFiles
           {...{ table, targetId, options, selected }}
+          budget={
+            board?.flashBytes === undefined ? null : { boardName: board.name, flashBytes: board.flashBytes }
+          }
           files={rendered.files}
           onSelect={setSelected}
         />
@@ -72,15 +83,30 @@ function setTarget(target: string): void {
   theBench().change((work) => ({ ...work, exporting: { ...work.exporting, target } }));
 }
 
+/** The team's board that the output is shown for; null for the example, whose pins are made up. */
+function useChosenBoard(): Board | null {
+  const { at } = useBoardAt();
+  const shown = useStageBoard();
+  return at !== null && shown.kind === 'there' ? shown.board : null;
+}
+
 function setOption(name: string, value: string): void {
+  change({ [name]: value }, `export.${name}`);
+}
+
+function setOptions(changed: TypedOptions): void {
+  change(changed);
+}
+
+function change(changed: TypedOptions, coalesce?: string): void {
   theBench().change(
     ({ exporting, ...work }) => {
       const { target, options } = exporting;
       return {
         ...work,
-        exporting: { target, options: { ...options, [target]: { ...options[target], [name]: value } } },
+        exporting: { target, options: { ...options, [target]: { ...options[target], ...changed } } },
       };
     },
-    { coalesce: `export.${name}` },
+    coalesce === undefined ? undefined : { coalesce },
   );
 }

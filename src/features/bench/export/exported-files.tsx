@@ -5,6 +5,7 @@ import { Button, icons } from '../../../components/index.ts';
 import { saveFile } from '../../../components/save-file.ts';
 import { saveText } from '../../../components/save-text.ts';
 import type { TableAnswer } from '../../../workers/engine-messages.ts';
+import { sayRoom, type FlashBudget } from './flash-budget.ts';
 import { ProofStatus } from './proof-status.tsx';
 import { commandFor, definitionFileName, type TypedOptions } from './render-export.ts';
 
@@ -16,9 +17,19 @@ interface ExportedFilesProps {
   /** Name of the file in sight; the first where there is none of that name. */
   selected: string;
   onSelect: (name: string) => void;
+  /** What the words have to fit into, if a board says so. */
+  budget: FlashBudget | null;
 }
 
-export function ExportedFiles({ table, targetId, options, files, selected, onSelect }: ExportedFilesProps) {
+export function ExportedFiles({
+  table,
+  targetId,
+  options,
+  files,
+  selected,
+  onSelect,
+  budget,
+}: ExportedFilesProps) {
   const copy = useCopy();
   const { name } = table.definition;
   const bytes = storedBytes(table, targetId, options);
@@ -28,6 +39,7 @@ export function ExportedFiles({ table, targetId, options, files, selected, onSel
       <p>
         The words take <strong className="font-mono">{bytes.toLocaleString('en')}</strong>{' '}
         {bytes === 1 ? 'byte' : 'bytes'} of flash{options.storage === 'ram' && ', and as many of RAM'}.
+        {budget !== null && ` ${sayRoom(bytes, budget)}`}
       </p>
       <FilesView
         {...{ files, selected, onSelect }}
