@@ -4,6 +4,7 @@ import { expect, type Locator, type Page } from '@playwright/test';
 import { parseLadder } from '../../shared/contract/index.ts';
 import { voltsOf } from '../../shared/output-stage/index.ts';
 import { textOf } from '../support/bench-page.ts';
+import { makeCrew } from '../support/vetting-page.ts';
 import { beginWithTeam, read, saveTable, test } from '../support/library-page.ts';
 
 interface RevisionAnswer {
@@ -134,6 +135,39 @@ test('a board is made; a table fitted to its measured levels gains SINAD, and is
   await page.goto('/?open=output&more=stage,fit,trials,advice');
   await expect(page.getByRole('heading', { name: 'How many bits matter' })).toBeVisible();
   await expectNoSidewaysScroll(page);
+});
+
+test('a serial converter has its mask, and a viewer reads the form without saving it', async ({
+  browser,
+  quiet,
+}) => {
+  const { team, author, viewer, close } = await makeCrew(browser, quiet, {
+    author: 'author',
+    viewer: 'viewer',
+  });
+  const { page } = author;
+  await page.goto(`/teams/${team}/boards`);
+  await page.getByRole('link', { name: 'Describe a board' }).click();
+  await page.getByRole('textbox', { name: 'Name', exact: true }).fill('Serial board');
+  await page.getByRole('combobox', { name: 'Converter' }).selectOption('serial');
+  const mask = page.getByRole('textbox', { name: 'Mask' });
+  await mask.fill('0x1');
+  await expect(page.getByText(/a mask that holds every bit of the code/)).toBeVisible();
+  await mask.fill('0xfff');
+  await page.getByRole('button', { name: 'Save the board' }).click();
+  await expect(page.getByRole('heading', { name: 'Serial board' })).toBeVisible();
+  const path = `/teams/${team}/boards/serial-board`;
+  expect(await read(page.request, path)).toMatchObject({
+    board: { output: { kind: 'serial', mask: 0xfff } },
+  });
+
+  await viewer.page.goto(`${path}/edit`);
+  const name = viewer.page.getByRole('textbox', { name: 'Name', exact: true });
+  await expect(name).toHaveValue('Serial board');
+  await expect(viewer.page.getByText('saving one takes the role author').first()).toBeVisible();
+  await name.press('Enter');
+  await expect(viewer.page).toHaveURL(/edit$/);
+  await close();
 });
 
 test('a revision saved second shows both sides and loses nothing typed', async ({ page }) => {

@@ -96,15 +96,13 @@ function BoardForm({ team, title, fresh, current }: BoardFormProps) {
       }
       lead={<p>Numbers take units and prefixes as people write them: 4k7, 4.7 kΩ, 16 MHz, 20 mA.</p>}
     >
-      {!includesRole(data.myRole, 'author') && (
-        <Notice>As a viewer you read boards; saving one takes the role author.</Notice>
-      )}
       {/* What is typed is kept as a person's own: who that is must be known before anything is typed. */}
       <WithAccount why="Boards are kept for a team.">
         {({ id }) => (
           <Fields
             key={`${begun} ${id}`}
             {...{ team, fresh, current }}
+            maySave={includesRole(data.myRole, 'author')}
             onBeginAnew={() => setBegun(begun + 1)}
           />
         )}
@@ -117,8 +115,9 @@ function Fields({
   team,
   fresh,
   current,
+  maySave,
   onBeginAnew,
-}: Omit<BoardFormProps, 'title'> & { onBeginAnew: () => void }) {
+}: Omit<BoardFormProps, 'title'> & { maySave: boolean; onBeginAnew: () => void }) {
   const queryClient = useQueryClient();
   const navigate = useNavigate();
   const toast = useToast();
@@ -166,7 +165,7 @@ function Fields({
         submitting={saving}
         onSubmit={() => void saving.submit(draft)}
         refusedBecause={
-          unread.length === 0 ? undefined : `Put right first: ${unread.map(({ label }) => label).join(', ')}.`
+          maySave ? unreadIn(unread) : 'As a viewer you read boards; saving one takes the role author.'
         }
         fields={[]}
         aside={
@@ -251,3 +250,6 @@ function Fields({
     </>
   );
 }
+
+const unreadIn = (fields: readonly { readonly label: string }[]): string | undefined =>
+  fields.length === 0 ? undefined : `Put right first: ${fields.map(({ label }) => label).join(', ')}.`;

@@ -102,6 +102,13 @@ export function OutputFields({ board, change, at }: OutputFieldsProps) {
               problem={at('output.shift')}
             />
             <HexField
+              label="Mask"
+              value={output.mask ?? codeBitsOf(output)}
+              // The code's own bits need no saying: they follow bits and shift.
+              onChange={(mask) => set({ mask: mask === codeBitsOf(output) ? undefined : mask })}
+              problem={at('output.mask')}
+            />
+            <HexField
               label="Command bits"
               value={output.command}
               onChange={(command) => set({ command })}
@@ -287,3 +294,7 @@ function PinFields({
     </Panel>
   );
 }
+
+/** Bits of the word that the code takes. */
+const codeBitsOf = ({ bits, shift }: { readonly bits: number; readonly shift: number }) =>
+  (2 ** bits - 1) * 2 ** shift;
