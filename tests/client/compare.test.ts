@@ -79,6 +79,11 @@ describe('figures of two tables', () => {
     expect(crestFactor.judgement).toBe('other');
   });
 
+  test('tell counts to the last one', () => {
+    const { tableBytes } = judged(built({ length: 1024, bits: 8 }), built({ length: 5001, bits: 8 }));
+    expect(tableBytes).toMatchObject({ before: '1024', after: '5001', difference: '+3977' });
+  });
+
   test('tell what computing alone leaves as nothing', () => {
     const sine = built({ length: 64, bits: 8 });
     const withMean = (meanErrorLsb: number) => ({ ...sine, report: { ...sine.report, meanErrorLsb } });

@@ -132,11 +132,16 @@ function judge(
 /** What computing alone leaves where a figure is zero. */
 const leastShown = 1e-9;
 
-function say({ decimals }: Row, value: number | null): string {
+function say(row: Row, value: number | null): string {
   if (value === null) return '–';
   if (!Number.isFinite(value)) return 'exact';
-  const shown = Math.abs(value) < leastShown ? 0 : value;
-  return formatQuantity(shown, '', decimals === undefined ? { significant: 3 } : { decimals });
+  return format(row, Math.abs(value) < leastShown ? 0 : value);
+}
+
+/** A count, as of bytes, is told to the last one. */
+function format({ decimals }: Row, value: number): string {
+  if (decimals !== undefined) return formatQuantity(value, '', { decimals });
+  return formatQuantity(value, '', { significant: Number.isInteger(value) ? 9 : 3 });
 }
 
 function sayDifference(row: Row, before: number | null, after: number | null): string {
@@ -144,11 +149,5 @@ function sayDifference(row: Row, before: number | null, after: number | null): s
   const difference = after - before;
   if (!Number.isFinite(difference)) return '';
   if (Math.abs(difference) < leastShown) return '0';
-  const { decimals } = row;
-  const size = formatQuantity(
-    Math.abs(difference),
-    '',
-    decimals === undefined ? { significant: 3 } : { decimals },
-  );
-  return `${difference > 0 ? '+' : '−'}${size}`;
+  return `${difference > 0 ? '+' : '−'}${format(row, Math.abs(difference))}`;
 }
