@@ -16,6 +16,8 @@ export const startBuiltApp = (databaseUrl: string, data: string, port = '0') =>
     PRIVATE_DATABASE_URL: databaseUrl,
     AUTH_SECRET: 'for the tests only, and known to everybody',
     STEPWELL_DATA: data,
+    // People of different tests come from different networks, each with its own quota of sign-ups.
+    TRUSTED_PROXIES: 'loopback',
   });
 
 /** Playwright's global set-up: the built application, as people run it, on a database of its own and a free port. */
