@@ -1,9 +1,15 @@
 import { defineConfig } from '@playwright/test';
 import { findProgram } from './server/setup/programs.mjs';
 
+const sound = '**/listen*.spec.ts';
+
 export default defineConfig({
   testDir: 'tests/browser',
-  testMatch: '**/*.spec.ts',
+  projects: [
+    { name: 'pages', testMatch: '**/*.spec.ts', testIgnore: sound },
+    // Apart, as nothing may run beside what is heard and timed.
+    { name: 'sound', testMatch: sound },
+  ],
   outputDir: 'test-results',
   globalSetup: './tests/support/browser-app.ts',
   // Two cores: one browser, so that sound and frame times mean something.
