@@ -5,7 +5,7 @@ import { parseLadder } from '../../shared/contract/index.ts';
 import { voltsOf } from '../../shared/output-stage/index.ts';
 import { textOf } from '../support/bench-page.ts';
 import { makeCrew } from '../support/vetting-page.ts';
-import { beginWithTeam, read, saveTable, test } from '../support/library-page.ts';
+import { beginWithTeam, post, read, saveTable, test } from '../support/library-page.ts';
 
 interface RevisionAnswer {
   readonly codes: readonly number[];
@@ -14,7 +14,11 @@ interface RevisionAnswer {
 
 interface BoardAnswer {
   readonly latestRevision: number;
-  readonly board: { readonly output: { readonly R: number } };
+  readonly board: {
+    readonly output: { readonly R: number };
+    readonly flashBytes?: number;
+    readonly levels?: readonly number[];
+  };
 }
 
 const tags = ['wcag2a', 'wcag2aa', 'wcag21a', 'wcag21aa', 'wcag22aa'];
@@ -95,6 +99,25 @@ test('a board is made; a table fitted to its measured levels gains SINAD, and is
   expect(after).toBeGreaterThan(before + 1);
   await fit.getByRole('button', { name: 'Fit the table' }).click();
   await expect(fit.getByText('The table on the bench is fitted to these levels.')).toBeVisible();
+  // Somebody else changes the board before its levels are kept: both changes stay.
+  const first = await page.request.get(`/api/v1${path}`);
+  const { board: asRead } = (await first.json()) as { board: object };
+  await post(
+    page.request,
+    `${path}/revisions`,
+    { board: { ...asRead, flashBytes: 8000 }, note: 'Less flash' },
+    { 'If-Match': first.headers().etag },
+  );
+  await fit.getByRole('button', { name: 'Keep the levels with Test board' }).click();
+  await expect(
+    fit.getByText('Test board has been changed meanwhile and is at revision 2 now.'),
+  ).toBeVisible();
+  await fit.getByRole('button', { name: 'Keep the levels with Test board' }).click();
+  await expect(fit.getByText('Test board has these levels as its measured ones.')).toBeVisible();
+  const kept = await read<BoardAnswer>(page.request, path);
+  expect(kept.latestRevision).toBe(3);
+  expect(kept.board.flashBytes).toBe(8000);
+  expect(kept.board.levels?.[128]).toBeCloseTo(volts[128], 6);
 
   await page.getByText('Tolerance trials').click();
   const trials = page.getByRole('group', { name: 'Tolerance trials' });
@@ -110,7 +133,7 @@ test('a board is made; a table fitted to its measured levels gains SINAD, and is
   await expect(page.getByText('Pins and clock are those of Test board.')).toBeVisible();
   await expect(page.getByRole('textbox', { name: 'Port map' })).not.toHaveValue('');
   await expect(page.locator('.command-line')).toContainText('--port-map');
-  await expect(page.getByText('✓ Within the 8,192 bytes that Test board leaves for tables')).toBeVisible();
+  await expect(page.getByText('✓ Within the 8,000 bytes that Test board leaves for tables')).toBeVisible();
   await expectAccessible(page, '#export');
 
   await page.keyboard.press('Control+s');
@@ -118,8 +141,8 @@ test('a board is made; a table fitted to its measured levels gains SINAD, and is
   await expect(page.getByText('This is revision 2 of Sine')).toBeVisible();
   const saved = await read<RevisionAnswer>(page.request, `/teams/${team}/tables/sine/revisions/2`);
   expect(saved.definition.table.levels?.[128]).toBeCloseTo(volts[128], 6);
-  const first = await read<RevisionAnswer>(page.request, `/teams/${team}/tables/sine/revisions/1`);
-  expect(saved.codes).not.toEqual(first.codes);
+  const even = await read<RevisionAnswer>(page.request, `/teams/${team}/tables/sine/revisions/1`);
+  expect(saved.codes).not.toEqual(even.codes);
 
   await page.goto(`/teams/${team}/tables/sine`);
   await page.getByRole('button', { name: 'Show the files' }).click();

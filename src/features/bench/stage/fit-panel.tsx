@@ -17,6 +17,7 @@ import { BitsFit } from './bits-fit.tsx';
 import { Fact, Facts } from './fact.tsx';
 import { Fault } from './fault.tsx';
 import { fitWishes, wishFit, type Measured } from './fit-wishes.ts';
+import { KeepLevels } from './keep-levels.tsx';
 import { MeasuredText } from './measured-text.tsx';
 import { measuredVolts } from './measured-volts.ts';
 import { OnStageBoard } from './on-stage-board.tsx';
@@ -99,7 +100,12 @@ function Fitting({ board }: { board: Board }) {
           {volts.why}
         </p>
       )}
-      {volts.kind === 'volts' && <Fitted volts={volts.volts} />}
+      {volts.kind === 'volts' && (
+        <>
+          <Fitted volts={volts.volts} />
+          {measured !== 'board' && <KeepLevels volts={volts.volts} />}
+        </>
+      )}
     </>
   );
 }
