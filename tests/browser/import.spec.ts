@@ -56,6 +56,9 @@ test('a recording becomes a saved table in six steps, with its file beside it', 
   await press(page, 'Put the cycle on the bench');
   await expect(page.getByText('fog horn is on the bench.')).toBeVisible();
   await expect(figure(page, 'SNR')).toBeVisible();
+  // The file outlives a reload, as the wave does.
+  await page.reload();
+  await expect(figure(page, 'SNR')).toBeVisible();
   await page.keyboard.press('Control+s');
   await page.getByRole('dialog', { name: /^Save/ }).getByRole('button', { name: 'Save' }).click();
   await expect(page.getByText('This is revision 1 of fog horn')).toBeVisible();

@@ -14,6 +14,20 @@ const keep: Keep = {
 };
 const port = { postMessage: () => undefined, onmessage: null, onerror: null, terminate: () => undefined };
 
+/** Files of a browser; null in it where nothing is kept. */
+function keptFiles(file: File | null = null) {
+  return {
+    file,
+    read() {
+      return Promise.resolve(this.file);
+    },
+    write(next: File | null) {
+      this.file = next;
+      return Promise.resolve();
+    },
+  };
+}
+
 const linkTo = (table: string, revision = 1): SavedLink => ({
   team: 'ninth-fathom',
   teamName: 'Ninth Fathom',
@@ -24,7 +38,7 @@ const linkTo = (table: string, revision = 1): SavedLink => ({
   etag: `"${revision}"`,
 });
 
-function begin(kept: string | null = null) {
+function begin(kept: string | null = null, files = keptFiles()) {
   const storage = new Map(kept === null ? [] : [[savedLinkKey, kept]]);
   let hear: ((event: StorageEvent) => void) | undefined;
   const bench = createBench({ keep, startEngine: () => ({ ...port }) });
@@ -39,6 +53,7 @@ function begin(kept: string | null = null) {
         hear = listener as typeof hear;
       },
     } as Pick<Window, 'addEventListener'>,
+    files,
   });
   const rename = (name: string) =>
     bench.change((work) => ({ ...work, definition: { ...work.definition, name } }));
@@ -56,20 +71,49 @@ function begin(kept: string | null = null) {
 const other = (work: Work): Work => ({ ...work, definition: examples[2].work.definition });
 
 describe('the file that the work on the bench was made from', () => {
-  test('goes with that work through changes and undo, and is handed out once', () => {
+  const file = new File(['1, 2'], 'old.c');
+
+  test('goes with that work through changes and undo, and is handed out once', async () => {
     const { bench, links, rename, present } = begin();
-    const file = new File(['1, 2'], 'old.c');
     links.open(other, null, file);
     rename('Changed');
     bench.undo();
     bench.undo();
-    expect(links.takeOriginal()).toBeNull();
+    expect(await links.takeOriginal()).toBeNull();
     bench.redo();
     links.markSaved(linkTo('lamp'), present());
-    expect(links.takeOriginal()).toBe(file);
-    expect(links.takeOriginal()).toBeNull();
+    expect(await links.takeOriginal()).toBe(file);
+    expect(await links.takeOriginal()).toBeNull();
     links.giveBackOriginal(file);
-    expect(links.takeOriginal()).toBe(file);
+    expect(await links.takeOriginal()).toBe(file);
+  });
+
+  test('is found again after a reload, and no longer once it was handed out', async () => {
+    const files = keptFiles();
+    const before = begin(null, files);
+    before.links.open(other, null, file);
+    before.rename('Changed');
+    await expect.poll(() => files.file).toBe(file);
+    // Changes made before it is known what is there do not let it go.
+    const after = begin(null, files);
+    after.rename('Changed again');
+    expect(await after.links.takeOriginal()).toBe(file);
+    await expect.poll(() => files.file).toBeNull();
+    expect(await begin(null, files).links.takeOriginal()).toBeNull();
+  });
+
+  test('gives way to other work, and lives as long as the page where the browser keeps no files', async () => {
+    const files = keptFiles(file);
+    const { links } = begin(null, files);
+    links.open(other, linkTo('lamp'));
+    await expect.poll(() => files.file).toBeNull();
+    const none = {
+      read: () => Promise.reject(new Error('no')),
+      write: () => Promise.reject(new Error('no')),
+    };
+    const closed = begin(null, none as never);
+    closed.links.open(other, null, file);
+    expect(await closed.links.takeOriginal()).toBe(file);
   });
 });
 

@@ -45,7 +45,7 @@ export interface SavedLinks {
   /** Puts other work on the bench, as one step of undo; `link` says which table it is, if any. */
   open(update: (work: Work) => Work, link: SavedLink | null, original?: File | null): void;
   /** The file that the present work was made from, handed out once; what was not kept is given back. */
-  takeOriginal(): File | null;
+  takeOriginal(): Promise<File | null>;
   giveBackOriginal(file: File): void;
   /** Notes that `saved` is now what the link's revision holds. */
   markSaved(link: SavedLink, saved: Pick<Wave, 'definition' | 'playback'>): void;
@@ -55,13 +55,15 @@ export interface SavedLinksParts {
   bench: Pick<Bench, 'getState' | 'subscribe' | 'change'>;
   storage: Pick<Storage, 'getItem' | 'setItem'>;
   tabs: Pick<Window, 'addEventListener'>;
+  /** Where the file that the present work was made from outlives a reload. Both may reject: then it does not. */
+  files: { read(): Promise<File | null>; write(file: File | null): Promise<void> };
 }
 
 /**
  * Which table the work on the bench belongs to. Undo and redo may bring work of another table back, and its link must
  * come with it: each work is remembered with its lineage, for as long as the history holds the work.
  */
-export function createSavedLinks({ bench, storage, tabs }: SavedLinksParts): SavedLinks {
+export function createSavedLinks({ bench, storage, tabs, files }: SavedLinksParts): SavedLinks {
   const listeners = new Set<() => void>();
   const lineages = new WeakMap<Work, Lineage>();
   const presentWork = () => bench.getState().history.present;
@@ -71,6 +73,8 @@ export function createSavedLinks({ bench, storage, tabs }: SavedLinksParts): Sav
   let view: SavedView = readKept(readText()) ?? { link: null, isChanged: false };
   let current = lineageOf(view);
   lineages.set(present, current);
+  let keptFile: File | null = null;
+  const foundFile = findFile(current);
 
   bench.subscribe(() => {
     if (presentWork() === present) return;
@@ -90,9 +94,25 @@ export function createSavedLinks({ bench, storage, tabs }: SavedLinksParts): Sav
     return { link, saved: isChanged ? null : present };
   }
 
+  async function findFile(beginning: Lineage): Promise<void> {
+    keptFile = await files.read().catch(() => null);
+    beginning.original ??= keptFile;
+  }
+
+  /** Never before it is known which file is there: that would write over it. */
+  async function keepFile(): Promise<void> {
+    await foundFile;
+    const file = current.original ?? null;
+    if (file === keptFile) return;
+    keptFile = file;
+    // Where the browser keeps no files, this one lives as long as the page.
+    await files.write(file).catch(() => undefined);
+  }
+
   function take(lineage: Lineage, { isForeign = false } = {}): void {
     current = lineage;
     lineages.set(present, lineage);
+    if (!isForeign) void keepFile();
     const { link, saved } = lineage;
     const isChanged = link !== null && (saved === null || !isSame(saved, present));
     if (view.link === link && view.isChanged === isChanged) return;
@@ -132,13 +152,17 @@ export function createSavedLinks({ bench, storage, tabs }: SavedLinksParts): Sav
       // The bench takes no step for work that is the same; it belongs to the link all the same.
       if (current !== lineage) take(lineage);
     },
-    takeOriginal() {
-      const original = current.original ?? null;
-      current.original = null;
+    async takeOriginal() {
+      const lineage = current;
+      await foundFile;
+      const original = lineage.original ?? null;
+      lineage.original = null;
+      void keepFile();
       return original;
     },
     giveBackOriginal(file) {
       current.original = file;
+      void keepFile();
     },
     markSaved(link, saved) {
       Object.assign(current, { link, saved });

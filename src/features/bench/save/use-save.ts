@@ -87,7 +87,7 @@ export function useSave({ schema, onClose, onFault }: SaveParts) {
 
   /** The revision is saved whatever becomes of this; a file that is not kept is told. */
   const keepOriginalOf = async (team: string, slug: string, revision: number) => {
-    const file = theSavedLinks().takeOriginal();
+    const file = await theSavedLinks().takeOriginal();
     if (file === null) return;
     try {
       const { keepOriginal } = await import('../../../api/originals.ts');

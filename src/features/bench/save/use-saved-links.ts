@@ -13,6 +13,10 @@ export function theSavedLinks(): SavedLinks {
       setItem: (key, text) => localStorage.setItem(key, text),
     },
     tabs: window,
+    files: {
+      read: async () => (await import('./kept-file.ts')).readKeptFile(),
+      write: async (file) => (await import('./kept-file.ts')).writeKeptFile(file),
+    },
   });
   return links;
 }
