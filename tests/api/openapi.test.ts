@@ -63,6 +63,18 @@ describe('the OpenAPI document', () => {
     expect(JSON.stringify(document)).not.toMatch(/"\$ref":"(?!#\/components\/)/);
   });
 
+  it('tells what every list holds', () => {
+    const lists: Record<string, unknown>[] = [];
+    JSON.stringify(document, (_key, value: Record<string, unknown> | null) => {
+      if (value?.type === 'array') lists.push(value);
+      return value;
+    });
+    expect(lists.length).toBeGreaterThan(50);
+    expect(
+      lists.filter(({ items }) => items === undefined || Object.keys(items as object).length === 0),
+    ).toEqual([]);
+  });
+
   it('is sent again only where it has changed', async () => {
     const first = await asPerson(test).get('/openapi.json');
     const second = await asPerson(test).get('/openapi.json').set('If-None-Match', first.headers.etag);

@@ -77,9 +77,22 @@ export function jsonSchemaOf(schema: z.ZodType, io: Side): JsonSchema {
     : { $ref: place(String(registry.get(schema)?.id)) };
 }
 
+/** What a list holds that counts its items before it looks at them: on its way in it is a list of anything. */
+function itemsCountedFirst(schema: unknown): z.ZodType | undefined {
+  if (!(schema instanceof z.ZodPipe)) return undefined;
+  const { in: before, out: after } = schema as z.ZodPipe;
+  const isCounted = before instanceof z.ZodArray && before.element instanceof z.ZodUnknown;
+  return isCounted && after instanceof z.ZodArray ? (after.element as z.ZodType) : undefined;
+}
+
 const tidied =
   (io: Side) =>
   ({ zodSchema, jsonSchema }: { zodSchema: unknown; jsonSchema: JsonSchema }) => {
+    const items = io === 'input' ? itemsCountedFirst(zodSchema) : undefined;
+    if (items !== undefined) {
+      const of = z.toJSONSchema(items, { io, unrepresentable: 'any', override: tidied(io) });
+      jsonSchema.items = withoutMarks(of);
+    }
     const held = parsedLater.get(zodSchema);
     if (held !== undefined) jsonSchema.$ref = place(io === 'input' ? `${held}Input` : held);
     // What every integer of JavaScript keeps to says nothing; `date-time` says all that its pattern does.
