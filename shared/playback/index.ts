@@ -9,7 +9,7 @@ export {
   type StepWordRule,
   type StepWordSettings,
 } from './step-word.ts';
-export { centsBetween, nearestPitch, pitchHz, standardA4Hz, type NearestPitch } from './pitch.ts';
+export { centsBetween, nearestPitch, pitchAt, pitchHz, standardA4Hz, type NearestPitch } from './pitch.ts';
 export { planRates, type RatePlan, type Timer, type WantedTone } from './plan-rates.ts';
 export {
   planTwoTones,

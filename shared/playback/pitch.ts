@@ -53,10 +53,14 @@ export interface NearestPitch {
 
 /** The pitch of equal temperament nearest to a frequency above 0. */
 export function nearestPitch(hz: number, a4Hz = standardA4Hz): NearestPitch {
-  const index = a4Index + Math.round(12 * Math.log2(hz / a4Hz));
+  const pitch = pitchAt(a4Index + Math.round(12 * Math.log2(hz / a4Hz)), a4Hz);
+  return { ...pitch, cents: centsBetween(hz, pitch.hz) };
+}
+
+/** The pitch of equal temperament that lies some whole number of semitones above C0, with its name in sharps. */
+export function pitchAt(index: number, a4Hz = standardA4Hz): { readonly name: string; readonly hz: number } {
   const octave = Math.floor(index / 12);
-  const pitch = indexHz(index, a4Hz);
-  return { name: `${names[index - 12 * octave]}${octave}`, hz: pitch, cents: centsBetween(hz, pitch) };
+  return { name: `${names[index - 12 * octave]}${octave}`, hz: indexHz(index, a4Hz) };
 }
 
 /** `1200·log2(f/f_wanted)`: how far one frequency lies above another. */

@@ -17,6 +17,10 @@ const parts: Record<string, { title: string; measure: () => boolean | Promise<bo
     title: 'The search over sizes beside vectorised NumPy, and phase accumulators',
     measure: async () => (await import('./playback.ts')).measurePlayback(),
   },
+  listening: {
+    title: 'Listening: the audio thread’s part, and making what is played',
+    measure: async () => (await import('./listening.ts')).measureListening(),
+  },
   imports: {
     title: 'What is brought in',
     measure: async () => (await import('./imports.ts')).measureImports(),

@@ -1,4 +1,4 @@
-import { checkDefinition, type Problem } from '../../../shared/contract/index.ts';
+import { Refusal, checkDefinition, type Problem } from '../../../shared/contract/index.ts';
 import { waveOf } from './waves.ts';
 
 /** What is wrong with an input; a definition that is taken fails the test. */
@@ -28,3 +28,14 @@ export const pointsWith = (points: unknown, interpolation: unknown = 'linear') =
   name: 'wave',
   source: { kind: 'points', interpolation, points },
 });
+
+/** What a refusal names; work that is not refused fails the test. */
+export function problemsOf(work: () => unknown): readonly Problem[] {
+  try {
+    work();
+  } catch (error) {
+    if (error instanceof Refusal) return error.problems;
+    throw error;
+  }
+  throw new Error('taken');
+}
