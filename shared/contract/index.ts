@@ -17,6 +17,7 @@ export * from './fields.ts';
 export * from './library.ts';
 export * from './mailbox.ts';
 export * from './originals.ts';
+export * from './pulse-pattern.ts';
 export * from './teams.ts';
 export * from './rendering.ts';
 export * from './audit.ts';

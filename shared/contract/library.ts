@@ -11,6 +11,7 @@ import {
   titleField,
 } from './fields.ts';
 import { limits } from './limits.ts';
+import { pulsePatternSchema } from './pulse-pattern.ts';
 import { digestSchema } from './rendering.ts';
 import { reportSchema, warningSchema } from './report.ts';
 
@@ -42,7 +43,8 @@ const frequencyField = z
 
 /** How the wave was listened to; kept beside the definition, not part of it. */
 export const playbackSettingsSchema = z.strictObject({
-  mode: oneOf(['loop', 'once']),
+  /** `accumulator` counts where one is chosen and the table's length is a power of two; else it is a loop. */
+  mode: oneOf(['loop', 'once', 'accumulator']),
   by: oneOf(['tone', 'sampleRate']),
   toneHz: frequencyField,
   sampleRateHz: frequencyField,
@@ -58,6 +60,8 @@ export const playbackSettingsSchema = z.strictObject({
   accumulator: z
     .strictObject({ accumulatorBits: wholeNumber(1, 48), stepWord: wholeNumber(1, 2 ** 48 - 1) })
     .optional(),
+  /** Pulses and pauses that the tone sounds in. */
+  pattern: pulsePatternSchema.optional(),
 });
 
 /** A definition on its way in: `parseDefinition` says precisely what is wrong with it. */

@@ -1,4 +1,4 @@
-export { boardOptionsFor } from './board-options.ts';
+export { boardOptionsFor, boardShare, notTakenOf, pinOptions, type BoardShare } from './board-options.ts';
 export { arrayNameFault, arrayNameFrom, arrayNameLength } from './c-identifier.ts';
 export { canonicalJson, digestOf, type DigestInput } from './digest.ts';
 export type { ExportableTable } from './exportable-table.ts';
@@ -7,6 +7,8 @@ export { inertText } from './inert-text.ts';
 export { decimal } from './key-figures.ts';
 export { flagOf, optionOf } from './option-flags.ts';
 export { optionApplies, optionGroups } from './option-groups.ts';
+export { patternDigest, pulsesOptionFor } from './pattern.ts';
+export { parsePatternText, patternText } from './pattern-text.ts';
 export { parsePortMap, portMapTexts, type PortMapTexts } from './port-map.ts';
 export { proofsOf, type TargetProof } from './proofs.ts';
 export { renderFiles, storedBytes, targetOf, type TemplateTexts } from './render-files.ts';

@@ -10,6 +10,7 @@ export const optionGroups: readonly { readonly title: string; readonly options: 
     title: 'Pins',
     options: ['port', 'highPort', 'portMap', 'reservedPins', 'reservedBy', 'portAddress'],
   },
+  { title: 'Pulses', options: ['pulses'] },
   {
     title: 'Playback',
     options: [

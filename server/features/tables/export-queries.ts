@@ -15,6 +15,7 @@ const exportable = once((db: Database) =>
       id: revisions.id,
       digest: revisions.digest,
       state: revisions.state,
+      playback: revisions.playback,
       teamDefaults: teams.defaults,
     })
     .from(waveTables)

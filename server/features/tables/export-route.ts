@@ -9,8 +9,9 @@ import {
   type Definition,
   type GeneratedFile,
   type Report,
+  type Revision,
 } from '../../../shared/contract/index.ts';
-import { contentOf, targetOf } from '../../../shared/firmware/index.ts';
+import { contentOf, pulsesOptionFor, targetOf, type Target } from '../../../shared/firmware/index.ts';
 import { requireTeam, teamOf } from '../../auth/team-scope.ts';
 import type { ServerDeps } from '../../feature.ts';
 import { parseInput } from '../../http/parse-input.ts';
@@ -55,7 +56,12 @@ export function addExportRoute(router: Router, { database, jobs }: ServerDeps): 
     if (!revision) throw noRevision(table, number);
 
     const { target, file, ...given } = parseInput(exportQuerySchema, request.query, 'query');
-    const options = { ...ownDefaults(target, revision.teamDefaults), ...given };
+    const described = inTarget(() => targetOf(target));
+    const options = {
+      ...ownDefaults(described, revision.teamDefaults),
+      ...pulsesOptionFor(described, (revision.playback as Revision['playback'])?.pattern),
+      ...given,
+    };
     const key = `${revision.digest} ${target} ${canonicalize(options)}`;
     const rendered = cache.get(key) ?? (await render(revision.id, revision.digest, target, options));
     cache.set(key, rendered);
@@ -89,9 +95,8 @@ export function addExportRoute(router: Router, { database, jobs }: ServerDeps): 
 }
 
 /** Those of the team's defaults that are options of the target. */
-function ownDefaults(target: string, stored: unknown): Record<string, unknown> {
+function ownDefaults({ options: { shape } }: Target, stored: unknown): Record<string, unknown> {
   const { arrayPrefix, licenceLine } = teamDefaultsSchema.parse(stored);
-  const { shape } = inTarget(() => targetOf(target)).options;
   return Object.fromEntries(Object.entries({ arrayPrefix, licenceLine }).filter(([name]) => name in shape));
 }
 

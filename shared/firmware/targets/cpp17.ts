@@ -1,5 +1,6 @@
 import { z } from 'zod';
 import { numberOptions, packedOption, portMapOptions, sharedOptions, storageOptions } from '../options.ts';
+import { patternFiles, pulsesOption } from '../pattern.ts';
 import { alignmentFacts } from '../storage-facts.ts';
 import { defineTarget } from '../target.ts';
 
@@ -14,6 +15,7 @@ export const cpp17 = defineTarget({
     ...storageOptions,
     packed: packedOption,
     ...portMapOptions,
+    pulses: pulsesOption,
   }),
   filesOf: ({ options }) => [
     {
@@ -21,5 +23,6 @@ export const cpp17 = defineTarget({
       ending: '.hpp',
       facts: { ...alignmentFacts(options), readerStart: 'word', readerEnd: '' },
     },
+    ...patternFiles('cpp', options.pulses),
   ],
 });

@@ -2,6 +2,7 @@ import { z } from 'zod';
 import { engineVersion as thisEngine } from '../../engine-version.ts';
 import { canonicalJson } from '../digest.ts';
 import { lineEndingOption, nameOptions, packedOption, portMapOptions } from '../options.ts';
+import { patternJson, pulsesOption } from '../pattern.ts';
 import { defineTarget } from '../target.ts';
 
 /** Definition, codes, words and digest in one JSON document, for tools of one's own. */
@@ -13,8 +14,9 @@ export const json = defineTarget({
     lineEnding: lineEndingOption,
     packed: packedOption,
     ...portMapOptions,
+    pulses: pulsesOption,
   }),
-  filesOf: ({ table, layout: { arrays, packedBits }, arrayName, digest }) => {
+  filesOf: ({ table, layout: { arrays, packedBits }, options, arrayName, digest }) => {
     const { definition, codes, stored, engineVersion = thisEngine } = table;
     const list = (numbers: ArrayLike<number>) => `[${Array.from(numbers).join(',')}]`;
     const facts = {
@@ -24,6 +26,7 @@ export const json = defineTarget({
       definitionJson: canonicalJson(definition),
       codesJson: list(codes),
       wordsJson: list(stored),
+      pulsesJson: patternJson(options.pulses),
       packedBits: packedBits ?? false,
       packedJson: packedBits === undefined ? '' : list(arrays[0].elements),
       ports: arrays.flatMap(({ ports, elements }) =>

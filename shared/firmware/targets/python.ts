@@ -1,6 +1,7 @@
 import { z } from 'zod';
 import { bytesOf } from '../layout.ts';
 import { packedOption, portMapOptions, sharedOptions, wholeNumberOption } from '../options.ts';
+import { patternFiles, pulsesOption } from '../pattern.ts';
 import { defineTarget } from '../target.ts';
 
 /** A module with the words in bytes literals, for interpreters on microcontrollers: no list, no heap at import. */
@@ -13,6 +14,7 @@ export const python = defineTarget({
     columns: wholeNumberOption(1, 64).optional().describe('bytes in a row, 1 to 64; 16 if not given'),
     packed: packedOption,
     ...portMapOptions,
+    pulses: pulsesOption,
   }),
   filesOf: ({ layout, options }) => [
     {
@@ -27,6 +29,7 @@ export const python = defineTarget({
         })),
       },
     },
+    ...patternFiles('python', options.pulses),
   ],
 });
 

@@ -1,5 +1,6 @@
 import { z } from 'zod';
 import { numberOptions, packedOption, portMapOptions, sharedOptions, storageOptions } from '../options.ts';
+import { patternFiles, pulsesOption } from '../pattern.ts';
 import { alignmentFacts } from '../storage-facts.ts';
 import { defineTarget } from '../target.ts';
 import { wordTypeOf } from '../word-type.ts';
@@ -15,6 +16,7 @@ export const rust = defineTarget({
     ...storageOptions,
     packed: packedOption,
     ...portMapOptions,
+    pulses: pulsesOption,
   }),
   filesOf: ({ table, options }) => {
     const { bytes, signed } = wordTypeOf(table.definition.table);
@@ -22,6 +24,6 @@ export const rust = defineTarget({
       ...alignmentFacts(options),
       rustWordType: `${signed ? 'i' : 'u'}${8 * bytes}`,
     };
-    return [{ template: 'rust/module.rs', ending: '.rs', facts }];
+    return [{ template: 'rust/module.rs', ending: '.rs', facts }, ...patternFiles('rust', options.pulses)];
   },
 });

@@ -140,7 +140,8 @@ export const library: Section = {
       path: '/teams/:team/tables/:table/revisions/:number/export',
       summary: 'Export a revision as files',
       description:
-        "Made from what was stored. The team's array prefix and licence line hold where they are not given. " +
+        "Made from what was stored. The team's array prefix and licence line hold where they are not given, and so do " +
+        'the pulses of its playback; `pulses=none` leaves them out. ' +
         'With `file` the answer is that file alone, as an attachment.',
       access: 'viewer',
       query: exportQuerySchema.extend({ ...exportOptions, target: targetField }),

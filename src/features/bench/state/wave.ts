@@ -1,5 +1,5 @@
 import { z } from 'zod';
-import type { Definition } from '../../../../shared/contract/index.ts';
+import { pulsePatternSchema, type Definition } from '../../../../shared/contract/index.ts';
 import { sampleRateOfTone, toneOfSampleRate } from '../../../audio/playback-rate.ts';
 
 const frequencyError = 'a finite number of hertz';
@@ -12,13 +12,16 @@ const accumulatorSchema = z.strictObject({ accumulatorBits: z.int(), stepWord: z
 
 /** How a wave is listened to. It travels with the wave but is no part of the table. */
 export const playbackSchema = z.strictObject({
-  mode: z.enum(['loop', 'once']),
+  /** `accumulator` counts where one is chosen and the table's length is a power of two; else it is a loop. */
+  mode: z.enum(['loop', 'once', 'accumulator']),
   by: z.enum(['tone', 'sampleRate']),
   toneHz: z.number({ error: frequencyError }),
   sampleRateHz: z.number({ error: frequencyError }),
   /** The timer settings that the sample rate was chosen by, if it was. */
   timer: timerSchema.optional(),
   accumulator: accumulatorSchema.optional(),
+  /** Pulses and pauses that the tone sounds in. */
+  pattern: pulsePatternSchema.optional(),
 });
 
 export type TimerSettings = z.infer<typeof timerSchema>;
