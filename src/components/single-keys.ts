@@ -4,7 +4,8 @@ import { createLive, useLive, type SettableLive } from '../live/index.ts';
 /** Where the choice is kept; absent where single keys act, as they do at first. */
 export const singleKeysStorageKey = 'stepwell.single-keys';
 
-const takesText =
+/** What takes characters as text. */
+export const takesText =
   'input:not([type=radio], [type=checkbox], [type=range]), textarea, select, [contenteditable]';
 
 /** Where the browser closes its storage to the page, the choice lasts as long as the page. */

@@ -266,5 +266,8 @@ function setAccumulator(accumulator: Accumulator): void {
 }
 
 function letGo(): void {
-  theBench().change(({ playback: { accumulator: _gone, ...playback }, ...work }) => ({ ...work, playback }));
+  theBench().change(({ playback: { accumulator: _gone, mode, ...playback }, ...work }) => ({
+    ...work,
+    playback: { ...playback, mode: mode === 'accumulator' ? 'loop' : mode },
+  }));
 }

@@ -1,15 +1,15 @@
 import { Refusal } from '../../../../shared/contract/index.ts';
-import { nearestPitch, pitchHz } from '../../../../shared/playback/index.ts';
+import { nearestPitch, pitchHz, standardA4Hz } from '../../../../shared/playback/index.ts';
 import { formatQuantity, parseQuantity } from '../../../../shared/quantities/index.ts';
 
 export type ToneReading = { readonly hz: number } | { readonly fault: string };
 
 /** Reads a tone as a frequency (`440 Hz`, `1.2k`) or as the name of a pitch (`A4`, `C#5`, `B♭2`). */
-export function readTone(text: string): ToneReading {
+export function readTone(text: string, a4Hz = standardA4Hz): ToneReading {
   const tidy = text.trim();
   if (/^[A-Ga-g](?![a-z])/.test(tidy)) {
     try {
-      return { hz: pitchHz(tidy) };
+      return { hz: pitchHz(tidy, a4Hz) };
     } catch (error) {
       if (!(error instanceof Refusal)) throw error;
       return { fault: `“${tidy}” is not allowed. Allowed: ${error.problems[0].allowed}.` };
@@ -31,10 +31,10 @@ export function readTone(text: string): ToneReading {
 }
 
 /** Says a tone both ways: `440 Hz, A4`, or how far it lies from the nearest pitch. */
-export function sayTone(hz: number): string {
+export function sayTone(hz: number, a4Hz = standardA4Hz): string {
   const hertz = formatQuantity(hz, 'Hz', { significant: 6 });
   if (hz < 16 || hz > 20_000) return hertz;
-  const { name, cents } = nearestPitch(hz);
+  const { name, cents } = nearestPitch(hz, a4Hz);
   return Math.abs(cents) < 0.05 ? `${hertz}, ${name}` : `${hertz}, ${name} ${sayCents(cents)}`;
 }
 

@@ -38,13 +38,19 @@ function labelOf({ target, playback, table, found, inAll }: SampleCost): string 
   return `${targetNames[target] ?? target}, ${playbackNames[playback] ?? playback}, ${table}: ${inAll} ${unit}`;
 }
 
-function hintOf({ playback, found, figure, responseCycles, mainCycles, inAll }: SampleCost): string {
+function hintOf(cost: SampleCost): string {
+  const { playback, found, figure, responseCycles, mainCycles, inAll } = cost;
   switch (found) {
     case 'handler cycles':
-      return `Measured in a simulator: ${figure} cycles at most, plus ${responseCycles} as data sheets have a longer response, plus ${mainCycles} for the longest main instruction, the jump it waits in: ${inAll} in all. A main program with calls and returns has instructions of 4 cycles or 5: add the difference.`;
+      return `Measured in a simulator: ${figure} cycles at most, plus ${responseCycles} as data sheets have a longer response, plus ${mainCycles} for the longest main instruction, the jump it waits in: ${inAll} in all. A main program with calls and returns has instructions of 4 cycles or 5: add the difference. ${entryOf(cost)}`;
     case 'loop cycles':
       return `Measured in a simulator: ${figure} cycles from word to word, always. No timer paces a loop.`;
     case 'instructions':
       return `Counted in the disassembly, not measured: ${figure} instructions ${playback === 'loop' ? 'a turn' : 'in the handler'}, taken for a cycle each. Response, slower instructions and wait states come on top.`;
   }
+}
+
+function entryOf({ entryVariesBy: own, entryVariesWithCalls: busy }: SampleCost): string {
+  if (own === undefined) return '';
+  return `From the timer’s match to the write the time varies by ${own} ${own === 1 ? 'cycle' : 'cycles'}, with calls and returns by ${busy}: measured at every alignment.`;
 }
