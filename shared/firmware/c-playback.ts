@@ -11,6 +11,7 @@ import {
   wholeNumberOption,
   wordOption,
 } from './options.ts';
+import { patternFiles, pulsesOption } from './pattern.ts';
 import { accumulatorFacts, playbackOptions } from './playback-options.ts';
 import { alignmentFacts } from './storage-facts.ts';
 import type { ExportInput, Facts, SharedOptions, TargetFile } from './target.ts';
@@ -40,6 +41,7 @@ const tableOptions = {
   ...storageOptions,
   packed: packedOption,
   ...portMapOptions,
+  pulses: pulsesOption,
 };
 
 const countsPerWord = wholeNumberOption(1, 2 ** 24)
@@ -120,6 +122,7 @@ export function cFiles(folder: 'c99' | 'cortex-m' | 'riscv', input: ExportInput<
           { template: `${folder}/play.c`, ending: '_play.c', facts },
         ]
       : []),
+    ...patternFiles('c', options.pulses),
   ];
 }
 

@@ -9,8 +9,13 @@ export interface TargetProof {
   readonly cyclesPerWord?: number;
   /** Most clock cycles of an interrupt handler, with the simulator's 2 for the response. */
   readonly handlerCycles?: number;
+  /** Clock cycles by which the handler's first write varies: in the exported program, and with calls in its main. */
+  readonly entryVariesBy?: number;
+  readonly entryVariesWithCalls?: number;
   /** Instructions of a handler, or of one turn of a loop: counted, not timed. */
   readonly instructions?: number;
+  /** Most clock cycles of one call of a pattern's tick, call and return included. */
+  readonly tickCycles?: number;
 }
 
 /** By target. */

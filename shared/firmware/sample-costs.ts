@@ -17,6 +17,9 @@ export interface SampleCost {
   readonly responseCycles: number;
   /** Cycles of the main program's longest instruction, which may have begun. */
   readonly mainCycles: number;
+  /** Cycles by which a handler's first write varies, as measured: in the exported program, and with calls in its main. */
+  readonly entryVariesBy?: number;
+  readonly entryVariesWithCalls?: number;
   /** The worst case: the three together. Instructions count for one cycle each, as long as nobody has measured them. */
   readonly inAll: number;
 }
@@ -45,6 +48,8 @@ function costOf(target: string, proof: TargetProof): SampleCost | undefined {
     figure: found[1],
     responseCycles: response,
     mainCycles: main,
+    entryVariesBy: proof.entryVariesBy,
+    entryVariesWithCalls: proof.entryVariesWithCalls,
     inAll: found[1] + response + main,
   };
 }

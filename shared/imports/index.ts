@@ -13,6 +13,7 @@ export {
   type CsvReading,
   type Delimiter,
 } from './csv/read-csv.ts';
+export { readResponseCsv, type ResponseOutcome } from './response-csv.ts';
 export { readWav, type Recording } from './recording/read-wav.ts';
 export { looksLikeWav, readWavHeader, type WavHeader } from './recording/wav-header.ts';
 export { findPeriod, type FoundPeriod, type PeriodSearch } from './recording/find-period.ts';

@@ -40,4 +40,33 @@ export {
   type ResponsePoint,
 } from './device-response.ts';
 export { deviceKinds, type DeviceKind } from './device-curves.ts';
-export { fadeSeconds, renderSound, wholeRounds, type RenderOrder, type WholeRounds } from './render-sound.ts';
+export { fadeSeconds, renderSound, type RenderOrder } from './render-sound.ts';
+export { wholeRounds, type WholeRounds } from './whole-rounds.ts';
+export {
+  bitsOffFigures,
+  codesWithBitsOff,
+  levelsOfTable,
+  levelsOfVolts,
+  lowestBits,
+  masksOf,
+  offFromBottom,
+  soundWithBitsOff,
+  type BitMask,
+  type BitsOffFigures,
+  type CodedTable,
+} from './bits-off.ts';
+export {
+  answerTrial,
+  beginRun,
+  giveUp,
+  guessingChance,
+  rightNeeded,
+  scoreOf,
+  trialLimits,
+  type BlindRun,
+  type BlindScore,
+  type BlindTrial,
+  type Coin,
+  type Side,
+} from './blind-test.ts';
+export { equallyLoud, type Matched } from './equal-loudness.ts';

@@ -1,8 +1,6 @@
 import { xoroshiro128plus } from 'pure-rand/generator/xoroshiro128plus';
 import * as wavefile from 'wavefile';
-
-/** Bits of a sample, and whether it is a floating-point number. */
-export type WavDepth = '8' | '16' | '24' | '32f';
+import { fullScaleCode, type WavDepth } from './wav-scale.ts';
 
 export interface WavOrder {
   /** Frames a second: a whole number. */
@@ -10,14 +8,6 @@ export interface WavOrder {
   readonly depth: WavDepth;
   /** Seed of triangular dither, for whole-number samples; null for none. */
   readonly ditherSeed: number | null;
-}
-
-/**
- * What ±1 becomes in a file: the largest code, 127, 32,767 or 8,388,607; with dither one less, so that its swing of up to
- * one code stays within. Floating-point samples are the frames themselves.
- */
-export function fullScaleCode(depth: WavDepth, isDithered: boolean): number {
-  return depth === '32f' ? 1 : 2 ** (Number(depth) - 1) - (isDithered ? 2 : 1);
 }
 
 // Node sees the package as a CommonJS module without named exports, Vite as an ES module with them.

@@ -3,13 +3,17 @@ import { levelCap, outputGain, volumeRangeDb } from './levels.ts';
 /** Frames that the meters look at: 341 ms at 48 kHz, 2.9 Hz a bin. */
 export const meterFrames = 16_384;
 
-/** The way from the sounding voices to the loudspeaker: input → fade → volume → level cap → analyser → destination. */
+/**
+ * The way from the player to the loudspeaker: input → fade → volume → device → level cap → analyser → destination.
+ * What stands for the device is put in by `deviceWay`.
+ */
 export interface PreviewGraph {
-  /** Voices join here, full scale ±1. */
+  /** The player joins here, full scale ±1. */
   readonly input: AudioNode;
   /** 0 while silent, 1 while playing. */
   readonly fade: GainNode;
   readonly volume: GainNode;
+  readonly cap: AudioNode;
   readonly analyser: AnalyserNode;
 }
 
@@ -19,8 +23,9 @@ export function buildGraph(context: BaseAudioContext): PreviewGraph {
   const volume = new GainNode(context, { gain: outputGain(volumeRangeDb.start) });
   const cap = new WaveShaperNode(context, { curve: capCurve(), oversample: 'none' });
   const analyser = new AnalyserNode(context, { fftSize: meterFrames, smoothingTimeConstant: 0 });
-  fade.connect(volume).connect(cap).connect(analyser).connect(context.destination);
-  return { input: fade, fade, volume, analyser };
+  fade.connect(volume);
+  cap.connect(analyser).connect(context.destination);
+  return { input: fade, fade, volume, cap, analyser };
 }
 
 /** Straight between −cap and cap, which the grid of five points hits exactly (cap = ½), level beyond. */

@@ -1,3 +1,3 @@
-// What is fetched when play is first pressed.
-export { linesBeyond } from './lines-beyond.ts';
+// What a page that plays fetches beside itself.
+export { fetchWorklet } from './player-node.ts';
 export { AudioPreview } from './preview.ts';

@@ -1,5 +1,6 @@
 import { useCallback, useEffect, useRef, useState, useSyncExternalStore } from 'react';
-import { openAudioContext, type AudioPreview, type Hearing, type PreviewState, type Sound } from './index.ts';
+import { openPreview } from './open-preview.ts';
+import type { AudioPreview, PreviewState, Score, Sound } from './index.ts';
 
 const silent: PreviewState = { status: 'silent', trouble: null };
 const noListeners = () => () => undefined;
@@ -7,19 +8,32 @@ const isSilent = () => silent;
 
 export interface PreviewHandle extends PreviewState {
   /** Starts or stops. Belongs in the handler of a press or a key. */
-  toggle: () => void;
+  readonly toggle: () => void;
   /** There once play has been pressed. */
-  preview: AudioPreview | null;
+  readonly preview: AudioPreview | null;
 }
 
-/** Ties the sound to the page: it starts with a press, follows the wave while it plays, and ends with the page. */
-export function usePreview(sound: Sound, hearing: Hearing, volumeDb: number): PreviewHandle {
+/**
+ * Ties the sound to the page: it starts with a press, follows the wave, the voice and the score while it plays, and
+ * ends with the page.
+ *
+ * @param hearing name of the voice that is heard
+ * @param isNear whether play is likely to be pressed, so that the player is fetched ahead of that
+ */
+export function usePreview(
+  sound: Sound,
+  hearing: string,
+  volumeDb: number,
+  score: Score | null = null,
+  isNear = true,
+): PreviewHandle {
   const [preview, setPreview] = useState<AudioPreview | null>(null);
   const [openTrouble, setOpenTrouble] = useState<string | null>(null);
   const opened = useRef<AudioPreview | null>(null);
   const isOpening = useRef(false);
   const state = useSyncExternalStore(preview?.subscribe ?? noListeners, preview?.state ?? isSilent);
 
+  useEffect(() => (isNear ? fetchAhead() : undefined), [isNear]);
   useEffect(
     () => () => {
       opened.current?.close();
@@ -29,14 +43,16 @@ export function usePreview(sound: Sound, hearing: Hearing, volumeDb: number): Pr
     [],
   );
 
-  useEffect(() => preview?.change(sound), [preview, sound]);
+  // The voice before the sound: a sound with other voices is then taken up with the right one.
   useEffect(() => preview?.hear(hearing), [preview, hearing]);
+  useEffect(() => preview?.change(sound), [preview, sound]);
+  useEffect(() => preview?.perform(score), [preview, score]);
   useEffect(() => preview?.setVolume(volumeDb), [preview, volumeDb]);
 
   const toggle = useCallback(() => {
     const there = opened.current;
     if (there !== null) {
-      if (there.state().status === 'silent') void there.play(sound, hearing);
+      if (there.state().status === 'silent') void there.play(sound, hearing, score);
       else there.stop();
       return;
     }
@@ -48,27 +64,25 @@ export function usePreview(sound: Sound, hearing: Hearing, volumeDb: number): Pr
         fresh.setVolume(volumeDb);
         setPreview(fresh);
         setOpenTrouble(null);
-        return fresh.play(sound, hearing);
+        return fresh.play(sound, hearing, score);
       })
       .catch((error: unknown) => setOpenTrouble(error instanceof Error ? error.message : String(error)))
       .finally(() => {
         isOpening.current = false;
       });
-  }, [sound, hearing, volumeDb]);
+  }, [sound, hearing, volumeDb, score]);
 
   return { status: state.status, trouble: state.trouble ?? openTrouble, toggle, preview };
 }
 
-/** The context is made within the press itself; only then is the rest waited for. */
-async function openPreview(): Promise<AudioPreview> {
-  const context = openAudioContext();
-  if (context === null)
-    throw new Error('This browser cannot play: it has no Web Audio, or too many pages use it already.');
-  try {
-    const { AudioPreview } = await import('./player.ts');
-    return new AudioPreview(context);
-  } catch {
-    void context.close();
-    throw new Error('The player could not be fetched. Check the connection, then press play again.');
+/** Fetches the player while the page has nothing else to do, so that a press finds it there. */
+function fetchAhead(): () => void {
+  const fetchPlayer = () =>
+    void import('./player.ts').then(({ fetchWorklet }) => fetchWorklet()).catch(() => undefined);
+  if (typeof requestIdleCallback !== 'function') {
+    const timer = setTimeout(fetchPlayer, 1_000);
+    return () => clearTimeout(timer);
   }
+  const handle = requestIdleCallback(fetchPlayer, { timeout: 3_000 });
+  return () => cancelIdleCallback(handle);
 }

@@ -43,6 +43,7 @@ export function ChoiceField<Value extends string>({
               name={id}
               value={option.value}
               checked={option.value === value}
+              disabled={option.isDisabled}
               onChange={() => {
                 onChange(option.value);
               }}

@@ -7,6 +7,8 @@ export interface SelectOption<Value extends string = string> {
   label: string;
   /** Said under the field while the option is chosen. */
   hint?: string;
+  /** In sight but not to be chosen; the field's description says why. */
+  isDisabled?: boolean;
 }
 
 export interface SelectFieldProps<Value extends string = string> {
@@ -49,7 +51,7 @@ export function SelectField<Value extends string>({
           }}
         >
           {options.map((option) => (
-            <option key={option.value} value={option.value}>
+            <option key={option.value} value={option.value} disabled={option.isDisabled}>
               {option.label}
             </option>
           ))}

@@ -9,6 +9,6 @@ export type { Pen } from './pen.ts';
 export type { PlotArea } from './plot-area.ts';
 export type { PlotTheme } from './plot-theme.ts';
 export type { AxisSpec, ReadOut, Scene } from './scene.ts';
-export { decimalTicks, tickText } from './ticks.ts';
+export { decimalTicks, logTicks, tickText } from './ticks.ts';
 export { StairDrawing, type StairDrawingProps } from './stair-drawing.tsx';
 export { traceLine, traceStairs } from './traces.ts';

@@ -10,7 +10,19 @@ import type { Scene } from './scene.ts';
 export interface PlotProps<Data> {
   title: string;
   /** Which drawing it is; sets its height and the names of exported files. */
-  kind: 'cycle' | 'error' | 'spectrum' | 'spurs' | 'waveform' | 'lines' | 'linearity' | 'trials' | 'bits';
+  kind:
+    | 'cycle'
+    | 'error'
+    | 'spectrum'
+    | 'spurs'
+    | 'waveform'
+    | 'lines'
+    | 'linearity'
+    | 'trials'
+    | 'bits'
+    | 'heard'
+    | 'response'
+    | 'glide';
   scene: Scene<Data>;
   /** What the scene shows. Each change is drawn with the next frame. */
   data: Live<Data>;
@@ -18,6 +30,8 @@ export interface PlotProps<Data> {
   /** A new value whenever the scene draws the same data in another way. */
   manner?: unknown;
   hasZoom?: boolean;
+  /** False where the data never rest: its key facts are then told anew now and then, rather than once they rest. */
+  isSteady?: boolean;
   /** Stand right of the title. */
   controls?: ReactNode;
   /** Lies over the area inside the axes. */
@@ -30,6 +44,7 @@ export interface PlotProps<Data> {
 
 /** The summary is for reading, not for listening to while something is dragged. */
 const summaryDelayMs = 400;
+const summaryEveryMs = 2_000;
 const zoomStep = 1.5;
 
 /** The frame of every plot: title, read-out, drawing, tools, and its key facts in words. */
@@ -41,6 +56,7 @@ export function Plot<Data>({
   link,
   manner,
   hasZoom = false,
+  isSteady = true,
   controls,
   children,
   ...events
@@ -77,10 +93,15 @@ export function Plot<Data>({
   useEffect(() => {
     let timer: ReturnType<typeof setTimeout> | undefined;
     const sum = () => {
+      if (!isSteady && timer !== undefined) return;
       clearTimeout(timer);
-      timer = setTimeout(() => {
-        setSummary(scene.summary());
-      }, summaryDelayMs);
+      timer = setTimeout(
+        () => {
+          timer = undefined;
+          setSummary(scene.summary());
+        },
+        isSteady ? summaryDelayMs : summaryEveryMs,
+      );
     };
     const end = data.subscribe(sum);
     sum();
@@ -88,7 +109,7 @@ export function Plot<Data>({
       end();
       clearTimeout(timer);
     };
-  }, [scene, data, manner]);
+  }, [scene, data, manner, isSteady]);
 
   const save = async (format: ExportFormat) => {
     if (!surface.current) return;

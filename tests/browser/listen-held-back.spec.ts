@@ -34,3 +34,16 @@ test('says so where the browser keeps the sound back', async ({ playwright }, { 
   await expect(play(page)).toBeVisible();
   await browser.close();
 });
+
+test('says so where plain http keeps the audio worklet away', async ({ page, baseURL }) => {
+  // A name that is not this machine's own: over plain http the browser does not trust the page that far.
+  await page.route('http://bench.example/**', async (route) => {
+    const { pathname, search } = new URL(route.request().url());
+    const response = await route.fetch({ url: new URL(pathname + search, baseURL).href });
+    await route.fulfill({ response });
+  });
+  await page.goto('http://bench.example/?open=output');
+  await play(page).click();
+  await expect(page.getByText('Over plain http the browser keeps its audio worklet away')).toBeVisible();
+  await expect(play(page)).toBeVisible();
+});

@@ -59,12 +59,28 @@ export const definitions: fc.Arbitrary<Definition> = fc
   })
   .map(parseDefinition);
 
-const playbacks = fc.record({
-  mode: fc.constantFrom('loop' as const, 'once' as const),
-  by: fc.constantFrom('tone' as const, 'sampleRate' as const),
-  toneHz: finite,
-  sampleRateHz: finite,
+const pulses = fc.record({
+  steps: fc.array(
+    fc.record({
+      onMs: fc.integer({ min: 1, max: 60_000 }),
+      offMs: fc.integer({ min: 0, max: 60_000 }),
+      repeats: fc.integer({ min: 1, max: 255 }),
+    }),
+    { minLength: 1, maxLength: 64 },
+  ),
+  endless: fc.boolean(),
 });
+
+const playbacks = fc.record(
+  {
+    mode: fc.constantFrom('loop' as const, 'once' as const, 'accumulator' as const),
+    by: fc.constantFrom('tone' as const, 'sampleRate' as const),
+    toneHz: finite,
+    sampleRateHz: finite,
+    pattern: pulses,
+  },
+  { requiredKeys: ['mode', 'by', 'toneHz', 'sampleRateHz'] },
+);
 
 export const works: fc.Arbitrary<Work> = fc.record({
   definition: definitions,

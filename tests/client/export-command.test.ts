@@ -53,6 +53,7 @@ const values: Readonly<Record<string, string>> = {
   address: '0x0801FFF8',
   sampleRateHz: '44100',
   repeats: '2',
+  pulses: '200/100x3 500/0 endless',
 };
 
 /** A target that can play does not do so from packed words; what has a map is not packed. */

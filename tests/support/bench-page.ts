@@ -24,7 +24,10 @@ export const test = base.extend<{ quiet: string[] }>({
 
 export const field = (page: Page, name: string) => page.getByRole('textbox', { name, exact: false }).first();
 export const flight = (page: Page, name: string) =>
-  page.getByRole('button', { name: new RegExp(`^(\\d )?${name}\\b`), expanded: undefined }).first();
+  page
+    .getByRole('heading', { level: 2 })
+    .getByRole('button', { name: new RegExp(`^(\\d )?${name}\\b`) })
+    .first();
 export const figure = (page: Page, name: string) => page.getByRole('group', { name, exact: true });
 export const drawings = (page: Page) => page.getByRole('region', { name: 'Drawings and figures' });
 export const problems = (page: Page) => page.getByRole('region', { name: 'What is wrong' });

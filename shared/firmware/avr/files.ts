@@ -1,4 +1,5 @@
 import { Refusal, showValue } from '../../contract/index.ts';
+import { patternFiles } from '../pattern.ts';
 import { accumulatorFacts } from '../playback-options.ts';
 import { alignmentFacts } from '../storage-facts.ts';
 import type { ExportInput, Facts, TargetFile } from '../target.ts';
@@ -15,7 +16,7 @@ import {
 import type { AvrOptions } from './options.ts';
 import { portLoop, wholeLoopWords, type PortLoop } from './port-loop.ts';
 import { loopPorts } from './ports.ts';
-import { mainInstructionCycles, responseCycles, vectorCycles } from './response.ts';
+import { longestInstructionCycles, mainInstructionCycles, responseCycles, vectorCycles } from './response.ts';
 import { keepsFlags, type LoopPort, type LoopShape } from './sample.ts';
 
 /** Header, source and, unless the table alone is wanted, a main that plays it. */
@@ -40,6 +41,7 @@ export function avrFiles(input: ExportInput<AvrOptions>): TargetFile[] {
     { template: 'avr/header.h', ending: '.h', facts },
     { template: 'avr/source.c', ending: '.c', facts },
     ...(playback === undefined ? [] : [{ template: playback.template, ending: '_main.c', facts }]),
+    ...patternFiles('avr', options.pulses),
   ];
 }
 
@@ -175,6 +177,10 @@ function onInterrupts(input: ExportInput<AvrOptions>, ports: readonly LoopPort[]
       compare,
       cyclesPerWord,
       handlerCycles,
+      mainCycles: mainInstructionCycles,
+      // An instruction that has begun ends first: from 1 cycle of it to all.
+      entryVariesBy: mainInstructionCycles - 1,
+      entryVariesWithCalls: longestInstructionCycles - 1,
       wordFetch:
         options.storage === 'ram' ? '' : layout.arrays[0].bytes === 1 ? 'pgm_read_byte' : 'pgm_read_word',
       halfWord: coding === 'twos-complement' ? 2 ** (bits - 1) : 0,

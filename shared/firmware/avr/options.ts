@@ -9,6 +9,7 @@ import {
   wholeNumberOption,
   wordOption,
 } from '../options.ts';
+import { pulsesOption } from '../pattern.ts';
 import { playbackOptions } from '../playback-options.ts';
 
 const playbacks = [
@@ -34,6 +35,7 @@ export const avrOptions = z.strictObject({
     .optional()
     .describe('port of bit 8 and up, above 8 bits; D, or B where D is taken, if not given'),
   ...portMapOptions,
+  pulses: pulsesOption,
   playback: wordOption(playbacks)
     .default('loop')
     .describe(

@@ -9,3 +9,5 @@ export const vectorCycles = 2;
  * is answered, and one instruction runs between two of them (data sheets, "Reset and Interrupt Handling").
  */
 export const mainInstructionCycles = 2;
+/** The longest instruction of any main program: a call or a return, with a program counter of two bytes (AVR Instruction Set). */
+export const longestInstructionCycles = 4;

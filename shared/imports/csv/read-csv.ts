@@ -228,8 +228,19 @@ function readColumn(
   return { ...sheet, kind: 'read', column, decimal: sign ?? 'point', values };
 }
 
-/** The fault's place in the text: looked for only now, by going through the file once more. */
-function faultAt(text: string, delimiter: Delimiter, row: number, column: number, value: string): Refusal {
+/**
+ * Refuses a cell by its place in the text: looked for only now, by going through the file once more.
+ *
+ * @param row from 0, of those that hold anything; the heading is one
+ */
+export function faultAt(
+  text: string,
+  delimiter: Delimiter,
+  row: number,
+  column: number,
+  value: string,
+  allowed = 'a number',
+): Refusal {
   let at = 0;
   let seen = -1;
   Papa.parse<string[]>(text, {
@@ -247,5 +258,5 @@ function faultAt(text: string, delimiter: Delimiter, row: number, column: number
   const before = cells.slice(0, column).reduce((sum, cell) => sum + cell.length + 1, 0);
   const blanks = /^ */.exec((cells[column] as string | undefined) ?? '')?.[0].length ?? 0;
   const place = sayPlace(placeOf(text, Math.min(text.length, at + lead + before + blanks)));
-  return new Refusal({ path: place, value, allowed: 'a number' });
+  return new Refusal({ path: place, value, allowed });
 }

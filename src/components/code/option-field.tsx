@@ -4,6 +4,12 @@ import { SelectField } from '../select-field.tsx';
 import { TextField } from '../text-field.tsx';
 import { optionLabels, valueLabel } from './option-words.ts';
 
+/** Where an option's value comes from, in words, and what can be done about it. */
+export interface OptionOrigin {
+  readonly says: string;
+  readonly action?: ReactNode;
+}
+
 interface OptionFieldProps {
   name: string;
   schema: z.core.$ZodType;
@@ -12,13 +18,22 @@ interface OptionFieldProps {
   /** What is taken where nothing is given. */
   fallback?: string;
   problem: ReactNode;
+  origin?: OptionOrigin;
 }
 
 /** A control for one option of a target, made from the option's own schema. */
-export function OptionField({ name, schema, value, onChange, fallback, problem }: OptionFieldProps) {
+export function OptionField({ name, schema, value, onChange, fallback, problem, origin }: OptionFieldProps) {
   const { inner, standard } = unwrap(schema);
   const label = optionLabels[name] ?? name;
-  const description = sentence(schema instanceof z.ZodType ? schema.description : undefined);
+  const meaning = sentence(schema instanceof z.ZodType ? schema.description : undefined);
+  const description = origin ? (
+    <>
+      <strong className="option-origin">{origin.says}</strong> {meaning}
+    </>
+  ) : (
+    meaning
+  );
+  const aside = origin?.action;
   const typed = typeof value === 'string' ? value : '';
   if (inner instanceof z.ZodEnum) {
     const values = inner.options.map(String);
@@ -29,8 +44,7 @@ export function OptionField({ name, schema, value, onChange, fallback, problem }
         value={typed || (standard ?? '')}
         options={standard === undefined ? [{ value: '', label: 'Not given' }, ...choices] : choices}
         onChange={onChange}
-        description={description}
-        problem={problem}
+        {...{ description, problem, aside }}
       />
     );
   }
@@ -40,8 +54,7 @@ export function OptionField({ name, schema, value, onChange, fallback, problem }
       value={typed}
       placeholder={fallback ?? standard}
       onChange={onChange}
-      description={description}
-      problem={problem}
+      {...{ description, problem, aside }}
       isCode
       autoComplete="off"
     />

@@ -1,7 +1,7 @@
 import type { ReactNode } from 'react';
 import { z } from 'zod';
 import { optionApplies, optionGroups, type Target } from '../../../shared/firmware/index.ts';
-import { OptionField } from './option-field.tsx';
+import { OptionField, type OptionOrigin } from './option-field.tsx';
 
 interface OptionGroupsProps {
   target: Target;
@@ -10,6 +10,8 @@ interface OptionGroupsProps {
   /** What is taken where nothing is given, where the schema does not say so. */
   fallbacks: Readonly<Record<string, string | undefined>>;
   problemOf: (option: string) => ReactNode;
+  /** Where an option's value comes from, if that is worth a word. */
+  originOf?: (option: string) => OptionOrigin | undefined;
   onChange: (option: string, value: string) => void;
 }
 
@@ -17,7 +19,7 @@ interface OptionGroupsProps {
 const behind = new Set(['Numbers and lines', 'Storage']);
 
 /** The options that a target has, in groups; those that mean nothing as others are set are left out. */
-export function OptionGroups({ target, typed, fallbacks, problemOf, onChange }: OptionGroupsProps) {
+export function OptionGroups({ target, typed, fallbacks, problemOf, originOf, onChange }: OptionGroupsProps) {
   const { shape } = target.options;
   const valueOf = (name: string) => String(typed[name] || standardOf(shape[name]));
   return (
@@ -33,6 +35,7 @@ export function OptionGroups({ target, typed, fallbacks, problemOf, onChange }: 
             value={typed[name]}
             fallback={fallbacks[name]}
             problem={problemOf(name)}
+            origin={originOf?.(name)}
             onChange={(value) => onChange(name, value)}
           />
         ));

@@ -31,6 +31,7 @@ export const optionLabels: Readonly<Record<string, string>> = {
   idleCode: 'Idle code',
   rampWords: 'Ramp words',
   dmaBits: 'Element bits',
+  pulses: 'Pulses and pauses',
   timeAddress: 'Address of the timer’s count',
   compareAddress: 'Address of the timer’s compare',
 };

@@ -7,13 +7,13 @@ import { paths } from '../../paths.ts';
 import { Drawings } from './drawings/drawings.tsx';
 import { FigureStrips } from './figures/figure-strips.tsx';
 import { Warnings } from './figures/warnings.tsx';
-import { ListenPanel } from './listen/index.ts';
+import { driveOf, ListenPanel, toneOfDrive } from './listen/index.ts';
 import { theSavedLinks } from './save/use-saved-links.ts';
 import { sayInWords } from './shape/index.ts';
 import { useCopyLink } from './share/use-copy-link.tsx';
 import { useSharedWave } from './share/use-shared-wave.ts';
 import { useTable } from '../../workers/use-table.ts';
-import { sampleRateOf, toneOf, type Wave } from './state/wave.ts';
+import { sampleRateOf, type Wave } from './state/wave.ts';
 
 /** A wave that a link carries: to be seen and heard, and put on the bench. */
 export function SharedWavePage() {
@@ -63,14 +63,7 @@ function SharedWave({ wave }: { wave: Wave }) {
             On your bench it can be changed and exported. What is there now comes back with Undo.
           </p>
           {built !== null && 'table' in built && (
-            <ListenPanel
-              cycle={built.table.cycle}
-              values={built.table.values}
-              playback={playback}
-              onPlaybackChange={setPlayback}
-              range={wave.definition.table.range}
-              tableCycles={wave.definition.table.cycles}
-            />
+            <ListenPanel table={built.table} playback={playback} onPlaybackChange={setPlayback} />
           )}
         </div>
       </section>
@@ -105,6 +98,13 @@ function noiseFact({ dither, seed, shaping }: Wave['definition']['table']): [str
   return ['Noise', `${dithered}, ${shaping === 0 ? 'no shaping' : `shaping of order ${shaping}`}`];
 }
 
+function sayPlayed(playback: Wave['playback'], table: Wave['definition']['table']): string {
+  const drive = driveOf(playback, table);
+  if (drive.kind === 'once') return 'once through';
+  const how = drive.kind === 'loop' ? 'as a loop' : 'by a phase accumulator';
+  return `${how} at ${formatQuantity(toneOfDrive(drive, table), 'Hz', { significant: 5 })}`;
+}
+
 function WaveFacts({ wave: { definition, playback } }: { wave: Wave }) {
   const { source, table, level } = definition;
   const facts: readonly [string, string][] = [
@@ -123,9 +123,7 @@ function WaveFacts({ wave: { definition, playback } }: { wave: Wave }) {
     ...(table.fold === 'none' ? [] : [['Stored', 'the first quarter'] as [string, string]]),
     ['Level', `${level.level} of full scale, normalised: ${level.normalise}`],
     ['Sampled at the', `step’s ${table.sampleAt}, from ${table.startPhaseDeg}°`],
-    playback.mode === 'loop'
-      ? ['Played', `as a loop at ${formatQuantity(toneOf(playback, table), 'Hz', { significant: 5 })}`]
-      : ['Played', 'once through'],
+    ['Played', sayPlayed(playback, table)],
     ['Sample rate', formatQuantity(sampleRateOf(playback, table), 'Hz', { significant: 5 })],
   ];
   return (

@@ -68,6 +68,7 @@ function Export({ team, table, number, defaults }: ExportSectionProps) {
     arrayName: 'made from the wave’s name',
     arrayPrefix: defaults.arrayPrefix || 'none',
     licenceLine: defaults.licenceLine || 'none',
+    pulses: 'those kept with the revision, if any',
   };
   return (
     <div className="space-y-4 export-files">

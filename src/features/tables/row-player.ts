@@ -3,12 +3,14 @@ import type { Definition, Revision } from '../../../shared/contract/index.ts';
 import { sayProblem } from '../../../shared/contract/index.ts';
 import { valuesOf } from '../../../shared/quantiser/index.ts';
 import {
-  openAudioContext,
   sampleRateOfTone,
+  tableSound,
   type AudioPreview,
+  type Drive,
   type PreviewState,
   type Sound,
 } from '../../audio/index.ts';
+import { openPreview } from '../../audio/open-preview.ts';
 import { readRevision } from '../../api/tables.ts';
 import { createEngine } from '../../workers/engine-client.ts';
 import type { TableAnswer } from '../../workers/engine-messages.ts';
@@ -59,7 +61,7 @@ export function useRowPlayer(team: string): RowPlayer {
   };
 
   const start = async (table: Playable, own: number) => {
-    const player = preview.current ?? (await openPlayer());
+    const player = preview.current ?? (await openPreview());
     if (preview.current === null) {
       preview.current = player;
       player.subscribe(() => {
@@ -92,30 +94,31 @@ export function useRowPlayer(team: string): RowPlayer {
   return { playing, status, trouble, toggle, stop };
 }
 
-/** The context is made within the press itself; only then is the rest waited for. */
-async function openPlayer(): Promise<AudioPreview> {
-  const context = openAudioContext();
-  if (context === null)
-    throw new Error('This browser cannot play: it has no Web Audio, or too many pages use it already.');
-  const { AudioPreview } = await import('../../audio/player.ts');
-  return new AudioPreview(context);
-}
-
-/** The stored codes as they sound, by the settings they were listened to with. */
+/** The stored codes as the pin gives them, by the settings they were listened to with. */
 async function soundOf({ definition, codes, playback }: Revision): Promise<Sound> {
   const { cycle } = await build(definition);
-  const { length, cycles, range } = definition.table;
-  const byTone = sampleRateOfTone(playback?.toneHz ?? plainToneHz, {
-    tableLength: length,
-    tableCycles: cycles,
-  });
-  return {
+  const { table } = definition;
+  return tableSound({
     cycle,
-    values: valuesOf(Uint16Array.from(codes), definition.table),
-    range,
-    mode: playback?.mode ?? 'loop',
-    sampleRateHz: playback?.by === 'sampleRate' ? playback.sampleRateHz : byTone,
-  };
+    values: valuesOf(Uint16Array.from(codes), table),
+    range: table.range,
+    tableCycles: table.cycles,
+    drive: driveOf(playback, table),
+  });
+}
+
+function driveOf(playback: Revision['playback'], { length, cycles }: Definition['table']): Drive {
+  const sampleRateHz =
+    playback?.by === 'sampleRate'
+      ? playback.sampleRateHz
+      : sampleRateOfTone(playback?.toneHz ?? plainToneHz, { tableLength: length, tableCycles: cycles });
+  const { mode = 'loop', accumulator } = playback ?? {};
+  if (mode !== 'accumulator') return { kind: mode, sampleRateHz };
+  // As on the bench: where the table is no longer one for an accumulator, it goes round.
+  const indexBits = Math.log2(length);
+  const isFit = accumulator !== undefined && Number.isInteger(indexBits);
+  if (!isFit || accumulator.accumulatorBits < indexBits) return { kind: 'loop', sampleRateHz };
+  return { kind: 'accumulator', sampleRateHz, ...accumulator };
 }
 
 const build = (definition: Definition): Promise<TableAnswer> =>

@@ -1,2 +1,3 @@
+export { driveOf, toneOfDrive } from './drive.ts';
 export { ListenPanel, type ListenPanelProps } from './listen-panel.tsx';
 export { defaultPlayback, playbackSchema, type Playback } from './playback.ts';

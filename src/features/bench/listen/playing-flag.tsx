@@ -1,17 +1,23 @@
-import { useEffect, useState, type RefObject } from 'react';
+import { useEffect, useState } from 'react';
 import { createPortal } from 'react-dom';
 import { Button, icons } from '../../../components/index.ts';
 
-/** A stop that stays in sight while the panel with the other one is closed or scrolled away. */
-export function PlayingFlag({ panel, onStop }: { panel: RefObject<HTMLElement | null>; onStop: () => void }) {
+interface PlayingFlagProps {
+  /** What holds the panel's own stop; null before the panel has been opened. */
+  stopPlace: HTMLElement | null;
+  onStop: () => void;
+}
+
+/** A stop that stays in sight while the panel's own is closed or scrolled away. */
+export function PlayingFlag({ stopPlace, onStop }: PlayingFlagProps) {
   const [isInSight, setIsInSight] = useState(true);
   useEffect(() => {
-    if (panel.current === null) return;
+    if (stopPlace === null) return;
     const observer = new IntersectionObserver(([entry]) => setIsInSight(entry.isIntersecting));
-    observer.observe(panel.current);
+    observer.observe(stopPlace);
     return () => observer.disconnect();
-  }, [panel]);
-  if (isInSight) return null;
+  }, [stopPlace]);
+  if (stopPlace !== null && isInSight) return null;
   return createPortal(
     <div className="playing-flag" role="region" aria-label="Sound">
       <icons.volume />

@@ -1,5 +1,7 @@
 import { useEffect, useState } from 'react';
-import type { Sound } from '../../../audio/index.ts';
+import type { Voice } from '../../../../shared/listening/sound.ts';
+import { linesBeyond } from './lines-beyond.ts';
+import type { Given } from './listening.tsx';
 
 /** Until a context is open its rate is not known; this is the usual one. */
 const usualContextRateHz = 48_000;
@@ -7,30 +9,27 @@ const usualContextRateHz = 48_000;
 const pauseMs = 400;
 
 export interface Beyond {
-  count: number;
-  limitHz: number;
+  /** Of the lines up to half of the table's own rate. */
+  readonly count: number;
+  readonly limitHz: number;
+  readonly form: Voice['form'];
 }
 
-/** How many lines of the loop are too high for this browser to play. */
-export function useBeyond(
-  { cycle, sampleRateHz, mode }: Sound,
-  contextRateHz = usualContextRateHz,
-): Beyond | null {
+/** How many lines of what sounds are too high for this browser to play; images of a staircase are not counted. */
+export function useBeyond({ sound, hearing }: Given, contextRateHz = usualContextRateHz): Beyond | null {
   const [beyond, setBeyond] = useState<Beyond | null>(null);
+  const voice = sound.voices[hearing];
+  const { values, form } = voice;
+  const drive = voice.drive ?? sound.drive;
+  const rateHz = drive.sampleRateHz;
   // No line of a table lies above half of its own rate.
-  const canBe = mode === 'loop' && sampleRateHz >= contextRateHz && Number.isFinite(sampleRateHz);
+  const canBe = drive.kind === 'loop' && rateHz >= contextRateHz && Number.isFinite(rateHz);
   useEffect(() => {
     if (!canBe) return;
-    let isOver = false;
-    const timer = setTimeout(async () => {
-      const { linesBeyond } = await import('../../../audio/player.ts');
-      if (!isOver)
-        setBeyond({ count: linesBeyond(cycle, sampleRateHz, contextRateHz), limitHz: contextRateHz / 2 });
+    const timer = setTimeout(() => {
+      setBeyond({ count: linesBeyond(values, rateHz, contextRateHz), limitHz: contextRateHz / 2, form });
     }, pauseMs);
-    return () => {
-      isOver = true;
-      clearTimeout(timer);
-    };
-  }, [canBe, cycle, sampleRateHz, contextRateHz]);
+    return () => clearTimeout(timer);
+  }, [canBe, values, rateHz, contextRateHz, form]);
   return canBe && beyond !== null && beyond.count > 0 ? beyond : null;
 }

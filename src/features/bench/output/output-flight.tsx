@@ -1,15 +1,14 @@
 import { useCallback } from 'react';
 import { formatQuantity } from '../../../../shared/quantities/index.ts';
 import { Caution, Explain } from '../../../components/index.ts';
-import { ListenPanel, type Playback } from '../listen/index.ts';
+import { driveOf, ListenPanel, toneOfDrive, type Playback } from '../listen/index.ts';
 import { RatesRecesses } from '../rates/index.ts';
 import { StageRecesses } from '../stage/index.ts';
 import { useCalmTable } from '../state/tables.ts';
 import { theBench, useBench, useDefinition } from '../state/use-bench.ts';
-import { sampleRateOf, toneOf } from '../state/wave.ts';
 
 /** How the wave sounds, and what will come out of the pin. */
-export function OutputFlight() {
+export function OutputFlight({ isOpen }: { isOpen: boolean }) {
   const table = useCalmTable();
   const playback = useBench(({ history }) => history.present.playback);
   const change = useCallback(
@@ -21,12 +20,11 @@ export function OutputFlight() {
     <div className="space-y-5">
       {table !== null && (
         <ListenPanel
-          cycle={table.cycle}
-          values={table.values}
+          table={table}
           playback={playback}
           onPlaybackChange={change}
-          range={table.definition.table.range}
-          tableCycles={table.definition.table.cycles}
+          isOnBench
+          isInSight={isOpen}
         />
       )}
       <RatesRecesses />
@@ -45,8 +43,8 @@ function changedPart(next: Playback): string | undefined {
 function AtThePin() {
   const table = useDefinition((definition) => definition.table);
   const playback = useBench(({ history }) => history.present.playback);
-  const isLoop = playback.mode === 'loop';
-  const sampleRateHz = sampleRateOf(playback, table);
+  const drive = driveOf(playback, table);
+  const { sampleRateHz } = drive;
   const rate = hertz(sampleRateHz);
   return (
     <section className="space-y-2">
@@ -64,12 +62,20 @@ function AtThePin() {
         </Explain>
       </h3>
       <p>
-        {isLoop ? (
+        {drive.kind === 'loop' && (
           <>
-            {table.length} entries written over and over at {rate} give {hertz(toneOf(playback, table))}. A
+            {table.length} entries written over and over at {rate} give {hertz(toneOfDrive(drive, table))}. A
             low-pass filter takes the images round {rate} away.
           </>
-        ) : (
+        )}
+        {drive.kind === 'accumulator' && (
+          <>
+            An entry every {formatQuantity(1 / sampleRateHz, 's', { significant: 4 })}, picked by an
+            accumulator of {drive.accumulatorBits} bits and the step word {drive.stepWord}, gives{' '}
+            {hertz(toneOfDrive(drive, table))}. A low-pass filter takes the images round {rate} away.
+          </>
+        )}
+        {drive.kind === 'once' && (
           <>
             {table.length} entries written once at {rate} last{' '}
             {formatQuantity(table.length / sampleRateHz, 's', { significant: 3 })}; the pin stays on the last
@@ -91,10 +97,16 @@ function AtThePin() {
 export function OutputSummary() {
   const table = useDefinition((definition) => definition.table);
   const playback = useBench(({ history }) => history.present.playback);
-  const rate = `${hertz(sampleRateOf(playback, table))} sample rate`;
-  return playback.mode === 'loop'
-    ? `Loop at ${hertz(toneOf(playback, table))} · ${rate}`
-    : `Once through · ${rate}`;
+  const drive = driveOf(playback, table);
+  const rate = `${hertz(drive.sampleRateHz)} sample rate`;
+  switch (drive.kind) {
+    case 'loop':
+      return `Loop at ${hertz(toneOfDrive(drive, table))} · ${rate}`;
+    case 'accumulator':
+      return `Accumulator at ${hertz(toneOfDrive(drive, table))} · ${rate}`;
+    case 'once':
+      return `Once through · ${rate}`;
+  }
 }
 
 const hertz = (value: number) => formatQuantity(value, 'Hz', { significant: 5 });

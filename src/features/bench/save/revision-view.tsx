@@ -24,7 +24,6 @@ export function RevisionView({ revision }: { revision: Revision }) {
   );
   if (built === null) return <Waiting>Building the table…</Waiting>;
   if (table === null) return <Waiting>{'fault' in built && built.fault}</Waiting>;
-  const { range, cycles } = revision.definition.table;
   return (
     <div className="revision-view">
       <div className="revision-plots">
@@ -33,14 +32,7 @@ export function RevisionView({ revision }: { revision: Revision }) {
         <FigureStrips table={table} />
       </div>
       <div className="panel">
-        <ListenPanel
-          cycle={table.cycle}
-          values={table.values}
-          playback={playback}
-          onPlaybackChange={setPlayback}
-          range={range}
-          tableCycles={cycles}
-        />
+        <ListenPanel table={table} playback={playback} onPlaybackChange={setPlayback} />
       </div>
     </div>
   );

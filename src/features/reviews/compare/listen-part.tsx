@@ -1,6 +1,6 @@
-import { useMemo, useState } from 'react';
+import { useEffect, useMemo, useState } from 'react';
 import { formatQuantity } from '../../../../shared/quantities/index.ts';
-import { volumeRangeDb, type Hearing, type Sound } from '../../../audio/index.ts';
+import { volumeRangeDb, type Sound } from '../../../audio/index.ts';
 import { usePreview } from '../../../audio/use-preview.ts';
 import { VolumeField } from '../../../audio/volume-field.tsx';
 import { Button, Caution, ChoiceField, Explain, Panel, icons } from '../../../components/index.ts';
@@ -14,9 +14,13 @@ interface ListenPartProps {
   names: { a: string; b: string };
 }
 
+/** Until a context is open its rate is not known; this is the usual one. */
+const usualContextRateHz = 48_000;
+
 /** Plays both at one loudness, and goes from one to the other without a gap. */
 export function ListenPart({ pair, names }: ListenPartProps) {
   const { a, b } = pair;
+  const [contextRateHz, setContextRateHz] = useState(usualContextRateHz);
   const toneHz = toneOf(b.revision.playback ?? a.revision.playback, b.revision.definition.table);
   const matched = useMemo(
     () =>
@@ -24,22 +28,26 @@ export function ListenPart({ pair, names }: ListenPartProps) {
         { values: a.table.values, table: a.revision.definition.table },
         { values: b.table.values, table: b.revision.definition.table },
         toneHz,
+        contextRateHz,
       ),
-    [a, b, toneHz],
+    [a, b, toneHz, contextRateHz],
   );
   return (
     <Panel title="Listen to both">
       {matched.kind === 'matched' ? (
-        <Player sound={matched.sound} names={names} turnedDownDb={matched.turnedDownDb} toneHz={toneHz} />
+        <Player
+          sound={matched.sound}
+          names={names}
+          turnedDownDb={matched.turnedDownDb}
+          toneHz={toneHz}
+          onContextRate={setContextRateHz}
+        />
       ) : (
-        <p>{matched.kind === 'silent' ? saySilent(matched.which, names) : outOfStep}</p>
+        <p>{saySilent(matched.which, names)}</p>
       )}
     </Panel>
   );
 }
-
-const outOfStep =
-  'The two hold such different numbers of cycles that a common round of both would be too long to render. Listen to each on the page of its table.';
 
 const saySilent = (which: 'a' | 'b' | 'both', names: { a: string; b: string }) =>
   which === 'both'
@@ -51,15 +59,19 @@ interface PlayerProps {
   names: { a: string; b: string };
   turnedDownDb: { a: number; b: number };
   toneHz: number;
+  /** Is told the rate at which the browser plays, once that is known. */
+  onContextRate: (hz: number) => void;
 }
 
-function Player({ sound, names, turnedDownDb, toneHz }: PlayerProps) {
-  // The first one sounds as the sound's ideal curve, the second as its table.
-  const [hearing, setHearing] = useState<Hearing>('table');
+function Player({ sound, names, turnedDownDb, toneHz, onContextRate }: PlayerProps) {
+  const [hearing, setHearing] = useState<'a' | 'b'>('b');
   const [volumeDb, setVolumeDb] = useState<number>(volumeRangeDb.start);
-  const { status, trouble, toggle } = usePreview(sound, hearing, volumeDb);
+  const { status, trouble, toggle, preview } = usePreview(sound, hearing, volumeDb);
+  useEffect(() => {
+    if (preview !== null) onContextRate(preview.contextRateHz);
+  }, [preview, onContextRate]);
   const isOn = status !== 'silent';
-  const heard = hearing === 'ideal' ? names.a : names.b;
+  const heard = names[hearing];
   return (
     <div className="space-y-4">
       <div className="compare-listen">
@@ -71,16 +83,18 @@ function Player({ sound, names, turnedDownDb, toneHz }: PlayerProps) {
           hideLabel
           value={hearing}
           options={[
-            { value: 'ideal', label: names.a },
-            { value: 'table', label: names.b },
+            { value: 'a', label: names.a },
+            { value: 'b', label: names.b },
           ]}
           onChange={setHearing}
         />
         <Explain title="Equal loudness">
           <p>
-            Both are played as loops of the same tone, {formatQuantity(toneHz, 'Hz')}, without their mean. The
-            one with the larger effective value (RMS) is turned down to that of the other; nothing is turned
-            up.
+            Both are played as loops of the same tone, {formatQuantity(toneHz, 'Hz')}, as their pins give
+            them: steps, images and all, without their mean. The effective value (RMS) is{' '}
+            <code>√(Σa²/2)</code> over the lines that are heard, those below half of the rate at which this
+            browser plays. The one with the larger value is turned down to that of the other; nothing is
+            turned up.
           </p>
           <p>
             Equal RMS is close to equal loudness for waves of like spectra; a wave with stronger high partials

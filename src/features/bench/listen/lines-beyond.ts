@@ -1,4 +1,4 @@
-import { linesOf } from '../../shared/dft/index.ts';
+import { linesOf } from '../../../../shared/dft/index.ts';
 
 /** Lines weaker than this beside the strongest are not counted: −60 dB. */
 const leastCounted = 1e-3;

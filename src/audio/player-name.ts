@@ -1,0 +1,2 @@
+/** Under which the audio thread's part is registered. */
+export const playerName = 'stepwell-player';
