@@ -3,9 +3,10 @@ import { z } from 'zod';
 import { buildTable } from '../../shared/build-table.ts';
 import { parseBoard, Refusal, type Board, type GeneratedFile } from '../../shared/contract/index.ts';
 import {
-  boardOptionsFor,
+  boardShare,
   contentOf,
   flagOf,
+  notTakenOf,
   optionOf,
   renderFiles,
   targetOf,
@@ -28,7 +29,10 @@ export function addRender(command: Command): void {
   command
     .argument('<DEFINITION.json>', 'the definition; - reads standard input')
     .requiredOption('--target <name>', targets.map(({ id, title }) => `${id}: ${title}`).join('; '))
-    .option('--board <file>', 'a board: its clock and port map, where no flag of their own says otherwise')
+    .option(
+      '--board <file>',
+      'a board: its clock and port map, where no flag (--clock-hz, --port-map, --port …) says otherwise',
+    )
     .option(
       '--out <folder>',
       'folder for the files, made where it is missing; without it they go to standard output',
@@ -50,18 +54,20 @@ async function render(
   flags: Readonly<Record<string, string>>,
 ) {
   const described = targetOf(target);
-  const ofBoard = board === undefined ? {} : boardOptionsFor(described, await readBoard(board));
+  const onBoard = board === undefined ? undefined : await readBoard(board);
   const table = buildTable(await readDefinition(file));
   // commander hands flags over in camel case, without their hyphens.
-  const options = Object.fromEntries([
-    ...Object.entries(ofBoard),
-    ...Object.entries(flags).map(([flag, value]) => [optionOf(`--${flag}`), value]),
-  ]);
-  const files = renderFiles(table, target, options, readTemplates());
+  const given = Object.fromEntries(
+    Object.entries(flags).map(([flag, value]) => [optionOf(`--${flag}`), value]),
+  );
+  const ofBoard = onBoard === undefined ? {} : boardShare(described, onBoard, given).taken;
+  const files = renderFiles(table, target, { ...ofBoard, ...given }, readTemplates());
   const said =
     out === undefined ? asOne(files, described.commentOf) : `${(await writeFiles(out, files)).join('\n')}\n`;
   say(said);
   for (const { path, message } of table.warnings) sayError(onOneLine(`warning: ${path}: ${message}`));
+  const notTaken = onBoard === undefined ? [] : notTakenOf(described, onBoard);
+  for (const phrase of notTaken) sayError(onOneLine(`note: not taken from the board: ${phrase}`));
 }
 
 /** A board's file. @throws {Refusal} with `board.` before the path of a field at fault */

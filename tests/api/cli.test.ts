@@ -118,8 +118,8 @@ describe('render', () => {
     const board = join(folder, 'board.json');
     await writeFile(board, JSON.stringify({ schema: 1, name: 'Buoy', clock: { hz: 16_000_000 }, output }));
     const flags = ['--board', board, '--playback', 'timer', '--clock-hz', '1000000'];
-    const { status } = await stepwell(['render', file, '--target', 'avr', ...flags, '--out', out]);
-    expect(status).toBe(0);
+    const { status, stderr } = await stepwell(['render', file, '--target', 'avr', ...flags, '--out', out]);
+    expect({ status, stderr }).toEqual({ status: 0, stderr: '' });
     const options = {
       portMap: 'B.0 B.1 B.3 B.4 B.5 B.6 D.0 D.1 D.2 D.3',
       reservedPins: 'B.2=high D.7=low',
@@ -129,6 +129,16 @@ describe('render', () => {
     };
     for (const { name, text } of expected('avr', options))
       expect(await readFile(join(out, name), 'utf8')).toBe(text);
+    // A plain port by hand puts the board's map away.
+    const plain = ['--board', board, '--port', 'D', '--high-port', 'B'];
+    await stepwell(['render', file, '--target', 'avr', ...plain, '--out', out]);
+    for (const { name, text } of expected('avr', { clockHz: '16000000', port: 'D', highPort: 'B' }))
+      expect(await readFile(join(out, name), 'utf8')).toBe(text);
+    const chip = { schema: 1, name: 'Buoy', clock: { hz: 1e6 }, output: { kind: 'on-chip', bits: 10 } };
+    await writeFile(board, JSON.stringify(chip));
+    const told = await stepwell(['render', file, '--target', 'avr', '--board', board, '--out', out]);
+    expect(told.status).toBe(0);
+    expect(told.stderr).toMatch(/^note: not taken from the board: its converter on the chip, .*\n$/);
     await writeFile(board, '{"schema":1,"name":"Buoy","clock":{"hz":-1}}');
     expectOneLine(
       await stepwell(['render', file, '--target', 'avr', '--board', board]),

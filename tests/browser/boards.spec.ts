@@ -129,8 +129,7 @@ test('a board is made; a table fitted to its measured levels gains SINAD, and is
   // The export takes the board's pins, and says whether the words fit.
   await page.goto(`/?open=export&board=${team}/test-board`);
   await page.getByRole('combobox', { name: 'Target' }).selectOption('avr');
-  await page.getByRole('button', { name: 'Take pins and clock from Test board' }).click();
-  await expect(page.getByText('Pins and clock are those of Test board.')).toBeVisible();
+  await expect(page.getByText('From the board Test board: clock and pins.')).toBeVisible();
   await expect(page.getByRole('textbox', { name: 'Port map' })).not.toHaveValue('');
   await expect(page.locator('.command-line')).toContainText('--port-map');
   await expect(page.getByText('✓ Within the 8,000 bytes that Test board leaves for tables')).toBeVisible();

@@ -33,6 +33,14 @@ describe('what a sample costs in proven playback code', () => {
     );
   });
 
+  it('varies at its entry by all but one of the cycles that the longest main instruction takes', () => {
+    const handlers = costs.filter(({ found }) => found === 'handler cycles');
+    expect(handlers.length).toBeGreaterThan(8);
+    for (const { id, entryVariesBy, entryVariesWithCalls, mainCycles } of handlers) {
+      expect([entryVariesBy, entryVariesWithCalls], id).toEqual([mainCycles - 1, 3]);
+    }
+  });
+
   it('adds nothing to loops and to instructions', () => {
     const others = costs.filter(({ found }) => found !== 'handler cycles');
     expect(others.length).toBeGreaterThan(20);

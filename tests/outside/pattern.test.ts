@@ -16,7 +16,8 @@ it('scores open and close where a Python program has the edges, pass after pass'
     const changes: number[] = [];
     let isOpen = false;
     for (let turn = 0; turn < passes; turn += 1) {
-      for (const { atSeconds, gate = isOpen } of events) {
+      for (const { atSeconds, ...event } of events) {
+        const gate: boolean = event.gate ?? isOpen;
         const ms = (turn * (repeatSeconds ?? 0) + atSeconds) * 1000;
         if (gate !== isOpen && Math.round(ms) < ticks) changes.push(Math.round(ms));
         // A millisecond that a float cannot hold is off by far less than a sample.

@@ -1,10 +1,11 @@
-import type { DefinitionInput } from '../../../shared/contract/index.ts';
 import { simulate, timerOf, type SimulatedRun } from '../support/avr-simulator.ts';
 import { avrPart, avrProgram } from '../support/compilers.ts';
-import { exported, tone } from '../support/tables.ts';
+import { exported } from '../support/tables.ts';
+import { accumulators, loopRate, loops, onTimer, type Playing } from './avr-cases.ts';
+import { busyLoop, busyLoopCycles, mainLoopCycles, mustVary } from './avr-entry.ts';
 import { everyWarning } from './c-programs.ts';
-import { exportCases, expectedOf, mustEqual, tableCases } from './cases.ts';
-import { accumulated, playedOnce, summed } from './played.ts';
+import { exportCases, expectedOf, mustEqual } from './cases.ts';
+import { accumulated } from './played.ts';
 import type { Proof } from './proof.ts';
 
 // Compiler and addresses: avr-gcc and avr-libc. Judge of what runs: the instruction-level simulator avr8js. It charges
@@ -43,153 +44,18 @@ const bytesOf = (words: readonly number[], bits: number) => [
   ...(bits > 8 ? [{ port: 'PORTD', values: words.map((word) => (word >> 8) & (2 ** (bits - 8) - 1)) }] : []),
 ];
 
-interface Playing {
-  readonly title: string;
-  readonly definition: DefinitionInput;
-  readonly options: Readonly<Record<string, string>>;
-  readonly places?: readonly string[];
-  /** Words that are played, in order, from those of one round. */
-  readonly played: (words: number[]) => number[];
-}
-
-const thrice = (words: number[]) => [...words, ...words, ...words];
-const { mapped, signed } = tableCases;
-const onePort = {
-  definition: tone({ length: 256, bits: 6 }),
-  options: { portMap: 'B.0 B.1 B.3 B.4 B.5 B.6', reservedPins: 'B.2=high B.7=low' },
-};
-
-const loops: Playing[] = [
-  { title: '256 × 8', definition: tone({}), options: {}, played: thrice },
-  { title: '100 × 8', definition: tone({ length: 100 }), options: {}, played: thrice },
-  { title: '3 × 8', definition: tone({ length: 3 }), options: {}, played: thrice },
-  { title: '261 × 8', definition: tone({ length: 261 }), options: {}, played: thrice },
-  { title: '1024 × 8', definition: tone({ length: 1024 }), options: {}, played: thrice },
-  {
-    title: '1024 × 16 on two ports',
-    definition: tone({ length: 1024, bits: 16 }),
-    options: {},
-    played: thrice,
-  },
-  { title: `${signed.title} on two ports`, definition: signed.definition, options: {}, played: thrice },
-  { title: '64 × 8 in RAM', definition: tone({ length: 64 }), options: { storage: 'ram' }, played: thrice },
-  { title: '256 × 8, unrolled by two', definition: tone({}), options: { unroll: 'two' }, played: thrice },
-  {
-    title: '1001 × 8, unrolled by two',
-    definition: tone({ length: 1001 }),
-    options: { unroll: 'two' },
-    played: thrice,
-  },
-  { title: '256 × 8, unrolled whole', definition: tone({}), options: { unroll: 'whole' }, played: thrice },
-  {
-    title: '100 × 12 on two ports, unrolled whole',
-    definition: tone({ length: 100, bits: 12 }),
-    options: { unroll: 'whole' },
-    played: thrice,
-  },
-  { ...mapped, played: thrice },
-  {
-    ...mapped,
-    title: `${mapped.title} and kept`,
-    options: { ...mapped.options, reservedBy: 'kept' },
-    played: thrice,
-  },
-  {
-    ...onePort,
-    title: '256 × 6 on one port, two pins reserved',
-    places: onePort.options.portMap.split(' '),
-    played: thrice,
-  },
-  {
-    ...onePort,
-    title: '256 × 6 on one port, two pins kept',
-    places: onePort.options.portMap.split(' '),
-    options: { ...onePort.options, reservedBy: 'kept' },
-    played: thrice,
-  },
-];
-
-const clockHz = 8_000_000;
-const loopRate = (cyclesPerWord: number) => ({ clockHz, cyclesPerWord, milliHz: 2_000_123 });
-const accumulators = [
-  { title: '256 × 8, 24 bits', definition: tone({}), bits: 24, cyclesPerWord: 9 },
-  { title: '256 × 8, 16 bits', definition: tone({}), bits: 16, cyclesPerWord: 8 },
-  { title: '256 × 8, 32 bits', definition: tone({}), bits: 32, cyclesPerWord: 10 },
-  { title: '64 × 8, 24 bits', definition: tone({ length: 64 }), bits: 24, cyclesPerWord: 13 },
-  {
-    title: '1024 × 12 on two ports, 24 bits',
-    definition: tone({ length: 1024, bits: 12 }),
-    bits: 24,
-    cyclesPerWord: 28,
-  },
-];
-
-const timerRate = { clockHz, cyclesPerWord: 500, milliHz: 440_000 };
-const secondRate = { ...timerRate, milliHz: 550_000 };
-const onTimer: (Playing & { playback: string })[] = [
-  { playback: 'timer', title: '256 × 8', definition: tone({}), options: {}, played: thrice },
-  { playback: 'timer', title: '100 × 8', definition: tone({ length: 100 }), options: {}, played: thrice },
-  {
-    playback: 'timer',
-    title: '300 × 12 on two ports',
-    definition: tone({ length: 300, bits: 12 }),
-    options: {},
-    played: thrice,
-  },
-  {
-    playback: 'timer',
-    ...mapped,
-    title: `${mapped.title} and kept`,
-    options: { ...mapped.options, reservedBy: 'kept' },
-    played: thrice,
-  },
-  {
-    playback: 'timer-accumulator',
-    title: '256 × 8',
-    definition: tone({}),
-    options: {},
-    played: (words) => accumulated(words, 24, timerRate, 400),
-  },
-  {
-    playback: 'timer-accumulator',
-    title: '512 × 10 in two’s complement, 32 bits',
-    definition: tone({ length: 512, bits: 10, coding: 'twos-complement' }),
-    options: { accumulatorBits: '32' },
-    played: (words) => accumulated(words, 32, timerRate, 400),
-  },
-  {
-    playback: 'two-accumulators',
-    title: '256 × 8',
-    definition: tone({}),
-    options: {},
-    played: (words) => summed(words, 24, timerRate, secondRate, 400),
-  },
-  {
-    playback: 'two-accumulators',
-    title: '128 × 12 in two’s complement',
-    definition: tone({ length: 128, bits: 12, coding: 'twos-complement' }),
-    options: {},
-    played: (words) =>
-      summed(
-        words.map((word) => word + 2048),
-        24,
-        timerRate,
-        secondRate,
-        300,
-      ).map((code) => code - 2048),
-  },
-  {
-    playback: 'once',
-    title: '100 × 8',
-    definition: tone({ length: 100 }),
-    options: { rampWords: '9', idleCode: '30' },
-    played: (words) => playedOnce(words, 30, 9),
-  },
-];
-
-async function play({ definition, options, places, played }: Playing, bench: Bench, playback: string) {
+/** @param inMain what the main program does in the place of its empty loop */
+async function play(
+  { definition, options, places, played }: Playing,
+  bench: Bench,
+  playback: string,
+  inMain?: (file: string) => string,
+) {
   const { table, files } = exported(definition, 'avr', { arrayName: 'wave', playback, ...options });
-  const program = await avrProgram(files, bench.mcu, strict);
+  const sources = files.map((file) =>
+    inMain !== undefined && file.name === 'wave_main.c' ? { ...file, text: inMain(file.text) } : file,
+  );
+  const program = await avrProgram(sources, bench.mcu, strict);
   const bits = table.definition.table.bits;
   const isKept = options.reservedBy === 'kept';
   const rounds = expectedOf(table, places);
@@ -211,7 +77,7 @@ async function play({ definition, options, places, played }: Playing, bench: Ben
   }
   const said = Number(/each (\d+)\s+cycles/.exec(files[2].text.replaceAll('\n *', ''))?.[1]);
   const most = Number(/takes at most (\d+) cycles/.exec(files[2].text)?.[1]);
-  return { run, said, most };
+  return { run, said, most, main: files[2].text };
 }
 
 /** Each kind of playback from reset on: what the ports show, and when. */
@@ -233,9 +99,12 @@ export async function proveAvr(): Promise<Proof[]> {
   }
   const large = await partAndTimer(largeMcu);
   const onLarge = onTimer.slice(0, 1).map((one) => ({ ...one, title: `${one.title}, vectors of two words` }));
-  for (const one of [...onTimer, ...onLarge]) {
-    const isLarge = onLarge.includes(one);
-    const { run, most } = await play(one, isLarge ? large : bench, one.playback);
+  for (const timed of [...onTimer, ...onLarge]) {
+    const { playback, cyclesPerWord } = timed;
+    const one = { ...timed, options: { ...timed.options, compare: String(cyclesPerWord - 1) } };
+    const isLarge = onLarge.includes(timed);
+    const part = isLarge ? large : bench;
+    const { run, most, main } = await play(one, part, playback);
     const delays = new Set(run.writeDelays);
     const [delay] = delays;
     if (delays.size !== 1)
@@ -244,12 +113,18 @@ export async function proveAvr(): Promise<Proof[]> {
     // The file counts a vector of rjmp.
     if (handlerCycles + 2 - Number(isLarge) !== most)
       throw new Error(`${one.title}: ${handlerCycles} cycles, where the file says ${most}.`);
+    const busy = await play(one, part, playback, busyLoop);
+    const entry = mustVary(`${playback}, ${one.title}`, main, [
+      { run, loopCycles: mainLoopCycles },
+      { run: busy.run, loopCycles: busyLoopCycles(isLarge) },
+    ]);
     proofs.push({
-      case: `${one.playback}, ${one.title}`,
+      case: `${playback}, ${one.title}`,
       tool,
       proven: `every word in order; the write ${delay} cycles after the response, always`,
-      cyclesPerWord: 500,
+      cyclesPerWord,
       handlerCycles,
+      ...entry,
     });
   }
   return proofs;

@@ -3,7 +3,7 @@ import { strictWarnings } from '../support/compilers.ts';
 import { inFolder, run } from '../support/programs.ts';
 import { exported, sine, tone } from '../support/tables.ts';
 import { everyWarning } from './c-programs.ts';
-import { expectedOf, mustEqual } from './cases.ts';
+import { expectedOf, mustEqual, tableCases } from './cases.ts';
 import { accumulated, playedOnce, summed } from './played.ts';
 import type { Proof } from './proof.ts';
 
@@ -16,7 +16,9 @@ interface Playing {
   readonly title: string;
   readonly definition: DefinitionInput;
   readonly options: Readonly<Record<string, string>>;
-  /** C for the next word, with NAME for the array's. */
+  /** The places that the map's bits have, bit 0 first; absent without a map. */
+  readonly places?: readonly string[];
+  /** C for the next word, with NAME for the array's and `e` for an entry; of two ports, 256 times the second's added. */
   readonly next: string;
   readonly wanted: (words: number[]) => number[];
 }
@@ -72,6 +74,34 @@ const kinds: Playing[] = [
       ).map((code) => code - 2048),
   },
   {
+    title: 'two-accumulators, 1024 × 16',
+    definition: tone({ length: 1024, bits: 16 }),
+    options: { playback: 'two-accumulators' },
+    next: 'NAME_next()',
+    wanted: (words) => summed(words, 24, rate, second, 500),
+  },
+  {
+    ...tableCases.packed12,
+    title: `timer, ${tableCases.packed12.title}`,
+    options: { playback: 'timer', packed: 'yes' },
+    next: 'NAME_word(NAME_next_entry())',
+    wanted: (words) => [...words, ...words],
+  },
+  {
+    ...tableCases.mapped,
+    title: `timer, ${tableCases.mapped.title}`,
+    options: { playback: 'timer', ...tableCases.mapped.options },
+    next: '(e = NAME_next_entry(), NAME_b[e] + 256l * NAME_d[e])',
+    wanted: (words) => [...words, ...words],
+  },
+  {
+    ...tableCases.mappedFold,
+    title: `timer-accumulator of 24 bits, ${tableCases.mappedFold.title}`,
+    options: { playback: 'timer-accumulator', ...tableCases.mappedFold.options },
+    next: '(e = NAME_next_entry(), NAME_b_word(e) + 256l * NAME_d_word(e))',
+    wanted: (words) => accumulated(words, 24, rate, 500),
+  },
+  {
     title: 'once, 64 × 12 in two’s complement',
     definition: signed,
     options: { playback: 'once', rampWords: '5', idleCode: '1000' },
@@ -89,8 +119,9 @@ export async function proveC99Playback(): Promise<Proof[]> {
   const playing = kinds.map((kind, k) => {
     const name = `play_${k}`;
     const { table, files } = exported(kind.definition, 'c99', { arrayName: name, ...kind.options });
-    const [{ words }] = expectedOf(table);
-    return { ...kind, name, files, wanted: kind.wanted([...words]) };
+    const [{ words: first }, other] = expectedOf(table, kind.places);
+    const words = first.map((word, entry) => word + 256 * (other?.words[entry] ?? 0));
+    return { ...kind, name, files, wanted: kind.wanted(words) };
   });
   const dma = exported(signed, 'c99', {
     arrayName: 'channel',
@@ -106,6 +137,7 @@ ${playing.map(({ name }) => `#include "${name}_play.h"`).join('\n')}
 int main(void)
 {
     unsigned int k;
+    uint16_t e;
 ${playing
   .map(
     ({ name, next, wanted }) => `    ${name}_start();

@@ -105,18 +105,25 @@ export function expectedOf(
     return table.coding === 'twos-complement' ? shown - (top + 1) / 2 : shown;
   });
   if (places === undefined) return [{ port: '', words }];
-  const ports = [...new Set(places.map((place) => place.split('.')[0]))].sort();
-  return ports.map((port) => ({
+  // The one reserved pin that rests high is B.2.
+  const rest = (port: string) => (port === 'B' ? 2 ** 2 : 0);
+  return portsOf(places).map((port) => ({
     port: port.toLowerCase(),
-    words: words.map((word) => {
-      const bits = word.toString(2).padStart(table.bits, '0').split('').reverse();
-      const driven = places.reduce((sum, place, bit) => {
-        const [name, pin] = place.split('.');
-        return name === port && bits[bit] === '1' ? sum + 2 ** Number(pin) : sum;
-      }, 0);
-      return driven + (port === 'B' ? 2 ** 2 : 0);
-    }),
+    words: words.map((word) => shownOn(port, places, word) + rest(port)),
   }));
+}
+
+/** Names of the ports that places are on, in order. */
+export const portsOf = (places: readonly string[]) =>
+  [...new Set(places.map((place) => place.split('.')[0]))].sort();
+
+/** What the pins of one port show of a word whose bits have these places, bit 0 first; every other pin is 0. */
+export function shownOn(port: string, places: readonly string[], word: number): number {
+  const pattern = word < 0 ? word + 2 ** places.length : word;
+  return places.reduce((sum, place, bit) => {
+    const [name, pin] = place.split('.');
+    return name === port && Math.floor(pattern / 2 ** bit) % 2 === 1 ? sum + 2 ** Number(pin) : sum;
+  }, 0);
 }
 
 /** What a program printed: a line `NAME PORT WORD WORD …` for each array. @throws where a word differs */

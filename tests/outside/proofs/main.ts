@@ -41,11 +41,20 @@ if (isStoring && faults === 0) {
 console.log(`\n${count} proofs, ${faults} faults`);
 process.exitCode = faults > 0 ? 1 : 0;
 
-function rowOf({ case: title, tool, proven, cyclesPerWord, handlerCycles, instructions }: Proof): string {
+function rowOf({
+  case: title,
+  tool,
+  proven,
+  cyclesPerWord,
+  handlerCycles,
+  instructions,
+  tickCycles,
+}: Proof): string {
   const figures = [
     cyclesPerWord && `${cyclesPerWord} cycles a word`,
     handlerCycles && `handler ${handlerCycles} cycles`,
     instructions && `${instructions} instructions`,
+    tickCycles && `a tick at most ${tickCycles} cycles`,
   ].filter(Boolean);
   return [title.padEnd(58), tool, proven, ...figures].join(' · ');
 }

@@ -11,25 +11,28 @@ import {
   proveVerilogMemh,
   proveWav,
 } from './data-files.ts';
+import { provePulsesInC99, provePulsesInCpp17 } from './pattern-c.ts';
+import { provePulsesInJson, provePulsesInPython, provePulsesInRust } from './pattern-modules.ts';
+import { provePulsesOnAvr, provePulsesOnCortexM, provePulsesOnRiscv } from './pattern-processors.ts';
 import { proveCortexM, proveRiscv } from './processors.ts';
 import type { Proof } from './proof.ts';
 import { proveRust } from './rust.ts';
 
 /** Each target with the proof of it. What is proven of one is stored in the repository, cycles and all. */
 export const provers: Readonly<Record<string, () => Promise<Proof[]>>> = {
-  c99: async () => [...(await proveC99()), ...(await proveC99Playback())],
-  avr: proveAvr,
-  cpp17: proveCpp17,
-  'cortex-m': proveCortexM,
-  riscv: proveRiscv,
+  c99: async () => [...(await proveC99()), ...(await proveC99Playback()), ...(await provePulsesInC99())],
+  avr: async () => [...(await proveAvr()), ...(await provePulsesOnAvr())],
+  cpp17: async () => [...(await proveCpp17()), ...(await provePulsesInCpp17())],
+  'cortex-m': async () => [...(await proveCortexM()), ...(await provePulsesOnCortexM())],
+  riscv: async () => [...(await proveRiscv()), ...(await provePulsesOnRiscv())],
   asm: proveAsm,
-  rust: proveRust,
-  python: provePython,
+  rust: async () => [...(await proveRust()), ...(await provePulsesInRust())],
+  python: async () => [...(await provePython()), ...(await provePulsesInPython())],
   'verilog-memh': proveVerilogMemh,
   'intel-hex': proveIntelHex,
   binary: proveBinary,
   csv: proveCsv,
-  json: proveJson,
+  json: async () => [...(await proveJson()), ...(await provePulsesInJson())],
   wav: proveWav,
 };
 

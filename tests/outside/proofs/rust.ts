@@ -4,7 +4,7 @@ import { exportCases, mustPrint } from './cases.ts';
 import { each, type Proof } from './proof.ts';
 
 /** Debian's compiler, which may stand behind a newer one in the search path: what it takes, newer ones take. */
-const rustc = existsSync('/usr/bin/rustc') ? '/usr/bin/rustc' : 'rustc';
+export const rustc = existsSync('/usr/bin/rustc') ? '/usr/bin/rustc' : 'rustc';
 
 /** rust: a library without std, every warning an error, and a program that prints what it holds. */
 export async function proveRust(): Promise<Proof[]> {

@@ -20,6 +20,15 @@ export interface SimulatedRun {
   readonly handlerCycles: readonly number[];
   /** Cycles from the response to the first write of a port in it. */
   readonly writeDelays: readonly number[];
+  /** What each interrupt came into, and how late its first write of a port was. */
+  readonly entries: readonly TimerEntry[];
+}
+
+export interface TimerEntry {
+  /** Address of the instruction that the main program goes on with. */
+  readonly from: number;
+  /** Counts of the timer from its return to 0, on the match, to the write; cycles at prescaler 1. */
+  readonly counts: number;
 }
 
 /**
@@ -69,10 +78,12 @@ export function simulate(
   const memory = new Uint8Array(part.flashEnd + 1).fill(0xff);
   memory.set(program);
   const cpu = new CPU(new Uint16Array(memory.buffer), part.ramEnd + 1 - registerSpace);
-  const vector = timer && addTimer(cpu, timer);
+  const running = timer && addTimer(cpu, timer);
   const writes: RegisterWrite[] = [];
   const handlerCycles: number[] = [];
   const writeDelays: number[] = [];
+  const entries: TimerEntry[] = [];
+  let from = 0;
   let portWriteCount = 0;
   let responseAt: number | undefined;
   let hasWritten = false;
@@ -80,7 +91,10 @@ export function simulate(
     cpu.writeHooks[port] = (value) => {
       portWriteCount += 1;
       writes.push({ register: `PORT${letter}`, value, cycle: cpu.cycles });
-      if (responseAt !== undefined && !hasWritten) writeDelays.push(cpu.cycles - responseAt);
+      if (running !== undefined && responseAt !== undefined && !hasWritten) {
+        writeDelays.push(cpu.cycles - responseAt);
+        entries.push({ from, counts: running.debugTCNT });
+      }
       hasWritten = true;
     };
     cpu.writeHooks[ddr] = (value) => void writes.push({ register: `DDR${letter}`, value, cycle: cpu.cycles });
@@ -94,22 +108,22 @@ export function simulate(
       handlerCycles.push(cpu.cycles - responseAt);
       responseAt = undefined;
     }
-    const before = cpu.cycles;
+    const before = { cycles: cpu.cycles, pc: cpu.pc };
     cpu.tick();
-    if (cpu.pc === vector && responseAt === undefined) {
-      responseAt = before;
+    if (cpu.pc === timer?.vector && responseAt === undefined) {
+      responseAt = before.cycles;
+      from = before.pc;
       hasWritten = false;
     }
   }
-  return { writes, handlerCycles, writeDelays };
+  return { writes, handlerCycles, writeDelays, entries };
 }
 
-/** Timer 1 at a part's own addresses. @returns the address of its compare A interrupt */
-function addTimer(cpu: CPU, at: Readonly<Record<string, number>>): number {
-  const { vector } = at;
-  new AVRTimer(cpu, {
+/** Timer 1 at a part's own addresses; `vector` is that of its compare A interrupt. */
+function addTimer(cpu: CPU, at: Readonly<Record<string, number>>): AVRTimer {
+  return new AVRTimer(cpu, {
     ...timer1Config,
-    compAInterrupt: vector,
+    compAInterrupt: at.vector,
     TIFR: at.TIFR,
     OCRA: at.OCR1A,
     OCRB: at.OCR1B,
@@ -132,5 +146,4 @@ function addTimer(cpu: CPU, at: Readonly<Record<string, number>>): number {
     compPortB: 0,
     compPortC: 0,
   });
-  return vector;
 }

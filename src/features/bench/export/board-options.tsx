@@ -1,38 +1,50 @@
-import { boardOptionsFor, type Target } from '../../../../shared/firmware/index.ts';
-import type { Board } from '../../../../shared/contract/index.ts';
-import { Button } from '../../../components/index.ts';
+import type { Board, Problem } from '../../../../shared/contract/index.ts';
+import { boardShare, notTakenOf, pinOptions, type Target } from '../../../../shared/firmware/index.ts';
+import { Button, icons } from '../../../components/index.ts';
+import { groupsOf } from './board-origins.tsx';
 import type { TypedOptions } from './render-export.ts';
 
 interface BoardOptionsProps {
   board: Board;
   target: Target;
-  /** What the target's options are set to now. */
+  /** Options as they were set by hand. */
   typed: TypedOptions;
-  onTake: (options: TypedOptions) => void;
+  /** What the target cannot take as the options are. */
+  problems: readonly Problem[];
+  onSet: (options: TypedOptions) => void;
 }
 
-/** Takes over what the chosen board says of clock and pins, as `render --board` does; the fields show it then. */
-export function BoardOptions({ board, target, typed, onTake }: BoardOptionsProps) {
-  const options = boardOptionsFor(target, board);
-  const names = Object.keys(options);
-  if (names.length === 0) {
-    return (
-      <p className="figure-note">
-        {target.title} takes neither clock nor pins from {board.name}.
-      </p>
-    );
-  }
-  const what = names.includes('portMap') ? 'Pins and clock' : 'The clock';
-  if (names.every((name) => typed[name] === options[name])) {
-    return (
-      <p className="figure-note">
-        ✓ {what} {names.includes('portMap') ? 'are those' : 'is that'} of {board.name}.
-      </p>
-    );
-  }
+/** What the files have from the chosen board, as `render --board` takes it, what not, and what stands in its place. */
+export function BoardOptions({ board, target, typed, problems, onSet }: BoardOptionsProps) {
+  const { taken, byHand } = boardShare(target, board, typed);
+  const ours = groupsOf(Object.keys(taken));
+  const hands = groupsOf(byHand);
+  const refused = problems.find(({ path }) => pinOptions.some((name) => path === `options.${name}`));
+  const isMapRefused = refused !== undefined && 'portMap' in taken;
   return (
-    <Button size="small" onPress={() => onTake(options)}>
-      Take {what.toLowerCase()} from {board.name}
-    </Button>
+    <section className="board-share" aria-label={`From the board ${board.name}`}>
+      <p>
+        {ours.length > 0 && !isMapRefused && '✓ '}
+        From the board <strong>{board.name}</strong>: {ours.join(' and ') || 'nothing'}.
+        {hands.length > 0 && ` Set by hand: ${hands.join(' and ')}; that stays whatever board is chosen.`}
+      </p>
+      {notTakenOf(target, board).map((phrase) => (
+        <p key={phrase}>✗ Not taken: {phrase}.</p>
+      ))}
+      {isMapRefused && (
+        <div className="slab slab-oxide" role="status">
+          <icons.fault className="slab-sign" />
+          <div className="space-y-2">
+            <p>
+              The pins of {board.name} do not go with this table and these options: see the port map below,
+              and what is allowed there.
+            </p>
+            <Button size="small" onPress={() => onSet({ portMap: '' })}>
+              Go without its pins
+            </Button>
+          </div>
+        </div>
+      )}
+    </section>
   );
 }

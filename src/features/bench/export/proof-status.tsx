@@ -40,8 +40,15 @@ export function ProofStatus({ targetId }: { targetId: string }) {
   );
 }
 
-function figureOf({ cyclesPerWord, handlerCycles, instructions }: TargetProof): string {
-  if (handlerCycles !== undefined) return `handler ${handlerCycles} cycles`;
+function figureOf(proof: TargetProof): string {
+  const { cyclesPerWord, handlerCycles, instructions, tickCycles } = proof;
+  if (handlerCycles !== undefined) return `handler ${handlerCycles} cycles${entryOf(proof)}`;
   if (cyclesPerWord !== undefined) return `${cyclesPerWord} cycles a word`;
+  if (tickCycles !== undefined) return `a tick at most ${tickCycles} cycles`;
   return instructions === undefined ? '' : `${instructions} instructions`;
 }
+
+const entryOf = ({ entryVariesBy, entryVariesWithCalls }: TargetProof) =>
+  entryVariesBy === undefined
+    ? ''
+    : `, its entry varies by ${entryVariesBy} (with calls in main ${entryVariesWithCalls})`;

@@ -71,7 +71,12 @@ export function KeepLevels({ volts }: { volts: readonly number[] }) {
       ) : (
         <ProblemNotice fault={keeping.fault} onTryAgain={() => void keeping.submit({ onto, key })} />
       )}
-      <Button size="small" isBusy={keeping.isBusy} onPress={() => void keeping.submit({ onto, key })}>
+      <Button
+        size="small"
+        isDisabled={keeping.isBusy}
+        disabledReason="The levels are being kept."
+        onPress={() => void keeping.submit({ onto, key })}
+      >
         {onto.board.levels === undefined ? 'Keep the levels with' : 'Replace the measured levels of'}{' '}
         {onto.board.name}
       </Button>
