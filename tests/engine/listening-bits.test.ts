@@ -11,10 +11,13 @@ import {
   masksOf,
   offFromBottom,
   soundWithBitsOff,
-} from '../../shared/listening/bits-off.ts';
-import type { Sound } from '../../shared/listening/sound.ts';
+  type Sound,
+} from '../../shared/listening/index.ts';
 
-const sine = { kind: 'harmonics', partials: [{ harmonic: 1, amplitude: 1, phaseDeg: 17 }] } as const;
+const sine: DefinitionInput['source'] = {
+  kind: 'harmonics',
+  partials: [{ harmonic: 1, amplitude: 1, phaseDeg: 17 }],
+};
 const built = (table: DefinitionInput['table'], source: DefinitionInput['source'] = sine) =>
   buildTable({ schema: 1, name: 'Tone', source, table });
 const codedOf = ({ codes, cycle, definition }: ReturnType<typeof built>) => ({

@@ -4,15 +4,16 @@ import type { DefinitionInput } from '../../shared/contract/index.ts';
 import {
   answerTrial,
   beginRun,
+  equallyLoud,
   giveUp,
   guessingChance,
   rightNeeded,
   scoreOf,
   trialLimits,
   type BlindRun,
-} from '../../shared/listening/blind-test.ts';
-import { equallyLoud } from '../../shared/listening/equal-loudness.ts';
-import type { Drive, Voice } from '../../shared/listening/sound.ts';
+  type Drive,
+  type Voice,
+} from '../../shared/listening/index.ts';
 
 /** A coin that lies as it is told, and says how often it was thrown. */
 function coinOf(throws: readonly boolean[]) {

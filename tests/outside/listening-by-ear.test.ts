@@ -1,9 +1,7 @@
 import { expect, test } from 'vitest';
 import { buildTable } from '../../shared/build-table.ts';
 import type { DefinitionInput } from '../../shared/contract/index.ts';
-import { bitsOffFigures, masksOf } from '../../shared/listening/bits-off.ts';
-import { equallyLoud } from '../../shared/listening/equal-loudness.ts';
-import type { Voice } from '../../shared/listening/sound.ts';
+import { bitsOffFigures, equallyLoud, masksOf, type Voice } from '../../shared/listening/index.ts';
 import { askPython } from './numpy/python.ts';
 
 // Source: numpy/by_ear.py, from the engine specification on NumPy: §4 over masked codes; RMS (Parseval) of a drawn

@@ -114,8 +114,8 @@ export function Trial({ test }: { test: RunningTest }) {
         ))}
       </div>
       <p className="field-description">
-        It plays what was on the bench when the run began: changes there do not reach it. To change A or B,
-        end the run.
+        A, B and X start the sound, each as it was on the bench when the run began: changes there do not reach
+        it. To change A or B, end the run.
       </p>
       <div>
         <Button size="small" variant="quiet" onPress={() => setEnding(true)}>
