@@ -7,9 +7,9 @@ import { Ramp, rampCurve } from './ramp.ts';
 import { ScoreCursor } from './score-cursor.ts';
 
 /** Length of a crossfade between two voices, or between a sound and its change. */
-export const crossfadeSeconds = 0.012;
+const crossfadeSeconds = 0.012;
 /** Length of the ramp with which the gate opens and closes. */
-export const gateSeconds = 0.005;
+const gateSeconds = 0.005;
 
 /**
  * All that the audio thread does: voices in step, going over from one to another and from a sound to its change, and the
