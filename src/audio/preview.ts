@@ -118,6 +118,12 @@ export class AudioPreview {
     }
   }
 
+  /** Lets the audio device go until something is to sound; once the player is in its place. */
+  async rest(): Promise<void> {
+    await this.#node?.catch(() => undefined);
+    if (this.#state.status === 'silent') void this.#context.suspend().catch(() => undefined);
+  }
+
   /** Fades out and lets the audio device go. */
   stop(): void {
     this.#request += 1;

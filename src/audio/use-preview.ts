@@ -9,7 +9,12 @@ const isSilent = () => silent;
 export interface PreviewHandle extends PreviewState {
   /** Starts or stops. Belongs in the handler of a press or a key. */
   readonly toggle: () => void;
-  /** There once play has been pressed. */
+  /**
+   * Makes ready what a press would wait for, in silence: for when one is about to come. Does nothing before the page's
+   * visitor has pressed anything at all, as browsers let no page open its output before that.
+   */
+  readonly makeReady: () => void;
+  /** There once play has been pressed, or is about to be. */
   readonly preview: AudioPreview | null;
 }
 
@@ -30,18 +35,21 @@ export function usePreview(
   const [preview, setPreview] = useState<AudioPreview | null>(null);
   const [openTrouble, setOpenTrouble] = useState<string | null>(null);
   const opened = useRef<AudioPreview | null>(null);
-  const isOpening = useRef(false);
+  const opening = useRef<Promise<AudioPreview> | null>(null);
+  const isAsked = useRef(false);
+  const isGone = useRef(false);
   const state = useSyncExternalStore(preview?.subscribe ?? noListeners, preview?.state ?? isSilent);
 
   useEffect(() => (isNear ? fetchAhead() : undefined), [isNear]);
-  useEffect(
-    () => () => {
+  useEffect(() => {
+    isGone.current = false;
+    return () => {
+      isGone.current = true;
       opened.current?.close();
-      opened.current = null;
+      opened.current = opening.current = null;
       setPreview(null);
-    },
-    [],
-  );
+    };
+  }, []);
 
   // The voice before the sound: a sound with other voices is then taken up with the right one.
   useEffect(() => preview?.hear(hearing), [preview, hearing]);
@@ -49,30 +57,58 @@ export function usePreview(
   useEffect(() => preview?.perform(score), [preview, score]);
   useEffect(() => preview?.setVolume(volumeDb), [preview, volumeDb]);
 
+  const open = useCallback((): Promise<AudioPreview> => {
+    const fresh = (opening.current ??= openPreview().then((made) => {
+      if (isGone.current) {
+        made.close();
+        throw new Error('The page has been left.');
+      }
+      opened.current = made;
+      made.setVolume(volumeDb);
+      setPreview(made);
+      return made;
+    }));
+    // The next press tries again.
+    fresh.catch(() => {
+      if (opening.current === fresh) opening.current = null;
+    });
+    return fresh;
+  }, [volumeDb]);
+
+  const makeReady = useCallback(() => {
+    const { userActivation } = navigator as { userActivation?: UserActivation };
+    if (opened.current !== null || userActivation?.hasBeenActive !== true) return;
+    // What fails here is told when play is pressed.
+    open().then(
+      (fresh) => fresh.rest(),
+      () => undefined,
+    );
+  }, [open]);
+
   const toggle = useCallback(() => {
     const there = opened.current;
-    if (there !== null) {
+    if (there !== null && !isAsked.current) {
       if (there.state().status === 'silent') void there.play(sound, hearing, score);
       else there.stop();
       return;
     }
-    if (isOpening.current) return;
-    isOpening.current = true;
-    void openPreview()
+    if (isAsked.current) return;
+    isAsked.current = true;
+    void open()
       .then((fresh) => {
-        opened.current = fresh;
-        fresh.setVolume(volumeDb);
-        setPreview(fresh);
         setOpenTrouble(null);
+        isAsked.current = false;
         return fresh.play(sound, hearing, score);
       })
-      .catch((error: unknown) => setOpenTrouble(error instanceof Error ? error.message : String(error)))
+      .catch((error: unknown) => {
+        if (!isGone.current) setOpenTrouble(error instanceof Error ? error.message : String(error));
+      })
       .finally(() => {
-        isOpening.current = false;
+        isAsked.current = false;
       });
-  }, [sound, hearing, volumeDb, score]);
+  }, [open, sound, hearing, score]);
 
-  return { status: state.status, trouble: state.trouble ?? openTrouble, toggle, preview };
+  return { status: state.status, trouble: state.trouble ?? openTrouble, toggle, makeReady, preview };
 }
 
 /** Fetches the player while the page has nothing else to do, so that a press finds it there. */

@@ -153,7 +153,7 @@ test.describe('the listen panel', () => {
 
     await page.locator('summary').filter({ hasText: 'Bits by ear' }).focus();
     await page.keyboard.press('Enter');
-    expect(page.url()).toContain('more=bits');
+    await expect(page).toHaveURL(/more=bits/);
     await page.getByRole('slider', { name: 'Off from the bottom up' }).press('ArrowRight');
     await expect(page.getByText('Bits by ear decides what sounds.')).toBeVisible();
     await page.getByRole('button', { name: 'Give back' }).press('Enter');

@@ -27,11 +27,16 @@ async function open(page: Page): Promise<void> {
   await settle(page);
 }
 
-/** Milliseconds from a press on Play to the first frame that is not silence, by the context's clock. */
+/**
+ * Milliseconds from a press on Play to the first frame that is not silence, by the context's clock. It is pressed as people
+ * do: the pointer comes to the button, and a little later the button goes down and up.
+ */
 async function pressToSound(page: Page): Promise<number> {
   const heard = heardOf(page);
   await heard.forget();
-  await play(page).click();
+  await play(page).hover();
+  await page.waitForTimeout(200);
+  await play(page).click({ delay: 60 });
   await expect(stop(page)).toBeVisible();
   await page.waitForTimeout(400);
   const [rateHz] = await heard.rates();
@@ -51,7 +56,7 @@ test('from a press to sound under 50 ms, from a change on the bench to hearing i
   page,
   context,
 }) => {
-  // Each page's first press has its context and worklet to make. Nothing but other work makes one longer.
+  // Each page's first press has its context and worklet to make, which begins as the pointer comes.
   const firsts: number[] = [];
   for (let i = 0; i < 2; i += 1) {
     const other = await context.newPage();
@@ -62,7 +67,7 @@ test('from a press to sound under 50 ms, from a change on the bench to hearing i
   await open(page);
   firsts.push(await pressToSound(page));
   console.log(`first press to sound, by the context's clock: ${inWords(firsts)}`);
-  expect(Math.min(...firsts)).toBeLessThan(50);
+  expect(median(firsts)).toBeLessThan(50);
 
   const others: number[] = [];
   for (let i = 0; i < 3; i += 1) others.push(await pressToSound(page));

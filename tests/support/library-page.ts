@@ -86,7 +86,7 @@ export function linkIn(mail: string): string {
   return found[1];
 }
 
-/** An address for documentation only (RFC 3849), as sign-ups are counted by network. */
+/** An address for documentation only (RFC 3849), as sign-ups and sign-ins are counted by network. */
 const freshNetwork = () => `2001:db8:${randomBytes(2).toString('hex')}:${randomBytes(2).toString('hex')}::1`;
 
 /** A person with a verified account, made over the API. */
@@ -103,7 +103,7 @@ export async function signIn(context: BrowserContext, { email, password }: Brows
   const csrf = await context.request.get(`${origin()}/auth/csrf`);
   const { csrfToken } = (await csrf.json()) as { csrfToken: string };
   const response = await context.request.post(`${origin()}/auth/callback/credentials`, {
-    headers: { Origin: origin(), 'X-Auth-Return-Redirect': '1' },
+    headers: { Origin: origin(), 'X-Auth-Return-Redirect': '1', 'X-Forwarded-For': freshNetwork() },
     data: { email, password, csrfToken, callbackUrl: `${origin()}/` },
   });
   expect(((await response.json()) as { url: string }).url).not.toContain('error=');

@@ -13,7 +13,7 @@ import { stopsWhenHidden } from './stop-when-hidden.ts';
 /** Everything in the panel that is seen. */
 export function ListenBody() {
   const { status, toggle, table, playback, changePlayback, volumeDb, sounding } = useListening();
-  const { setVolumeDb, setStopPlace } = useListenControls();
+  const { setVolumeDb, setStopPlace, makeReady } = useListenControls();
   const isOn = status !== 'silent';
   return (
     <div className="space-y-4">
@@ -21,7 +21,7 @@ export function ListenBody() {
         Listen
         <ListenExplain />
       </h3>
-      <div ref={setStopPlace} className="listen-controls">
+      <div ref={setStopPlace} className="listen-controls" onPointerEnter={makeReady} onFocus={makeReady}>
         <Button variant="primary" icon={isOn ? icons.stop : icons.play} onPress={toggle}>
           {isOn ? 'Stop' : 'Play'}
         </Button>

@@ -44,7 +44,7 @@ export interface Listening {
   readonly sounding: Given;
   readonly status: PreviewState['status'];
   readonly trouble: string | null;
-  /** There once play has been pressed. */
+  /** There once play has been pressed, or is about to be. */
   readonly preview: AudioPreview | null;
   /** Plays or stops. Belongs in the handler of a press or a key. */
   readonly toggle: () => void;
@@ -67,6 +67,8 @@ export interface ListenControls {
   readonly setVolumeDb: (db: number) => void;
   readonly setOnBoard: (onBoard: OnBoard | null) => void;
   readonly giveBack: () => void;
+  /** A press on play seems about to come. */
+  readonly makeReady: () => void;
   /** What holds the panel's own stop; null before the panel has been opened. */
   readonly stopPlace: HTMLElement | null;
   readonly setStopPlace: (place: HTMLElement | null) => void;
@@ -136,7 +138,7 @@ export function ListeningProvider({
       sounding.isSecret === true ? { ...sounding, hearing: Object.keys(sounding.sound.voices)[0] } : sounding,
     [sounding],
   );
-  const { status, trouble, toggle, preview } = usePreview(
+  const { status, trouble, toggle, makeReady, preview } = usePreview(
     sounding.sound,
     sounding.hearing,
     volumeDb,
@@ -206,11 +208,12 @@ export function ListeningProvider({
       setVolumeDb,
       setOnBoard,
       giveBack,
+      makeReady,
       stopPlace,
       setStopPlace,
       wasHidden,
     }),
-    [isOnBench, isInSight, giveBack, stopPlace, wasHidden],
+    [isOnBench, isInSight, giveBack, makeReady, stopPlace, wasHidden],
   );
   return (
     <ListeningContext value={listening}>
