@@ -6,11 +6,10 @@ const sound = '**/listen*.spec.ts';
 export default defineConfig({
   testDir: 'tests/browser',
   projects: [
-    { name: 'pages', testMatch: '**/*.spec.ts', testIgnore: sound },
-    // Apart, as nothing may run beside what is heard and timed.
-    { name: 'sound', testMatch: sound },
+    { name: 'pages', testMatch: '**/*.spec.ts', testIgnore: sound, outputDir: 'test-results/pages' },
+    // A run of its own, so that each keeps what it has to show of failures.
+    { name: 'sound', testMatch: sound, outputDir: 'test-results/sound' },
   ],
-  outputDir: 'test-results',
   globalSetup: './tests/support/browser-app.ts',
   // Two cores: one browser, so that sound and frame times mean something.
   workers: 1,

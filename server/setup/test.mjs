@@ -29,23 +29,16 @@ await mainScript(async (onStop) => {
   mkdirSync(reports, { recursive: true });
 
   let total = nothing;
-  for (const project of ['engine', 'client', 'outside']) total = add(total, await runVitest(project));
-  // The API's tests wait most of the time, and so do pages: they go side by side. Sound wants the machine for itself.
-  const api = runVitest('api', { output: 'collect' });
-  total = add(total, await runPlaywright('pages'));
-  total = add(total, await api);
-  total = add(total, await runPlaywright('sound'));
+  for (const project of ['engine', 'client', 'outside', 'api']) total = add(total, await runVitest(project));
+  for (const project of ['pages', 'sound']) total = add(total, await runPlaywright(project));
   return conclude(total);
 });
 
-/** `output: 'collect'` prints what it had to say when it is over. */
-async function runVitest(project, { output } = {}) {
-  const heading = `\n── ${project} ──`;
-  if (output === undefined) console.log(heading);
+async function runVitest(project) {
+  console.log(`\n── ${project} ──`);
   const report = `${reports}/${project}.json`;
   const reporters = ['--reporter=default', '--reporter=json', `--outputFile.json=${report}`];
-  const { status, text } = await node(vitest, ['run', '--project', project, ...reporters], { output });
-  if (output !== undefined) console.log(`${heading}\n${text}`);
+  const { status } = await node(vitest, ['run', '--project', project, ...reporters]);
   return vitestCounts(report, status);
 }
 

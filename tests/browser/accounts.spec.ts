@@ -111,6 +111,8 @@ test('a forgotten password is set anew by mail, and every session ends', async (
   await signIn(other, person);
   await page.goto('/sign-in');
   await page.getByRole('link', { name: 'Forgotten the password?' }).click();
+  // The page before has a field of the same name.
+  await expect(page.getByRole('button', { name: 'Send the link' })).toBeVisible();
   await field(page, 'E-mail address').fill(person.email);
   await page.getByRole('button', { name: 'Send the link' }).click();
   await expect(page.getByText(`If ${person.email} has an account, a link is on its way.`)).toBeVisible();
